@@ -1,0 +1,20 @@
+"""Constants of nature in SI units.
+
+Source: BIPM, The International System of Units, 9th edition (2019), for the exact speed of light;
+CODATA 2022 recommended values (NIST SP 961, 2024) for the vacuum permittivity. The other two follow from them,
+so that the four always agree with each other to the last bit.
+"""
+
+from typing import Final
+
+SPEED_OF_LIGHT: Final = 299_792_458.0
+"""m/s, exact."""
+
+VACUUM_PERMITTIVITY: Final = 8.854_187_818_8e-12
+"""F/m."""
+
+VACUUM_PERMEABILITY: Final = 1.0 / (VACUUM_PERMITTIVITY * SPEED_OF_LIGHT**2)
+"""H/m."""
+
+FREE_SPACE_IMPEDANCE: Final = 1.0 / (VACUUM_PERMITTIVITY * SPEED_OF_LIGHT)
+"""Wave impedance of free space, ohm (376.730 313 4)."""

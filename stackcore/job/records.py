@@ -1,0 +1,150 @@
+"""The job as it is written: frozen records that keep every text as typed beside its SI value.
+
+A record is what a person edits and a file stores. `stackcore.job.resolve` turns records into the media and
+stacks that the solver takes; nothing else knows both sides.
+"""
+
+from dataclasses import dataclass
+from typing import Literal
+
+import numpy as np
+
+from stackcore.media.base import FloatArray
+from stackcore.units import Measure
+
+Spacing = Literal["linear", "log"]
+
+
+@dataclass(frozen=True, slots=True)
+class MaterialRecord:
+    """One material of a job: a model with constants, or a reference into the library, or both.
+
+    Parameters
+    ----------
+    name
+        Key in the job's ``materials``; what layers refer to.
+    label
+        Name for people; empty means `name`.
+    model
+        ``constant`` or ``conductor``; empty only when `library` gives everything.
+    library
+        ``family/name`` of a library entry, or empty. When constants stand beside it, they count.
+    permittivity, permeability
+        ε′ − jε″ and μ′ − jμ″ with the loss part as given (a loss tangent is kept apart), or None.
+    loss_tangent
+        ε″/ε′, or None when the loss is part of `permittivity`.
+    conductivity
+        Of a conductor, or None.
+    source
+        Where the numbers come from.
+    """
+
+    name: str
+    label: str = ""
+    model: str = ""
+    library: str = ""
+    permittivity: complex | None = None
+    permeability: complex | None = None
+    loss_tangent: float | None = None
+    conductivity: Measure | None = None
+    source: str = ""
+
+
+@dataclass(frozen=True, slots=True)
+class LayerRecord:
+    """A layer: the name of its material and its thickness."""
+
+    material: str
+    thickness: Measure
+
+
+@dataclass(frozen=True, slots=True)
+class SheetRecord:
+    """A sheet of one kind (``series``) with those of its parts that are present."""
+
+    kind: str = "series"
+    resistance: Measure | None = None
+    inductance: Measure | None = None
+    capacitance: Measure | None = None
+
+
+ElementRecord = LayerRecord | SheetRecord
+
+
+@dataclass(frozen=True, slots=True)
+class StackRecord:
+    """A named stack: front and back by material name (`back` may be ``metal``) and the elements between."""
+
+    name: str
+    elements: tuple[ElementRecord, ...] = ()
+    front: str = "air"
+    back: str = "air"
+
+
+@dataclass(frozen=True, slots=True)
+class FrequencyGrid:
+    """Evenly spaced frequencies, linear or logarithmic, both ends included."""
+
+    start: Measure
+    stop: Measure
+    points: int
+    spacing: Spacing = "linear"
+
+    def values(self) -> FloatArray:
+        """Return the frequencies in Hz; the ends are exactly the ones given."""
+        if self.points == 1:
+            return np.array([self.start.value])
+        make = np.geomspace if self.spacing == "log" else np.linspace
+        grid: FloatArray = make(self.start.value, self.stop.value, self.points)
+        return grid
+
+
+@dataclass(frozen=True, slots=True)
+class AngleGrid:
+    """Evenly spaced angles of incidence, both ends included."""
+
+    start: Measure
+    stop: Measure
+    points: int
+
+    def values(self) -> FloatArray:
+        """Return the angles in rad; the ends are exactly the ones given."""
+        if self.points == 1:
+            return np.array([self.start.value])
+        grid: FloatArray = np.linspace(self.start.value, self.stop.value, self.points)
+        return grid
+
+
+@dataclass(frozen=True, slots=True)
+class SweepRecord:
+    """What is computed: frequencies and angles, each a grid or a list."""
+
+    frequency: FrequencyGrid | tuple[Measure, ...]
+    angle: AngleGrid | tuple[Measure, ...]
+
+    def frequencies(self) -> FloatArray:
+        """Return the frequencies in Hz."""
+        if isinstance(self.frequency, FrequencyGrid):
+            return self.frequency.values()
+        return np.array([measure.value for measure in self.frequency])
+
+    def angles(self) -> FloatArray:
+        """Return the angles of incidence in rad."""
+        if isinstance(self.angle, AngleGrid):
+            return self.angle.values()
+        return np.array([measure.value for measure in self.angle])
+
+
+@dataclass(frozen=True, slots=True)
+class JobRecord:
+    """Everything a job file holds, in its order."""
+
+    title: str
+    stacks: tuple[StackRecord, ...]
+    sweep: SweepRecord
+    materials: tuple[MaterialRecord, ...] = ()
+    notes: str = ""
+
+    def material(self, name: str) -> MaterialRecord | None:
+        """Return the material called `name`, or None."""
+        return next((record for record in self.materials if record.name == name), None)
