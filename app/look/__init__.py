@@ -1,0 +1,1 @@
+"""How everything looks: colours and line styles as plain values, the palette, the settings file."""

@@ -1,0 +1,196 @@
+"""The places of a job that hold a text: which there are, what stands in them, and what a text makes of them."""
+
+from dataclasses import replace
+from typing import Final, Literal, cast
+
+from app.document.document import STACK_COLUMNS, WHOLE_ROW, Cell
+from app.document.edit import element_at, refuse, stack_at, with_element, with_stack
+from app.document.library import with_material
+from app.document.material_cells import MATERIAL_COLUMNS, material_text, with_material_text
+from app.document.material_edits import material_of
+from app.document.reading import list_text, read_list, read_points, unit_of
+from stackcore.errors import UnitError, nearest
+from stackcore.job.records import AngleGrid, FrequencyGrid, JobRecord, LayerRecord, SheetRecord, Spacing
+from stackcore.units import Dimension, Measure, parse_measure
+
+SHEET_PARTS: Final = {
+    "resistance": Dimension.RESISTANCE,
+    "inductance": Dimension.INDUCTANCE,
+    "capacitance": Dimension.CAPACITANCE,
+}
+"""Column of a sheet -> what it measures."""
+
+SPACINGS: Final[tuple[Spacing, ...]] = ("linear", "log")
+
+
+def columns_of(record: JobRecord, cell: Cell) -> tuple[str, ...]:
+    """Return the columns there are where `cell` is; refuses a stack or an element that does not exist."""
+    if cell.row != WHOLE_ROW:
+        element = element_at(record, cell.stack, cell.row)
+        return ("material", "thickness") if isinstance(element, LayerRecord) else tuple(SHEET_PARTS)
+    if not cell.of_job:
+        stack_at(record, cell.stack)
+        return STACK_COLUMNS
+    if cell.column.startswith("material:"):
+        name = material_and_constant(cell)[0]
+        material_of(record, name)
+        return tuple(f"material:{name}.{constant}" for constant in MATERIAL_COLUMNS)
+    columns = ["title", "notes", "sweep.frequency", "sweep.angle"]
+    if isinstance(record.sweep.frequency, FrequencyGrid):
+        columns += [f"sweep.frequency.{part}" for part in ("start", "stop", "points", "spacing")]
+    if isinstance(record.sweep.angle, AngleGrid):
+        columns += [f"sweep.angle.{part}" for part in ("start", "stop", "points")]
+    return tuple(columns)
+
+
+def check_cell(record: JobRecord, cell: Cell) -> None:
+    """Refuse a cell that `record` does not have."""
+    columns = columns_of(record, cell)
+    if cell.column not in columns:
+        hint = nearest(cell.column, columns)
+        raise refuse(cell.path, f"there is no place {cell.column!r}{hint}", f"one of {', '.join(columns)}")
+
+
+def material_and_constant(cell: Cell) -> tuple[str, str]:
+    """Return the material's name and the constant in a cell such as ``material:skin.permittivity``."""
+    name, _, constant = cell.column.removeprefix("material:").rpartition(".")
+    return name, constant
+
+
+def value_text(record: JobRecord, cell: Cell) -> str:
+    """Return the text of the value at `cell`, as it was typed; refuses a cell that does not exist.
+
+    Examples
+    --------
+    >>> from app.document.untitled import untitled_job
+    >>> value_text(untitled_job().record, Cell(0, 0, "thickness"))
+    '3 mm'
+    """
+    check_cell(record, cell)
+    if cell.row != WHOLE_ROW:
+        element = element_at(record, cell.stack, cell.row)
+        if isinstance(element, LayerRecord):
+            return element.material if cell.column == "material" else element.thickness.text
+        part = _part(element, cell.column)
+        return part.text if part is not None else ""
+    if not cell.of_job:
+        return cast(str, getattr(stack_at(record, cell.stack), cell.column))
+    if cell.column.startswith("material:"):
+        name, constant = material_and_constant(cell)
+        return material_text(material_of(record, name), constant)
+    if cell.column in ("title", "notes"):
+        return record.title if cell.column == "title" else record.notes
+    return _sweep_text(record, cell.column)
+
+
+def with_text(record: JobRecord, cell: Cell, text: str) -> JobRecord:
+    """Return `record` with the value of `text` at `cell`.
+
+    Raises
+    ------
+    UnitError
+        When the text is no value of the kind.
+    JobError
+        When there is no such cell. Whether the job resolves with the value is not looked at.
+    """
+    check_cell(record, cell)
+    if cell.row != WHOLE_ROW:
+        return _with_element_text(record, cell, text)
+    if not cell.of_job:
+        return _with_stack_text(record, cell, text)
+    if cell.column.startswith("material:"):
+        return with_material_text(record, *material_and_constant(cell), text)
+    if cell.column == "title":
+        return replace(record, title=text)
+    if cell.column == "notes":
+        return replace(record, notes=text)
+    if cell.column.startswith("sweep.frequency"):
+        frequency = _frequency(record.sweep.frequency, cell.column, text)
+        return replace(record, sweep=replace(record.sweep, frequency=frequency))
+    angle = _angle(record.sweep.angle, cell.column, text)
+    return replace(record, sweep=replace(record.sweep, angle=angle))
+
+
+def _with_element_text(record: JobRecord, cell: Cell, text: str) -> JobRecord:
+    element = element_at(record, cell.stack, cell.row)
+    if isinstance(element, SheetRecord):
+        return with_element(record, cell.stack, cell.row, _with_part(element, cell.column, text))
+    if cell.column == "material":
+        record, name = with_material(record, text)
+        return with_element(record, cell.stack, cell.row, replace(element, material=name))
+    thickness = _like(element.thickness, text, Dimension.LENGTH)
+    return with_element(record, cell.stack, cell.row, replace(element, thickness=thickness))
+
+
+def _part(sheet: SheetRecord, part: str) -> Measure | None:
+    return {"resistance": sheet.resistance, "inductance": sheet.inductance, "capacitance": sheet.capacitance}[
+        part
+    ]
+
+
+def _with_part(sheet: SheetRecord, part: str, text: str) -> SheetRecord:
+    """Return `sheet` with one part set; an empty text takes the part away."""
+    value = _like(_part(sheet, part), text, SHEET_PARTS[part]) if text.strip() else None
+    if part == "resistance":
+        return replace(sheet, resistance=value)
+    if part == "inductance":
+        return replace(sheet, inductance=value)
+    return replace(sheet, capacitance=value)
+
+
+def _with_stack_text(record: JobRecord, cell: Cell, text: str) -> JobRecord:
+    stack = stack_at(record, cell.stack)
+    if cell.column == "name":
+        return with_stack(record, cell.stack, replace(stack, name=text.strip()))
+    record, name = with_material(record, text)
+    changed = replace(stack, front=name) if cell.column == "front" else replace(stack, back=name)
+    return with_stack(record, cell.stack, changed)
+
+
+def _sweep_text(record: JobRecord, column: str) -> str:
+    half, _, part = column.removeprefix("sweep.").partition(".")
+    values = record.sweep.frequency if half == "frequency" else record.sweep.angle
+    if isinstance(values, tuple):
+        return list_text(values)
+    if not part:
+        return f"{values.start.text} to {values.stop.text}, {values.points} points"
+    given = getattr(values, part)
+    return given.text if isinstance(given, Measure) else str(given)
+
+
+def _frequency(
+    old: FrequencyGrid | tuple[Measure, ...], column: str, text: str
+) -> FrequencyGrid | tuple[Measure, ...]:
+    if not isinstance(old, FrequencyGrid) or column == "sweep.frequency":
+        return read_list(text, Dimension.FREQUENCY)
+    part = column.rpartition(".")[2]
+    if part == "points":
+        return replace(old, points=read_points(text))
+    if part == "spacing":
+        return replace(old, spacing=_spacing(text))
+    end = _like(old.start if part == "start" else old.stop, text, Dimension.FREQUENCY)
+    return replace(old, start=end) if part == "start" else replace(old, stop=end)
+
+
+def _angle(old: AngleGrid | tuple[Measure, ...], column: str, text: str) -> AngleGrid | tuple[Measure, ...]:
+    if not isinstance(old, AngleGrid) or column == "sweep.angle":
+        return read_list(text, Dimension.ANGLE)
+    part = column.rpartition(".")[2]
+    if part == "points":
+        return replace(old, points=read_points(text))
+    end = _like(old.start if part == "start" else old.stop, text, Dimension.ANGLE)
+    return replace(old, start=end) if part == "start" else replace(old, stop=end)
+
+
+def _spacing(text: str) -> Literal["linear", "log"]:
+    wanted = text.strip().casefold()
+    for spacing in SPACINGS:
+        if wanted == spacing:
+            return spacing
+    raise UnitError(f"{text!r} is no spacing{nearest(wanted, SPACINGS)}", f"one of {', '.join(SPACINGS)}")
+
+
+def _like(old: Measure | None, text: str, dimension: Dimension) -> Measure:
+    """Return the quantity of `text`; a bare number has the unit of `old`."""
+    unit = unit_of(old.text, dimension) if old is not None else dimension.usual_unit
+    return parse_measure(text.strip(), dimension, default_unit=unit)

@@ -1,0 +1,69 @@
+"""Every edit there is, by name: import them from here.
+
+One named function an edit; each returns an `Edit`. A later capability adds a file of its own edits and its names
+here.
+"""
+
+from app.document.edit import Edit
+from app.document.element_edits import (
+    add_layer,
+    add_sheet,
+    change_material,
+    delete,
+    duplicate,
+    move,
+    set_thickness,
+)
+from app.document.job_edits import (
+    set_angle_grid,
+    set_angles,
+    set_frequency_grid,
+    set_frequency_list,
+    set_notes,
+    set_title,
+)
+from app.document.material_edits import (
+    add_material,
+    remove_material,
+    rename_material,
+    replace_material,
+    use_library_entry,
+)
+from app.document.stack_edits import (
+    add_stack,
+    delete_stack,
+    duplicate_stack,
+    rename_stack,
+    set_back,
+    set_front,
+)
+from app.document.typed import type_into
+
+__all__ = [
+    "Edit",
+    "add_layer",
+    "add_material",
+    "add_sheet",
+    "add_stack",
+    "change_material",
+    "delete",
+    "delete_stack",
+    "duplicate",
+    "duplicate_stack",
+    "move",
+    "remove_material",
+    "rename_material",
+    "rename_stack",
+    "replace_material",
+    "set_angle_grid",
+    "set_angles",
+    "set_back",
+    "set_frequency_grid",
+    "set_frequency_list",
+    "set_front",
+    "set_notes",
+    "set_thickness",
+    "set_title",
+    "type_into",
+    "use_library_entry",
+]

@@ -1,0 +1,151 @@
+"""Texts of cells -> values: relative constants and lists of quantities.
+
+Single quantities are `stackcore.units`' affair; what is here is what a job file writes as ``[real, loss]`` or as a
+list, and a person as ``4.2 - 0.06j`` or ``0, 30, 45 deg``.
+"""
+
+import re
+from typing import Final
+
+from stackcore.errors import UnitError
+from stackcore.units import Dimension, Measure, parse_measure
+
+_ALLOWED_RELATIVE: Final = "a number, or real - j loss; for example 4.2 or 4.2 - 0.06j"
+_NUMBER: Final = r"(?:\d+(?:[.,]\d*)?|[.,]\d+)(?:[eE][+-]?\d+)?"
+_COMPLEX: Final = re.compile(
+    rf"(?P<real>[+-]?\s*{_NUMBER})\s*(?P<sign>[+-])\s*(?:[ij]\s*\*?\s*(?P<after>{_NUMBER})|(?P<before>{_NUMBER})\s*\*?\s*[ij])"
+)
+_PAIR: Final = re.compile(r"\[(?P<inner>[^\[\]]*)\]")
+_SPACED: Final = re.compile(rf"({_NUMBER}\s+)+{_NUMBER}(\s*[^\s\d.,]+)?")
+_UNIT_AT_END: Final = re.compile(r"[\d.,)]\s*(?P<unit>[^\s\d.,()+*-][^\d.,()+*-]*)$")
+_COMMA_IN_NUMBER: Final = re.compile(r"\d,\d")
+
+
+def read_relative(text: str) -> complex:
+    """Return ε or μ as real − j·loss.
+
+    Takes ``4.2``, ``4.2 - 0.06j``, ``4.2 - j0.06`` and ``[4.2, 0.06]`` as in the job file. Whether the value is
+    one a passive material can have is for the job to say.
+
+    Raises
+    ------
+    UnitError
+        For any other text.
+
+    Examples
+    --------
+    >>> read_relative("12 − j0.5"), read_relative("[12, 0.5]")
+    ((12-0.5j), (12-0.5j))
+    """
+    plain = text.replace("\u2212", "-").strip()
+    if pair := _PAIR.fullmatch(plain):
+        parts = re.split(r";|,(?=\s)|,(?![^,]*,)", pair["inner"])
+        if len(parts) != 2:
+            raise UnitError(f"{text!r} is not a pair of numbers", "[real, loss], for example [12, 0.5]")
+        return _lossy(_number(parts[0]), _number(parts[1]))
+    if match := _COMPLEX.fullmatch(plain):
+        size = _number(match["after"] or match["before"])
+        real = _number(match["real"].replace(" ", ""))
+        return _lossy(real, size if match["sign"] == "-" else -size)
+    try:
+        return complex(_number(plain))
+    except UnitError as error:
+        raise UnitError(error.message, _ALLOWED_RELATIVE) from None
+
+
+def relative_text(value: complex) -> str:
+    """Return the text of a relative constant that `read_relative` reads back to the last bit.
+
+    Examples
+    --------
+    >>> relative_text(12 - 0.5j), relative_text(4.2 + 0j)
+    ('12 - 0.5j', '4.2')
+    """
+    real = _plain(value.real)
+    if value.imag == 0:
+        return real
+    return f"{real} {'-' if value.imag < 0 else '+'} {_plain(abs(value.imag))}j"
+
+
+def read_list(text: str, dimension: Dimension) -> tuple[Measure, ...]:
+    """Return the quantities of a list.
+
+    Entries are divided by semicolons, by commas with a space behind, or, when they are bare numbers, by spaces. An
+    entry without a unit has that of the last entry: ``0, 30, 45 deg``; when that has none either, the usual unit.
+
+    Raises
+    ------
+    UnitError
+        For an empty list, an entry that is no quantity, and a comma that may be a decimal sign or divide entries.
+
+    Examples
+    --------
+    >>> [measure.text for measure in read_list("8, 10, 12 GHz", Dimension.FREQUENCY)]
+    ['8 GHz', '10 GHz', '12 GHz']
+    """
+    entries = [entry.strip() for entry in _divide(text.strip().strip("[]"))]
+    entries = [entry for entry in entries if entry]
+    if not entries:
+        raise UnitError("the list is empty", f"values divided by semicolons: {dimension.example}; ...")
+    unit = unit_of(entries[-1], dimension)
+    return tuple(parse_measure(entry, dimension, default_unit=unit) for entry in entries)
+
+
+def list_text(measures: tuple[Measure, ...]) -> str:
+    """Return the text of a list that `read_list` reads back."""
+    return "; ".join(measure.text for measure in measures)
+
+
+def read_points(text: str) -> int:
+    """Return a number of points; whether it is one the sweep can take is for the job to say.
+
+    Raises
+    ------
+    UnitError
+        For a text that is no whole number.
+    """
+    value = _number(text)
+    if value != int(value):
+        raise UnitError(f"{text!r} is not a whole number", "a whole number, for example 401")
+    return int(value)
+
+
+def unit_of(text: str, dimension: Dimension) -> str:
+    """Return the unit `text` ends with, when it is one of `dimension`, else the usual unit.
+
+    Examples
+    --------
+    >>> unit_of("35 um", Dimension.LENGTH), unit_of("1/8 in", Dimension.LENGTH), unit_of("7", Dimension.LENGTH)
+    ('um', 'in', 'mm')
+    """
+    match = _UNIT_AT_END.search(text.strip())
+    if match:
+        try:
+            parse_measure(f"1 {match['unit']}", dimension)
+        except UnitError:
+            return dimension.usual_unit
+        return match["unit"].strip()
+    return dimension.usual_unit
+
+
+def _divide(text: str) -> list[str]:
+    if ";" in text or "\n" in text:
+        return re.split(r"[;\n]", text)
+    if _COMMA_IN_NUMBER.search(text) and not re.search(r",\s", text):
+        with_dot, divided = text.replace(",", "."), text.replace(",", "; ")
+        raise UnitError(f"{text!r} may mean {with_dot} or {divided}", f"write {with_dot} or {divided}")
+    if "," in text:
+        return re.split(r",(?=\s|$)", text)
+    return text.split(maxsplit=text.count(" ")) if _SPACED.fullmatch(text) else [text]
+
+
+def _number(text: str) -> float:
+    return parse_measure(text.strip(), Dimension.NUMBER).value
+
+
+def _lossy(real: float, loss: float) -> complex:
+    return complex(real, -loss if loss else 0.0)
+
+
+def _plain(number: float) -> str:
+    return repr(int(number)) if number == int(number) and abs(number) < 1e15 else repr(number)

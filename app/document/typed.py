@@ -1,0 +1,119 @@
+"""Typing into a cell: a good text becomes the value, a bad one stays as it was typed and says what is wrong."""
+
+from dataclasses import replace
+from typing import Final
+
+from app.document.cells import check_cell, material_and_constant, value_text, with_text
+from app.document.document import WHOLE_ROW, Cell, Document, Draft
+from app.document.edit import Edit, with_record, without_draft
+from app.document.history import Brief
+from app.document.material_edits import rename_material
+from app.document.stack_edits import rename_stack
+from stackcore.errors import Fault, InputError, UnitError
+
+_LONGEST_QUOTE: Final = 40
+
+_JOB_WORDS: Final = {
+    "sweep.frequency": "frequencies",
+    "sweep.frequency.start": "first frequency",
+    "sweep.frequency.stop": "last frequency",
+    "sweep.frequency.points": "number of frequencies",
+    "sweep.frequency.spacing": "spacing of frequencies",
+    "sweep.angle": "angles",
+    "sweep.angle.start": "first angle",
+    "sweep.angle.stop": "last angle",
+    "sweep.angle.points": "number of angles",
+}
+
+
+def type_into(cell: Cell, text: str) -> Edit:
+    """Return the edit for a text typed into `cell`.
+
+    A text that is a value, and with which the job resolves, becomes the value, and the cell's draft is gone. Any
+    other text becomes the cell's draft, and the value stays the last good one. A bare number has the unit that the
+    cell's value was written in.
+
+    The edit is refused only when there is no such cell.
+
+    Examples
+    --------
+    >>> type_into(Cell(0, 1, "thickness"), "0.9 mm").sentence
+    'set thickness of layer 2 to 0.9 mm'
+    """
+
+    def change(document: Document) -> Document:
+        check_cell(document.record, cell)
+        try:
+            return _accepted(document, cell, text)
+        except UnitError as error:
+            fault = Fault(cell.path, error.message, error.allowed)
+        except InputError as error:
+            fault = _fault_at(cell, error.faults)
+        draft = Draft(cell, text, fault)
+        return Document(document.job, (*without_draft(document.drafts, cell), draft))
+
+    return Edit(_sentence(cell, text), change, merge_key=Brief(("type into", cell)))
+
+
+def shown_text(document: Document, cell: Cell) -> str:
+    """Return what is to be read at `cell`: the draft as it was typed, or else the text of the value."""
+    draft = document.draft(cell)
+    return value_text(document.record, cell) if draft is None else draft.text
+
+
+def settle(document: Document) -> Document:
+    """Return `document` with every draft tried again.
+
+    A draft that the rest of the job had stood against (a material not defined, a start beyond the stop) becomes
+    the value as soon as it can. One whose cell no longer exists is dropped.
+    """
+    tried = 0
+    while tried < len(document.drafts):
+        draft = document.drafts[tried]
+        try:
+            check_cell(document.record, draft.cell)
+        except InputError:
+            document = Document(document.job, without_draft(document.drafts, draft.cell))
+            continue
+        try:
+            document = _accepted(document, draft.cell, draft.text)
+            tried = 0  # one that fits may make room for another
+        except (InputError, UnitError):
+            tried += 1
+    return document
+
+
+def _accepted(document: Document, cell: Cell, text: str) -> Document:
+    """Return the document with the value of `text`; raises UnitError or InputError when it cannot be taken."""
+    cleared = Document(document.job, without_draft(document.drafts, cell))
+    if cell.row == WHOLE_ROW and cell.column == "name":
+        return rename_stack(cell.stack, text).change(cleared)
+    if cell.column.startswith("material:") and cell.column.endswith(".name"):
+        name, _ = material_and_constant(cell)
+        return cleared if text.strip() == name else rename_material(name, text).change(cleared)
+    return with_record(cleared, with_text(document.record, cell, text))
+
+
+def _fault_at(cell: Cell, faults: tuple[Fault, ...]) -> Fault:
+    """Return the fault to show at `cell`: the one of its own place, or else the first, brought there."""
+    own = [fault for fault in faults if fault.path.startswith(cell.path)]
+    return own[0] if own else replace(faults[0], path=cell.path)
+
+
+def _sentence(cell: Cell, text: str) -> str:
+    text = " ".join(text.split())
+    quoted = text if len(text) <= _LONGEST_QUOTE else f"{text[: _LONGEST_QUOTE - 1]}…"
+    if cell.column == "notes":
+        return "change notes"
+    place = _place(cell)
+    return f"set {place} to {quoted}" if quoted else f"clear {place}"
+
+
+def _place(cell: Cell) -> str:
+    if cell.row != WHOLE_ROW:
+        kind = "layer" if cell.column in ("material", "thickness") else "sheet"
+        return f"{cell.column} of {kind} {cell.row + 1}"
+    if cell.column.startswith("material:"):
+        name, constant = material_and_constant(cell)
+        return f"{constant.replace('_', ' ')} of {name}"
+    return "name of stack" if cell.column == "name" else _JOB_WORDS.get(cell.column, cell.column)

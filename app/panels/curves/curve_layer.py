@@ -1,0 +1,148 @@
+"""The curves themselves: thin and fast while something moves, finer when it rests."""
+
+from collections.abc import Sequence
+from dataclasses import dataclass, field
+from typing import Any, Final
+
+import numpy as np
+import pyqtgraph as pg
+from PySide6.QtCore import QPointF, Qt
+from PySide6.QtGui import QColor, QPainter, QPen, QPolygonF
+
+from app.panels.curves.frame import Frame, finite_runs
+from app.panels.curves.layer import Layer
+from stackcore.media.base import FloatArray
+
+LIVE_WIDTH: Final = 1.0
+FINE_WIDTH: Final = 1.6
+CHOSEN_WIDTH: Final = 2.4
+# A stroke wider than a pixel costs the raster engine time that grows faster than its length; short pieces,
+# overlapping by one segment so that no joint shows, keep it proportional.
+_PIECE: Final = 48
+# Points beyond which the finer drawing would take longer than a person waits without noticing.
+_FINE_POINTS: Final = 60_000
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class DrawnCurve:
+    """One curve as it is drawn.
+
+    Parameters
+    ----------
+    positions
+        Along the frequency axis, rising.
+    values
+        As many; not a number where the curve has a gap.
+    colour
+        ``#rrggbb``.
+    dashes
+        Dash pattern in pixels; empty for solid.
+    chosen
+        Drawn a little wider: the angle and polarization that the wall drawing shows.
+    """
+
+    positions: FloatArray
+    values: FloatArray
+    colour: str
+    dashes: tuple[float, ...] = ()
+    chosen: bool = False
+    runs: tuple[tuple[int, int], ...] = field(init=False)
+
+    def __post_init__(self) -> None:
+        object.__setattr__(self, "runs", finite_runs(self.values + self.positions))
+
+
+class CurveLayer(Layer):
+    """Draws all curves in one go, in pixels."""
+
+    def __init__(self, area: Any, height: float) -> None:
+        super().__init__(area, height)
+        self._curves: tuple[DrawnCurve, ...] = ()
+        self._fine = False
+
+    @property
+    def curves(self) -> tuple[DrawnCurve, ...]:
+        """What is drawn."""
+        return self._curves
+
+    @property
+    def fine(self) -> bool:
+        """Whether lines are drawn at their full width."""
+        return self._fine
+
+    def set_curves(self, curves: Sequence[DrawnCurve]) -> None:
+        """Draw these curves from now on."""
+        self._curves = tuple(curves)
+        self.update()
+
+    def set_fine(self, fine: bool) -> None:
+        """Draw at full width and keep the picture, or thin and anew each time."""
+        wanted = fine and sum(len(curve.values) for curve in self._curves) <= _FINE_POINTS
+        if wanted == self._fine:
+            return
+        self._fine = wanted
+        mode = self.CacheMode.DeviceCoordinateCache if wanted else self.CacheMode.NoCache
+        self.setCacheMode(mode)
+        self.update()
+
+    def draw(self, painter: QPainter, frame: Frame) -> None:
+        """Draw the visible part of each curve; the chosen one lies on top."""
+        for curve in sorted(self._curves, key=lambda one: one.chosen):
+            width = LIVE_WIDTH if not self._fine else CHOSEN_WIDTH if curve.chosen else FINE_WIDTH
+            pen = QPen(QColor(curve.colour), width)
+            pen.setCosmetic(True)
+            pen.setJoinStyle(Qt.PenJoinStyle.BevelJoin)
+            for first, last in curve.runs:
+                first, last = _visible(curve.positions, first, last, frame)
+                across = frame.across(curve.positions[first:last])
+                down = frame.down(curve.values[first:last])
+                if last - first == 1:
+                    _draw_dot(painter, curve, QPointF(across[0], down[0]))
+                elif last > first:
+                    _draw_run(painter, pen, curve.dashes, across, down)
+
+
+def _visible(positions: FloatArray, first: int, last: int, frame: Frame) -> tuple[int, int]:
+    """Return the stretch of points that can be seen, with a neighbour on either side."""
+    run = positions[first:last]
+    begin = int(np.searchsorted(run, frame.left, side="right")) - 1
+    end = int(np.searchsorted(run, frame.right, side="left")) + 1
+    return first + max(begin, 0), first + min(end, last - first)
+
+
+def _draw_run(
+    painter: QPainter, pen: QPen, dashes: tuple[float, ...], across: FloatArray, down: FloatArray
+) -> None:
+    width = pen.widthF()
+    if dashes:
+        pen.setDashPattern([length / width for length in dashes])
+    if width <= LIVE_WIDTH:
+        painter.setPen(pen)
+        painter.drawPolyline(polygon(across, down))
+        return
+    pen.setCapStyle(Qt.PenCapStyle.FlatCap)
+    painter.setPen(pen)
+    lengths = np.concatenate(([0.0], np.cumsum(np.hypot(np.diff(across), np.diff(down))))) if dashes else None
+    for begin in range(0, len(across) - 1, _PIECE):
+        start, stop = max(begin - 1, 0), begin + _PIECE + 1
+        if lengths is not None:
+            pen.setDashOffset(float(lengths[start]) / width)
+            painter.setPen(pen)
+        painter.drawPolyline(polygon(across[start:stop], down[start:stop]))
+
+
+def _draw_dot(painter: QPainter, curve: DrawnCurve, at: QPointF) -> None:
+    """Draw a point without neighbours: filled for a solid curve, open for a dashed one."""
+    painter.setPen(QPen(QColor(curve.colour), 1.6))
+    painter.setBrush(Qt.BrushStyle.NoBrush if curve.dashes else QColor(curve.colour))
+    painter.drawEllipse(at, 3.0, 3.0)
+    painter.setBrush(Qt.BrushStyle.NoBrush)
+
+
+def polygon(across: FloatArray, down: FloatArray) -> QPolygonF:
+    """Return points as Qt takes them, copied in one go."""
+    points: QPolygonF = pg.functions.create_qpolygonf(len(across))
+    memory = pg.functions.ndarray_from_qpolygonf(points)
+    memory[:, 0] = across
+    memory[:, 1] = down
+    return points

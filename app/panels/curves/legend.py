@@ -1,0 +1,97 @@
+"""The legend that stands above the plot when there is no room for names at the ends of the curves."""
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from typing import Final
+
+from PySide6.QtCore import QPointF, QRectF, QSize, Qt
+from PySide6.QtGui import QColor, QFontMetricsF, QLinearGradient, QPainter, QPaintEvent, QPen
+from PySide6.QtWidgets import QSizePolicy, QWidget
+
+from app.look.theme import Theme, dashes
+
+_SAMPLE: Final = 22.0
+_GAP: Final = 6.0
+_APART: Final = 16.0
+
+
+@dataclass(frozen=True, slots=True)
+class LegendFacts:
+    """What the legend says: the line styles, and the colours of the angles from the smallest to the largest."""
+
+    polarizations: tuple[str, ...] = ()
+    angles: tuple[str, ...] = ()
+    colours: tuple[str, ...] = ()
+
+
+class Legend(QWidget):
+    """Line samples of the polarizations, and a ramp from the colour of the smallest angle to the largest."""
+
+    def __init__(self, theme: Theme, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self._theme = theme
+        self._facts = LegendFacts()
+        self.setSizePolicy(QSizePolicy.Policy.Fixed, QSizePolicy.Policy.Fixed)
+
+    def set_theme(self, theme: Theme) -> None:
+        """Take the colours of a theme."""
+        self._theme = theme
+        self.update()
+
+    def set_facts(self, facts: LegendFacts) -> None:
+        """Say this from now on, also to those who listen."""
+        self._facts = facts
+        self.setAccessibleName("Legend")
+        self.setAccessibleDescription(self.sentence())
+        self.setToolTip(self.sentence())
+        self.updateGeometry()
+        self.update()
+
+    def sentence(self) -> str:
+        """Return the legend in words."""
+        styles = {"TE": "TE solid", "TM": "TM dashed"}
+        lines = ", ".join(styles[polarization] for polarization in self._facts.polarizations)
+        angles = self._facts.angles
+        ramp = f"; {len(angles)} angles from {angles[0]} to {angles[-1]} by lightness" if len(angles) > 1 else ""
+        return f"{lines}{ramp}"
+
+    def sizeHint(self) -> QSize:
+        """Return the room the legend needs."""
+        metrics = QFontMetricsF(self.font())
+        width = sum(_SAMPLE + _GAP + metrics.horizontalAdvance(p) + _APART for p in self._facts.polarizations)
+        angles = self._facts.angles
+        if angles:
+            width += _GAP * 2 + 72 + metrics.horizontalAdvance(angles[0]) + metrics.horizontalAdvance(angles[-1])
+        return QSize(round(width) + 2, round(metrics.height()) + 2)
+
+    def paintEvent(self, event: QPaintEvent) -> None:
+        """Draw samples and ramp."""
+        painter = QPainter(self)
+        painter.setRenderHint(QPainter.RenderHint.Antialiasing)
+        metrics = QFontMetricsF(self.font())
+        middle, left = self.height() / 2, 0.0
+        text = QColor(self._theme.muted)
+        for polarization in self._facts.polarizations:
+            pen = QPen(QColor(self._theme.text), 1.6)
+            if dashes(polarization):
+                pen.setDashPattern([length / 1.6 for length in dashes(polarization)])
+            painter.setPen(pen)
+            painter.drawLine(QPointF(left, middle), QPointF(left + _SAMPLE, middle))
+            left = self._write(painter, metrics, text, left + _SAMPLE + _GAP, polarization) + _APART
+        if self._facts.angles:
+            left = self._write(painter, metrics, text, left, self._facts.angles[0]) + _GAP
+            painter.fillRect(QRectF(left, middle - 3, 72, 6), self._ramp(left, left + 72))
+            self._write(painter, metrics, text, left + 72 + _GAP, self._facts.angles[-1])
+
+    def _ramp(self, left: float, right: float) -> QLinearGradient:
+        ramp = QLinearGradient(left, 0, right, 0)
+        colours: Sequence[str] = self._facts.colours
+        for index, colour in enumerate(colours):
+            ramp.setColorAt(index / max(len(colours) - 1, 1), QColor(colour))
+        return ramp
+
+    def _write(self, painter: QPainter, metrics: QFontMetricsF, ink: QColor, left: float, text: str) -> float:
+        width = metrics.horizontalAdvance(text)
+        painter.setPen(ink)
+        painter.drawText(QRectF(left, 0, width + 1, self.height()), Qt.AlignmentFlag.AlignVCenter, text)
+        return left + width

@@ -1,0 +1,155 @@
+"""Where a frequency or a value lies on an axis, and which round numbers are written beside it. No toolkit.
+
+The plot draws log₁₀ of the frequency when its axis is logarithmic; this file is the one place that converts,
+for curves, markers, worst points and typed ranges alike.
+"""
+
+import math
+from collections.abc import Sequence
+from dataclasses import dataclass
+from typing import Final
+
+import numpy as np
+
+from stackcore.media.base import FloatArray
+
+_TINY: Final = 1e-300
+_ROUND: Final = (1.0, 2.0, 5.0, 10.0)
+
+
+@dataclass(frozen=True, slots=True)
+class FrequencyScale:
+    """The frequency axis: hertz to position on the axis and back.
+
+    Parameters
+    ----------
+    factor
+        Axis units per hertz (1e-9 for GHz).
+    logarithmic
+        Whether a position is log₁₀ of the value in axis units.
+
+    Examples
+    --------
+    >>> FrequencyScale(1e-9, True).position(1e10)
+    1.0
+    """
+
+    factor: float = 1e-9
+    logarithmic: bool = False
+
+    def position(self, hertz: float) -> float:
+        """Return where a frequency in Hz lies."""
+        value = hertz * self.factor
+        return math.log10(max(value, _TINY)) if self.logarithmic else value
+
+    def positions(self, hertz: FloatArray) -> FloatArray:
+        """Return where frequencies in Hz lie; not positive ones on a logarithmic axis are not a number."""
+        values: FloatArray = np.asarray(hertz, dtype=float) * self.factor
+        if not self.logarithmic:
+            return values
+        shown = np.full(values.shape, np.nan)
+        return np.log10(values, out=shown, where=values > 0)
+
+    def hertz(self, position: float) -> float:
+        """Return the frequency in Hz at a position; the inverse of `position`."""
+        value = 10.0 ** min(max(position, -300.0), 300.0) if self.logarithmic else position
+        return value / self.factor
+
+
+@dataclass(frozen=True, slots=True)
+class Ticks:
+    """Positions and texts of the labelled ticks, and positions of those between them."""
+
+    major: tuple[float, ...]
+    texts: tuple[str, ...]
+    minor: tuple[float, ...] = ()
+
+
+def round_step(span: float, most: float) -> float:
+    """Return the smallest step of 1, 2 or 5 times a power of ten that divides `span` into at most `most` parts.
+
+    Examples
+    --------
+    >>> round_step(4.0, 5)
+    1.0
+    """
+    least = max(span, _TINY) / max(most, 1.0)
+    power = 10.0 ** math.floor(math.log10(least))
+    return next(step * power for step in _ROUND if step * power >= least * (1 - 1e-9))
+
+
+def linear_ticks(low: float, high: float, most: float) -> Ticks:
+    """Return round numbers between `low` and `high`, at most about `most` of them."""
+    step = round_step(high - low, most)
+    first, last = math.ceil(low / step - 1e-9), math.floor(high / step + 1e-9)
+    major = tuple(index * step for index in range(first, min(last, first + 200) + 1))
+    return Ticks(major, number_texts(major, step))
+
+
+def logarithmic_ticks(low: float, high: float, most: float) -> Ticks:
+    """Return ticks for an axis of log₁₀ values, written as plain numbers.
+
+    Decades are thinned when they are many; 1-2-5 or all digits are written when there is room; within
+    less than half a decade the numbers are evenly spaced round ones.
+    """
+    if high - low < 0.5:
+        near = linear_ticks(10.0**low, 10.0**high, most)
+        return Ticks(tuple(math.log10(value) for value in near.major if value > 0), near.texts)
+    decades = range(math.floor(low), math.ceil(high) + 1)
+    every = max(1, math.ceil(len(decades) / max(most, 1.0)))
+    digits: tuple[int, ...] = (1,)
+    for more in ((1, 3), (1, 2, 5), (1, 2, 3, 4, 5, 6, 7, 8, 9)):
+        if every == 1 and (high - low) * len(more) * (1.6 if len(more) > 3 else 1.0) <= most:
+            digits = more
+    inside = [
+        (decade + math.log10(digit), digit * 10.0**decade)
+        for decade in decades
+        if decade % every == 0
+        for digit in digits
+    ]
+    kept = [(at, value) for at, value in inside if low - 1e-9 <= at <= high + 1e-9]
+    between = () if every > 1 else tuple(d + math.log10(n) for d in decades for n in range(1, 10))
+    written = {round(at, 9) for at, _ in kept}
+    minor = tuple(at for at in between if low <= at <= high and round(at, 9) not in written)
+    return Ticks(tuple(at for at, _ in kept), tuple(_plain(value) for _, value in kept), minor)
+
+
+def number_texts(values: Sequence[float], step: float) -> tuple[str, ...]:
+    """Return texts of the multiples of `step`, all with the same decimals, with a true minus sign."""
+    largest = max((abs(value) for value in values), default=0.0)
+    exponent = math.floor(math.log10(step) + 1e-9)
+    if largest >= 1e7 or 0.0 < largest < 1e-3:
+        digits = max(1, math.floor(math.log10(largest)) - exponent + 1)
+        texts = [f"{value + 0.0:.{digits}g}" for value in values]
+    else:
+        texts = [f"{value + 0.0:.{max(0, -exponent)}f}" for value in values]
+    return tuple(text.replace("-", "−") for text in texts)
+
+
+def round_range(low: float, high: float, floor: float | None = None, top: float | None = None) -> tuple[float, float]:
+    """Return a range a little larger than the data, on round numbers, so that it does not tremble as they change.
+
+    Parameters
+    ----------
+    low, high
+        Smallest and largest value to show.
+    floor, top
+        Values the range does not pass unless the data do, such as 0 and 100 for a percentage.
+    """
+    span = high - low
+    least = max(abs(low), abs(high)) * 1e-6
+    if span <= least:
+        span = max(least * 4, abs(high) * 0.02, 1e-12)
+        low, high = low - span / 2, high + span / 2
+    step = round_step(span, 10)
+    below, above = math.floor((low - span * 0.02) / step) * step, math.ceil((high + span * 0.02) / step) * step
+    if floor is not None and low >= floor:
+        below = max(below, floor)
+    if top is not None and high <= top:
+        above = min(above, top)
+    return below, above
+
+
+def _plain(value: float) -> str:
+    """Return a power-of-ten tick as people write it: 0.2, 20, 2000, and 1e+07 only when it is long."""
+    return f"{value:.0f}" if 1 <= value < 1e6 else f"{value:.6g}"

@@ -1,0 +1,117 @@
+"""What typing, pasting and moving in the table mean as edits of the document. No toolkit."""
+
+from collections.abc import Iterable, Mapping, Sequence
+from typing import Final
+
+from app.document import edits
+from app.document.document import Cell, Document, Selection
+from app.document.edit import Edit
+from app.document.element_edits import NEW_SHEET
+from app.panels.elements.columns import ALL_COLUMNS, MATERIAL, WHAT
+from app.panels.elements.lines import WORDS
+from app.panels.elements.names import MaterialNames
+from stackcore.job.records import LayerRecord, SheetRecord
+from stackcore.units import Dimension, parse_measure
+
+NEW_MATERIAL: Final = "air"
+NEW_THICKNESS: Final = parse_measure("1 mm", Dimension.LENGTH)
+"""What a new layer begins as."""
+
+
+def typed_edit(names: MaterialNames, cell: Cell, text: str) -> Edit:
+    """Return the edit for `text` typed or chosen in `cell`; a material may be given as it is shown or offered."""
+    if cell.column in (MATERIAL.name, "front", "back"):
+        text = names.given(text)
+    return edits.type_into(cell, text)
+
+
+def paste_edit(stack: int, row: int, pasted: Sequence[Mapping[str, str]], *, insert: bool) -> Edit:
+    """Return the one edit that pastes rows of texts by column name.
+
+    Parameters
+    ----------
+    row
+        Index of the first element typed over, or before which new ones go.
+    pasted
+        As `app.panels.elements.clipboard.place` gives them.
+    insert
+        Whether every row is a new element; otherwise rows are typed over as long as there are any, and only the
+        rest is new.
+
+    Notes
+    -----
+    A text that is no value becomes a draft, as if it had been typed. A text for a cell that its row does not have,
+    such as a thickness of a sheet, is left out when it is empty; otherwise a typed-over row of the other kind is
+    replaced by a new element of the right one.
+    """
+    rows = [texts for texts in pasted if not _is_half_space(texts)]
+
+    def change(document: Document) -> Document:
+        for offset, texts in enumerate(rows):
+            place = row + offset
+            elements = document.record.stacks[stack].elements
+            is_new = insert or place >= len(elements)
+            if not is_new and _kind(texts, elements[place]) != type(elements[place]):
+                document = edits.delete(stack, (place,)).change(document)
+                is_new = True
+            if is_new:
+                document = _new_element(stack, place, _kind(texts, None)).change(document)
+            document = _type_row(document, stack, place, texts)
+        return document
+
+    selection = Selection(stack, tuple(range(row, row + len(rows))))
+    return Edit(f"paste {_count(len(rows), 'row')}", change, selection)
+
+
+def move_edit(stack: int, rows: Iterable[int], step: int, count: int) -> Edit | None:
+    """Return the edit that moves `rows` of `count` elements one place up (-1) or down (+1), or None at the end."""
+    rows = sorted(set(rows))
+    if not rows:
+        return None
+    before = rows[0] - 1 if step < 0 else rows[-1] + 2
+    return edits.move(stack, rows, before) if 0 <= before <= count else None
+
+
+def _is_half_space(texts: Mapping[str, str]) -> bool:
+    """Whether the row is one that copying the front or the back gave; it is not an element."""
+    return texts.get(WHAT.name, "").casefold() in (WORDS["front"].casefold(), WORDS["back"].casefold())
+
+
+def _kind(texts: Mapping[str, str], present: LayerRecord | SheetRecord | None) -> type[LayerRecord | SheetRecord]:
+    """Return what a row is: by its word, else as the present element, else by which of its cells are filled."""
+    word = texts.get(WHAT.name, "").casefold()
+    if word in (WORDS["layer"].casefold(), WORDS["sheet"].casefold()):
+        return SheetRecord if word == WORDS["sheet"].casefold() else LayerRecord
+    if present is not None:
+        return type(present)
+    of_sheet = any(texts.get(column.name) for column in ALL_COLUMNS[4:])
+    of_layer = any(texts.get(column.name) for column in ALL_COLUMNS[2:4])
+    return SheetRecord if of_sheet and not of_layer else LayerRecord
+
+
+def _new_element(stack: int, row: int, kind: type[LayerRecord | SheetRecord]) -> Edit:
+    if kind is SheetRecord:
+        return edits.add_sheet(stack, row, NEW_SHEET)
+    return edits.add_layer(stack, row, NEW_MATERIAL, NEW_THICKNESS)
+
+
+def _type_row(document: Document, stack: int, row: int, texts: Mapping[str, str]) -> Document:
+    """Return the document with the texts of one pasted row typed into it, as far as the row has such cells."""
+    element = document.record.stacks[stack].elements[row]
+    columns = ALL_COLUMNS[2:4] if isinstance(element, LayerRecord) else _sheet_order(texts)
+    for column in columns:
+        text = texts.get(column.name)
+        if text is None or (not text and isinstance(element, LayerRecord)):
+            continue
+        names = MaterialNames(document.record)
+        document = typed_edit(names, Cell(stack, row, column.name), text).change(document)
+    return document
+
+
+def _sheet_order(texts: Mapping[str, str]) -> list[Column]:
+    """Return the columns of a sheet, those with a text first: no moment may leave the sheet without any part."""
+    return sorted(ALL_COLUMNS[4:], key=lambda column: not texts.get(column.name))
+
+
+def _count(number: int, what: str) -> str:
+    return f"{number} {what}" if number == 1 else f"{number} {what}s"

@@ -1,0 +1,1 @@
+"""The job's materials, and the library they can be taken from."""

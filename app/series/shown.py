@@ -1,0 +1,75 @@
+"""How each quantity is shown: which end is the worst one, its unit on screen, and what decibels mean for it."""
+
+from dataclasses import dataclass
+from typing import Final, Literal
+
+import numpy as np
+
+from stackcore.media.base import FloatArray
+from stackcore.quantities import QUANTITIES
+
+
+@dataclass(frozen=True, slots=True)
+class Shown:
+    """One row of `SHOWN`.
+
+    Parameters
+    ----------
+    worst
+        Which end of a curve is the worst point, or None when neither is.
+    fraction
+        Whether it is a fraction of the incident power, which decibels can show.
+    practical
+        Whether a large value stands for more than a real wall keeps (see `app.series.texts`).
+    decimals
+        Digits after the point on screen, or None for significant digits.
+    """
+
+    worst: Literal["low", "high"] | None = None
+    fraction: bool = False
+    practical: bool = False
+    decimals: int | None = None
+
+
+SHOWN: Final[dict[str, Shown]] = {
+    "reflectance": Shown("high", fraction=True),
+    "transmittance": Shown("low", fraction=True),
+    "absorptance": Shown("high", fraction=True),
+    "return_loss_dB": Shown("low", decimals=3),
+    "insertion_loss_dB": Shown("high", practical=True, decimals=3),
+    "shielding_effectiveness_dB": Shown("low", practical=True, decimals=3),
+    "reflection_phase_deg": Shown(decimals=2),
+    "transmission_phase_deg": Shown(decimals=2),
+    "insertion_phase_delay_deg": Shown(decimals=2),
+    "group_delay_s": Shown(),
+}
+"""Name of the quantity (a CSV column) -> how it is shown."""
+
+_DELAY_UNITS: Final = ((1e12, "fs", 1e15), (1e9, "ps", 1e12), (1e6, "ns", 1e9), (0.0, "µs", 1e6))
+
+
+def shown_unit(quantity: str, *, decibels: bool, frequency: FloatArray) -> tuple[str, float]:
+    """Return the unit on screen and the factor from SI to it.
+
+    The unit of a delay follows the frequencies of the sweep and not the delays, so that it stays while a face is
+    dragged.
+
+    Examples
+    --------
+    >>> shown_unit("group_delay_s", decibels=False, frequency=np.array([8e9, 12e9]))
+    ('ps', 1000000000000.0)
+    """
+    if SHOWN[quantity].fraction:
+        return ("dB" if decibels else ""), 1.0
+    if QUANTITIES[quantity].unit == "s":
+        top = float(np.max(frequency))
+        return next((unit, factor) for least, unit, factor in _DELAY_UNITS if top >= least)
+    return QUANTITIES[quantity].unit, 1.0
+
+
+def shown_values(quantity: str, values: FloatArray, *, decibels: bool, factor: float) -> FloatArray:
+    """Return `values` in the unit on screen; a fraction of 0 in decibels is minus infinity."""
+    if decibels and SHOWN[quantity].fraction:
+        with np.errstate(divide="ignore"):
+            return np.asarray(10 * np.log10(values))
+    return values * factor

@@ -1,0 +1,202 @@
+"""JSON tree -> records. What a value must be is said here; what values must be to each other, in `checks`."""
+
+from collections.abc import Mapping
+from typing import Final, Literal
+
+from stackcore.job.inspector import Inspector, join, one_of, shown
+from stackcore.job.limits import SHEET_PARTS
+from stackcore.job.records import (
+    AngleGrid,
+    ElementRecord,
+    FrequencyGrid,
+    JobRecord,
+    LayerRecord,
+    MaterialRecord,
+    SheetRecord,
+    StackRecord,
+    SweepRecord,
+)
+from stackcore.media.models import MODELS, Constant
+from stackcore.units import Dimension, Measure, measure
+
+FORMAT: Final = "slabwright-job"
+"""Value of the key ``format``."""
+
+JOB_KEYS: Final = ("format", "version", "title", "notes", "materials", "stacks", "sweep")
+STACK_KEYS: Final = ("name", "front", "back", "elements")
+FREQUENCY_KEYS: Final = ("start", "stop", "points", "spacing")
+ANGLE_KEYS: Final = ("start", "stop", "points")
+SHEET_KINDS: Final = ("series",)
+
+CONSTANTS: Final = tuple(dict.fromkeys(name for model in MODELS.values() for name in model.readers))
+"""The constants any model takes, in the order of the file."""
+
+MATERIAL_KEYS: Final = ("label", "library", "model", *CONSTANTS, "source")
+
+_POINTS: Final = "a whole number from 1 to 1000000"
+_MILLIMETRE: Final = measure(1e-3, Dimension.LENGTH)
+_LOW: Final = measure(1.0, Dimension.FREQUENCY)
+_NORMAL: Final = measure(0.0, Dimension.ANGLE)
+
+
+def decode_job(tree: Mapping[str, object], inspector: Inspector) -> JobRecord:
+    """Return the record of a whole file of the current version; faults go to `inspector`.
+
+    Where something is wrong a stand-in takes its place, so that what remains can be checked.
+    """
+    inspector.mapping(tree, "", JOB_KEYS, ("stacks", "sweep"))
+    stacks = inspector.sequence(tree["stacks"], "stacks") if "stacks" in tree else []
+    return JobRecord(
+        title=inspector.text(tree.get("title", ""), "title"),
+        stacks=tuple(_stack(inspector, value, join("stacks", place)) for place, value in enumerate(stacks)),
+        sweep=_sweep(inspector, tree.get("sweep"), "sweep" in tree),
+        materials=_materials(inspector, tree.get("materials", {})),
+        notes=inspector.text(tree.get("notes", ""), "notes"),
+    )
+
+
+def _materials(inspector: Inspector, value: object) -> tuple[MaterialRecord, ...]:
+    if not isinstance(value, dict):
+        allowed = 'an object: "materials": {"skin": {"model": "constant", "permittivity": 4.2}}'
+        inspector.fault("materials", f"{shown(value)} is not an object", allowed)
+        return ()
+    inspector.repeated(value, "materials")
+    return tuple(_material(inspector, key, item, join("materials", key)) for key, item in value.items())
+
+
+def _material(inspector: Inspector, name: str, value: object, path: str) -> MaterialRecord:
+    stand_in = MaterialRecord(name, model="constant", permittivity=1.0 + 0.0j)
+    inspector.text(name, path)
+    given = inspector.mapping(value, path, MATERIAL_KEYS)
+    if given is None:
+        return stand_in
+    texts = {
+        key: inspector.text(given[key], join(path, key)) for key in ("label", "library", "source") if key in given
+    }
+    model = inspector.choice(given["model"], join(path, "model"), MODELS, "") if "model" in given else ""
+    constants: dict[str, Constant | None] = {
+        key: _constant(inspector, key, given[key], join(path, key)) for key in CONSTANTS if key in given
+    }
+    if any(place.startswith(path) for place in inspector.faulted if place.startswith((f"{path}.", f"{path}["))):
+        inspector.faulted.add(path)
+    _loss_twice(inspector, given, path)
+    return MaterialRecord(name, model=model, **texts, **constants)  # type: ignore[arg-type]
+
+
+def _constant(inspector: Inspector, name: str, value: object, path: str) -> Constant | None:
+    """Read a constant by the reader of its model; the readers of one name are the same in every model."""
+    reader = next(model.readers[name] for model in MODELS.values() if name in model.readers)
+    return inspector.read(lambda: reader(value), path, None)
+
+
+def _loss_twice(inspector: Inspector, given: dict[str, object], path: str) -> None:
+    if "loss_tangent" in given and isinstance(given.get("permittivity"), list):
+        allowed = "permittivity as a number with loss_tangent, or [real, loss] alone"
+        inspector.fault(join(path, "loss_tangent"), "the loss is given twice, permittivity has it as well", allowed)
+
+
+def _stack(inspector: Inspector, value: object, path: str) -> StackRecord:
+    given = inspector.mapping(value, path, STACK_KEYS, ("name", "elements"))
+    if given is None:
+        return StackRecord(path)
+    elements = inspector.sequence(given["elements"], join(path, "elements")) if "elements" in given else []
+    return StackRecord(
+        name=inspector.text(given["name"], join(path, "name"), path) if "name" in given else path,
+        elements=tuple(
+            _element(inspector, item, join(join(path, "elements"), place)) for place, item in enumerate(elements)
+        ),
+        front=inspector.text(given.get("front", "air"), join(path, "front"), "air"),
+        back=inspector.text(given.get("back", "air"), join(path, "back"), "air"),
+    )
+
+
+def _element(inspector: Inspector, value: object, path: str) -> ElementRecord:
+    stand_in = LayerRecord("air", _MILLIMETRE)
+    allowed = '{"layer": "skin", "thickness": "1 mm"} or {"sheet": "series", "resistance": "377 ohm/sq"}'
+    if not isinstance(value, dict):
+        inspector.fault(path, f"{shown(value)} is not an element", allowed)
+        return stand_in
+    if ("layer" in value) == ("sheet" in value):
+        given = "both a layer and a sheet" if "layer" in value else "neither a layer nor a sheet"
+        inspector.fault(path, f"this is {given}", allowed)
+        return stand_in
+    return _layer(inspector, value, path) if "layer" in value else _sheet(inspector, value, path)
+
+
+def _layer(inspector: Inspector, value: dict[str, object], path: str) -> LayerRecord:
+    inspector.mapping(value, path, ("layer", "thickness"), ("thickness",))
+    thickness = _MILLIMETRE
+    if "thickness" in value:
+        thickness = inspector.measure(
+            value["thickness"], join(path, "thickness"), Dimension.LENGTH, _MILLIMETRE
+        )
+    return LayerRecord(inspector.text(value["layer"], join(path, "layer"), "air"), thickness)
+
+
+def _sheet(inspector: Inspector, value: dict[str, object], path: str) -> SheetRecord:
+    inspector.mapping(value, path, ("sheet", *SHEET_PARTS))
+    kind = inspector.choice(value["sheet"], join(path, "sheet"), SHEET_KINDS, "series")
+    parts: dict[str, Measure] = {}
+    for name, limits in SHEET_PARTS.items():
+        if name in value:
+            stand_in = measure(1.0, limits.dimension)
+            parts[name] = inspector.measure(value[name], join(path, name), limits.dimension, stand_in)
+    return SheetRecord(kind, **parts)
+
+
+def _sweep(inspector: Inspector, value: object, present: bool) -> SweepRecord:
+    given = inspector.mapping(value, "sweep", ("frequency", "angle"), ("frequency", "angle")) if present else None
+    given = given or {}
+    return SweepRecord(
+        _frequency(inspector, given["frequency"]) if "frequency" in given else (_LOW,),
+        _angle(inspector, given["angle"]) if "angle" in given else (_NORMAL,),
+    )
+
+
+def _frequency(inspector: Inspector, value: object) -> FrequencyGrid | tuple[Measure, ...]:
+    path = "sweep.frequency"
+    listed = _listed(inspector, value, path, Dimension.FREQUENCY, _LOW)
+    if listed is not None:
+        return listed
+    given = inspector.mapping(value, path, FREQUENCY_KEYS, ("start", "stop", "points")) or {}
+    start, stop, points = _grid(inspector, given, path, Dimension.FREQUENCY, _LOW)
+    spacing: Literal["linear", "log"] = "linear"
+    if "spacing" in given:
+        chosen = inspector.choice(given["spacing"], join(path, "spacing"), ("linear", "log"), "linear")
+        spacing = "log" if chosen == "log" else "linear"
+    return FrequencyGrid(start, stop, points, spacing)
+
+
+def _angle(inspector: Inspector, value: object) -> AngleGrid | tuple[Measure, ...]:
+    path = "sweep.angle"
+    listed = _listed(inspector, value, path, Dimension.ANGLE, _NORMAL)
+    if listed is not None:
+        return listed
+    given = inspector.mapping(value, path, ANGLE_KEYS, ANGLE_KEYS) or {}
+    return AngleGrid(*_grid(inspector, given, path, Dimension.ANGLE, _NORMAL))
+
+
+def _listed(
+    inspector: Inspector, value: object, path: str, dimension: Dimension, stand_in: Measure
+) -> tuple[Measure, ...] | None:
+    """Return the measures of a list, a stand-in for what is neither list nor object, or None for an object."""
+    if isinstance(value, list):
+        return tuple(
+            inspector.measure(item, join(path, place), dimension, stand_in) for place, item in enumerate(value)
+        )
+    if isinstance(value, dict):
+        return None
+    allowed = f"{{start, stop, points}} or a list such as {one_of([dimension.example])}"
+    inspector.fault(path, f"{shown(value)} is neither a grid nor a list", allowed)
+    return (stand_in,)
+
+
+def _grid(
+    inspector: Inspector, given: dict[str, object], path: str, dimension: Dimension, stand_in: Measure
+) -> tuple[Measure, Measure, int]:
+    ends = [
+        inspector.measure(given[key], join(path, key), dimension, stand_in) if key in given else stand_in
+        for key in ("start", "stop")
+    ]
+    points = inspector.whole(given["points"], join(path, "points"), 1, _POINTS) if "points" in given else 1
+    return ends[0], ends[1], points

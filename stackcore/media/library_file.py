@@ -1,0 +1,284 @@
+"""One file of the material library: TOML text -> entries, and every fault with its place.
+
+A file is a family. It starts with a table ``family`` (``label``, and ``note`` if wanted); each entry is a
+table ``[[material]]``:
+
+    [[material]]
+    name = "copper"                    # lower case, digits and hyphens; the entry is metals/copper
+    label = "Copper"
+    also = ["Cu"]                      # further words to find it by; may be left out
+    model = "conductor"                # a row of stackcore.media.models.MODELS, which names the constants
+    conductivity = "59.6 MS/m"
+    range = ["1 Hz", "300 GHz"]        # where the constants hold
+    source = "..."                     # publication with edition; common practice says that it is
+    certainty = "read"                 # read, recalled or common practice
+    spread = { conductivity = 0.01 }   # relative, one standard deviation, for every constant given
+    note = "20 °C; ..."                # temperature, form, cautions; may be left out
+
+An entry with a fault is left out; the others of the file stay.
+"""
+
+import math
+import re
+import tomllib
+from dataclasses import dataclass, field
+from typing import Final
+
+from stackcore.errors import Fault, UnitError, nearest
+from stackcore.media.base import AbstractMedium, FrequencyRange, Provenance
+from stackcore.media.models import MODELS, Constant, Model
+from stackcore.units import Dimension, parse_measure
+
+CERTAINTIES: Final = ("read", "recalled", "common practice")
+"""How a value is known: read in the source, remembered from it, or what the trade takes as typical."""
+
+_NAME: Final = re.compile(r"[a-z0-9]+(-[a-z0-9]+)*")
+_ENTRY_KEYS: Final = ("name", "label", "also", "model", "range", "source", "certainty", "spread", "note")
+_FAMILY_KEYS: Final = ("label", "note")
+
+_Table = dict[str, object]
+
+
+@dataclass(frozen=True, slots=True)
+class LibraryEntry:
+    """One material of the library.
+
+    Parameters
+    ----------
+    key
+        ``family/name``, what a job file refers to.
+    label
+        Name for people.
+    family
+        Key of the family, the part of `key` before the slash.
+    model
+        Key of `stackcore.media.models.MODELS`.
+    constants
+        Name and value of each constant as given, named as in a job file: relative constants complex, a loss
+        tangent as a number, quantities with a unit as `Measure`.
+    valid_range, provenance
+        See `stackcore.media.base`; `medium` carries the same.
+    medium
+        Ready for a layer.
+    also
+        Further words it can be found by.
+    """
+
+    key: str
+    label: str
+    family: str
+    model: str
+    constants: tuple[tuple[str, Constant], ...]
+    valid_range: FrequencyRange
+    provenance: Provenance
+    medium: AbstractMedium
+    also: tuple[str, ...] = ()
+
+    @property
+    def name(self) -> str:
+        """Part of `key` after the slash."""
+        return self.key.partition("/")[2]
+
+
+@dataclass(frozen=True, slots=True)
+class Family:
+    """The entries of one file, in its order, and what is wrong with the others."""
+
+    key: str
+    label: str
+    note: str
+    entries: tuple[LibraryEntry, ...]
+    faults: tuple[Fault, ...]
+
+
+def read_family(key: str, content: bytes) -> Family:
+    """Return the family `key` from the bytes of its file; faults are collected, none is raised.
+
+    Examples
+    --------
+    >>> read_family("metals", b"[family").faults[0].path
+    'metals.toml'
+    """
+    place = f"{key}.toml"
+    try:
+        # A byte order mark is what some editors put in front of UTF-8; TOML itself does not take it.
+        tables = tomllib.loads(content.decode("utf-8-sig"))
+    except UnicodeDecodeError as error:
+        return Family(key, key, "", (), (Fault(place, f"is not UTF-8: {error}", "a TOML file in UTF-8"),))
+    except (tomllib.TOMLDecodeError, RecursionError) as error:  # the latter for brackets nested too deep
+        return Family(key, key, "", (), (Fault(place, f"is not TOML: {error}", "a TOML file"),))
+    reading = _Reading(key)
+    label, note = reading.head(tables)
+    for position, table in enumerate(reading.materials(tables)):
+        reading.entry(position, table)
+    return Family(key, label, note, tuple(reading.entries), tuple(reading.faults))
+
+
+@dataclass(slots=True)
+class _Reading:
+    """The reading of one file: entries and faults as they come."""
+
+    family: str
+    entries: list[LibraryEntry] = field(default_factory=list)
+    faults: list[Fault] = field(default_factory=list)
+    taken: set[tuple[str, str]] = field(default_factory=set)
+
+    def fault(self, place: str, message: str, allowed: str = "") -> None:
+        self.faults.append(Fault(f"{self.family}.toml: {place}", message, allowed))
+
+    def head(self, tables: _Table) -> tuple[str, str]:
+        """Return label and note of the family."""
+        self.check_keys("", tables, ("family", "material"))
+        table = tables.get("family")
+        if not isinstance(table, dict):
+            self.fault("family", "the table is missing", '[family] with label = "..." in it')
+            return self.family, ""
+        self.check_keys("family.", table, _FAMILY_KEYS)
+        return self.text("family.", table, "label") or self.family, self.text("family.", table, "note", "")
+
+    def materials(self, tables: _Table) -> list[_Table]:
+        value = tables.get("material", [])
+        if isinstance(value, list) and all(isinstance(table, dict) for table in value):
+            return value
+        self.fault("material", "is not a list of tables", "[[material]] above each entry")
+        return []
+
+    def entry(self, position: int, table: _Table) -> None:
+        """Read one entry into `entries`; with a fault anywhere in it, only its faults are kept."""
+        before = len(self.faults)
+        name = self.name(position, table)
+        place = f"{name or f'material[{position}]'}."
+        label = self.own(place, "label", self.text(place, table, "label"))
+        also = self.words(place, table)
+        valid_range = self.valid_range(place, table)
+        source, certainty = self.text(place, table, "source"), self.certainty(place, table)
+        note = self.text(place, table, "note", "")
+        model = self.model(place, table)
+        constants = self.constants(place, table, model) if model else {}
+        spread = self.spread(place, table, constants)
+        if model is None or valid_range is None or len(self.faults) > before:
+            return
+        provenance = Provenance(source, certainty, spread, note)
+        try:
+            medium = model.build(constants, valid_range, provenance)
+        except ValueError as error:
+            self.fault(name, str(error), "values of a passive material")
+            return
+        key, values = f"{self.family}/{name}", tuple(constants.items())
+        self.entries.append(
+            LibraryEntry(
+                key, label, self.family, str(table["model"]), values, valid_range, provenance, medium, also
+            )
+        )
+
+    def check_keys(self, place: str, table: _Table, known: tuple[str, ...]) -> None:
+        for key in table:
+            if key not in known:
+                self.fault(f"{place}{key}", f"unknown key{nearest(key, known)}", f"one of {', '.join(known)}")
+
+    def text(self, place: str, table: _Table, key: str, default: str | None = None) -> str:
+        """Return a text of the table; one that is missing without a default, or not a text, is a fault."""
+        value = table.get(key, default)
+        if isinstance(value, str) and (value.strip() or key not in table):
+            return value.strip()
+        given = f"{value!r} is not a text with something in it" if key in table else "is missing"
+        self.fault(f"{place}{key}", given, "a text in quotation marks")
+        return ""
+
+    def own(self, place: str, key: str, text: str) -> str:
+        """Return `text`; a fault when another entry of the file has it already as its `key`."""
+        if text and (key, text) in self.taken:
+            self.fault(f"{place}{key}", f"{text!r} is used twice in this file", f"a {key} of its own")
+        self.taken.add((key, text))
+        return text
+
+    def name(self, position: int, table: _Table) -> str:
+        place = f"material[{position}]."
+        name = self.text(place, table, "name")
+        if name and not _NAME.fullmatch(name):
+            self.fault(
+                f"{place}name", f"{name!r} is not a name", "lower case, digits and hyphens: fused-quartz"
+            )
+            return ""
+        return self.own(place, "name", name)
+
+    def words(self, place: str, table: _Table) -> tuple[str, ...]:
+        value = table.get("also", [])
+        if isinstance(value, list) and all(isinstance(word, str) for word in value):
+            return tuple(value)
+        self.fault(f"{place}also", f"{value!r} is not a list of texts", 'for example ["Cu"]')
+        return ()
+
+    def certainty(self, place: str, table: _Table) -> str:
+        value = self.text(place, table, "certainty")
+        if value and value not in CERTAINTIES:
+            known = f"one of {', '.join(CERTAINTIES)}"
+            self.fault(f"{place}certainty", f"{value!r} is not known{nearest(value, CERTAINTIES)}", known)
+        return value
+
+    def valid_range(self, place: str, table: _Table) -> FrequencyRange | None:
+        allowed = 'the lower and the upper end; for example ["8 GHz", "12.4 GHz"]'
+        value = table.get("range")
+        if not (isinstance(value, list) and len(value) == 2 and all(isinstance(end, str) for end in value)):
+            given = f"{value!r} is not a range of frequencies" if "range" in table else "is missing"
+            self.fault(f"{place}range", given, allowed)
+            return None
+        try:
+            lowest, highest = (parse_measure(end, Dimension.FREQUENCY).value for end in value)
+        except UnitError as error:
+            self.fault(f"{place}range", error.message, error.allowed)
+            return None
+        if not 0 < lowest <= highest < math.inf:
+            reason = "is reversed" if lowest > highest else "does not lie above 0"
+            self.fault(f"{place}range", f"{value[0]} to {value[1]} {reason}", allowed)
+            return None
+        return FrequencyRange(lowest, highest)
+
+    def model(self, place: str, table: _Table) -> Model | None:
+        name = self.text(place, table, "model")
+        model = MODELS.get(name)
+        if model is None:
+            if name:
+                known = f"one of {', '.join(MODELS)}"
+                self.fault(f"{place}model", f"{name!r} is not known{nearest(name, MODELS)}", known)
+            return None
+        self.check_keys(place, table, (*_ENTRY_KEYS, *model.readers))
+        for constant in model.required:
+            if constant not in table:
+                self.fault(f"{place}{constant}", "is missing", f"the model {name!r} needs it")
+        return model
+
+    def constants(self, place: str, table: _Table, model: Model) -> dict[str, Constant]:
+        constants: dict[str, Constant] = {}
+        for name, read in model.readers.items():
+            if name in table:
+                try:
+                    constants[name] = read(table[name])
+                except UnitError as error:
+                    self.fault(f"{place}{name}", error.message, error.allowed)
+        return constants
+
+    def spread(
+        self, place: str, table: _Table, constants: dict[str, Constant]
+    ) -> tuple[tuple[str, float], ...]:
+        """Return the relative spread of every constant given."""
+        value = table.get("spread")
+        if not isinstance(value, dict):
+            given = f"{value!r} is not a table" if "spread" in table else "is missing"
+            self.fault(f"{place}spread", given, "for example { permittivity = 0.02 }")
+            return ()
+        spread = []
+        for name, share in value.items():
+            if name not in table or name in _ENTRY_KEYS:
+                known = f"one of {', '.join(constants)}"
+                self.fault(
+                    f"{place}spread.{name}", f"is no constant of this entry{nearest(name, constants)}", known
+                )
+            elif isinstance(share, bool) or not isinstance(share, int | float) or not 0 <= share < 1:
+                allowed = "one standard deviation as a fraction, 0 or more and below 1"
+                self.fault(f"{place}spread.{name}", f"{share!r} is not a relative spread", allowed)
+            else:
+                spread.append((name, float(share)))
+        for name in [name for name in constants if name not in value]:
+            self.fault(f"{place}spread.{name}", "is missing", "a fraction; 0 when the value does not vary")
+        return tuple(spread)

@@ -1,0 +1,95 @@
+"""Holds a response of the solver against the 50-digit answer."""
+
+from dataclasses import dataclass
+
+import mpmath
+import numpy as np
+
+from stackcore.stack import Layer, PerfectConductor
+from tests.exact import Exact, exact, relative_error
+from tests.strategies import Case
+
+TOLERANCE = 1e-10
+BOTTOM = 1e-290  # below it a double has lost digits, or holds nothing at all
+
+
+@dataclass(frozen=True, slots=True)
+class Miss:
+    """A quantity further from the truth than allowed."""
+
+    name: str
+    polarization: str
+    got: float
+    right: float
+    error: float
+
+    def __str__(self) -> str:
+        return f"{self.name} {self.polarization}: got {self.got!r}, right {self.right!r}, error {self.error:.2e}"
+
+
+def misses(case: Case) -> list[Miss]:
+    """Return every quantity of `case` that is off by more than the tolerance; an empty list when all is well."""
+    response = case.solve()
+    found: list[Miss] = []
+    for p, (name, truth) in enumerate(zip(("TE", "TM"), exact(case.stack, case.frequency, case.angle), strict=True)):
+        rows = [
+            ("reflectance", response.reflectance, truth.reflectance),
+            ("transmittance", response.transmittance, truth.transmittance),
+            ("absorptance", response.absorptance, truth.absorptance),
+        ]
+        for quantity, got, right in rows:
+            found += _power_miss(quantity, name, float(got[0, 0, p]), right, case)
+        found += _shielding_miss(name, float(response.shielding_effectiveness_dB[0, 0, p]), truth)
+        if not isinstance(case.stack.back, PerfectConductor):
+            delay = float(response.insertion_phase_delay_deg[0, 0, p])
+            found += _phase_miss(name, delay, truth, complex(response.log_transmission[0, 0, p]), case)
+    return found
+
+
+def report(case: Case, found: list[Miss]) -> str:
+    """Return what a person needs to look into the misses of `case`."""
+    return "\n".join([repr(case), *(str(miss) for miss in found)])
+
+
+def lossless(case: Case) -> bool:
+    """Return whether nothing in the stack absorbs: every layer and sheet is lossless."""
+    for element in case.stack.elements:
+        if isinstance(element, Layer):
+            values = element.medium.evaluate(np.array(case.frequency))
+            if complex(values.permittivity).imag or complex(values.permeability).imag:
+                return False
+        elif complex(element.sheet.impedance(np.array(case.frequency))).real:
+            return False
+    return True
+
+
+def _power_miss(quantity: str, polarization: str, got: float, right: mpmath.mpf, case: Case) -> list[Miss]:
+    """Return the miss of a fraction of power, if it is one."""
+    if quantity == "absorptance" and lossless(case):
+        return [] if got == 0 else [Miss(quantity, polarization, got, 0.0, float("inf"))]
+    if right < BOTTOM:
+        return [] if 0 <= got <= 2 * BOTTOM else [Miss(quantity, polarization, got, float(right), float("inf"))]
+    error = relative_error(got, right)
+    return [Miss(quantity, polarization, got, float(right), error)] if not error <= TOLERANCE else []
+
+
+def _shielding_miss(polarization: str, got: float, truth: Exact) -> list[Miss]:
+    """Return the miss of the shielding effectiveness: relative to it, or to 1 dB when it is less."""
+    right = truth.shielding_effectiveness_dB
+    if right == mpmath.inf:
+        return [] if got == np.inf else [Miss("shielding", polarization, got, np.inf, float("inf"))]
+    error = float(abs(mpmath.mpf(got) - right) / max(1, abs(right)))
+    return [Miss("shielding", polarization, got, float(right), error)] if not error <= TOLERANCE else []
+
+
+def _phase_miss(polarization: str, got: float, truth: Exact, log_t: complex, case: Case) -> list[Miss]:
+    """Return the miss of the insertion phase delay, modulo 360 degrees.
+
+    A phase of N turns held in a double is known to N turns times 1e-16 and no better, hence the second term.
+    """
+    turns = mpmath.mpf(got) - truth.insertion_phase_delay_deg
+    error = float(abs(turns - 360 * mpmath.nint(turns / 360)))
+    displaced = 2 * np.pi * case.stack.thickness / case.wavelength
+    allowed = 1e-8 + 1e-15 * float(np.degrees(abs(log_t.imag) + displaced))
+    right = float(truth.insertion_phase_delay_deg)
+    return [Miss("insertion phase delay", polarization, got, right, error)] if not error <= allowed else []
