@@ -8,17 +8,11 @@ from app.document.edit import element_at, refuse, stack_at, with_element, with_s
 from app.document.library import with_material
 from app.document.material_cells import MATERIAL_COLUMNS, material_text, with_material_text
 from app.document.material_edits import material_of
-from app.document.reading import list_text, read_list, read_points, unit_of
+from app.document.reading import list_text, read_like, read_list, read_points
 from stackcore.errors import UnitError, nearest
+from stackcore.job.limits import SHEET_PARTS
 from stackcore.job.records import AngleGrid, FrequencyGrid, JobRecord, LayerRecord, SheetRecord, Spacing
-from stackcore.units import Dimension, Measure, parse_measure
-
-SHEET_PARTS: Final = {
-    "resistance": Dimension.RESISTANCE,
-    "inductance": Dimension.INDUCTANCE,
-    "capacitance": Dimension.CAPACITANCE,
-}
-"""Column of a sheet -> what it measures."""
+from stackcore.units import Dimension, Measure
 
 SPACINGS: Final[tuple[Spacing, ...]] = ("linear", "log")
 
@@ -118,19 +112,17 @@ def _with_element_text(record: JobRecord, cell: Cell, text: str) -> JobRecord:
     if cell.column == "material":
         record, name = with_material(record, text)
         return with_element(record, cell.stack, cell.row, replace(element, material=name))
-    thickness = _like(element.thickness, text, Dimension.LENGTH)
+    thickness = read_like(element.thickness, text, Dimension.LENGTH)
     return with_element(record, cell.stack, cell.row, replace(element, thickness=thickness))
 
 
 def _part(sheet: SheetRecord, part: str) -> Measure | None:
-    return {"resistance": sheet.resistance, "inductance": sheet.inductance, "capacitance": sheet.capacitance}[
-        part
-    ]
+    return {"resistance": sheet.resistance, "inductance": sheet.inductance, "capacitance": sheet.capacitance}[part]
 
 
 def _with_part(sheet: SheetRecord, part: str, text: str) -> SheetRecord:
     """Return `sheet` with one part set; an empty text takes the part away."""
-    value = _like(_part(sheet, part), text, SHEET_PARTS[part]) if text.strip() else None
+    value = read_like(_part(sheet, part), text, SHEET_PARTS[part].dimension) if text.strip() else None
     if part == "resistance":
         return replace(sheet, resistance=value)
     if part == "inductance":
@@ -168,7 +160,7 @@ def _frequency(
         return replace(old, points=read_points(text))
     if part == "spacing":
         return replace(old, spacing=_spacing(text))
-    end = _like(old.start if part == "start" else old.stop, text, Dimension.FREQUENCY)
+    end = read_like(old.start if part == "start" else old.stop, text, Dimension.FREQUENCY)
     return replace(old, start=end) if part == "start" else replace(old, stop=end)
 
 
@@ -178,7 +170,7 @@ def _angle(old: AngleGrid | tuple[Measure, ...], column: str, text: str) -> Angl
     part = column.rpartition(".")[2]
     if part == "points":
         return replace(old, points=read_points(text))
-    end = _like(old.start if part == "start" else old.stop, text, Dimension.ANGLE)
+    end = read_like(old.start if part == "start" else old.stop, text, Dimension.ANGLE)
     return replace(old, start=end) if part == "start" else replace(old, stop=end)
 
 
@@ -188,9 +180,3 @@ def _spacing(text: str) -> Literal["linear", "log"]:
         if wanted == spacing:
             return spacing
     raise UnitError(f"{text!r} is no spacing{nearest(wanted, SPACINGS)}", f"one of {', '.join(SPACINGS)}")
-
-
-def _like(old: Measure | None, text: str, dimension: Dimension) -> Measure:
-    """Return the quantity of `text`; a bare number has the unit of `old`."""
-    unit = unit_of(old.text, dimension) if old is not None else dimension.usual_unit
-    return parse_measure(text.strip(), dimension, default_unit=unit)

@@ -1,10 +1,11 @@
 """What is designed, as one frozen value: a job that resolves, and the texts typed that are not values yet."""
 
-from dataclasses import dataclass, field
+from dataclasses import dataclass, replace
 from typing import Final
 
 from stackcore.errors import Fault
-from stackcore.job.resolve import Job
+from stackcore.job import Job
+from stackcore.job.inspector import join
 from stackcore.job.records import JobRecord
 
 WHOLE_ROW: Final = -1
@@ -64,7 +65,8 @@ class Cell:
         if self.column in STACK_COLUMNS:
             return f"stacks[{self.stack}].{self.column}"
         if self.column.startswith("material:"):
-            return f"materials.{self.column.removeprefix('material:')}"
+            name, _, constant = self.column.removeprefix("material:").rpartition(".")
+            return join(join("materials", name), constant)
         return self.column
 
 
@@ -80,11 +82,15 @@ def material_cell(name: str, constant: str) -> Cell:
 
 @dataclass(frozen=True, slots=True)
 class Draft:
-    """A text typed that is not a value (yet): kept as typed and shown at its cell with what is wrong."""
+    """A text typed that is not a value (yet): kept as typed and shown at its cell with what is wrong there."""
 
     cell: Cell
     text: str
     fault: Fault
+
+    def at(self, cell: Cell) -> "Draft":
+        """Return the draft at another cell, its fault with it."""
+        return Draft(cell, self.text, replace(self.fault, path=cell.path))
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -98,11 +104,12 @@ class Document:
     job
         The last job that resolves; curves are drawn from it.
     drafts
-        At most one a cell. While there is any, the curves do not show everything that was typed: they are stale.
+        At most one a cell. While there is any, the curves do not show everything that was typed: they are
+        stale.
     """
 
     job: Job
-    drafts: tuple[Draft, ...] = field(default=())
+    drafts: tuple[Draft, ...] = ()
 
     @property
     def record(self) -> JobRecord:

@@ -5,8 +5,8 @@ from dataclasses import dataclass, replace
 
 from app.document.document import Cell, Document, Draft, Selection
 from stackcore.errors import Fault, JobError
+from stackcore.job import Job
 from stackcore.job.records import ElementRecord, JobRecord, StackRecord
-from stackcore.job.resolve import Job
 
 Select = Selection | Callable[[Document], Selection]
 
@@ -96,12 +96,12 @@ def follow_rows(drafts: Iterable[Draft], stack: int, origins: Sequence[int | Non
     stack
         Index of the stack.
     origins
-        For each row of now the row it came from, or None for a new one. A row that came twice brings its drafts
-        twice; a row that is gone takes its drafts with it.
+        For each row of now the row it came from, or None for a new one. A row that came twice brings its
+        drafts twice; a row that is gone takes its drafts with it.
     """
     others, moving = _split(drafts, lambda cell: cell.stack == stack and cell.row >= 0)
     moved = (
-        replace(draft, cell=replace(draft.cell, row=row))
+        draft.at(replace(draft.cell, row=row))
         for row, origin in enumerate(origins)
         for draft in moving
         if draft.cell.row == origin
@@ -113,7 +113,7 @@ def follow_stacks(drafts: Iterable[Draft], origins: Sequence[int | None]) -> tup
     """Return `drafts` after the stacks were rearranged; `origins` as in `follow_rows`."""
     others, moving = _split(drafts, lambda cell: not cell.of_job)
     moved = (
-        replace(draft, cell=replace(draft.cell, stack=stack))
+        draft.at(replace(draft.cell, stack=stack))
         for stack, origin in enumerate(origins)
         for draft in moving
         if draft.cell.stack == origin

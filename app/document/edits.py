@@ -1,7 +1,7 @@
 """Every edit there is, by name: import them from here.
 
-One named function an edit; each returns an `Edit`. A later capability adds a file of its own edits and its names
-here.
+One named function an edit; each returns an `Edit`. A later capability adds a file of its own edits and its
+names here.
 """
 
 from app.document.edit import Edit

@@ -133,9 +133,7 @@ def move(stack: int, rows: Iterable[int], before_row: int) -> Edit:
     return Edit(f"move {_words(moved)}", change, Selection(stack, selected))
 
 
-def _with_new(
-    document: Document, record: JobRecord, stack: int, row: int, element: ElementRecord
-) -> Document:
+def _with_new(document: Document, record: JobRecord, stack: int, row: int, element: ElementRecord) -> Document:
     old = stack_at(record, stack)
     count = len(old.elements)
     if not 0 <= row <= count:

@@ -92,9 +92,7 @@ def _with_sweep(
 ) -> Document:
     """Return the document with a new half of the sweep; drafts of that half are gone with the old one."""
     old = document.record.sweep
-    sweep = SweepRecord(
-        old.frequency if frequency is None else frequency, old.angle if angle is None else angle
-    )
+    sweep = SweepRecord(old.frequency if frequency is None else frequency, old.angle if angle is None else angle)
     half = "sweep.frequency" if frequency is not None else "sweep.angle"
     drafts = (draft for draft in document.drafts if not draft.cell.column.startswith(half))
     return with_record(document, replace(document.record, sweep=sweep), drafts)

@@ -5,14 +5,14 @@ from dataclasses import replace
 from typing import Final
 
 from stackcore.errors import LibraryError
-from stackcore.job.records import JobRecord, MaterialRecord
-from stackcore.media.library import LibraryEntry, library_entry
-from stackcore.units import Measure
+from stackcore.job import checks, with_resolved_library
+from stackcore.job.records import JobRecord, MaterialRecord, SweepRecord
+from stackcore.media.library import library_entry
 
-ALWAYS_DEFINED: Final = ("air", "vacuum")
+ALWAYS_DEFINED: Final = checks.ALWAYS_DEFINED
 """Materials every job has without saying so."""
 
-PERFECT_METAL: Final = "metal"
+PERFECT_METAL: Final = checks.METAL_NAME
 """Name of the perfect conductor; a back half-space only."""
 
 
@@ -23,36 +23,24 @@ def record_of_entry(key: str, taken: Iterable[str]) -> MaterialRecord:
     """
     entry = library_entry(key)
     name = free_name(entry.name, (*taken, *ALWAYS_DEFINED, PERFECT_METAL))
-    return with_values(MaterialRecord(name, label=entry.label, library=key), entry)
+    return pinned(MaterialRecord(name, label=entry.label, library=key))
 
 
-def with_values(record: MaterialRecord, entry: LibraryEntry) -> MaterialRecord:
-    """Return `record` with the model, the constants and the source of `entry`."""
-    constants = dict(entry.constants)
-    relative = {
-        name: complex(value)
-        for name in ("permittivity", "permeability")
-        if (value := constants.get(name)) is not None and not isinstance(value, Measure)
-    }
-    tangent, conductivity = constants.get("loss_tangent"), constants.get("conductivity")
-    return replace(
-        record,
-        label=record.label or entry.label,
-        model=entry.model,
-        permittivity=relative.get("permittivity"),
-        permeability=relative.get("permeability"),
-        loss_tangent=tangent if isinstance(tangent, float) else None,
-        conductivity=conductivity if isinstance(conductivity, Measure) else None,
-        source=record.source or entry.provenance.source,
-    )
+def pinned(material: MaterialRecord) -> MaterialRecord:
+    """Return `material` with model, constants and source written beside its reference into the library, if any.
+
+    Raises LibraryError when the library has no such entry; a job that resolves has none of those.
+    """
+    alone = JobRecord("", (), SweepRecord((), ()), (material,))
+    return with_resolved_library(alone).materials[0]
 
 
 def with_material(record: JobRecord, given: str) -> tuple[JobRecord, str]:
     """Return the job and the name in it of the material `given`.
 
-    `given` is tried as a name, as a label (upper and lower case the same), as the key of a library entry the job
-    already uses, and as a key of the library, whose entry is then added. What is none of these comes back as it
-    is: the job that takes it will say what is wrong.
+    `given` is tried as a name, as a label (upper and lower case the same), as the key of a library entry the
+    job already uses, and as a key of the library, whose entry is then added. What is none of these comes back
+    as it is: the job that takes it will say what is wrong.
     """
     given = given.strip()
     if given in ALWAYS_DEFINED or given == PERFECT_METAL or record.material(given) is not None:

@@ -13,10 +13,10 @@ Message = TypeVar("Message")
 class Listeners(Generic[Message]):
     """Tells every listener every message, each message to all before the next.
 
-    A listener may itself cause a change: that message waits until everybody has heard the present one, so that
-    nobody hears the later change first. An error in one listener does not keep the message from the others:
-    with `report` it is handed there, and without it all errors of the round are raised together at the end as an
-    ``ExceptionGroup``.
+    A listener may itself cause a change: that message waits until everybody has heard the present one, so
+    that nobody hears the later change first. An error in one listener does not keep the message from the
+    others: with `report` it is handed there, and without it all errors of the round are raised together at
+    the end as an ``ExceptionGroup``.
     """
 
     def __init__(self, report: Report | None = None) -> None:

@@ -3,11 +3,10 @@
 from dataclasses import replace
 from typing import Final
 
-from app.document.library import with_values
+from app.document.library import pinned
 from app.document.material_edits import material_of
-from app.document.reading import read_relative, relative_text, unit_of
+from app.document.reading import read_like, read_relative, relative_text
 from stackcore.job.records import JobRecord, MaterialRecord
-from stackcore.media.library import library_entry
 from stackcore.units import Dimension, parse_measure
 
 MATERIAL_COLUMNS: Final = (
@@ -47,22 +46,12 @@ def material_text(material: MaterialRecord, column: str) -> str:
 def with_material_text(record: JobRecord, name: str, column: str, text: str) -> JobRecord:
     """Return `record` with one column of the material `name` set; an empty text takes a constant away.
 
-    A constant typed over one of the library cuts the tie: the reference goes, and the source says what it was.
-    A name is not changed here, because whatever uses it must follow (`material_edits.rename_material`).
+    A constant typed over one of the library cuts the tie: the reference goes, and the source says what it
+    was. A name is not changed here, because whatever uses it must follow (`material_edits.rename_material`).
     """
     old = material_of(record, name)
     new = _with_column(old, column, text)
     return replace(record, materials=tuple(new if one is old else one for one in record.materials))
-
-
-def pinned(material: MaterialRecord) -> MaterialRecord:
-    """Return `material` with its values beside a bare reference into the library.
-
-    Raises LibraryError when the library has no such entry; a job that resolves has none of those.
-    """
-    if material.library and not material.model:
-        return with_values(material, library_entry(material.library))
-    return material
 
 
 def _with_column(material: MaterialRecord, column: str, text: str) -> MaterialRecord:
@@ -90,6 +79,5 @@ def _with_constant(material: MaterialRecord, column: str, text: str) -> Material
             return replace(material, loss_tangent=tangent)
         case _:
             old = material.conductivity
-            unit = unit_of(old.text, Dimension.CONDUCTIVITY) if old else Dimension.CONDUCTIVITY.usual_unit
-            conductivity = parse_measure(text, Dimension.CONDUCTIVITY, default_unit=unit) if text else None
+            conductivity = read_like(old, text, Dimension.CONDUCTIVITY) if text else None
             return replace(material, conductivity=conductivity)

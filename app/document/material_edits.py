@@ -111,15 +111,13 @@ def _renamed(document: Document, name: str, material: MaterialRecord) -> Documen
         elements = tuple(element(one) for one in old.elements)
         return replace(old, front=follow(old.front), back=follow(old.back), elements=elements)
 
-    changed = replace(
-        _with_materials(record, name, material), stacks=tuple(stack(one) for one in record.stacks)
-    )
+    changed = replace(_with_materials(record, name, material), stacks=tuple(stack(one) for one in record.stacks))
     drafts = []
     for draft in document.drafts:
         head, dot, constant = draft.cell.column.rpartition(".")
         if head == f"material:{name}":
             column = f"material:{material.name}{dot}{constant}"
-            draft = replace(draft, cell=replace(draft.cell, column=column))
+            draft = draft.at(replace(draft.cell, column=column))
         drafts.append(draft)
     return with_record(document, changed, drafts)
 

@@ -1,9 +1,10 @@
 """Texts of cells -> values: relative constants and lists of quantities.
 
-Single quantities are `stackcore.units`' affair; what is here is what a job file writes as ``[real, loss]`` or as a
-list, and a person as ``4.2 - 0.06j`` or ``0, 30, 45 deg``.
+Single quantities are `stackcore.units`' affair; what is here is what a job file writes as ``[real, loss]`` or
+as a list, and a person as ``4.2 - 0.06j`` or ``0, 30, 45 deg``.
 """
 
+import contextlib
 import re
 from typing import Final
 
@@ -24,8 +25,8 @@ _COMMA_IN_NUMBER: Final = re.compile(r"\d,\d")
 def read_relative(text: str) -> complex:
     """Return ε or μ as real − j·loss.
 
-    Takes ``4.2``, ``4.2 - 0.06j``, ``4.2 - j0.06`` and ``[4.2, 0.06]`` as in the job file. Whether the value is
-    one a passive material can have is for the job to say.
+    Takes ``4.2``, ``4.2 - 0.06j``, ``4.2 - j0.06`` and ``[4.2, 0.06]`` as in the job file. Whether the value
+    is one a passive material can have is for the job to say.
 
     Raises
     ------
@@ -70,13 +71,15 @@ def relative_text(value: complex) -> str:
 def read_list(text: str, dimension: Dimension) -> tuple[Measure, ...]:
     """Return the quantities of a list.
 
-    Entries are divided by semicolons, by commas with a space behind, or, when they are bare numbers, by spaces. An
-    entry without a unit has that of the last entry: ``0, 30, 45 deg``; when that has none either, the usual unit.
+    Entries are divided by semicolons, by commas with a space behind, or, when they are bare numbers, by
+    spaces. An entry without a unit has that of the last entry: ``0, 30, 45 deg``; when that has none either,
+    the usual unit.
 
     Raises
     ------
     UnitError
-        For an empty list, an entry that is no quantity, and a comma that may be a decimal sign or divide entries.
+        For an empty list, an entry that is no quantity, and a comma that may be a decimal sign or divide
+        entries.
 
     Examples
     --------
@@ -87,7 +90,7 @@ def read_list(text: str, dimension: Dimension) -> tuple[Measure, ...]:
     entries = [entry for entry in entries if entry]
     if not entries:
         raise UnitError("the list is empty", f"values divided by semicolons: {dimension.example}; ...")
-    unit = unit_of(entries[-1], dimension)
+    unit = unit_of(entries[-1], dimension) or dimension.usual_unit
     return tuple(parse_measure(entry, dimension, default_unit=unit) for entry in entries)
 
 
@@ -111,21 +114,34 @@ def read_points(text: str) -> int:
 
 
 def unit_of(text: str, dimension: Dimension) -> str:
-    """Return the unit `text` ends with, when it is one of `dimension`, else the usual unit.
+    """Return the unit `text` ends with, or an empty text when it has none of `dimension`.
 
     Examples
     --------
     >>> unit_of("35 um", Dimension.LENGTH), unit_of("1/8 in", Dimension.LENGTH), unit_of("7", Dimension.LENGTH)
-    ('um', 'in', 'mm')
+    ('um', 'in', '')
     """
     match = _UNIT_AT_END.search(text.strip())
     if match:
-        try:
-            parse_measure(f"1 {match['unit']}", dimension)
-        except UnitError:
-            return dimension.usual_unit
-        return match["unit"].strip()
-    return dimension.usual_unit
+        unit = match["unit"].strip()
+        with contextlib.suppress(UnitError):
+            parse_measure(f"1 {unit}", dimension)
+            return unit
+    return ""
+
+
+def read_like(old: Measure | None, text: str, dimension: Dimension) -> Measure:
+    """Return the quantity of `text` typed over `old`; a bare number has the unit `old` was written in.
+
+    Over nothing it has the usual unit, and over a bare number the SI unit, which is what that one is in.
+
+    Examples
+    --------
+    >>> read_like(Measure(35e-6, "35 um"), "40", Dimension.LENGTH)
+    Measure(value=4e-05, text='40 um')
+    """
+    unit = dimension.usual_unit if old is None else unit_of(old.text, dimension) or dimension.si_unit
+    return parse_measure(text.strip(), dimension, default_unit=unit)
 
 
 def _divide(text: str) -> list[str]:

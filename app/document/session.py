@@ -13,9 +13,8 @@ from app.document.listeners import Listeners, Report
 from app.document.typed import settle
 from app.document.untitled import untitled_job
 from stackcore.errors import Fault, InputError
+from stackcore.job import Job, read_job, write_job
 from stackcore.job.records import JobRecord
-from stackcore.job.resolve import Job
-from stackcore.job.store import read_job, write_job
 
 ChangeKind = Literal["edit", "undo", "redo", "open", "select", "save"]
 
@@ -54,8 +53,8 @@ class Session:
     job
         Where to begin; without it the untitled job of `new`.
     report
-        Takes errors that listeners raise. Without it they are raised together, as an ``ExceptionGroup``, after
-        every listener was told and the change was made.
+        Takes errors that listeners raise. Without it they are raised together, as an ``ExceptionGroup``,
+        after every listener was told and the change was made.
     clock
         Seconds that only grow, for merging steps.
 

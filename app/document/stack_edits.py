@@ -11,12 +11,12 @@ from stackcore.job.records import JobRecord, StackRecord
 
 
 def set_front(stack: int, name: str) -> Edit:
-    """Return the edit that fills the front half-space with `name`: a material of the job or a key of the library."""
+    """Return the edit that fills the front half-space with a material of the job or a library key."""
     return _set_half_space(stack, "front", name)
 
 
 def set_back(stack: int, name: str) -> Edit:
-    """Return the edit that fills the back half-space with `name`; ``metal`` is a perfect conductor."""
+    """Return the edit that fills the back half-space likewise; ``metal`` is a perfect conductor."""
     return _set_half_space(stack, "back", name)
 
 
@@ -69,9 +69,7 @@ def delete_stack(stack: int) -> Edit:
         stack_at(document.record, stack)
         stacks = document.record.stacks
         if len(stacks) == 1:
-            raise refuse(
-                "stacks", "the only stack cannot be deleted", "delete its elements, or add a stack first"
-            )
+            raise refuse("stacks", "the only stack cannot be deleted", "delete its elements, or add a stack first")
         origins = [place for place in range(len(stacks)) if place != stack]
         record = replace(document.record, stacks=tuple(stacks[place] for place in origins))
         return with_record(document, record, follow_stacks(document.drafts, origins))

@@ -29,9 +29,9 @@ _JOB_WORDS: Final = {
 def type_into(cell: Cell, text: str) -> Edit:
     """Return the edit for a text typed into `cell`.
 
-    A text that is a value, and with which the job resolves, becomes the value, and the cell's draft is gone. Any
-    other text becomes the cell's draft, and the value stays the last good one. A bare number has the unit that the
-    cell's value was written in.
+    A text that is a value, and with which the job resolves, becomes the value, and the cell's draft is gone.
+    Any other text becomes the cell's draft, and the value stays the last good one. A bare number has the unit
+    that the cell's value was written in.
 
     The edit is refused only when there is no such cell.
 
@@ -43,13 +43,10 @@ def type_into(cell: Cell, text: str) -> Edit:
 
     def change(document: Document) -> Document:
         check_cell(document.record, cell)
-        try:
-            return _accepted(document, cell, text)
-        except UnitError as error:
-            fault = Fault(cell.path, error.message, error.allowed)
-        except InputError as error:
-            fault = _fault_at(cell, error.faults)
-        draft = Draft(cell, text, fault)
+        taken = _taken(document, cell, text)
+        if isinstance(taken, Document):
+            return taken
+        draft = Draft(cell, text, taken)
         return Document(document.job, (*without_draft(document.drafts, cell), draft))
 
     return Edit(_sentence(cell, text), change, merge_key=Brief(("type into", cell)))
@@ -65,26 +62,40 @@ def settle(document: Document) -> Document:
     """Return `document` with every draft tried again.
 
     A draft that the rest of the job had stood against (a material not defined, a start beyond the stop) becomes
-    the value as soon as it can. One whose cell no longer exists is dropped.
+    the value as soon as it can; one that still cannot says what is wrong now. One whose cell no longer exists is
+    dropped.
     """
-    tried = 0
-    while tried < len(document.drafts):
-        draft = document.drafts[tried]
+    waiting = list(document.drafts)
+    while waiting:
+        draft = waiting.pop(0)
         try:
             check_cell(document.record, draft.cell)
         except InputError:
             document = Document(document.job, without_draft(document.drafts, draft.cell))
             continue
-        try:
-            document = _accepted(document, draft.cell, draft.text)
-            tried = 0  # one that fits may make room for another
-        except (InputError, UnitError):
-            tried += 1
+        taken = _taken(document, draft.cell, draft.text)
+        if isinstance(taken, Document):
+            document = taken
+            waiting = list(document.drafts)  # one that fits may make room for another
+        elif taken != draft.fault:
+            told = replace(draft, fault=taken)
+            drafts = tuple(told if one is draft else one for one in document.drafts)
+            document = Document(document.job, drafts)
     return document
 
 
+def _taken(document: Document, cell: Cell, text: str) -> Document | Fault:
+    """Return the document with the value of `text`, or why it cannot be the value."""
+    try:
+        return _accepted(document, cell, text)
+    except UnitError as error:
+        return Fault(cell.path, error.message, error.allowed)
+    except InputError as error:
+        own = [fault for fault in error.faults if fault.path.startswith(cell.path)]
+        return replace((own or error.faults)[0], path=cell.path)
+
+
 def _accepted(document: Document, cell: Cell, text: str) -> Document:
-    """Return the document with the value of `text`; raises UnitError or InputError when it cannot be taken."""
     cleared = Document(document.job, without_draft(document.drafts, cell))
     if cell.row == WHOLE_ROW and cell.column == "name":
         return rename_stack(cell.stack, text).change(cleared)
@@ -92,12 +103,6 @@ def _accepted(document: Document, cell: Cell, text: str) -> Document:
         name, _ = material_and_constant(cell)
         return cleared if text.strip() == name else rename_material(name, text).change(cleared)
     return with_record(cleared, with_text(document.record, cell, text))
-
-
-def _fault_at(cell: Cell, faults: tuple[Fault, ...]) -> Fault:
-    """Return the fault to show at `cell`: the one of its own place, or else the first, brought there."""
-    own = [fault for fault in faults if fault.path.startswith(cell.path)]
-    return own[0] if own else replace(faults[0], path=cell.path)
 
 
 def _sentence(cell: Cell, text: str) -> str:

@@ -3,8 +3,8 @@
 from typing import Final
 
 from app.document.library import record_of_entry
+from stackcore.job import Job
 from stackcore.job.records import FrequencyGrid, JobRecord, LayerRecord, StackRecord, SweepRecord
-from stackcore.job.resolve import Job
 from stackcore.units import Dimension, Measure, parse_measure
 
 UNTITLED_MATERIAL: Final = "plastics/ptfe"

@@ -40,8 +40,8 @@ class ViewState:
     Raises
     ------
     ValueError
-        For a quantity or a polarization that does not exist, no polarization at all, or a marker that is not a
-        positive frequency.
+        For a quantity or a polarization that does not exist, no polarization at all, or a marker that is not
+        a positive frequency.
     """
 
     quantity: str = "transmittance"
@@ -61,9 +61,7 @@ class ViewState:
             raise ValueError(f"polarizations {self.polarizations}; one or both of {POLARIZATIONS}")
         if not all(np.isfinite(marker) and marker > 0 for marker in self.markers):
             raise ValueError(f"markers {self.markers} must be positive frequencies in Hz")
-        object.__setattr__(
-            self, "active_marker", min(max(self.active_marker, 0), max(len(self.markers) - 1, 0))
-        )
+        object.__setattr__(self, "active_marker", min(max(self.active_marker, 0), max(len(self.markers) - 1, 0)))
         object.__setattr__(self, "active_angle", max(self.active_angle, 0))
 
     def marker_frequency(self, sweep: SweepRecord) -> float:

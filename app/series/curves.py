@@ -8,7 +8,7 @@ from app.document.view import ViewState
 from app.series.shown import SHOWN, shown_unit, shown_values
 from stackcore.conventions import POLARIZATIONS
 from stackcore.media.base import FloatArray
-from stackcore.propagation.response import Response
+from stackcore.propagation import Response
 from stackcore.quantities import QUANTITIES
 
 
@@ -40,6 +40,8 @@ class Curve:
         Frequencies in Hz.
     y
         Values in `unit`; nan where there is nothing to draw.
+    raw
+        The same values with infinite ones as they are.
     unit
         What the values are in, empty for a plain number.
     worst
@@ -58,20 +60,25 @@ class Curve:
     angle_count: int
     x: FloatArray
     y: FloatArray
+    raw: FloatArray
     unit: str
     worst: Point | None
     worst_infinite: float | None
     hidden_points: int
 
 
-def curves_of(response: Response, view_state: ViewState) -> tuple[Curve, ...]:
+def curves_of(
+    response: Response, view_state: ViewState, *, unit_from: FloatArray | None = None
+) -> tuple[Curve, ...]:
     """Return the curves that `view_state` asks for, angle by angle, TE before TM.
 
-    Reflectance, transmittance and absorptance become 10 log10 of themselves when decibels are asked for; group
-    delay comes in the unit of `app.series.shown`.
+    Reflectance, transmittance and absorptance become 10 log10 of themselves when decibels are asked for;
+    group delay comes in the unit of `app.series.shown` for the frequencies `unit_from`, by default the
+    response's own.
     """
     quantity = view_state.quantity
-    unit, factor = shown_unit(quantity, decibels=view_state.decibels, frequency=response.frequency)
+    frequency = response.frequency if unit_from is None else unit_from
+    unit, factor = shown_unit(quantity, decibels=view_state.decibels, frequency=frequency)
     values = shown_values(
         quantity, QUANTITIES[quantity].values(response), decibels=view_state.decibels, factor=factor
     )
@@ -119,6 +126,7 @@ def _curve(
         len(response.angle),
         x,
         np.where(finite, raw, np.nan),
+        raw,
         unit,
         worst,
         infinite,

@@ -51,8 +51,8 @@ _DELAY_UNITS: Final = ((1e12, "fs", 1e15), (1e9, "ps", 1e12), (1e6, "ns", 1e9), 
 def shown_unit(quantity: str, *, decibels: bool, frequency: FloatArray) -> tuple[str, float]:
     """Return the unit on screen and the factor from SI to it.
 
-    The unit of a delay follows the frequencies of the sweep and not the delays, so that it stays while a face is
-    dragged.
+    The unit of a delay follows the frequencies of the sweep and not the delays, so that it stays while a face
+    is dragged.
 
     Examples
     --------

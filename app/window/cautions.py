@@ -8,15 +8,12 @@ from dataclasses import dataclass
 from typing import Final
 
 from app.document.view import ViewState
+from app.series.texts import BEYOND_PRACTICAL, PRACTICAL_DECIBELS
 from stackcore.job.resolve import Job
 from stackcore.propagation.response import Response
 
 STANDING: Final = "Infinite flat sheets, plane wave; verify by test."
 """Holds for every result and is always shown."""
-
-DEEP: Final = 120.0
-"""dB of shielding beyond which seams, apertures and the test set-up decide, not the sheet."""
-
 
 @dataclass(frozen=True, slots=True)
 class Caution:
@@ -33,9 +30,9 @@ MATERIAL_FIGURE: Final = Caution(
     "sheet with other fields than a plane wave. Measure the finished enclosure.",
 )
 BEYOND: Final = Caution(
-    "Beyond about 120 dB no practical enclosure follows the sheet.",
-    "The number is exact for an unbroken infinite sheet. Joints and penetrations limit what is built, and a "
-    "test set-up cannot measure it.",
+    f"{BEYOND_PRACTICAL[0].upper()}{BEYOND_PRACTICAL[1:]}.",
+    f"More than {PRACTICAL_DECIBELS:.0f} dB is a number for an unbroken sheet without end. Joints and "
+    "penetrations limit what is built, and no test set-up can measure it.",
 )
 CONDUCTIVE_COAT: Final = Caution(
     "A conductive layer changes static drain and lightning attachment.",
@@ -133,7 +130,7 @@ def cautions(job: Job, stack: int, view: ViewState, response: Response | None) -
 
 def _deep(response: Response) -> bool:
     shielding = response.shielding_effectiveness_dB
-    return bool((shielding[shielding < float("inf")] > DEEP).any())
+    return bool((shielding[shielding < float("inf")] > PRACTICAL_DECIBELS).any())
 
 
 def _outside_range(job: Job, stack: int) -> bool:

@@ -1,0 +1,1 @@
+"""Calculations beside the window: a snapshot goes in, the newest answer comes out."""

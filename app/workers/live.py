@@ -1,7 +1,8 @@
 """The live lane: the newest question answered, without the window ever waiting.
 
-One slot and no queue. A calculation that runs is finished and shown even when it is old by then (stopping it at
-every movement of a drag would show nothing at all); of the questions that came meanwhile only the newest is taken.
+One slot and no queue. A calculation that runs is finished and shown even when it is old by then (stopping it
+at every movement of a drag would show nothing at all); of the questions that came meanwhile only the newest
+is taken.
 """
 
 import threading
@@ -15,10 +16,9 @@ from PySide6.QtCore import QObject, Qt, Signal, Slot
 
 from app.document.view import ViewState
 from stackcore.errors import Fault, InputError, SlabwrightError
-from stackcore.job.resolve import Job
+from stackcore.job import Job
 from stackcore.media.base import FloatArray
-from stackcore.propagation.response import Response
-from stackcore.propagation.solve import solve
+from stackcore.propagation import Response, solve
 from stackcore.stack import Stack
 
 Solve = Callable[[Stack, FloatArray, FloatArray], Response]
@@ -121,8 +121,8 @@ class _Slot:
 class LiveLane(QObject):
     """Answers questions one after the other, newest first, in one thread of its own.
 
-    Signals arrive in the thread of the lane: `answered` with an `Answer`, `failed` with a `Failure`. Neither comes
-    after `close`.
+    Signals arrive in the thread of the lane: `answered` with an `Answer`, `failed` with a `Failure`. Neither
+    comes after `close`.
 
     Parameters
     ----------

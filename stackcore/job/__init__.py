@@ -1,1 +1,8 @@
+"""The job: what a person writes down, stored in a file, resolved into stacks that can be solved."""
 
+from stackcore.job.codec import job_from_json, job_to_json
+from stackcore.job.materials import with_resolved_library
+from stackcore.job.resolve import Job
+from stackcore.job.store import read_job, write_job
+
+__all__ = ["Job", "job_from_json", "job_to_json", "read_job", "with_resolved_library", "write_job"]

@@ -1,7 +1,7 @@
 """JSON tree -> records. What a value must be is said here; what values must be to each other, in `checks`."""
 
-from collections.abc import Mapping
-from typing import Final, Literal
+from collections.abc import Callable, Mapping
+from typing import Final, Literal, TypeVar
 
 from stackcore.job.inspector import Inspector, join, one_of, shown
 from stackcore.job.limits import SHEET_PARTS
@@ -16,7 +16,7 @@ from stackcore.job.records import (
     StackRecord,
     SweepRecord,
 )
-from stackcore.media.models import MODELS, Constant
+from stackcore.media.models import MODELS, read_conductivity, read_loss_tangent, read_relative
 from stackcore.units import Dimension, Measure, measure
 
 FORMAT: Final = "slabwright-job"
@@ -28,10 +28,12 @@ FREQUENCY_KEYS: Final = ("start", "stop", "points", "spacing")
 ANGLE_KEYS: Final = ("start", "stop", "points")
 SHEET_KINDS: Final = ("series",)
 
-CONSTANTS: Final = tuple(dict.fromkeys(name for model in MODELS.values() for name in model.readers))
-"""The constants any model takes, in the order of the file."""
+CONSTANTS: Final = ("permittivity", "loss_tangent", "permeability", "conductivity")
+"""The constants a material may have, whatever its model, in the order of the file."""
 
 MATERIAL_KEYS: Final = ("label", "library", "model", *CONSTANTS, "source")
+
+T = TypeVar("T")
 
 _POINTS: Final = "a whole number from 1 to 1000000"
 _MILLIMETRE: Final = measure(1e-3, Dimension.LENGTH)
@@ -65,28 +67,33 @@ def _materials(inspector: Inspector, value: object) -> tuple[MaterialRecord, ...
 
 
 def _material(inspector: Inspector, name: str, value: object, path: str) -> MaterialRecord:
-    stand_in = MaterialRecord(name, model="constant", permittivity=1.0 + 0.0j)
     inspector.text(name, path)
     given = inspector.mapping(value, path, MATERIAL_KEYS)
     if given is None:
-        return stand_in
-    texts = {
-        key: inspector.text(given[key], join(path, key)) for key in ("label", "library", "source") if key in given
-    }
-    model = inspector.choice(given["model"], join(path, "model"), MODELS, "") if "model" in given else ""
-    constants: dict[str, Constant | None] = {
-        key: _constant(inspector, key, given[key], join(path, key)) for key in CONSTANTS if key in given
-    }
-    if any(place.startswith(path) for place in inspector.faulted if place.startswith((f"{path}.", f"{path}["))):
-        inspector.faulted.add(path)
+        return MaterialRecord(name, model="constant", permittivity=1.0 + 0.0j)
     _loss_twice(inspector, given, path)
-    return MaterialRecord(name, model=model, **texts, **constants)  # type: ignore[arg-type]
+    known = {key: (item, join(path, key)) for key, item in given.items() if key in MATERIAL_KEYS}
 
+    def text(key: str) -> str:
+        return inspector.text(*known[key]) if key in known else ""
 
-def _constant(inspector: Inspector, name: str, value: object, path: str) -> Constant | None:
-    """Read a constant by the reader of its model; the readers of one name are the same in every model."""
-    reader = next(model.readers[name] for model in MODELS.values() if name in model.readers)
-    return inspector.read(lambda: reader(value), path, None)
+    def constant(key: str, reader: Callable[[object], T]) -> T | None:
+        if key not in known:
+            return None
+        item, place = known[key]
+        return inspector.read(lambda: reader(item), place, None)
+
+    return MaterialRecord(
+        name,
+        label=text("label"),
+        model=inspector.choice(*known["model"], MODELS, "") if "model" in known else "",
+        library=text("library"),
+        permittivity=constant("permittivity", read_relative),
+        permeability=constant("permeability", read_relative),
+        loss_tangent=constant("loss_tangent", read_loss_tangent),
+        conductivity=constant("conductivity", read_conductivity),
+        source=text("source"),
+    )
 
 
 def _loss_twice(inspector: Inspector, given: dict[str, object], path: str) -> None:
@@ -127,9 +134,7 @@ def _layer(inspector: Inspector, value: dict[str, object], path: str) -> LayerRe
     inspector.mapping(value, path, ("layer", "thickness"), ("thickness",))
     thickness = _MILLIMETRE
     if "thickness" in value:
-        thickness = inspector.measure(
-            value["thickness"], join(path, "thickness"), Dimension.LENGTH, _MILLIMETRE
-        )
+        thickness = inspector.measure(value["thickness"], join(path, "thickness"), Dimension.LENGTH, _MILLIMETRE)
     return LayerRecord(inspector.text(value["layer"], join(path, "layer"), "air"), thickness)
 
 

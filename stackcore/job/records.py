@@ -10,7 +10,7 @@ from typing import Literal
 import numpy as np
 
 from stackcore.media.base import FloatArray
-from stackcore.units import Measure
+from stackcore.units import Measure, degrees_of
 
 Spacing = Literal["linear", "log"]
 
@@ -108,10 +108,16 @@ class AngleGrid:
     points: int
 
     def values(self) -> FloatArray:
-        """Return the angles in rad; the ends are exactly the ones given."""
+        """Return the angles in rad; the ends are exactly the ones given.
+
+        The steps are even in degrees, so that those between 0° and 60° at 7 points are 10°, 20° and so on, to the
+        last digit.
+        """
         if self.points == 1:
             return np.array([self.start.value])
-        grid: FloatArray = np.linspace(self.start.value, self.stop.value, self.points)
+        ends = (degrees_of(self.start.value), degrees_of(self.stop.value))
+        grid: FloatArray = np.radians(np.linspace(*ends, self.points))
+        grid[[0, -1]] = self.start.value, self.stop.value
         return grid
 
 

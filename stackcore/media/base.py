@@ -11,6 +11,7 @@
 
 from abc import ABC, abstractmethod
 from dataclasses import dataclass
+from typing import Final
 
 import numpy as np
 from numpy.typing import NDArray
@@ -52,6 +53,10 @@ class Provenance:
     certainty: str = ""
     spread: tuple[tuple[str, float], ...] = ()
     note: str = ""
+
+
+UNSOURCED: Final = Provenance()
+"""Nothing is known about where the numbers come from."""
 
 
 @dataclass(frozen=True, slots=True)

@@ -5,7 +5,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from stackcore.constants import VACUUM_PERMEABILITY, VACUUM_PERMITTIVITY
-from stackcore.media.base import AbstractMedium, Constitutive, FloatArray, FrequencyRange, Provenance
+from stackcore.media.base import UNSOURCED, AbstractMedium, Constitutive, FloatArray, FrequencyRange, Provenance
 
 
 @dataclass(frozen=True, slots=True)
@@ -41,7 +41,7 @@ class ConductorMedium(AbstractMedium):
     conductivity: float
     permeability: complex = 1.0 + 0.0j
     valid_range: FrequencyRange | None = None
-    provenance: Provenance = Provenance()
+    provenance: Provenance = UNSOURCED
 
     def __post_init__(self) -> None:
         if not (np.isfinite(self.conductivity) and self.conductivity > 0):
@@ -57,12 +57,12 @@ class ConductorMedium(AbstractMedium):
     def evaluate(self, frequency: FloatArray) -> Constitutive:
         frequency = np.asarray(frequency, dtype=np.float64)
         loss = self.conductivity / (2 * np.pi * VACUUM_PERMITTIVITY * frequency)
-        return Constitutive(
-            1.0 - 1j * loss,
-            np.full(frequency.shape, self.permeability, dtype=np.complex128),
-            1j * loss / frequency,
-            np.zeros(frequency.shape, dtype=np.complex128),
-        )
+        permittivity = np.ones(frequency.shape, dtype=np.complex128)
+        permittivity.imag = -loss
+        slope = np.zeros(frequency.shape, dtype=np.complex128)
+        slope.imag = loss / frequency
+        permeability = np.full(frequency.shape, self.permeability, dtype=np.complex128)
+        return Constitutive(permittivity, permeability, slope, np.zeros_like(permeability))
 
     def skin_depth(self, frequency: FloatArray) -> FloatArray:
         """Return δ = 1/√(πfμ₀μ′σ) in m, the depth at which the field has fallen to 1/e, at `frequency` in Hz."""

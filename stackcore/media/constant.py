@@ -4,7 +4,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from stackcore.media.base import AbstractMedium, Constitutive, FloatArray, FrequencyRange, Provenance
+from stackcore.media.base import UNSOURCED, AbstractMedium, Constitutive, FloatArray, FrequencyRange, Provenance
 
 
 @dataclass(frozen=True, slots=True)
@@ -36,7 +36,7 @@ class ConstantMedium(AbstractMedium):
     permittivity: complex
     permeability: complex = 1.0 + 0.0j
     valid_range: FrequencyRange | None = None
-    provenance: Provenance = Provenance()
+    provenance: Provenance = UNSOURCED
 
     def __post_init__(self) -> None:
         for name, value in (("permittivity", self.permittivity), ("permeability", self.permeability)):

@@ -40,9 +40,7 @@ class Library:
         try:
             files = {Path(file.name).stem: file for file in folder.iterdir() if file.name.endswith(".toml")}
         except OSError as error:
-            fault = Fault(
-                str(folder), f"the material library cannot be listed: {error}", "a folder of TOML files"
-            )
+            fault = Fault(str(folder), f"the material library cannot be listed: {error}", "a folder of TOML files")
             raise LibraryError([fault]) from error
         self._files = dict(sorted(files.items()))
         self._read: dict[str, Family] = {}

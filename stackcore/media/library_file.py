@@ -196,9 +196,7 @@ class _Reading:
         place = f"material[{position}]."
         name = self.text(place, table, "name")
         if name and not _NAME.fullmatch(name):
-            self.fault(
-                f"{place}name", f"{name!r} is not a name", "lower case, digits and hyphens: fused-quartz"
-            )
+            self.fault(f"{place}name", f"{name!r} is not a name", "lower case, digits and hyphens: fused-quartz")
             return ""
         return self.own(place, "name", name)
 
@@ -256,11 +254,12 @@ class _Reading:
                     constants[name] = read(table[name])
                 except UnitError as error:
                     self.fault(f"{place}{name}", error.message, error.allowed)
+        if "loss_tangent" in constants and isinstance(table.get("permittivity"), list):
+            allowed = "permittivity as a number with loss_tangent, or [real, loss] alone"
+            self.fault(f"{place}loss_tangent", "the loss is given twice, permittivity has it as well", allowed)
         return constants
 
-    def spread(
-        self, place: str, table: _Table, constants: dict[str, Constant]
-    ) -> tuple[tuple[str, float], ...]:
+    def spread(self, place: str, table: _Table, constants: dict[str, Constant]) -> tuple[tuple[str, float], ...]:
         """Return the relative spread of every constant given."""
         value = table.get("spread")
         if not isinstance(value, dict):

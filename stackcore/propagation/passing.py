@@ -2,10 +2,13 @@
 
 import numpy as np
 
+from stackcore.constants import FREE_SPACE_IMPEDANCE
 from stackcore.media.base import ComplexArray, FloatArray
 from stackcore.propagation.blocks import Block, blocks
-from stackcore.propagation.march import Step, march
-from stackcore.stack import PerfectConductor, Stack
+from stackcore.propagation.march import Step, march, start_fields
+from stackcore.stack import Layer, PerfectConductor, Stack
+
+_DEEP = 30.0
 
 
 def turned_phase(stack: Stack, frequency: FloatArray, angle: FloatArray) -> FloatArray:
@@ -53,9 +56,9 @@ def _turn_in_layer(step: Step, frequency: FloatArray) -> FloatArray:
 def weak_loss(stack: Stack, frequency: FloatArray, angle: FloatArray) -> FloatArray:
     """Return ln |t without the stack / t|, (2, A, F), with its digits where it is far below 1.
 
-    Every factor of the ratio is taken as 1 + something small:
-
-        t₀/t = [1 + (Y_in − Y_back)/(Y₀ + Y_back)] Π (E_in/E_out of each layer)
+    The ratio is (Y₀E + H at the front face)/(Y₀E + H at the back face) of the same fields; every element adds its
+    own small part to the numerator, and the parts are summed apart from the 1. NaN where the fields grow by more
+    than e^30 on the way, where the plain ratio is at its best.
     """
     loss = np.zeros((2, angle.size, frequency.size))
     for block in blocks(stack, frequency, angle):
@@ -64,38 +67,50 @@ def weak_loss(stack: Stack, frequency: FloatArray, angle: FloatArray) -> FloatAr
 
 
 def _weak_loss_of_block(block: Block) -> FloatArray:
-    scene = block.scene
+    scene, frequency = block.scene, block.frequency
     assert scene.back is not None
-    total = np.zeros((2, scene.incidence.angle.shape[0], block.frequency.size))
+    y0 = scene.incidence.admittance
+    shape = (y0.shape[1], frequency.size)
+    added = np.zeros((2, *shape), dtype=np.complex128)
+    factor = np.ones((2, *shape), dtype=np.complex128)  # true fields over marched fields
+    deep = np.zeros((2, *shape), dtype=np.bool_)
 
     def watch(step: Step) -> None:
-        nonlocal total
-        if step.layer is not None:
-            total = total + _loss_in_layer(step, block.frequency)
+        nonlocal factor
+        taken = np.zeros(()) if step.shed is None else step.shed
+        np.logical_or(deep, np.abs(np.log(np.abs(factor)) + taken) > _DEEP, out=deep)
+        fields = np.where(deep[:, np.newaxis], 0.0, step.fields * factor[:, np.newaxis])
+        added_here = _added_by(step, fields, y0, frequency)
+        np.add(added, np.where(deep, 0.0, added_here), out=added)
+        factor = factor * np.exp(np.clip(taken, -_DEEP, _DEEP))
+        if not isinstance(step.element, Layer):
+            factor = factor * np.exp(-1j * np.angle(step.element.sheet.impedance(frequency)))
+        factor = np.where(deep, 1.0, factor)
 
-    fields = march(scene, block.frequency, reference=scene.back, watch=watch).fields
-    bare = scene.incidence.admittance + scene.back.q / scene.back.x
-    return total + _log_of_one_plus(fields[:, 2] / (bare * fields[:, 0]))
+    march(scene, frequency, watch=watch)
+    start = start_fields(scene.back, shape)
+    loss = _log_of_one_plus(added / (y0 * start[:, 0] + start[:, 1]))
+    return np.where(deep, np.nan, loss)
 
 
-def _loss_in_layer(step: Step, frequency: FloatArray) -> FloatArray:
-    """Return ln |E at the entry / E at the exit| of a layer, (2, A, F)."""
+def _added_by(step: Step, fields: ComplexArray, y0: FloatArray, frequency: FloatArray) -> ComplexArray:
+    """Return what an element adds to Y₀E + H of the true `fields` at its exit, (2, A, F)."""
+    e, h = fields[:, 0], fields[:, 1]
+    if not isinstance(step.element, Layer):
+        impedance = step.element.sheet.impedance(frequency)
+        added: ComplexArray = e * FREE_SPACE_IMPEDANCE / np.where(impedance == 0, np.inf, impedance)
+        return added
     layer, passage = step.layer, step.passage
     assert layer is not None
     assert passage is not None
-    e, h = step.fields[:, 0], step.fields[:, 1]
     alpha = layer.phase(frequency)
-    decay = np.zeros_like(alpha) if passage.decay is None else passage.decay
-    marched = passage.cosine + layer.wave.x * passage.sine * h / e
-    shallow = np.minimum(decay, 1.0)
+    decay = np.zeros_like(alpha) if passage.decay is None else np.minimum(passage.decay, _DEEP)
+    # cos φ − 1 with φ = α − jβ, as a sum of small parts.
     drop = np.where(np.abs(alpha) < 1, 2 * np.sin(alpha / 2) ** 2, 1 - passage.cos_alpha)
-    cosine = 2 * passage.cos_alpha * np.sinh(shallow / 2) ** 2 - drop
-    step_of_e = cosine + 1j * passage.sin_alpha * np.sinh(shallow)
-    step_of_e = step_of_e + np.exp(shallow) * (layer.wave.x * passage.sine * h / e)
-    small = (decay < 1) & (np.abs(step_of_e) < 0.5)
-    precise = _log_of_one_plus(np.where(small, step_of_e, 0.0))
-    with np.errstate(divide="ignore"):
-        return np.where(small, precise, decay + np.log(np.abs(marched)))
+    cosine = 2 * passage.cos_alpha * np.sinh(decay / 2) ** 2 - drop + 1j * passage.sin_alpha * np.sinh(decay)
+    j_sine = passage.sine * np.exp(decay)
+    wave = layer.wave
+    return cosine * (y0 * e + h) + j_sine * (wave.x * y0 * h + wave.b * e)
 
 
 def _log_of_one_plus(z: ComplexArray) -> FloatArray:

@@ -153,7 +153,7 @@ class Response:
             precise = -0.5 * np.log1p(-lost)
         else:
             precise = passing.weak_loss(self.stack, self.frequency, self.angle)
-        return np.where(weak, precise, self._log_ratio)
+        return np.where(weak & ~np.isnan(precise), precise, self._log_ratio)
 
 
 def _outward(values: NDArray[_Number]) -> NDArray[_Number]:

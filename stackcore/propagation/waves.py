@@ -115,15 +115,27 @@ def departure(wave: Wave, reference: Wave) -> ComplexArray:
 
     It is what drives H − Y_ref E through a layer; it is exactly 0 in a layer of the reference medium.
     """
-    epsilon, mu = wave.permittivity, wave.permeability
-    reference_epsilon, reference_mu = reference.permittivity, reference.permeability
-    difference = epsilon * mu - reference_epsilon * reference_mu
-    mu_step = (mu - reference_mu) * (mu + reference_mu)
-    epsilon_step = (epsilon - reference_epsilon) * (epsilon + reference_epsilon)
-    te = (difference - reference.q2 * mu_step / reference_mu**2) / mu
-    tm = (epsilon_step - reference_epsilon**2 * difference / reference.q2) / epsilon
+    epsilon, mu, q2 = wave.permittivity, wave.permeability, wave.q2
+    near_epsilon, near_mu, near_q2 = reference.permittivity, reference.permeability, reference.q2
+    difference = epsilon * mu - near_epsilon * near_mu
+    mu_step = (mu - near_mu) * (mu + near_mu)
+    epsilon_step = (epsilon - near_epsilon) * (epsilon + near_epsilon)
+    te = _gentler((q2 / mu, mu * (near_q2 / near_mu**2)), (difference / mu, mu_step / mu * (near_q2 / near_mu**2)))
+    tm = _gentler(
+        (epsilon + 0 * q2, q2 / epsilon * (near_epsilon**2 / near_q2)),
+        (epsilon_step / epsilon + 0 * q2, difference / epsilon * (near_epsilon**2 / near_q2)),
+    )
     shape = np.broadcast_shapes(te.shape, tm.shape)
     return np.stack([np.broadcast_to(te, shape), np.broadcast_to(tm, shape)])
+
+
+def _gentler(one: tuple[ComplexArray, ComplexArray], other: tuple[ComplexArray, ComplexArray]) -> ComplexArray:
+    """Return the difference of one of two pairs, equal in value: of the pair with the smaller members."""
+    return np.where(
+        np.abs(one[0]) + np.abs(one[1]) <= np.abs(other[0]) + np.abs(other[1]),
+        one[0] - one[1],
+        other[0] - other[1],
+    )
 
 
 @dataclass(frozen=True, slots=True)

@@ -52,15 +52,16 @@ class SeriesSheet(AbstractSheet):
 
     def impedance(self, frequency: FloatArray) -> ComplexArray:
         omega = 2 * np.pi * np.asarray(frequency, dtype=np.float64)
-        reactance = omega * self.inductance
+        impedance = np.full(omega.shape, self.resistance, dtype=np.complex128)
+        impedance.imag = omega * self.inductance
         if self.capacitance is not None:
-            reactance = reactance - 1 / (omega * self.capacitance)
-        impedance: ComplexArray = self.resistance + 1j * reactance
+            impedance.imag -= 1 / (omega * self.capacitance)
         return impedance
 
     def impedance_slope(self, frequency: FloatArray) -> ComplexArray:
         frequency = np.asarray(frequency, dtype=np.float64)
-        slope = np.full(frequency.shape, 2 * np.pi * self.inductance)
+        slope = np.zeros(frequency.shape, dtype=np.complex128)
+        slope.imag = 2 * np.pi * self.inductance
         if self.capacitance is not None:
-            slope = slope + 1 / (2 * np.pi * frequency**2 * self.capacitance)
-        return 1j * slope
+            slope.imag += 1 / (2 * np.pi * frequency**2 * self.capacitance)
+        return slope

@@ -4,6 +4,6 @@
 """
 
 from stackcore.units.dimensions import Dimension
-from stackcore.units.measure import Measure, format_value, known_units, measure, parse_measure
+from stackcore.units.measure import Measure, degrees_of, format_value, known_units, measure, parse_measure
 
-__all__ = ["Dimension", "Measure", "format_value", "known_units", "measure", "parse_measure"]
+__all__ = ["Dimension", "Measure", "degrees_of", "format_value", "known_units", "measure", "parse_measure"]

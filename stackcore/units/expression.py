@@ -98,7 +98,9 @@ def _tokens(text: str) -> Iterator[re.Match[str]]:
     while place < len(text):
         match = _TOKEN.match(text, place)
         if match is None:
-            raise UnitError(f"{text[place:].strip()!r} cannot be read", "a number and a unit, joined by + - * / ( )")
+            raise UnitError(
+                f"{text[place:].strip()!r} cannot be read", "a number and a unit, joined by + - * / ( )"
+            )
         yield match
         place = match.end()
 
@@ -117,7 +119,9 @@ def _evaluate(text: str, dimension: Dimension) -> Amount:
             continue
         if kind == "number":
             if after_value:
-                raise UnitError(f"a sign is missing before {written!r} in {text!r}", "+ - * or / between two numbers")
+                raise UnitError(
+                    f"a sign is missing before {written!r} in {text!r}", "+ - * or / between two numbers"
+                )
             amounts.append(Amount(read_number(written), None))
         else:
             if not after_value:

@@ -34,9 +34,7 @@ class Measure:
         return self.text
 
 
-def parse_measure(
-    given: str | float | int, dimension: Dimension, *, default_unit: str | None = None
-) -> Measure:
+def parse_measure(given: str | float | int, dimension: Dimension, *, default_unit: str | None = None) -> Measure:
     """Read a quantity of one dimension.
 
     Parameters
@@ -126,9 +124,7 @@ def _nearest_double(value: Fraction, text: str) -> float:
     return nearest
 
 
-def format_value(
-    value: float, dimension: Dimension, *, unit: str | None = None, digits: int | None = None
-) -> str:
+def format_value(value: float, dimension: Dimension, *, unit: str | None = None, digits: int | None = None) -> str:
     """Write a value in a readable unit.
 
     Parameters
@@ -180,6 +176,25 @@ def measure(value: float, dimension: Dimension) -> Measure:
     Measure(value=0.0009, text='0.9 mm')
     """
     return Measure(float(value), format_value(value, dimension))
+
+
+def degrees_of(angle: float) -> float:
+    """Return the degrees that an angle in rad was given as, by a text or through `math.radians`.
+
+    It is the shortest number that either makes into `angle` again.
+
+    Examples
+    --------
+    >>> degrees_of(math.radians(57.0)), math.degrees(math.radians(57.0))
+    (57.0, 57.00000000000001)
+    """
+    scale = _scale("deg", Dimension.ANGLE)
+    for digits in range(1, 18):
+        degrees = float(f"{math.degrees(angle):.{digits}g}")
+        exact = Fraction(repr(degrees)) * scale
+        if angle in (math.radians(degrees), exact.numerator / exact.denominator):
+            return degrees
+    return math.degrees(angle)
 
 
 def _readable_unit(magnitude: Fraction, dimension: Dimension) -> str:

@@ -7,7 +7,9 @@ from typing import Final
 from stackcore.errors import UnitError
 from stackcore.units.dimensions import UNITS, Dimension, Unit
 
-_SPACES: Final = "\t\u00a0\u1680\u2000\u2001\u2002\u2003\u2004\u2005\u2006\u2007\u2008\u2009\u200a\u202f\u205f\u3000"
+_SPACES: Final = (
+    "\t\u00a0\u1680\u2000\u2001\u2002\u2003\u2004\u2005\u2006\u2007\u2008\u2009\u200a\u202f\u205f\u3000"
+)
 
 _LOOK_ALIKE: Final = str.maketrans(
     {

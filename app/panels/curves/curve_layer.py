@@ -39,6 +39,8 @@ class DrawnCurve:
         Dash pattern in pixels; empty for solid.
     chosen
         Drawn a little wider: the angle and polarization that the wall drawing shows.
+    leap
+        Neighbouring values that differ by more are not joined.
     """
 
     positions: FloatArray
@@ -46,10 +48,11 @@ class DrawnCurve:
     colour: str
     dashes: tuple[float, ...] = ()
     chosen: bool = False
+    leap: float = np.inf
     runs: tuple[tuple[int, int], ...] = field(init=False)
 
     def __post_init__(self) -> None:
-        object.__setattr__(self, "runs", finite_runs(self.values + self.positions))
+        object.__setattr__(self, "runs", finite_runs(self.values, self.leap))
 
 
 class CurveLayer(Layer):

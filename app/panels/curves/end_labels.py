@@ -4,11 +4,13 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Any, Final
 
+import numpy as np
 import pyqtgraph as pg
 from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QColor, QFont, QFontMetricsF, QPainter, QPen
 from PySide6.QtWidgets import QStyleOptionGraphicsItem, QWidget
 
+from app.panels.curves.curve_layer import DrawnCurve
 from app.panels.curves.frame import Frame
 from app.panels.curves.spacing import spread
 
@@ -17,14 +19,22 @@ _GAP: Final = 4.0
 _EDGE: Final = 6.0
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True, slots=True, eq=False)
 class EndLabel:
-    """A name and the value at which its curve leaves the plot on the right."""
+    """The name of a curve."""
 
     text: str
-    value: float
-    colour: str
-    chosen: bool = False
+    curve: DrawnCurve
+
+    def value(self, right: float) -> float:
+        """Return the value at which the curve leaves a plot that ends at the position `right`; nan for none."""
+        curve = self.curve
+        last = int(np.searchsorted(curve.positions, right, side="right"))
+        for begin, end in reversed(curve.runs):
+            if begin < last:
+                stretch = slice(begin, end)
+                return float(np.interp(right, curve.positions[stretch], curve.values[stretch]))
+        return float("nan")
 
 
 class EndLabels(pg.GraphicsWidget):
@@ -40,8 +50,11 @@ class EndLabels(pg.GraphicsWidget):
         self._labels: tuple[EndLabel, ...] = ()
         self._font = QFont()
         self._width = -1.0
-        area.sigRangeChanged.connect(self._moved)
-        area.sigResized.connect(self._moved)
+        self._ends: tuple[float, ...] = ()
+        self._places: tuple[float, ...] | None = ()
+        self._texts: tuple[str, ...] = ()
+        area.sigRangeChanged.connect(self._fit)
+        area.sigResized.connect(self._fit)
 
     @property
     def labels(self) -> tuple[EndLabel, ...]:
@@ -51,7 +64,17 @@ class EndLabels(pg.GraphicsWidget):
     @property
     def crowded(self) -> bool:
         """Whether there is no room for the names."""
-        return self.places() is None
+        return self._places is None
+
+    @property
+    def places(self) -> tuple[float, ...] | None:
+        """Where each name stands, in pixels from the top of the plot area; None when crowded."""
+        return self._places
+
+    @property
+    def texts(self) -> tuple[str, ...]:
+        """The names as written, with an arrow where the curve is above or below the visible part."""
+        return self._texts
 
     def set_font(self, font: QFont) -> None:
         """Write the names in this font."""
@@ -63,37 +86,23 @@ class EndLabels(pg.GraphicsWidget):
         self._labels = tuple(labels)
         self._fit()
 
-    def places(self) -> tuple[float, ...] | None:
-        """Return where each name stands, in pixels from the top of the plot area; None when crowded."""
-        frame = self._frame()
-        wanted = [frame.down(label.value) for label in self._labels]
-        height = QFontMetricsF(self._font).height() + 1
-        return spread(wanted, height, -_EDGE, frame.height + _EDGE)
-
-    def texts(self) -> tuple[str, ...]:
-        """Return the names as written, with an arrow where the curve is above or below the visible part."""
-        frame = self._frame()
-        marks = ("↓ " if lab.value < frame.bottom else "↑ " if lab.value > frame.top else "" for lab in self._labels)
-        return tuple(f"{mark}{label.text}" for mark, label in zip(marks, self._labels, strict=True))
-
     def paint(
         self, painter: QPainter, option: QStyleOptionGraphicsItem, widget: QWidget | None = None
     ) -> None:
         """Write the names."""
-        places = self.places()
-        if places is None:
+        if self._places is None:
             return
-        frame = self._frame()
+        height = self._frame().height
         metrics = QFontMetricsF(self._font)
         painter.setRenderHint(QPainter.RenderHint.Antialiasing)
-        for label, text, place in zip(self._labels, self.texts(), places, strict=True):
-            colour = QColor(label.colour)
+        rows = zip(self._labels, self._texts, self._ends, self._places, strict=True)
+        for label, text, end, place in rows:
+            colour = QColor(label.curve.colour)
             font = QFont(self._font)
-            font.setWeight(QFont.Weight.DemiBold if label.chosen else QFont.Weight.Normal)
+            font.setWeight(QFont.Weight.DemiBold if label.curve.chosen else QFont.Weight.Normal)
             painter.setFont(font)
-            end = min(max(frame.down(label.value), 0.0), frame.height)
             painter.setPen(QPen(colour, 1.0))
-            painter.drawLine(QPointF(2.0, end), QPointF(_LEADER - _GAP, place))
+            painter.drawLine(QPointF(2.0, min(max(end, 0.0), height)), QPointF(_LEADER - _GAP, place))
             room = QRectF(_LEADER, place - metrics.height() / 2, self._width, metrics.height())
             painter.drawText(room, Qt.AlignmentFlag.AlignVCenter | Qt.AlignmentFlag.AlignLeft, text)
 
@@ -101,11 +110,17 @@ class EndLabels(pg.GraphicsWidget):
         (left, right), (bottom, top) = self._area.viewRange()
         return Frame(left, right, bottom, top, 1.0, max(float(self._area.rect().height()), 1.0))
 
-    def _fit(self) -> None:
-        """Be as wide as the longest name, and no wider than a gap when the names do not fit."""
+    def _fit(self, *_: object) -> None:
+        """Find the places, and be as wide as the longest name, or a mere gap when the names do not fit."""
+        frame = self._frame()
         bold = QFont(self._font)
         bold.setWeight(QFont.Weight.DemiBold)
         metrics = QFontMetricsF(bold)
+        values = [label.value(frame.right) for label in self._labels]
+        marks = ("↓ " if value < frame.bottom else "↑ " if value > frame.top else "" for value in values)
+        self._texts = tuple(f"{mark}{lab.text}" for mark, lab in zip(marks, self._labels, strict=True))
+        self._ends = tuple(frame.down(value) if value == value else frame.height for value in values)
+        self._places = spread(self._ends, metrics.height() + 1, -_EDGE, frame.height + _EDGE)
         longest = max((metrics.horizontalAdvance(f"↑ {label.text}") for label in self._labels), default=0.0)
         width = 12.0 if self.crowded or not self._labels else _LEADER + longest + _GAP
         if width != self._width:
@@ -113,6 +128,3 @@ class EndLabels(pg.GraphicsWidget):
             self.setMinimumWidth(width)
             self.setMaximumWidth(width)
         self.update()
-
-    def _moved(self, *_: object) -> None:
-        self._fit()

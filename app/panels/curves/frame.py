@@ -65,16 +65,28 @@ def _near(pixels: float | FloatArray) -> float | FloatArray:
     return min(max(float(pixels), -FARTHEST), FARTHEST)
 
 
-def finite_runs(values: FloatArray) -> tuple[tuple[int, int], ...]:
+def finite_runs(values: FloatArray, leap: float = np.inf) -> tuple[tuple[int, int], ...]:
     """Return the stretches ``(first, past last)`` of a curve that can be drawn without a gap.
+
+    Parameters
+    ----------
+    values
+        Of the curve; not a number where there is nothing to draw.
+    leap
+        Neighbours that differ by more are not joined: a phase that turns over from 180 to −180 degrees.
 
     Examples
     --------
     >>> finite_runs(np.array([1.0, 2.0, np.nan, 3.0]))
     ((0, 2), (3, 4))
     """
+    if not len(values):
+        return ()
     known = np.isfinite(values)
-    if known.all():
-        return ((0, len(values)),) if len(values) else ()
-    edges = np.flatnonzero(np.diff(np.concatenate(([0], known.astype(np.int8), [0]))))
-    return tuple((int(a), int(b)) for a, b in zip(edges[::2], edges[1::2], strict=True))
+    if known.all() and leap == np.inf:
+        return ((0, len(values)),)
+    steps = np.abs(np.diff(np.where(known, values, 0.0)))
+    joined = known[:-1] & known[1:] & (steps <= leap)
+    starts = np.flatnonzero(known & np.concatenate(([True], ~joined)))
+    stops = np.flatnonzero(known & np.concatenate((~joined, [True]))) + 1
+    return tuple((int(a), int(b)) for a, b in zip(starts, stops, strict=True))

@@ -126,27 +126,31 @@ def number_texts(values: Sequence[float], step: float) -> tuple[str, ...]:
     return tuple(text.replace("-", "−") for text in texts)
 
 
-def round_range(low: float, high: float, floor: float | None = None, top: float | None = None) -> tuple[float, float]:
-    """Return a range a little larger than the data, on round numbers, so that it does not tremble as they change.
+def round_range(
+    low: float, high: float, floor: float | None = None, top: float | None = None
+) -> tuple[float, float]:
+    """Return a range a little larger than the data, on round numbers, so that it does not tremble with them.
 
     Parameters
     ----------
     low, high
         Smallest and largest value to show.
     floor, top
-        Values the range does not pass unless the data do, such as 0 and 100 for a percentage.
+        Values the range hardly passes unless the data do, such as 0 and 1 of a fraction.
     """
     span = high - low
-    least = max(abs(low), abs(high)) * 1e-6
-    if span <= least:
-        span = max(least * 4, abs(high) * 0.02, 1e-12)
-        low, high = low - span / 2, high + span / 2
+    first, last = low, high
+    if span <= max(abs(low), abs(high)) * 1e-6:
+        span = max(abs(high) * 0.02, 1e-12)
+        first, last = low - span / 2, high + span / 2
     step = round_step(span, 10)
-    below, above = math.floor((low - span * 0.02) / step) * step, math.ceil((high + span * 0.02) / step) * step
+    below = math.floor((first - span * 0.02) / step) * step
+    above = math.ceil((last + span * 0.02) / step) * step
+    # A hair beyond, so that a curve that lies on the end is not cut in half.
     if floor is not None and low >= floor:
-        below = max(below, floor)
+        below = max(below, floor - span * 0.012)
     if top is not None and high <= top:
-        above = min(above, top)
+        above = min(above, top + span * 0.012)
     return below, above
 
 

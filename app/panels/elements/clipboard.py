@@ -12,6 +12,7 @@ from app.panels.elements.columns import ALL_COLUMNS, MATERIAL, NUMBER, WHAT, Col
 
 _UNIT_IN_TITLE: Final = re.compile(r"^(?P<title>[^,(\[]*?)\s*(?:,\s*(?P<a>\S+)|\((?P<b>[^)]*)\)|\[(?P<c>[^\]]*)\])?$")
 _BARE_NUMBER: Final = re.compile(r"[-+−]?[\d.,]+(?:[eE][-+]?\d+)?")
+_NOTHING: Final = ("-", "–", "—")
 _FORMULA_STARTS: Final = ("=", "+", "-", "@")
 
 
@@ -83,8 +84,13 @@ def write_html(columns: Sequence[Column], rows: Iterable[Sequence[str]]) -> str:
 
 
 def _cleaned(cell: str) -> str:
-    """Return a cell without the blanks, also the hard ones, around it, and without the mark that keeps it text."""
+    """Return a cell without the blanks, also the hard ones, around it, and without the mark that keeps it text.
+
+    A dash alone is how many tables write that there is nothing.
+    """
     cell = cell.replace("\u00a0", " ").strip()
+    if cell in _NOTHING:
+        return ""
     return cell[1:] if cell.startswith("'") and cell[1:].startswith(_FORMULA_STARTS) else cell
 
 

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from typing import Final, Literal
 
 from app.document.document import WHOLE_ROW, Cell, Document
-from app.panels.elements.columns import ALL_COLUMNS, MATERIAL, NUMBER, THICKNESS, WHAT, Column
+from app.panels.elements.columns import ALL_COLUMNS, MATERIAL, NUMBER, SHEET_COLUMNS, THICKNESS, WHAT, Column
 from app.panels.elements.names import MaterialNames
 from app.series.kinds import kind_of
 from stackcore.errors import Fault
@@ -19,7 +19,6 @@ LineKind = Literal["front", "layer", "sheet", "back"]
 
 WORDS: Final[dict[LineKind, str]] = {"front": "Front", "layer": "Layer", "sheet": "Sheet", "back": "Back"}
 HALF_SPACE: Final = "half-space"
-NO_NAMES: Final = ("", "")
 
 _WITHOUT_UNIT: Final = re.compile(r"[\d\s.,()+*/−-]*(?:[eE][-+]?\d+)?")
 
@@ -120,7 +119,7 @@ class _Reading:
         if isinstance(element, LayerRecord):
             return self._layer(row, element)
         cells = {NUMBER.name: CellView(str(row + 1)), WHAT.name: CellView(WORDS["sheet"])}
-        for column in ALL_COLUMNS[4:]:
+        for column in SHEET_COLUMNS:
             part: Measure | None = getattr(element, column.name)
             cells[column.name] = self._quantity(row, column, part)
         return Line("sheet", _in_order(cells), f"sheet {row + 1}")
@@ -146,7 +145,7 @@ class _Reading:
         return CellView(draft.text, draft.text, editable=True, fault=draft.fault)
 
     def _kind(self, material: str) -> str:
-        return kind_of(self.document.job, material) if material != "metal" else "metal"
+        return kind_of(self.document.job, material) 
 
 
 def _in_order(cells: dict[str, CellView]) -> tuple[CellView, ...]:

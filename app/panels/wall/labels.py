@@ -264,8 +264,8 @@ def _first_free(
 ) -> Place | None:
     width = _width(wanted, measure, cap)
     x = wanted.slab.middle
-    for tier in range(tiers):
-        for side in sides:
+    for side in sides:
+        for tier in range(tiers):
             left = x + LEADER_GAP if side > 0 else x - LEADER_GAP - width
             place = Place(wanted.row, tier, left, left + width, x)
             inside_bounds = left >= bounds.left and place.right <= bounds.right

@@ -181,7 +181,7 @@ def _place(wall: Wall, edges: Sequence[float], area: Box, measure: TextMeasure) 
     ]
     outside = [one for one in wanted if labels.inside(one, measure) is None]
     most_tiers = max(int(0.42 * area.height / labels.tier_height(measure)), 1)
-    bounds = Box(edges[0] - 2, 0, area.right - MARGIN, 0)
+    bounds = Box(MARGIN, 0, area.right - MARGIN, 0)
     places, upright = _outside_places(outside, measure, bounds, most_tiers)
     tiers = max((place.tier + 1 for place in places.values()), default=0)
     top = area.top + tiers * labels.tier_height(measure) + (LEADER_SPACE if tiers else 0.0)

@@ -5,9 +5,9 @@ from typing import Final
 
 from app.document import edits
 from app.document.document import Cell, Document, Selection
-from app.document.edit import Edit
+from app.document.edit import Edit, refuse
 from app.document.element_edits import NEW_SHEET
-from app.panels.elements.columns import ALL_COLUMNS, MATERIAL, WHAT
+from app.panels.elements.columns import LAYER_CELLS, MATERIAL, SHEET_COLUMNS, WHAT, Column
 from app.panels.elements.lines import WORDS
 from app.panels.elements.names import MaterialNames
 from stackcore.job.records import LayerRecord, SheetRecord
@@ -40,9 +40,9 @@ def paste_edit(stack: int, row: int, pasted: Sequence[Mapping[str, str]], *, ins
 
     Notes
     -----
-    A text that is no value becomes a draft, as if it had been typed. A text for a cell that its row does not have,
-    such as a thickness of a sheet, is left out when it is empty; otherwise a typed-over row of the other kind is
-    replaced by a new element of the right one.
+    A text that is no value becomes a draft, as if it had been typed. A row that says it is of the other kind than
+    the one it is typed over takes its place. The whole paste is refused when a row has texts for the other kind: a
+    thickness pasted over a sheet must not vanish unseen.
     """
     rows = [texts for texts in pasted if not _is_half_space(texts)]
 
@@ -50,12 +50,12 @@ def paste_edit(stack: int, row: int, pasted: Sequence[Mapping[str, str]], *, ins
         for offset, texts in enumerate(rows):
             place = row + offset
             elements = document.record.stacks[stack].elements
-            is_new = insert or place >= len(elements)
-            if not is_new and _kind(texts, elements[place]) != type(elements[place]):
+            present = None if insert or place >= len(elements) else elements[place]
+            kind = _kind(texts, present)
+            if present is not None and kind is not type(present):
                 document = edits.delete(stack, (place,)).change(document)
-                is_new = True
-            if is_new:
-                document = _new_element(stack, place, _kind(texts, None)).change(document)
+            if kind is not type(present):
+                document = _new_element(stack, place, kind).change(document)
             document = _type_row(document, stack, place, texts)
         return document
 
@@ -84,8 +84,8 @@ def _kind(texts: Mapping[str, str], present: LayerRecord | SheetRecord | None) -
         return SheetRecord if word == WORDS["sheet"].casefold() else LayerRecord
     if present is not None:
         return type(present)
-    of_sheet = any(texts.get(column.name) for column in ALL_COLUMNS[4:])
-    of_layer = any(texts.get(column.name) for column in ALL_COLUMNS[2:4])
+    of_sheet = any(texts.get(column.name) for column in SHEET_COLUMNS)
+    of_layer = any(texts.get(column.name) for column in LAYER_CELLS)
     return SheetRecord if of_sheet and not of_layer else LayerRecord
 
 
@@ -98,10 +98,19 @@ def _new_element(stack: int, row: int, kind: type[LayerRecord | SheetRecord]) ->
 def _type_row(document: Document, stack: int, row: int, texts: Mapping[str, str]) -> Document:
     """Return the document with the texts of one pasted row typed into it, as far as the row has such cells."""
     element = document.record.stacks[stack].elements[row]
-    columns = ALL_COLUMNS[2:4] if isinstance(element, LayerRecord) else _sheet_order(texts)
+    is_layer = isinstance(element, LayerRecord)
+    columns = LAYER_CELLS if is_layer else _sheet_order(texts)
+    others = SHEET_COLUMNS if is_layer else LAYER_CELLS
+    if any(texts.get(other.name) for other in others):
+        word, other_word = ("layer", "sheet") if is_layer else ("sheet", "layer")
+        raise refuse(
+            f"stacks[{stack}].elements[{row}]",
+            f"what is pasted here belongs to a {other_word}, and element {row + 1} is a {word}",
+            f"paste it elsewhere, or with a column {WHAT.title} that says {other_word}",
+        )
     for column in columns:
         text = texts.get(column.name)
-        if text is None or (not text and isinstance(element, LayerRecord)):
+        if text is None or (not text and is_layer):
             continue
         names = MaterialNames(document.record)
         document = typed_edit(names, Cell(stack, row, column.name), text).change(document)
@@ -110,7 +119,7 @@ def _type_row(document: Document, stack: int, row: int, texts: Mapping[str, str]
 
 def _sheet_order(texts: Mapping[str, str]) -> list[Column]:
     """Return the columns of a sheet, those with a text first: no moment may leave the sheet without any part."""
-    return sorted(ALL_COLUMNS[4:], key=lambda column: not texts.get(column.name))
+    return sorted(SHEET_COLUMNS, key=lambda column: not texts.get(column.name))
 
 
 def _count(number: int, what: str) -> str:

@@ -1,0 +1,130 @@
+"""From curves of numbers to curves on the screen: colours, dashes, places, and what is marked."""
+
+from collections.abc import Sequence
+from typing import Final
+
+import numpy as np
+
+from app.document.view import ViewState
+from app.look.colour import mix
+from app.look.theme import Theme, curve_colour, dashes
+from app.panels.curves.curve_layer import DrawnCurve
+from app.panels.curves.end_labels import EndLabel
+from app.panels.curves.legend import LegendFacts
+from app.panels.curves.mark_layers import DrawnMarker, Spot
+from app.panels.curves.plot import Extent
+from app.panels.curves.scale import FrequencyScale
+from app.series.axis import can_show_decibels
+from app.series.curves import Curve
+from app.series.texts import angle_text, frequency_text
+from stackcore.quantities import QUANTITIES
+
+_TURNS: Final = {"reflection_phase_deg": 180.0, "transmission_phase_deg": 180.0}
+_FADED: Final = 0.72
+_NORMAL: Final = 1e-12
+
+
+def colours_of(curves: Sequence[Curve], theme: Theme, *, stale: bool) -> tuple[str, ...]:
+    """Return the colour of each curve; those of an earlier job are nearly grey."""
+    full = (curve_colour(theme, curve.quantity, curve.angle_rank, curve.angle_count) for curve in curves)
+    return tuple(mix(colour, theme.stale, _FADED) if stale else colour for colour in full)
+
+
+def chosen_index(curves: Sequence[Curve], state: ViewState) -> int | None:
+    """Return the index of the curve the wall drawing shows, or None when it is not among several."""
+    shown = len(state.polarizations)
+    if len(curves) < 2 or state.active_polarization not in state.polarizations:
+        return None
+    index = state.active_angle * shown + state.polarizations.index(state.active_polarization)
+    return index if index < len(curves) else None
+
+
+def draw_curves(
+    curves: Sequence[Curve], colours: Sequence[str], scale: FrequencyScale, chosen: int | None
+) -> tuple[DrawnCurve, ...]:
+    """Return the curves as they are drawn, each rising in frequency."""
+    drawn = []
+    for index, (curve, colour) in enumerate(zip(curves, colours, strict=True)):
+        positions, values = scale.positions(curve.x), curve.y
+        if len(positions) > 1 and not bool(np.all(positions[1:] >= positions[:-1])):
+            order = np.argsort(positions, kind="stable")
+            positions, values = positions[order], values[order]
+        leap = _TURNS.get(curve.quantity, np.inf)
+        drawn.append(
+            DrawnCurve(positions, values, colour, dashes(curve.polarization), index == chosen, leap)
+        )
+    return tuple(drawn)
+
+
+def end_labels(curves: Sequence[Curve], drawn: Sequence[DrawnCurve]) -> tuple[EndLabel, ...]:
+    """Return the names at the ends; at normal incidence TE and TM are one curve and have one name."""
+    labels: list[EndLabel] = []
+    named: set[float] = set()
+    for curve, picture in zip(curves, drawn, strict=True):
+        if not picture.runs:
+            continue
+        if curve.angle > _NORMAL:
+            labels.append(EndLabel(curve.label, picture))
+        elif curve.angle not in named:
+            named.add(curve.angle)
+            both = sum(other.angle == curve.angle for other in curves) > 1
+            labels.append(EndLabel(f"TE, TM {angle_text(curve.angle)}" if both else curve.label, picture))
+    return tuple(labels)
+
+
+def extent_of(curves: Sequence[Curve], scale: FrequencyScale, *, decibels: bool) -> Extent:
+    """Return the whole of what there is to show."""
+    ends = [scale.position(float(end)) for curve in curves[:1] for end in (curve.x.min(), curve.x.max())]
+    known = [curve.y[np.isfinite(curve.y)] for curve in curves]
+    values = np.concatenate(known) if known else np.zeros(0)
+    low, high = (float(values.min()), float(values.max())) if len(values) else (0.0, 1.0)
+    fraction = bool(curves) and can_show_decibels(curves[0].quantity) and not decibels
+    left, right = ends if ends else (0.0, 1.0)
+    return Extent(left, right, low, high, 0.0 if fraction else None, 1.0 if fraction else None)
+
+
+def worst_spots(curves: Sequence[Curve], colours: Sequence[str], scale: FrequencyScale) -> dict[int, Spot]:
+    """Return the worst points by the index of their curve."""
+    return {
+        index: Spot(scale.position(curve.worst.x), curve.worst.y, colours[index])
+        for index, curve in enumerate(curves)
+        if curve.worst is not None
+    }
+
+
+def draw_markers(
+    state: ViewState, drawn: Sequence[DrawnCurve], scale: FrequencyScale
+) -> tuple[DrawnMarker, ...]:
+    """Return the markers; the active one also says its frequency."""
+    markers = []
+    for index, hertz in enumerate(state.markers):
+        position = scale.position(hertz)
+        active = index == state.active_marker
+        text = f"{index + 1}   {frequency_text(hertz)}" if active else str(index + 1)
+        spots = [Spot(position, value, curve.colour) for curve in drawn for value in _values_at(curve, position)]
+        markers.append(DrawnMarker(text, position, active, tuple(spots)))
+    return tuple(markers)
+
+
+def legend_facts(curves: Sequence[Curve], colours: Sequence[str], state: ViewState) -> LegendFacts:
+    """Return what the legend says of these curves."""
+    by_angle = sorted({(curve.angle, colour) for curve, colour in zip(curves, colours, strict=True)})
+    return LegendFacts(
+        state.polarizations,
+        tuple(angle_text(angle) for angle, _ in by_angle),
+        tuple(colour for _, colour in by_angle),
+    )
+
+
+def quantity_label(state: ViewState) -> str:
+    """Return the words for what is shown."""
+    return QUANTITIES[state.quantity].label
+
+
+def _values_at(curve: DrawnCurve, position: float) -> tuple[float, ...]:
+    """Return the value of a curve at a position, or nothing in a gap or beyond its ends."""
+    for begin, end in curve.runs:
+        if curve.positions[begin] <= position <= curve.positions[end - 1]:
+            stretch = slice(begin, end)
+            return (float(np.interp(position, curve.positions[stretch], curve.values[stretch])),)
+    return ()

@@ -1,0 +1,129 @@
+"""What the plot says in words: the worst point, what is not shown, what will be here. No toolkit."""
+
+import math
+from collections.abc import Sequence
+from typing import Final
+
+import numpy as np
+
+from app.series.curves import Curve
+from app.series.shown import SHOWN
+from app.series.texts import angle_text, frequency_text, value_text
+from stackcore.quantities import QUANTITIES
+
+MOST_READ: Final = 24
+"""Curves named one by one in the description for screen readers; more would be read for minutes."""
+
+
+def worst_curve(curves: Sequence[Curve]) -> int | None:
+    """Return the index of the curve with the worst value of all; an infinitely bad one comes first."""
+    best: int | None = None
+    badness = -math.inf
+    for index, curve in enumerate(curves):
+        if curve.worst_infinite is not None:
+            sunk = SHOWN[curve.quantity].worst == "low"
+            value = curve.raw[int(np.argmin(np.abs(curve.x - curve.worst_infinite)))]
+            bad = float(-value if sunk else value)
+        elif curve.worst is not None:
+            bad = -curve.worst.y if SHOWN[curve.quantity].worst == "low" else curve.worst.y
+        else:
+            continue
+        if best is None or bad > badness:
+            best, badness = index, bad
+    return best
+
+
+def worst_sentence(curves: Sequence[Curve], *, decibels: bool = False) -> str:
+    """Return one line on the worst value, or on both ends of a quantity that has no worse one.
+
+    Examples
+    --------
+    ``Worst: 0.9104 at 9.45 GHz, 55°, TE``
+    """
+    index = worst_curve(curves)
+    if index is not None:
+        return f"Worst: {_worst_text(curves[index], decibels)}, {_whose(curves[index])}"
+    ends = [_end(curves, low=True), _end(curves, low=False)]
+    words = [
+        f"{name} {value_text(curve.quantity, float(curve.y[at]), curve.unit, decibels=decibels)} at "
+        f"{frequency_text(float(curve.x[at]))}, {_whose(curve)}"
+        for name, end in zip(("Lowest", "highest"), ends, strict=True)
+        if end is not None
+        for curve, at in [end]
+    ]
+    return "; ".join(words)
+
+
+def curve_sentence(curve: Curve, *, decibels: bool = False) -> str:
+    """Return the worst point of one curve in words, as its mark says it."""
+    if curve.worst is None and curve.worst_infinite is None:
+        return curve.label
+    return f"Worst of {curve.label}: {_worst_text(curve, decibels)}"
+
+
+def point_sentence(curve: Curve, index: int, *, decibels: bool = False) -> str:
+    """Return one point of a curve in words, as the status line says it."""
+    value = value_text(curve.quantity, float(curve.raw[index]), curve.unit, decibels=decibels)
+    label = QUANTITIES[curve.quantity].label
+    return f"{frequency_text(float(curve.x[index]))}   {curve.label}   {label} {value}"
+
+
+def hidden_sentence(curves: Sequence[Curve]) -> str:
+    """Return how many points the plot cannot show, or nothing."""
+    count = sum(curve.hidden_points for curve in curves)
+    if not count:
+        return ""
+    return f"{count} {'point' if count == 1 else 'points'} not shown (beyond the scale)"
+
+
+def empty_sentence(quantity: str, curves: Sequence[Curve]) -> str:
+    """Return what stands in the middle of the plot when there is no curve in it, or nothing."""
+    label = QUANTITIES[quantity].label
+    if not curves:
+        return f"{label} over frequency will be drawn here as soon as the stack has been computed."
+    if any(np.isfinite(curve.y).any() for curve in curves):
+        return ""
+    if any(np.isinf(curve.raw).any() for curve in curves):
+        return f"{label} is infinite at every frequency: nothing passes."
+    return f"{label} has no value here: there is no wave whose {label.lower()} could be told."
+
+
+def description(curves: Sequence[Curve], *, decibels: bool = False) -> str:
+    """Return the plot for those who hear it: band, worst values, and what is not shown."""
+    if not curves:
+        return "No curves yet."
+    first = curves[0]
+    low, high = float(first.x.min()), float(first.x.max())
+    parts = [
+        f"{QUANTITIES[first.quantity].label} from {frequency_text(low)} to {frequency_text(high)}, "
+        f"{len(curves)} {'curve' if len(curves) == 1 else 'curves'}.",
+        f"{worst_sentence(curves, decibels=decibels)}.",
+    ]
+    if len(curves) <= MOST_READ:
+        parts += [f"{curve_sentence(curve, decibels=decibels)}." for curve in curves if curve.worst is not None]
+    hidden = hidden_sentence(curves)
+    return " ".join([*parts, f"{hidden}." if hidden else ""]).strip()
+
+
+def _worst_text(curve: Curve, decibels: bool) -> str:
+    if curve.worst is not None:
+        value, frequency = curve.worst.y, curve.worst.x
+    else:
+        frequency = curve.worst_infinite if curve.worst_infinite is not None else float(curve.x[0])
+        value = float(curve.raw[int(np.argmin(np.abs(curve.x - frequency)))])
+    text = value_text(curve.quantity, value, curve.unit, decibels=decibels)
+    return f"{text} at {frequency_text(frequency)}"
+
+
+def _whose(curve: Curve) -> str:
+    return f"{angle_text(curve.angle)}, {curve.polarization}"
+
+
+def _end(curves: Sequence[Curve], *, low: bool) -> tuple[Curve, int] | None:
+    """Return the curve and the index of the smallest or largest value of all, or None without any."""
+    sign = 1.0 if low else -1.0
+    known = [curve for curve in curves if np.isfinite(curve.y).any()]
+    if not known:
+        return None
+    curve = min(known, key=lambda one: float(np.nanmin(sign * one.y)))
+    return curve, int(np.nanargmin(sign * curve.y))

@@ -1,0 +1,137 @@
+"""What is written around the wave: circumstances, R and T at their arrows, absorbed shares, angles, end names."""
+
+import math
+from dataclasses import dataclass
+from typing import Final, Literal
+
+from app.panels.wall.geometry import Box
+from app.panels.wall.labels import INSET, TextMeasure, elided
+from app.panels.wall.layout import MARGIN, WallLayout
+from app.panels.wall.rays import Arc, Rays
+from app.panels.wall.wave import Wave
+from app.panels.wall.words import share_text, tilt_text
+from app.series.texts import angle_text, frequency_text
+
+Role = Literal["incident", "reflectance", "transmittance", "absorptance", "angle", "end"]
+
+ARC_GAP: Final = 5.0
+
+
+@dataclass(frozen=True, slots=True)
+class Caption:
+    """A text, where it stands and whose colour it has."""
+
+    text: str
+    box: Box
+    role: Role
+
+
+def captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMeasure) -> tuple[Caption, ...]:
+    """Return everything written around the wave, none of it upon another."""
+    placed = [*circumstances(layout, wave, measure)]
+    if wave.powers is not None:
+        placed += _arrow_captions(layout, rays, wave, measure)
+        placed += share_captions(layout, wave, measure)
+    if rays.total:
+        placed.append(_total_caption(layout, rays, measure))
+    for arc in rays.arcs:
+        caption = _angle_caption(arc, measure)
+        taken = [other.box for other in placed]
+        if caption.box.right < layout.width and not any(caption.box.overlaps(box) for box in taken):
+            placed.append(caption)
+    return tuple(placed)
+
+
+def circumstances(layout: WallLayout, wave: Wave, measure: TextMeasure) -> tuple[Caption, ...]:
+    """Return frequency, angle and polarization at the upper left, on as many lines as the room asks for."""
+    parts = (frequency_text(wave.frequency), angle_text(wave.angle), wave.polarization)
+    room = layout.body.left - 2 * MARGIN
+    lines = [", ".join(parts)]
+    if measure.width(lines[0]) > room:
+        lines = [parts[0], ", ".join(parts[1:])]
+    made = []
+    for number, line in enumerate(lines):
+        text = elided(line, room, measure)
+        top = layout.body.top + number * measure.line
+        made.append(Caption(text, Box(MARGIN, top, MARGIN + measure.width(text), top + measure.line), "incident"))
+    return tuple(made)
+
+
+def circumstances_height(layout: WallLayout, wave: Wave, measure: TextMeasure) -> float:
+    """Return how much of the wall's height they take."""
+    return max(caption.box.bottom for caption in circumstances(layout, wave, measure)) - layout.body.top
+
+
+def share_captions(layout: WallLayout, wave: Wave, measure: TextMeasure) -> tuple[Caption, ...]:
+    """Return the absorbed share at the foot of each slab that has room for it."""
+    assert wave.powers is not None
+    found = []
+    for slab in layout.slabs:
+        share = wave.powers.absorbed[slab.row]
+        texts = (f"absorbed {share_text(share)}", share_text(share))
+        text = next((text for text in texts if measure.width(text) <= slab.box.width - INSET), "")
+        if text and share > 0:
+            half, bottom = measure.width(text) / 2, slab.box.bottom - 3
+            middle = slab.box.middle
+            box = Box(middle - half, bottom - measure.line, middle + half, bottom)
+            found.append(Caption(text, box, "absorptance"))
+    return tuple(found)
+
+
+def end_names(layout: WallLayout, measure: TextMeasure) -> tuple[Caption, ...]:
+    """Return the names of the half-spaces at the two ends of the row of numbers."""
+    numbers = [number.box for number in layout.numbers]
+    rail = layout.rail
+    first = min((box.left for box in numbers), default=layout.width / 2) - 2 * MARGIN
+    last = max((box.right for box in numbers), default=layout.width / 2) + 2 * MARGIN
+    front = elided(layout.wall.front.name, first - MARGIN, measure)
+    back = elided(layout.wall.back.name, layout.width - MARGIN - last, measure)
+    left = Box(MARGIN, rail.top, MARGIN + measure.width(front), rail.bottom)
+    edge = layout.width - MARGIN
+    right = Box(edge - measure.width(back), rail.top, edge, rail.bottom)
+    return Caption(front, left, "end"), Caption(back, right, "end")
+
+
+def _arrow_captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMeasure) -> list[Caption]:
+    assert wave.powers is not None
+    made = []
+    if rays.reflected is not None:
+        text = f"R {share_text(wave.powers.reflectance)}"
+        bottom = max(y for _, y in rays.reflected.outline)
+        left = max(rays.tails["reflectance"][0], MARGIN)
+        left = min(left, layout.body.left - MARGIN - measure.width(text))
+        made.append(Caption(text, _below(left, bottom, text, layout, measure), "reflectance"))
+    if rays.transmitted is not None:
+        text = f"T {share_text(wave.powers.transmittance)}"
+        bottom = max(y for _, y in rays.transmitted.outline)
+        left = min(rays.tails["transmittance"][0], layout.width - MARGIN) - measure.width(text)
+        left = max(left, layout.body.right + MARGIN)
+        made.append(Caption(text, _below(left, bottom, text, layout, measure), "transmittance"))
+    return made
+
+
+def _below(left: float, bottom: float, text: str, layout: WallLayout, measure: TextMeasure) -> Box:
+    top = min(bottom + 2, layout.body.bottom - measure.line)
+    return Box(left, top, left + measure.width(text), top + measure.line)
+
+
+def _total_caption(layout: WallLayout, rays: Rays, measure: TextMeasure) -> Caption:
+    room = layout.width - MARGIN - layout.body.right - 2 * MARGIN
+    text = elided("total reflection", room, measure)
+    left = layout.body.right + 2 * MARGIN
+    top = rays.exit - measure.line / 2
+    return Caption(text, Box(left, top, left + measure.width(text), top + measure.line), "transmittance")
+
+
+def _angle_caption(arc: Arc, measure: TextMeasure) -> Caption:
+    """Return the angle written beyond its arc, half way between the normal and the ray."""
+    text = tilt_text(arc.angle)
+    side = 1 if arc.behind else -1
+    width = measure.width(text)
+    # In front the incident ray comes from above: the angle opens upward there.
+    lean = arc.angle / 2 if arc.behind else -arc.angle / 2
+    reach = arc.radius + ARC_GAP + width / 2
+    x = arc.x + side * reach * math.cos(lean)
+    y = arc.y + reach * math.sin(lean)
+    box = Box(x - width / 2, y - measure.line / 2, x + width / 2, y + measure.line / 2)
+    return Caption(text, box, "angle")

@@ -1,0 +1,124 @@
+"""Draws the rays, the levels of absorbed power, the angles and what is written about them."""
+
+import math
+from dataclasses import replace
+from typing import Final
+
+from PySide6.QtCore import QPointF, QRectF, Qt
+from PySide6.QtGui import QColor, QPainter, QPen, QPolygonF
+
+from app.look.theme import Theme, curve_colour, label_colour
+from app.panels.wall.captions import Caption
+from app.panels.wall.layout import WallLayout
+from app.panels.wall.pens import colour, rectangle
+from app.panels.wall.rays import Arc, Band, Rays
+from app.panels.wall.wave import Wave
+
+STALE_OPACITY: Final = 0.35
+LEVEL_ALPHA: Final = 0.34
+BAND_ALPHA: Final = 0.82
+WITHIN_ALPHA: Final = 0.62
+FAINT_ALPHA: Final = 0.6
+DECAY_ALPHA: Final = 0.25
+
+
+def paint_levels(painter: QPainter, layout: WallLayout, wave: Wave, theme: Theme) -> None:
+    """Draw the absorbed share of each slab as a level: a slab filled to the top would absorb everything."""
+    if wave.powers is None:
+        return
+    for slab in layout.slabs:
+        tall = wave.powers.absorbed[slab.row] * slab.box.height
+        if tall < 0.5:
+            continue
+        level = replace(slab.box, top=slab.box.bottom - tall)
+        painter.fillRect(rectangle(level), colour(theme.absorption, LEVEL_ALPHA))
+        painter.setPen(QPen(QColor(theme.absorption), 1.6))
+        painter.drawLine(QPointF(level.left, level.top), QPointF(level.right, level.top))
+
+
+def paint_within(painter: QPainter, rays: Rays, theme: Theme) -> None:
+    """Draw the wave on its way through the wall."""
+    for band in rays.within:
+        _paint_band(painter, band, theme, WITHIN_ALPHA)
+
+
+def paint_outside(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> None:
+    """Draw the arrows in the half-spaces with their angles and the direction of the electric field."""
+    _paint_normals(painter, rays, theme)
+    for band in (rays.incident, rays.reflected, rays.transmitted):
+        if band is not None:
+            _paint_band(painter, band, theme, BAND_ALPHA)
+    _paint_field(painter, rays, wave, theme)
+
+
+def paint_captions(painter: QPainter, written: tuple[Caption, ...], theme: Theme) -> None:
+    """Write what belongs to the wave."""
+    for caption in written:
+        painter.setPen(QColor(_ink(caption, theme)))
+        painter.drawText(rectangle(caption.box).adjusted(0, 0, 4, 0), Qt.AlignmentFlag.AlignVCenter, caption.text)
+
+
+def _ink(caption: Caption, theme: Theme) -> str:
+    if caption.role in ("reflectance", "transmittance"):
+        return label_colour(theme, curve_colour(theme, caption.role, 0, 1))
+    return theme.muted if caption.role == "angle" else theme.text
+
+
+def _paint_band(painter: QPainter, band: Band, theme: Theme, alpha: float) -> None:
+    code = theme.muted if band.role == "incident" else curve_colour(theme, band.role, 0, 1)
+    if band.role == "incident":
+        alpha = 0.45
+    if band.faint:
+        alpha = FAINT_ALPHA
+    if band.decays:
+        alpha = DECAY_ALPHA
+    painter.setPen(Qt.PenStyle.NoPen)
+    painter.setBrush(colour(code, alpha))
+    painter.drawPolygon(QPolygonF([QPointF(x, y) for x, y in band.outline]))
+
+
+def _paint_normals(painter: QPainter, rays: Rays, theme: Theme) -> None:
+    for arc in rays.arcs:
+        _paint_angle(painter, arc, theme)
+
+
+def _paint_angle(painter: QPainter, arc: Arc, theme: Theme) -> None:
+    """Draw the normal where the angle is measured and the arc between it and the ray."""
+    side = 1 if arc.behind else -1
+    painter.setBrush(Qt.BrushStyle.NoBrush)
+    painter.setPen(QPen(QColor(theme.muted), 1.0, Qt.PenStyle.DashLine))
+    painter.drawLine(QPointF(arc.x, arc.y), QPointF(arc.x + side * (arc.radius + 22), arc.y))
+    painter.setPen(QPen(QColor(theme.muted), 1.0))
+    square = QRectF(arc.x - arc.radius, arc.y - arc.radius, 2 * arc.radius, 2 * arc.radius)
+    # Qt counts sixteenths of a degree anticlockwise from three o'clock, on a y axis that points up.
+    sixteenths = round(math.degrees(arc.angle) * 16)
+    begin = 0 if arc.behind else 180 * 16
+    painter.drawArc(square, begin, -sixteenths)
+
+
+def _paint_field(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> None:
+    """Mark the electric field on the incident ray: a point toward the eye for TE, a double arrow for TM."""
+    tail, end = rays.tails["incident"], (rays.incident.outline[0][0], rays.entry)
+    x, y = tail[0] + 0.42 * (end[0] - tail[0]), tail[1] + 0.42 * (end[1] - tail[1])
+    ink = QColor(theme.text)
+    painter.setPen(QPen(ink, 1.4))
+    if wave.polarization == "TE":
+        painter.setBrush(QColor(theme.base))
+        painter.drawEllipse(QPointF(x, y), 6.0, 6.0)
+        painter.setPen(Qt.PenStyle.NoPen)
+        painter.setBrush(ink)
+        painter.drawEllipse(QPointF(x, y), 2.0, 2.0)
+        return
+    theta = wave.angle
+    across = (math.sin(theta), -math.cos(theta))
+    along = (math.cos(theta), math.sin(theta))
+    painter.drawLine(
+        QPointF(x - 13 * across[0], y - 13 * across[1]), QPointF(x + 13 * across[0], y + 13 * across[1])
+    )
+    for sign in (-1, 1):
+        tip = (x + sign * 14 * across[0], y + sign * 14 * across[1])
+        foot = (x + sign * 8 * across[0], y + sign * 8 * across[1])
+        wings = [(foot[0] + turn * 3.5 * along[0], foot[1] + turn * 3.5 * along[1]) for turn in (-1, 1)]
+        painter.setPen(Qt.PenStyle.NoPen)
+        painter.setBrush(ink)
+        painter.drawPolygon(QPolygonF([QPointF(*tip), *(QPointF(*wing) for wing in wings)]))

@@ -1,0 +1,169 @@
+"""CSV export beside the work: in a thread of its own, with progress, and given up when asked."""
+
+import contextlib
+import threading
+from collections.abc import Callable, Iterator
+from pathlib import Path
+from typing import Final, NamedTuple
+
+from PySide6.QtCore import QObject, Qt, QTimer, Signal, Slot
+from PySide6.QtWidgets import QHBoxLayout, QLabel, QProgressBar, QPushButton, QWidget
+
+from app.window.crash_net import LOGGER
+from app.window.dialogs import Dialogs
+from stackcore.errors import Severity, SlabwrightError
+from stackcore.job.resolve import Job
+
+Tell = Callable[[str, Severity], None]
+Steps = Callable[[Job, Path], Iterator[float]]
+"""Writes a job's table to a file bit by bit and yields the share done, 0 to 1; closing it gives up."""
+
+PATIENCE: Final = 1000
+"""Milliseconds before progress is shown."""
+
+
+class Outcome(NamedTuple):
+    """How an export ended: ``done``, ``cancelled`` or the words for what went wrong."""
+
+    path: Path
+    fault: str
+    cancelled: bool
+
+
+class Exporter(QObject):
+    """Writes the table of the present job to a file, one at a time.
+
+    The file appears only when it is complete; an older one of its name is untouched until then.
+
+    Signals
+    -------
+    progressed(float)
+        Share done, 0 to 1.
+    running(bool)
+        An export has begun, or has ended.
+    """
+
+    progressed = Signal(float)
+    running = Signal(bool)
+    _ended = Signal(object)
+
+    def __init__(
+        self,
+        job: Callable[[], Job],
+        suggestion: Callable[[str], Path],
+        dialogs: Dialogs,
+        tell: Tell,
+        steps: Steps,
+        parent: QObject | None = None,
+    ) -> None:
+        super().__init__(parent)
+        self._job, self._suggestion, self._dialogs, self._tell, self._steps = (
+            job,
+            suggestion,
+            dialogs,
+            tell,
+            steps,
+        )
+        self._thread: threading.Thread | None = None
+        self._stop = threading.Event()
+        self._ended.connect(self._finish, Qt.ConnectionType.QueuedConnection)
+
+    def idle(self) -> bool:
+        """Whether a new export can begin."""
+        return self._thread is None
+
+    def export(self) -> None:
+        """Ask for a file and begin."""
+        self._dialogs.pick_csv(self._suggestion(".csv"), self.start)
+
+    def start(self, path: Path) -> None:
+        """Begin to write the job as it is now; later edits do not touch it."""
+        if self._thread is not None:
+            self._tell("An export is still running; cancel it first.", "warning")
+            return
+        self._stop.clear()
+        self._thread = threading.Thread(
+            target=self._work, args=(self._job(), path), name="CSV export", daemon=True
+        )
+        self._thread.start()
+        self.running.emit(True)
+
+    def cancel(self) -> None:
+        """Give up soon; no file is left."""
+        self._stop.set()
+
+    def close(self) -> None:
+        """Give up and wait for the thread."""
+        self._stop.set()
+        if self._thread is not None:
+            self._thread.join()
+            self._thread = None
+
+    def _work(self, job: Job, path: Path) -> None:
+        fault = ""
+        try:
+            with contextlib.closing(self._steps(job, path)) as steps:
+                for share in steps:
+                    if self._stop.is_set():
+                        break
+                    self.progressed.emit(share)
+        except OSError as error:
+            fault = error.strerror or str(error)
+        except SlabwrightError as error:
+            fault = str(error)
+        except Exception as error:
+            LOGGER.exception("CSV export")
+            fault = f"{type(error).__name__}: {error}"
+        self._ended.emit(Outcome(path, fault, self._stop.is_set()))
+
+    @Slot(object)
+    def _finish(self, outcome: Outcome) -> None:
+        if self._thread is None:
+            return  # closed meanwhile
+        self._thread.join()
+        self._thread = None
+        self.running.emit(False)
+        name = outcome.path.name
+        if outcome.fault:
+            self._tell(f"{name} could not be written: {outcome.fault}. No file was left.", "error")
+        elif outcome.cancelled:
+            self._tell(f"Export of {name} given up; no file was left.", "note")
+        else:
+            self._tell(f"Exported {name}.", "note")
+
+
+class ProgressLine(QWidget):
+    """A bar with Cancel in the status line, while an export takes longer than `PATIENCE`."""
+
+    def __init__(self, exporter: Exporter, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self._bar = QProgressBar(self)
+        self._bar.setRange(0, 1000)
+        self._bar.setFixedWidth(160)
+        self._bar.setTextVisible(True)
+        self._bar.setAccessibleName("Progress of the CSV export")
+        cancel = QPushButton("Cancel", self)
+        cancel.setToolTip("Give up the export; no file is left.")
+        cancel.clicked.connect(exporter.cancel)
+        row = QHBoxLayout(self)
+        row.setContentsMargins(0, 0, 8, 0)
+        row.setSpacing(8)
+        row.addWidget(QLabel("Exporting CSV", self))
+        row.addWidget(self._bar)
+        row.addWidget(cancel)
+        self._wait = QTimer(self)
+        self._wait.setObjectName("progress")
+        self._wait.setSingleShot(True)
+        self._wait.setInterval(PATIENCE)
+        self._wait.timeout.connect(self.show)
+        exporter.progressed.connect(lambda share: self._bar.setValue(round(share * 1000)))
+        exporter.running.connect(self._run)
+        self.hide()
+
+    def _run(self, running: bool) -> None:
+        self._bar.setValue(0)
+        if running:
+            self._wait.start()
+        else:
+            self._wait.stop()
+            self.hide()

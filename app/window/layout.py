@@ -1,0 +1,187 @@
+"""The arrangement: the wall across the top, the table and the curves below, panels beside when asked for."""
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from typing import Final
+
+from PySide6.QtCore import QSettings, QSize, Qt
+from PySide6.QtGui import QColor, QPainter, QPaintEvent
+from PySide6.QtWidgets import QDockWidget, QMainWindow, QSplitter, QSplitterHandle, QVBoxLayout, QWidget
+
+from app.look.theme import Theme
+
+VERSION: Final = 1
+"""Of the arrangement; raised when panels come or go, and an older one is then forgotten."""
+
+FIRST_SIZE: Final = QSize(1280, 840)
+WALL_SHARE: Final = 0.34
+TABLE_SHARE: Final = 0.38
+READINGS_SHARE: Final = 0.26
+HANDLE: Final = 9
+"""Width of the gap between panels, which is where they are resized."""
+
+
+class QuietHandle(QSplitterHandle):
+    """A gap with a hairline; the accent shows when it can be dragged."""
+
+    def paintEvent(self, event: QPaintEvent) -> None:
+        """Draw the hairline in the middle of the gap."""
+        splitter = self.splitter()
+        assert isinstance(splitter, QuietSplitter)
+        painter = QPainter(self)
+        hot = self.underMouse()
+        colour = QColor(splitter.theme.accent if hot else splitter.theme.line)
+        thick = 2 if hot else 1
+        if self.orientation() == Qt.Orientation.Horizontal:
+            painter.fillRect((self.width() - thick) // 2, 0, thick, self.height(), colour)
+        else:
+            painter.fillRect(0, (self.height() - thick) // 2, self.width(), thick, colour)
+        painter.end()
+
+
+class QuietSplitter(QSplitter):
+    """A splitter whose handles are quiet gaps and whose panels cannot be squeezed away."""
+
+    def __init__(self, name: str, orientation: Qt.Orientation, theme: Theme) -> None:
+        super().__init__(orientation)
+        self.theme = theme
+        self.setObjectName(name)
+        self.setHandleWidth(HANDLE)
+        self.setChildrenCollapsible(False)
+        self.setOpaqueResize(True)
+
+    def createHandle(self) -> QSplitterHandle:
+        """Return a quiet handle."""
+        handle = QuietHandle(self.orientation(), self)
+        handle.setAttribute(Qt.WidgetAttribute.WA_Hover)
+        return handle
+
+    def set_theme(self, theme: Theme) -> None:
+        """Take the colours of `theme`."""
+        self.theme = theme
+        for place in range(self.count()):
+            self.handle(place).update()
+
+
+@dataclass(frozen=True, slots=True)
+class Places:
+    """The widgets to arrange."""
+
+    strip: QWidget
+    wall: QWidget
+    elements: QWidget
+    sweep: QWidget
+    curves: QWidget
+    readings: QWidget
+
+
+class Arrangement:
+    """Puts the panels into the window, remembers where they were, and puts them back.
+
+    Parameters
+    ----------
+    window
+        Whose central widget and docks are arranged.
+    beside
+        Panels opened beside, by title: each becomes a dock on the right, closed at first.
+    """
+
+    def __init__(
+        self,
+        window: QMainWindow,
+        places: Places,
+        beside: Sequence[tuple[str, QWidget]],
+        theme: Theme,
+        settings: QSettings,
+    ) -> None:
+        self._window = window
+        self._settings = settings
+        across, upright = Qt.Orientation.Horizontal, Qt.Orientation.Vertical
+        self._results = QuietSplitter("results", upright, theme)
+        self._results.addWidget(_stacked(places.sweep, places.curves))
+        self._results.addWidget(places.readings)
+        self._lower = QuietSplitter("lower", across, theme)
+        self._lower.addWidget(places.elements)
+        self._lower.addWidget(self._results)
+        self._whole = QuietSplitter("whole", upright, theme)
+        self._whole.addWidget(places.wall)
+        self._whole.addWidget(self._lower)
+        centre = QWidget(window)
+        column = QVBoxLayout(centre)
+        column.setContentsMargins(0, 0, 0, 0)
+        column.setSpacing(0)
+        column.addWidget(places.strip)
+        column.addWidget(self._whole, 1)
+        window.setCentralWidget(centre)
+        self._docks = {title: _dock(window, title, widget) for title, widget in beside}
+
+    @property
+    def splitters(self) -> tuple[QuietSplitter, ...]:
+        """The splitters, for tests and for the theme."""
+        return self._whole, self._lower, self._results
+
+    def dock(self, title: str) -> QDockWidget:
+        """Return the dock of the panel with this title."""
+        return self._docks[title]
+
+    def set_theme(self, theme: Theme) -> None:
+        """Take the colours of `theme`."""
+        for splitter in self.splitters:
+            splitter.set_theme(theme)
+
+    def reset(self) -> None:
+        """Arrange everything as at the first run, in the size the window has."""
+        for dock in self._docks.values():
+            dock.setFloating(False)
+            self._window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
+            dock.hide()
+        _share(self._whole, WALL_SHARE, self._window.height())
+        _share(self._lower, TABLE_SHARE, self._window.width())
+        _share(self._results, 1 - READINGS_SHARE, round(self._window.height() * (1 - WALL_SHARE)))
+
+    def save(self) -> None:
+        """Remember size, place and shares."""
+        self._settings.setValue("layout/version", VERSION)
+        self._settings.setValue("layout/geometry", self._window.saveGeometry())
+        self._settings.setValue("layout/state", self._window.saveState(VERSION))
+        for splitter in self.splitters:
+            self._settings.setValue(f"layout/{splitter.objectName()}", splitter.saveState())
+
+    def restore(self) -> None:
+        """Arrange everything as it was left, or as at the first run when nothing (usable) is remembered."""
+        self._window.resize(FIRST_SIZE)
+        stored = self._settings.value("layout/version", 0, type=int) == VERSION
+        if stored:
+            self._window.restoreGeometry(self._settings.value("layout/geometry"))
+        if not stored or not self._window.restoreState(self._settings.value("layout/state"), VERSION):
+            self.reset()
+            return
+        for splitter in self.splitters:
+            splitter.restoreState(self._settings.value(f"layout/{splitter.objectName()}"))
+
+
+def _stacked(*widgets: QWidget) -> QWidget:
+    box = QWidget()
+    column = QVBoxLayout(box)
+    column.setContentsMargins(0, 0, 0, 0)
+    column.setSpacing(0)
+    for widget in widgets[:-1]:
+        column.addWidget(widget)
+    column.addWidget(widgets[-1], 1)
+    return box
+
+
+def _dock(window: QMainWindow, title: str, widget: QWidget) -> QDockWidget:
+    dock = QDockWidget(title, window)
+    dock.setObjectName(f"dock {title}")
+    dock.setWidget(widget)
+    window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
+    dock.hide()
+    return dock
+
+
+def _share(splitter: QSplitter, share: float, room: int) -> None:
+    first = round(room * share)
+    splitter.setSizes([first, max(room - first, 1)])
+    for place in range(splitter.count()):
+        splitter.setStretchFactor(place, round(100 * (share if place == 0 else 1 - share)))

@@ -1,0 +1,108 @@
+"""The panels of the main window, made and addressed together."""
+
+from dataclasses import dataclass
+
+from PySide6.QtCore import Qt
+from PySide6.QtWidgets import QApplication, QWidget
+
+from app.document.session import Session
+from app.document.view import View
+from app.look.theme import Theme
+from app.panels.curves.panel import CurvesPanel
+from app.panels.elements.panel import ElementsPanel
+from app.panels.materials.panel import MaterialsPanel
+from app.panels.readings.panel import ReadingsPanel
+from app.panels.sweep.panel import SweepPanel
+from app.panels.wall.panel import WallPanel
+from app.window.exporting import Tell
+from app.window.help_panel import HelpPanel
+from app.window.layout import Places
+from app.window.recompute import Viewer
+
+
+@dataclass(frozen=True, slots=True)
+class Panels:
+    """Every panel by its name."""
+
+    wall: WallPanel
+    elements: ElementsPanel
+    sweep: SweepPanel
+    curves: CurvesPanel
+    readings: ReadingsPanel
+    materials: MaterialsPanel
+    help: HelpPanel
+
+    @property
+    def viewers(self) -> tuple[Viewer, ...]:
+        """Those that show results."""
+        return self.wall, self.elements, self.curves, self.readings
+
+    @property
+    def in_order(self) -> tuple[QWidget, ...]:
+        """All of them, in the order F6 goes through."""
+        return (
+            self.wall,
+            self.elements,
+            self.sweep,
+            self.curves,
+            self.readings,
+            self.materials,
+            self.help,
+        )
+
+    def places(self, strip: QWidget) -> Places:
+        """Return who goes where."""
+        return Places(strip, self.wall, self.elements, self.sweep, self.curves, self.readings)
+
+    def set_theme(self, theme: Theme) -> None:
+        """Give every panel the colours of `theme`."""
+        self.wall.set_theme(theme)
+        self.elements.set_theme(theme)
+        self.sweep.set_theme(theme)
+        self.curves.set_theme(theme)
+        self.readings.set_theme(theme)
+        self.materials.set_theme(theme)
+        self.help.set_theme(theme)
+
+    def focus(self, step: int) -> None:
+        """Move the focus to the next visible panel (`step` 1) or the one before (-1)."""
+        shown = [panel for panel in self.in_order if panel.isVisible()]
+        if not shown:
+            return
+        now = next((place for place, panel in enumerate(shown) if has_focus(panel)), -1 if step > 0 else 0)
+        focus_into(shown[(now + step) % len(shown)])
+
+
+def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_panel: HelpPanel) -> Panels:
+    """Return the panels, each with what it needs and nothing more."""
+    return Panels(
+        wall=WallPanel(session, view, theme, tell),
+        elements=ElementsPanel(session, theme, tell),
+        sweep=SweepPanel(session, view, theme, tell),
+        curves=CurvesPanel(session, view, theme, tell),
+        readings=ReadingsPanel(session, view, theme, tell),
+        materials=MaterialsPanel(session, theme, tell),
+        help=help_panel,
+    )
+
+
+def has_focus(panel: QWidget) -> bool:
+    """Whether the keyboard focus is in `panel`."""
+    focus = QApplication.focusWidget()
+    return focus is not None and (focus is panel or panel.isAncestorOf(focus))
+
+
+def focus_into(panel: QWidget) -> None:
+    """Give the focus to `panel`, or to the first thing in it that takes it."""
+    reason = Qt.FocusReason.TabFocusReason
+    if panel.focusProxy() is not None or panel.focusPolicy() != Qt.FocusPolicy.NoFocus:
+        panel.setFocus(reason)
+        return
+    inside = (
+        child
+        for child in panel.findChildren(QWidget)
+        if child.focusPolicy() & Qt.FocusPolicy.TabFocus and child.isVisible() and child.isEnabled()
+    )
+    first = next(inside, None)
+    if first is not None:
+        first.setFocus(reason)

@@ -1,0 +1,101 @@
+"""The text of a job file and the record it stands for. Every fault of a text is told at once, with its path."""
+
+import re
+from collections.abc import Iterable
+
+from stackcore.errors import Fault, JobError, nearest
+from stackcore.job.decode import FORMAT, JOB_KEYS, decode_job
+from stackcore.job.encode import encode_job
+from stackcore.job.inspector import Inspector, shown
+from stackcore.job.migrations import VERSION, migrate
+from stackcore.job.records import JobRecord
+from stackcore.job.resolve import resolve
+from stackcore.job.tree import read_tree
+
+__all__ = ["VERSION", "job_from_json", "job_to_json"]
+
+
+def job_from_json(content: str | bytes) -> JobRecord:
+    """Return the record that the text of a job file stands for.
+
+    Parameters
+    ----------
+    content
+        The text, or its bytes in UTF-8.
+
+    Raises
+    ------
+    JobError
+        With every fault of the file in the order of the file, each with its path, what was given, what is allowed
+        and the nearest match.
+
+    Examples
+    --------
+    >>> job_from_json('{"format": "slabwright-job", "version": 2}')
+    Traceback (most recent call last):
+        ...
+    stackcore.errors.JobError: version: the file has version 2, newer than version 1 that this program reads; \
+allowed: version 1 or older; a newer slabwright reads this file
+    """
+    tree = read_tree(content)
+    inspector = Inspector()
+    if not isinstance(tree, dict):
+        raise JobError([Fault("", f"the file holds {shown(tree)}", "an object {...} with the keys of a job")])
+    inspector.repeated(tree, "")
+    _check_format(tree, inspector)
+    try:
+        current = dict(migrate(tree))
+    except JobError as error:
+        if isinstance(tree.get("version"), int | float) and not isinstance(tree.get("version"), bool):
+            raise JobError([*inspector.faults, *error.faults]) from None
+        inspector.faults += error.faults
+        current = tree
+    record = decode_job({key: current[key] for key in current}, inspector)
+    faults = [*inspector.faults, *_not_told_yet(resolve(record).faults, inspector.faulted)]
+    if faults:
+        raise JobError(_told(faults, inspector.untold))
+    return record
+
+
+def job_to_json(record: JobRecord) -> str:
+    """Return the text of a job file for `record`: texts as typed, keys in one order, an element a line.
+
+    ``job_from_json(job_to_json(record)) == record`` for every record without faults.
+    """
+    return encode_job(record)
+
+
+def _check_format(tree: dict[str, object], inspector: Inspector) -> None:
+    """Note a missing format; raise when another one is given, since then nothing else would make sense."""
+    if "format" not in tree:
+        inspector.fault("format", "is missing", f"{FORMAT!r}")
+    elif tree["format"] != FORMAT:
+        given = tree["format"]
+        near = nearest(given, [FORMAT]) if isinstance(given, str) and len(given) < 60 else ""
+        raise JobError([Fault("format", f"{shown(given)} is not a job file{near}", f"{FORMAT!r}")])
+
+
+def _not_told_yet(faults: Iterable[Fault], faulted: set[str]) -> list[Fault]:
+    """Return the faults that do not come from a stand-in: no fault was told at, or above, their place."""
+    return [fault for fault in faults if not any(place in faulted for place in _places_above(fault.path))]
+
+
+def _places_above(path: str) -> list[str]:
+    """Return `path` and every path it lies under."""
+    ends = [match.start() for match in re.finditer(r"\.|\[", path)]
+    return [path, *(path[:end] for end in ends)]
+
+
+def _told(faults: list[Fault], untold: int) -> list[Fault]:
+    """Return `faults` in the order of the file, and how many more there are."""
+    rank = {key: place for place, key in enumerate(JOB_KEYS)}
+
+    def order(fault: Fault) -> tuple[int, list[tuple[int, str]]]:
+        parts = re.findall(r"\d+|[^\d.\[\]]+", fault.path)
+        top = rank.get(parts[0], len(rank)) if parts else -1
+        return top, [(int(part), "") if part.isdigit() else (-1, part) for part in parts[1:]]
+
+    told = sorted(faults, key=order)
+    if untold:
+        told.append(Fault("", f"{untold} more faults are not listed", "correct these first"))
+    return told

@@ -1,0 +1,1 @@
+"""Tests of the media and of the material library."""
