@@ -8,7 +8,7 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Final
 
-from stackcore.media.base import FloatArray
+from stackcore.arrays import FloatArray
 from stackcore.propagation import Response
 
 

@@ -15,6 +15,7 @@ from stackcore.propagation.response import Response
 STANDING: Final = "Infinite flat sheets, plane wave; verify by test."
 """Holds for every result and is always shown."""
 
+
 @dataclass(frozen=True, slots=True)
 class Caution:
     """A note: `brief` for one line, `full` for the help panel."""

@@ -90,9 +90,7 @@ class CrashNet(QObject):
             return ""
         return "\n".join(self.log_file.read_text(encoding="utf-8", errors="replace").splitlines()[-lines:])
 
-    def _exception(
-        self, kind: type[BaseException], error: BaseException, trace: TracebackType | None
-    ) -> None:
+    def _exception(self, kind: type[BaseException], error: BaseException, trace: TracebackType | None) -> None:
         if issubclass(kind, KeyboardInterrupt):
             sys.__excepthook__(kind, error, trace)
             return

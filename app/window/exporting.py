@@ -2,7 +2,7 @@
 
 import contextlib
 import threading
-from collections.abc import Callable, Iterator
+from collections.abc import Callable, Generator
 from pathlib import Path
 from typing import Final, NamedTuple
 
@@ -12,18 +12,25 @@ from PySide6.QtWidgets import QHBoxLayout, QLabel, QProgressBar, QPushButton, QW
 from app.window.crash_net import LOGGER
 from app.window.dialogs import Dialogs
 from stackcore.errors import Severity, SlabwrightError
+from stackcore.export.sweep_csv import write_csv
 from stackcore.job.resolve import Job
 
 Tell = Callable[[str, Severity], None]
-Steps = Callable[[Job, Path], Iterator[float]]
+Steps = Callable[[Job, Path], Generator[float, None, None]]
 """Writes a job's table to a file bit by bit and yields the share done, 0 to 1; closing it gives up."""
+
+
+def csv_steps(job: Job, path: Path) -> Generator[float, None, None]:
+    """Write every stack of `job` over its sweep to `path` as CSV."""
+    yield from write_csv(job, path)
+
 
 PATIENCE: Final = 1000
 """Milliseconds before progress is shown."""
 
 
 class Outcome(NamedTuple):
-    """How an export ended: ``done``, ``cancelled`` or the words for what went wrong."""
+    """How an export ended: with words for what went wrong, given up, or well."""
 
     path: Path
     fault: str
@@ -57,13 +64,8 @@ class Exporter(QObject):
         parent: QObject | None = None,
     ) -> None:
         super().__init__(parent)
-        self._job, self._suggestion, self._dialogs, self._tell, self._steps = (
-            job,
-            suggestion,
-            dialogs,
-            tell,
-            steps,
-        )
+        self._job, self._suggestion, self._steps = job, suggestion, steps
+        self._dialogs, self._tell = dialogs, tell
         self._thread: threading.Thread | None = None
         self._stop = threading.Event()
         self._ended.connect(self._finish, Qt.ConnectionType.QueuedConnection)
@@ -82,9 +84,7 @@ class Exporter(QObject):
             self._tell("An export is still running; cancel it first.", "warning")
             return
         self._stop.clear()
-        self._thread = threading.Thread(
-            target=self._work, args=(self._job(), path), name="CSV export", daemon=True
-        )
+        self._thread = threading.Thread(target=self._work, args=(self._job(), path), name="CSV export", daemon=True)
         self._thread.start()
         self.running.emit(True)
 
@@ -100,11 +100,12 @@ class Exporter(QObject):
             self._thread = None
 
     def _work(self, job: Job, path: Path) -> None:
-        fault = ""
+        fault, cancelled = "", False
         try:
             with contextlib.closing(self._steps(job, path)) as steps:
                 for share in steps:
                     if self._stop.is_set():
+                        cancelled = True
                         break
                     self.progressed.emit(share)
         except OSError as error:
@@ -114,7 +115,7 @@ class Exporter(QObject):
         except Exception as error:
             LOGGER.exception("CSV export")
             fault = f"{type(error).__name__}: {error}"
-        self._ended.emit(Outcome(path, fault, self._stop.is_set()))
+        self._ended.emit(Outcome(path, fault, cancelled))
 
     @Slot(object)
     def _finish(self, outcome: Outcome) -> None:
@@ -156,9 +157,13 @@ class ProgressLine(QWidget):
         self._wait.setSingleShot(True)
         self._wait.setInterval(PATIENCE)
         self._wait.timeout.connect(self.show)
-        exporter.progressed.connect(lambda share: self._bar.setValue(round(share * 1000)))
+        exporter.progressed.connect(self._show_share, Qt.ConnectionType.QueuedConnection)
         exporter.running.connect(self._run)
         self.hide()
+
+    @Slot(float)
+    def _show_share(self, share: float) -> None:
+        self._bar.setValue(round(share * 1000))
 
     def _run(self, running: bool) -> None:
         self._bar.setValue(0)

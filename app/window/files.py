@@ -27,9 +27,7 @@ class Files:
     read leaves everything as it was.
     """
 
-    def __init__(
-        self, session: Session, dialogs: Dialogs, messages: Messages, recent: RecentFiles
-    ) -> None:
+    def __init__(self, session: Session, dialogs: Dialogs, messages: Messages, recent: RecentFiles) -> None:
         self._session = session
         self._dialogs = dialogs
         self._messages = messages
@@ -47,11 +45,11 @@ class Files:
 
     def open(self) -> None:
         """Ask for a job file and open it."""
-        self.leave(lambda: self._dialogs.pick_open(self._recent.folder, self._read))
+        self.leave(lambda: self._dialogs.pick_open(self._recent.folder, self.read))
 
     def open_path(self, path: Path) -> None:
         """Open a file that was named or dropped."""
-        self.leave(lambda: self._read(path))
+        self.leave(lambda: self.read(path))
 
     def open_sample(self, sample: Sample) -> None:
         """Open a copy of a sample: a job without a file, so that the sample stays as it is."""
@@ -98,7 +96,8 @@ class Files:
         name = "".join(letter if letter.isalnum() or letter in " -_" else "-" for letter in title)
         return self._recent.folder / f"{name.strip()}{suffix}"
 
-    def _read(self, path: Path) -> None:
+    def read(self, path: Path) -> None:
+        """Open a file in place of the present job, unasked."""
         try:
             self._session.open(path)
         except JobError as error:

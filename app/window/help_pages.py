@@ -55,9 +55,7 @@ def keyboard_page(theme: Theme, groups: Iterable[KeyGroup]) -> str:
 def cautions_page(theme: Theme, here: Iterable[Caution]) -> str:
     """Return what the results do not say: first the notes of the present job, then what always holds."""
     parts = [f"<p><b>{escape(STANDING)}</b></p>"]
-    notes = [
-        f"<h3>{escape(caution.brief)}</h3><p>{escape(caution.full)}</p>" for caution in here
-    ]
+    notes = [f"<h3>{escape(caution.brief)}</h3><p>{escape(caution.full)}</p>" for caution in here]
     if notes:
         parts += ["<h2>For what is shown now</h2>", *notes]
     parts.append("<h2>Always</h2>")

@@ -3,7 +3,7 @@
 from pathlib import Path
 from typing import Final
 
-from PySide6.QtCore import QEvent, QSettings, Qt
+from PySide6.QtCore import QSettings, Qt
 from PySide6.QtGui import QCloseEvent, QDragEnterEvent, QDropEvent, QGuiApplication, QKeyEvent
 from PySide6.QtWidgets import QApplication, QMainWindow
 
@@ -18,7 +18,7 @@ from app.window.crash_net import CrashNet
 from app.window.diagnostics import diagnostics, parts, version_of
 from app.window.dialogs import Dialogs, QtDialogs
 from app.window.editing import ElementCommands, StackCommands
-from app.window.exporting import Exporter, ProgressLine, Steps
+from app.window.exporting import Exporter, ProgressLine, csv_steps
 from app.window.files import Files
 from app.window.first_view import first_view
 from app.window.help_panel import HelpPanel
@@ -53,8 +53,6 @@ class MainWindow(QMainWindow):
         Layout and preferences (see `app.look.settings`).
     state_folder
         For the log and for recovery files.
-    steps
-        Writes the CSV table bit by bit (see `app.window.exporting`).
     dialogs
         Asks questions; without it the real dialogs.
     crash_net
@@ -67,29 +65,270 @@ class MainWindow(QMainWindow):
         view: View,
         settings: QSettings,
         state_folder: Path,
-        steps: Steps,
         *,
         dialogs: Dialogs | None = None,
         crash_net: CrashNet | None = None,
     ) -> None:
         super().__init__()
         self._session, self._view, self._settings = session, view, settings
-        self._leaving = self._closed = False
         self._net = crash_net
-        self._theme = self._apply_theme()
+        self._leaving = self._closed = False
+        self._theme = self._chosen_theme()
         self.messages = Messages(self)
         self._strip = MessageStrip(self.messages, self._theme, self)
         self._status = StatusLine(self._theme, self)
         self._panels = make_panels(session, view, self._theme, self.messages.tell, self._make_help())
-        self._arrangement = self._arrange()
+        self._arrangement = Arrangement(
+            self,
+            self._panels.places(self._strip),
+            ((MATERIALS, self._panels.materials), (HELP, self._panels.help)),
+            self._theme,
+            settings,
+        )
         self._recompute = Recompute(session, view, LiveLane(parent=self), self._panels.viewers, self)
         self._recent = RecentFiles(settings)
         self._dialogs: Dialogs = dialogs if dialogs is not None else QtDialogs(self)
         self._files = Files(session, self._dialogs, self.messages, self._recent)
         self._exporter = Exporter(
-            lambda: session.job, self._files.suggestion, self._dialogs, self.messages.tell, steps, self
+            lambda: session.job, self._files.suggestion, self._dialogs, self.messages.tell, csv_steps, self
         )
         self._recovery = Recovery(session, state_folder / "recovery", parent=self)
         self._actions = self._make_actions()
         self._connect()
         self._begin()
+
+    @property
+    def panels(self) -> Panels:
+        """The panels, by name."""
+        return self._panels
+
+    @property
+    def recompute(self) -> Recompute:
+        """What keeps the results up to date."""
+        return self._recompute
+
+    @property
+    def actions_table(self) -> Actions:
+        """The actions, by key."""
+        return self._actions
+
+    @property
+    def theme(self) -> Theme:
+        """The look of now."""
+        return self._theme
+
+    @property
+    def status(self) -> StatusLine:
+        """The status line."""
+        return self._status
+
+    def open_path(self, path: Path) -> None:
+        """Open a job file, after the question about unsaved changes."""
+        self._files.open_path(path)
+
+    def offer_leftovers(self) -> None:
+        """Offer the unsaved work that sessions which ended unexpectedly have left."""
+        for leftover in self._recovery.leftovers():
+            choices = (
+                Choice("Recover", lambda left=leftover: self._recover(left)),
+                Choice("Discard", leftover.discard),
+                Choice("Later", lambda: None),
+            )
+            self.messages.show(Message("note", leftover.sentence, choices))
+
+    def set_theme_choice(self, choice: str) -> None:
+        """Take ``auto``, ``light`` or ``dark``, and remember it."""
+        self._settings.setValue(THEME_KEY, choice)
+        self._take_theme()
+
+    def show_help(self, page: str) -> None:
+        """Show a page of the help panel, the definitions at the quantity that is shown."""
+        dock = self._arrangement.dock(HELP)
+        dock.show()
+        dock.raise_()
+        self._panels.help.show_page(page, self._view.state.quantity if page == "conventions" else "")
+        focus_into(self._panels.help)
+
+    def closeEvent(self, event: QCloseEvent) -> None:
+        """Ask about unsaved changes, then end everything that runs."""
+        if not self._closed and not self._leaving:
+            event.ignore()
+            self._files.leave(self._leave)
+            return
+        self._shut_down()
+        event.accept()
+
+    def dragEnterEvent(self, event: QDragEnterEvent) -> None:
+        """Welcome one local file."""
+        if self._dropped(event) is not None:
+            event.acceptProposedAction()
+
+    def dropEvent(self, event: QDropEvent) -> None:
+        """Open the file that was dropped."""
+        path = self._dropped(event)
+        if path is not None:
+            event.acceptProposedAction()
+            self._files.open_path(path)
+
+    def keyPressEvent(self, event: QKeyEvent) -> None:
+        """Dismiss the message with Esc, when nothing else wanted the key."""
+        if event.key() == Qt.Key.Key_Escape and self.messages.shown is not None:
+            self.messages.dismiss()
+        else:
+            super().keyPressEvent(event)
+
+    def _make_help(self) -> HelpPanel:
+        return HelpPanel(
+            {
+                "conventions": help_pages.conventions_page,
+                "keyboard": lambda theme: help_pages.keyboard_page(theme, key_groups(self._actions.table)),
+                "cautions": lambda theme: help_pages.cautions_page(theme, self._cautions()),
+                "about": lambda theme: help_pages.about_page(theme, version_of("slabwright"), parts()),
+            },
+            self._theme,
+        )
+
+    def _make_actions(self) -> Actions:
+        session, tell = self._session, self.messages.tell
+        materials = self._arrangement.dock(MATERIALS)
+        view = ViewCommands(
+            theme=self._theme_choice,
+            set_theme=self.set_theme_choice,
+            materials_shown=lambda: not materials.isHidden(),
+            toggle_materials=lambda: materials.setVisible(materials.isHidden()),
+            reset_layout=self._arrangement.reset,
+            next_panel=lambda: self._panels.focus(1),
+            previous_panel=lambda: self._panels.focus(-1),
+        )
+        commands = Commands(
+            session=session,
+            files=self._files,
+            exporter=self._exporter,
+            recent=self._recent,
+            samples=samples(),
+            elements=ElementCommands(session, tell),
+            stacks=StackCommands(session, self._dialogs, tell),
+            markers=MarkerCommands(session, self._view, lambda: self._recompute.answer),
+            view=view,
+            help=HelpCommands(self.show_help, self._copy_diagnostics),
+            copy=self._panels.elements.copy,
+            paste=self._panels.elements.paste,
+            quit=self.close,
+        )
+        return Actions(action_table(commands), self, (self._panels.elements, self._panels.wall))
+
+    def _connect(self) -> None:
+        self._unsubscribe = (self._session.subscribe(self._heard), self._view.subscribe(self._looked))
+        self.messages.noted.connect(self._status.note)
+        self._recompute.told.connect(self._status.tell)
+        self._recompute.answered.connect(self._answered)
+        self._recompute.failed.connect(self._failed)
+        self._exporter.running.connect(self._actions.refresh)
+        self._status.cautions.clicked.connect(lambda: self.show_help("cautions"))
+        self._arrangement.dock(MATERIALS).visibilityChanged.connect(self._actions.refresh)
+        QGuiApplication.styleHints().colorSchemeChanged.connect(self._take_theme)
+        if self._net is not None:
+            self._net.caught.connect(self._caught)
+
+    def _begin(self) -> None:
+        self.setObjectName("main-window")
+        self.setAcceptDrops(True)
+        self.setDockNestingEnabled(True)
+        self._actions.fill(self.menuBar())
+        self.setStatusBar(self._status)
+        self._status.insertPermanentWidget(0, ProgressLine(self._exporter, self))
+        self._arrangement.restore()
+        self._view.replace(first_view(self._session.job))
+        self._show_title()
+        self._recompute.ask(fresh=True)
+        self._show_cautions()
+        focus_into(self._panels.elements)
+
+    def _heard(self, change: Change) -> None:
+        if change.kind == "open":
+            self._view.replace(first_view(change.after.job))
+        self._show_title()
+        self._show_cautions()
+        self._actions.refresh()
+
+    def _looked(self, _: object) -> None:
+        self._show_cautions()
+        self._actions.refresh()
+
+    def _answered(self, _: Answer) -> None:
+        self.messages.withdraw(UNSOLVED)
+        self._show_cautions()
+        self._actions.refresh()
+
+    def _failed(self, faults: tuple[Fault, ...]) -> None:
+        self.messages.show(Message("error", UNSOLVED, details=tuple(str(fault) for fault in faults)))
+
+    def _caught(self, text: str) -> None:
+        self.messages.show(Message("error", text, (Choice("Copy diagnostics", self._copy_diagnostics),)))
+
+    def _show_title(self) -> None:
+        self.setWindowTitle(f"{self._session.title}[*] – Slabwright")
+        self.setWindowModified(self._session.modified)
+
+    def _show_cautions(self) -> None:
+        self._status.cautions.say(self._cautions())
+
+    def _cautions(self) -> tuple[Caution, ...]:
+        answer = self._recompute.answer
+        response = answer.response if answer is not None else None
+        return cautions(self._session.job, self._session.selection.stack, self._view.state, response)
+
+    def _recover(self, leftover: Leftover) -> None:
+        def bring_back() -> None:
+            source = leftover.source
+            if source is not None and source.exists():
+                self._files.read(source)
+            self._session.apply(leftover.edit())
+            leftover.discard()
+
+        self._files.leave(bring_back)
+
+    def _theme_choice(self) -> str:
+        return str(self._settings.value(THEME_KEY, "auto", type=str))
+
+    def _chosen_theme(self) -> Theme:
+        theme = preferred_theme(self._theme_choice())
+        application = QApplication.instance()
+        if isinstance(application, QApplication):
+            apply_theme(application, theme)
+        return theme
+
+    def _take_theme(self) -> None:
+        self._theme = self._chosen_theme()
+        self._strip.set_theme(self._theme)
+        self._status.set_theme(self._theme)
+        self._arrangement.set_theme(self._theme)
+        self._panels.set_theme(self._theme)
+        self._actions.refresh()
+
+    def _copy_diagnostics(self) -> None:
+        log = self._net.tail() if self._net is not None else ""
+        QGuiApplication.clipboard().setText(diagnostics(self._theme, log))
+        self.messages.tell("Copied the diagnostics.")
+
+    def _dropped(self, event: QDropEvent) -> Path | None:
+        urls = event.mimeData().urls()
+        return Path(urls[0].toLocalFile()) if len(urls) == 1 and urls[0].isLocalFile() else None
+
+    def _leave(self) -> None:
+        self._leaving = True
+        self.close()
+
+    def _shut_down(self) -> None:
+        if self._closed:
+            return
+        self._closed = True
+        self._arrangement.save()
+        self._settings.sync()
+        QGuiApplication.styleHints().colorSchemeChanged.disconnect(self._take_theme)
+        for unsubscribe in self._unsubscribe:
+            unsubscribe()
+        self._recompute.close()
+        self._exporter.close()
+        self._files.close()
+        self._recovery.close()

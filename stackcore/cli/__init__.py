@@ -1,1 +1,93 @@
+"""The command ``slabwright``: which part of the program a command line is for.
 
+Exit status: 0 done; 1 the answer is no; 2 the input is wrong, told on standard error, one line a fault.
+"""
+
+import sys
+from collections.abc import Callable, Sequence
+from typing import Final
+
+from stackcore.cli import sweep
+from stackcore.cli.telling import GIVEN_UP, WRONG, one_line, tell
+from stackcore.errors import Fault, SlabwrightError, nearest
+
+__all__ = ["main"]
+
+COMMANDS: Final[dict[str, Callable[[Sequence[str]], int]]] = {"sweep": sweep.main}
+"""Name -> function of the arguments behind it. What is not here belongs to the window."""
+
+WINDOW_COMMANDS: Final = ("picture",)
+
+HELP: Final = """\
+usage: slabwright [JOB]
+       slabwright sweep JOB --csv OUT [--stack NAME]
+       slabwright picture JOB --png OUT [--size WxH]
+
+Plane waves through flat multilayer walls.
+
+  slabwright [JOB]   open the window, with a job file if one is named
+  sweep              compute every stack of a job over its sweep and write a table
+  picture            draw the window with a job to a PNG, without a display
+
+options:
+  -h, --help         show this help; after a command, that of the command
+  --version          show the version
+
+exit status: 0 done; 1 the answer is no; 2 the input is wrong, one line a fault on standard error
+"""
+
+
+def main(argv: Sequence[str] | None = None) -> int:
+    """Run one command line.
+
+    Parameters
+    ----------
+    argv
+        Arguments without the program's name; None takes those of the process.
+
+    Returns
+    -------
+    int
+        The exit status.
+    """
+    arguments = list(sys.argv[1:] if argv is None else argv)
+    first = arguments[0] if arguments else ""
+    try:
+        if first in ("-h", "--help"):
+            print(HELP, end="")
+            return 0
+        if first == "--version":
+            print(f"slabwright {_version()}")
+            return 0
+        if first in COMMANDS:
+            return COMMANDS[first](arguments[1:])
+        return _window(arguments)
+    except SlabwrightError as error:
+        return tell(error)
+    except BrokenPipeError:
+        return one_line("standard output was closed before everything was written")
+    except KeyboardInterrupt:
+        return GIVEN_UP
+
+
+def _version() -> str:
+    # Reading the metadata takes longer than all else that --version needs, and nothing else needs it.
+    from importlib.metadata import PackageNotFoundError, version
+
+    try:
+        return version("slabwright")
+    except PackageNotFoundError:
+        return "(from a checkout that is not installed)"
+
+
+def _window(arguments: list[str]) -> int:
+    """Hand over to the window, unless the first word can only be a mistyped command."""
+    from stackcore.cli.window import looks_like_a_file, open_window
+
+    first = arguments[0] if arguments else ""
+    if first and not first.startswith("-") and first not in WINDOW_COMMANDS and not looks_like_a_file(first):
+        known = (*COMMANDS, *WINDOW_COMMANDS)
+        allowed = f"{', '.join(known)}, or a job file"
+        return tell([Fault("", f"there is no command and no file {first!r}{nearest(first, known)}", allowed)])
+    status = open_window(arguments)
+    return status if status is not None else WRONG

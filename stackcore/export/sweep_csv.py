@@ -8,15 +8,13 @@ A text cell that a spreadsheet would take for a formula, because ``=``, ``+``, `
 comes first in it, is written with an apostrophe in front.
 """
 
-import os
 from collections.abc import Iterator, Sequence
-from typing import BinaryIO, Final
+from typing import Final, TextIO
 
 import numpy as np
 
 from stackcore.conventions import POLARIZATIONS
 from stackcore.job import Job
-from stackcore.job.replacing import replacing
 from stackcore.media.base import FloatArray
 from stackcore.propagation import Response, solve
 from stackcore.quantities import QUANTITIES
@@ -78,46 +76,48 @@ def csv_rows(response: Response, name: str | None = None) -> str:
     return "".join([f"{head}{row}{LINE_END}" for head, row in zip(heads, rows, strict=True)])
 
 
-def write_csv(
-    job: Job, target: str | os.PathLike[str] | BinaryIO, *, stacks: Sequence[Stack] | None = None
-) -> Iterator[float]:
+def write_csv(job: Job, stream: TextIO, *, stacks: Sequence[Stack] | None = None) -> Iterator[float]:
     """Solve stacks over the sweep of `job` and write them, yielding after each part the fraction that is done.
 
-    Nothing is done until the iterator is advanced. The sweep is solved and written in parts, so that its size is
-    bounded by the disk and not by the memory.
+    The sweep is solved and written in parts, so that its size is bounded by the disk and not by the memory. Nothing
+    is done until the iterator is advanced; closing it gives up.
 
     Parameters
     ----------
     job
         Whose sweep is taken.
-    target
-        A path, which is replaced as a whole when all rows are there and untouched when the iterator is closed
-        before or an error ends it; or an open binary file.
+    stream
+        Opened with ``encoding="utf-8", newline=""``; `stackcore.job.replacing` gives a file that takes the place of
+        an old one only when all rows are there.
     stacks
         In the order to write them; None means all of the job.
 
     Raises
     ------
     OSError
-        When the target cannot be written.
+        When the stream cannot be written.
     StackError
         When a stack cannot be solved.
+
+    Examples
+    --------
+    >>> import io
+    >>> from stackcore.job import job_from_json
+    >>> job = Job(job_from_json('''{"format": "slabwright-job", "version": 1, "title": "Bare",
+    ... "stacks": [{"name": "A", "elements": []}], "sweep": {"frequency": ["10 GHz"], "angle": ["0 deg"]}}'''))
+    >>> stream = io.StringIO(newline="")
+    >>> list(write_csv(job, stream))
+    [1.0]
+    >>> stream.getvalue().splitlines()[1][:38]
+    'A,10000000000.0,0.0,TE,0.0,1.0,0.0,inf'
     """
     chosen = job.stacks if stacks is None else tuple(stacks)
-    if not isinstance(target, str | os.PathLike):
-        yield from _write(job, target, chosen)
-        return
-    with replacing(target) as file:
-        yield from _write(job, file, chosen)
-
-
-def _write(job: Job, file: BinaryIO, stacks: Sequence[Stack]) -> Iterator[float]:
-    file.write((",".join(CSV_HEADER) + LINE_END).encode())
+    stream.write(",".join(CSV_HEADER) + LINE_END)
     frequencies, angles = job.sweep.frequencies(), job.sweep.angles()
-    done, total = 0, len(stacks) * frequencies.size * angles.size
-    for stack in stacks:
+    done, total = 0, len(chosen) * frequencies.size * angles.size
+    for stack in chosen:
         for frequency, angle in _parts(frequencies, angles):
-            file.write(csv_rows(solve(stack, frequency, angle)).encode())
+            stream.write(csv_rows(solve(stack, frequency, angle)))
             done += frequency.size * angle.size
             yield done / total
 

@@ -5,7 +5,6 @@ A record made by an edit is checked as one read from a file is. What needs media
 
 import cmath
 import math
-from collections import Counter
 from collections.abc import Collection, Iterator
 from typing import Final
 

@@ -16,8 +16,8 @@ from typing import Final
 import numpy as np
 from numpy.typing import NDArray
 
-FloatArray = NDArray[np.float64]
-ComplexArray = NDArray[np.complex128]
+from stackcore.arrays import ComplexArray as ComplexArray
+from stackcore.arrays import FloatArray as FloatArray
 
 
 @dataclass(frozen=True, slots=True)

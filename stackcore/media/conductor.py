@@ -4,8 +4,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from stackcore.arrays import FloatArray
 from stackcore.constants import VACUUM_PERMEABILITY, VACUUM_PERMITTIVITY
-from stackcore.media.base import UNSOURCED, AbstractMedium, Constitutive, FloatArray, FrequencyRange, Provenance
+from stackcore.media.base import UNSOURCED, AbstractMedium, Constitutive, FrequencyRange, Provenance
 
 
 @dataclass(frozen=True, slots=True)

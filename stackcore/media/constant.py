@@ -4,7 +4,8 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from stackcore.media.base import UNSOURCED, AbstractMedium, Constitutive, FloatArray, FrequencyRange, Provenance
+from stackcore.arrays import FloatArray
+from stackcore.media.base import UNSOURCED, AbstractMedium, Constitutive, FrequencyRange, Provenance
 
 
 @dataclass(frozen=True, slots=True)

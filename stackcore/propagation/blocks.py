@@ -6,8 +6,8 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import ArrayLike
 
+from stackcore.arrays import FloatArray
 from stackcore.errors import StackError
-from stackcore.media.base import FloatArray
 from stackcore.propagation.march import Scene, SceneMaker
 from stackcore.stack import Stack
 

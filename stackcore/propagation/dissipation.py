@@ -13,8 +13,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import FREE_SPACE_IMPEDANCE
-from stackcore.media.base import AbstractMedium, ComplexArray, FloatArray
+from stackcore.media.base import AbstractMedium
 from stackcore.propagation.blocks import Block, blocks
 from stackcore.propagation.march import Step, march
 from stackcore.propagation.waves import Incidence, LayerWave, Passage, Wave

@@ -19,8 +19,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import FREE_SPACE_IMPEDANCE
-from stackcore.media.base import AbstractMedium, ComplexArray, FloatArray
+from stackcore.media.base import AbstractMedium
 from stackcore.propagation.waves import Incidence, LayerWave, Passage, Wave, departure, layer_wave, wave_in
 from stackcore.sheets.base import AbstractSheet
 from stackcore.stack import Element, Layer, PerfectConductor, Stack

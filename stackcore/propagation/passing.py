@@ -2,8 +2,8 @@
 
 import numpy as np
 
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import FREE_SPACE_IMPEDANCE
-from stackcore.media.base import ComplexArray, FloatArray
 from stackcore.propagation.blocks import Block, blocks
 from stackcore.propagation.march import Step, march, start_fields
 from stackcore.stack import Layer, PerfectConductor, Stack
@@ -110,7 +110,8 @@ def _added_by(step: Step, fields: ComplexArray, y0: FloatArray, frequency: Float
     cosine = 2 * passage.cos_alpha * np.sinh(decay / 2) ** 2 - drop + 1j * passage.sin_alpha * np.sinh(decay)
     j_sine = passage.sine * np.exp(decay)
     wave = layer.wave
-    return cosine * (y0 * e + h) + j_sine * (wave.x * y0 * h + wave.b * e)
+    gained: ComplexArray = cosine * (y0 * e + h) + j_sine * (wave.x * y0 * h + wave.b * e)
+    return gained
 
 
 def _log_of_one_plus(z: ComplexArray) -> FloatArray:

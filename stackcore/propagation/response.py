@@ -7,8 +7,8 @@ from typing import TypeVar
 import numpy as np
 from numpy.typing import NDArray
 
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import SPEED_OF_LIGHT
-from stackcore.media.base import ComplexArray, FloatArray
 from stackcore.propagation import delay, dissipation, passing
 from stackcore.stack import PerfectConductor, Stack
 

@@ -5,7 +5,7 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import ArrayLike
 
-from stackcore.media.base import ComplexArray, FloatArray
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.propagation.blocks import Block, blocks, check_front, checked_angle, checked_frequency
 from stackcore.propagation.march import march, start_fields
 from stackcore.propagation.response import Response

@@ -19,8 +19,9 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import SPEED_OF_LIGHT
-from stackcore.media.base import AbstractMedium, ComplexArray, FloatArray
+from stackcore.media.base import AbstractMedium
 
 _SMALLEST_Q = 1e-30
 """Stands for q = 0 (a layer exactly at its critical angle): every formula below is even and smooth in q there."""

@@ -8,7 +8,7 @@
 
 from abc import ABC, abstractmethod
 
-from stackcore.media.base import ComplexArray, FloatArray
+from stackcore.arrays import ComplexArray, FloatArray
 
 
 class AbstractSheet(ABC):

@@ -4,7 +4,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from stackcore.media.base import ComplexArray, FloatArray
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.sheets.base import AbstractSheet
 
 

@@ -6,8 +6,8 @@ import numpy as np
 from numpy.typing import NDArray
 
 from stackcore import ConstantMedium, Layer, Response, Stack, solve
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import SPEED_OF_LIGHT
-from stackcore.media.base import ComplexArray, FloatArray
 from tests.bench.timing import floor_seconds, in_turns, seconds
 
 LAYERS = 20
