@@ -175,6 +175,10 @@ class Session:
         """Begin the untitled job; the present one and its history are given up."""
         self._replace(untitled_job(), None, "new job", initiator)
 
+    def start_from(self, job: Job, sentence: str, initiator: object | None = None) -> None:
+        """Begin with `job` as one without a file, for example a sample; the present job is given up."""
+        self._replace(job, None, sentence, initiator)
+
     def open(self, path: str | Path, initiator: object | None = None) -> None:
         """Read a job file; raises JobError or OSError, and then everything is as it was."""
         path = Path(path)

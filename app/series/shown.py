@@ -71,5 +71,6 @@ def shown_values(quantity: str, values: FloatArray, *, decibels: bool, factor: f
     """Return `values` in the unit on screen; a fraction of 0 in decibels is minus infinity."""
     if decibels and SHOWN[quantity].fraction:
         with np.errstate(divide="ignore"):
-            return np.asarray(10 * np.log10(values))
+            # A fraction is below 0 only by rounding.
+            return np.asarray(10 * np.log10(np.maximum(values, 0.0)))
     return values * factor

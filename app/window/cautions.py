@@ -53,51 +53,67 @@ VALID_RANGE: Final = Caution(
 ALWAYS: Final = (
     (
         "What is computed",
-        "A plane wave on flat layers without end, made of linear, passive, isotropic, homogeneous materials. "
-        "Curvature, edges, seams, apertures, roughness, fibres, droplets and near fields are not in it. Verify "
-        "by test on the article.",
+        (
+            "A plane wave on flat layers without end, made of linear, passive, isotropic, homogeneous materials. "
+            "Curvature, edges, seams, apertures, roughness, fibres, droplets and near fields are not in it. Verify "
+            "by test on the article."
+        ),
     ),
     (
         "Aircraft, ships and vehicles",
-        "The result is electrical only. Structure, bird strike, hail, lightning protection, static, erosion, "
-        "fuel vapour, crash behaviour and airworthiness or type approval are separate. Do not thin, paint or "
-        "repair a part on the strength of this result; follow the approved manuals and the responsible "
-        "licensed engineers.",
+        (
+            "The result is electrical only. Structure, bird strike, hail, lightning protection, static, erosion, "
+            "fuel vapour, crash behaviour and airworthiness or type approval are separate. Do not thin, paint or "
+            "repair a part on the strength of this result; follow the approved manuals and the responsible "
+            "licensed engineers."
+        ),
     ),
     (
         "People and fields",
-        "No exposure is computed. A wall with low loss does not make its far side safe, and reflections can "
-        "raise the field in front. Compare with the exposure limits in force where you are.",
+        (
+            "No exposure is computed. A wall with low loss does not make its far side safe, and reflections can "
+            "raise the field in front. Compare with the exposure limits in force where you are."
+        ),
     ),
     (
         "Heat and fire",
-        "Absorbed power becomes heat. Foams, absorbers and wet or burnt spots can ignite: check temperature "
-        "limits and fire codes. Breakdown at high power depends on pressure, edges and dirt, which are not "
-        "computed.",
+        (
+            "Absorbed power becomes heat. Foams, absorbers and wet or burnt spots can ignite: check temperature "
+            "limits and fire codes. Breakdown at high power depends on pressure, edges and dirt, which are not "
+            "computed."
+        ),
     ),
     (
         "Shielded rooms",
-        "Wall figures say nothing of escape, door entrapment, alarms, ventilation or fire detection. Power-line "
-        "filters leak current: an ungrounded room can kill. Grounding is for a licensed electrician under the "
-        "local code.",
+        (
+            "Wall figures say nothing of escape, door entrapment, alarms, ventilation or fire detection. Power-line "
+            "filters leak current: an ungrounded room can kill. Grounding is for a licensed electrician under the "
+            "local code."
+        ),
     ),
     (
         "Glass",
-        "No structural, thermal or safety-glazing claim is made. A coating that absorbs sunlight can break a "
-        "pane by heat; windscreens have legal limits of light transmission; transmission of light is no "
-        "laser-safety result.",
+        (
+            "No structural, thermal or safety-glazing claim is made. A coating that absorbs sunlight can break a "
+            "pane by heat; windscreens have legal limits of light transmission; transmission of light is no "
+            "laser-safety result."
+        ),
     ),
     (
         "Materials",
-        "Library values are typical, with their source; batches, moisture, temperature and direction of fibre "
-        "change them. Use values measured on your own panels. Dust of ferrites, ceramics, fluoropolymers and "
-        "carbon fibre is hazardous to machine: follow the safety data sheets.",
+        (
+            "Library values are typical, with their source; batches, moisture, temperature and direction of fibre "
+            "change them. Use values measured on your own panels. Dust of ferrites, ceramics, fluoropolymers and "
+            "carbon fibre is hazardous to machine: follow the safety data sheets."
+        ),
     ),
     (
         "Law",
-        "Some uses of low-reflection, shielding and radome designs fall under export control. You are "
-        "responsible for the law where you are. Local codes and licensed practice come before anything shown "
-        "here. Nothing here is a certification.",
+        (
+            "Some uses of low-reflection, shielding and radome designs fall under export control. You are "
+            "responsible for the law where you are. Local codes and licensed practice come before anything shown "
+            "here. Nothing here is a certification."
+        ),
     ),
 )
 """Heading and text of each caution of the help panel, in order."""

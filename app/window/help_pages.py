@@ -74,12 +74,16 @@ def about_page(theme: Theme, version: str, parts: Iterable[tuple[str, str, str]]
     return _page(
         "about",
         [
-            f"<p><b>Slabwright {escape(version)}</b><br>"
-            "A workbench for flat multilayer walls met by a plane wave.</p>",
+            (
+                f"<p><b>Slabwright {escape(version)}</b><br>"
+                "A workbench for flat multilayer walls met by a plane wave.</p>"
+            ),
             "<h2>Made with</h2>",
             f"<table cellspacing='0' cellpadding='2'>{rows}</table>",
-            f"<p style='color:{theme.muted}'>Help &gt; Copy diagnostics puts versions and the last lines of the "
-            "log on the clipboard, for a report. It holds no contents of your jobs.</p>",
+            (
+                f"<p style='color:{theme.muted}'>Help &gt; Copy diagnostics puts versions and the last lines of the "
+                "log on the clipboard, for a report. It holds no contents of your jobs.</p>"
+            ),
         ],
     )
 

@@ -1,5 +1,6 @@
 """The main window: makes the parts, connects them, and takes them apart again."""
 
+from functools import partial
 from pathlib import Path
 from typing import Final
 
@@ -130,7 +131,7 @@ class MainWindow(QMainWindow):
         """Offer the unsaved work that sessions which ended unexpectedly have left."""
         for leftover in self._recovery.leftovers():
             choices = (
-                Choice("Recover", lambda left=leftover: self._recover(left)),
+                Choice("Recover", partial(self._recover, leftover)),
                 Choice("Discard", leftover.discard),
                 Choice("Later", lambda: None),
             )
@@ -213,7 +214,7 @@ class MainWindow(QMainWindow):
             help=HelpCommands(self.show_help, self._copy_diagnostics),
             copy=self._panels.elements.copy,
             paste=self._panels.elements.paste,
-            quit=self.close,
+            quit=self._quit,
         )
         return Actions(action_table(commands), self, (self._panels.elements, self._panels.wall))
 
@@ -314,6 +315,9 @@ class MainWindow(QMainWindow):
     def _dropped(self, event: QDropEvent) -> Path | None:
         urls = event.mimeData().urls()
         return Path(urls[0].toLocalFile()) if len(urls) == 1 and urls[0].isLocalFile() else None
+
+    def _quit(self) -> None:
+        self.close()
 
     def _leave(self) -> None:
         self._leaving = True

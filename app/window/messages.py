@@ -133,6 +133,7 @@ class MessageStrip(QFrame):
         self._details = QPlainTextEdit(self, readOnly=True)
         self._dismiss = QToolButton(self)
         self._choices = QHBoxLayout()
+        self._buttons: list[QPushButton] = []
         self._build()
         messages.changed.connect(self.refresh)
         self.refresh()
@@ -189,12 +190,15 @@ class MessageStrip(QFrame):
         self._details.setFixedHeight(lines * self._details.fontMetrics().lineSpacing() + 8)
 
     def _show_choices(self, choices: tuple[Choice, ...]) -> None:
-        while self._choices.count():
-            self._choices.takeAt(0).widget().deleteLater()
+        for old in self._buttons:
+            self._choices.removeWidget(old)
+            old.deleteLater()
+        self._buttons = []
         for choice in choices:
             button = QPushButton(choice.words, self)
             button.clicked.connect(lambda _=False, chosen=choice: self._choose(chosen))
             self._choices.addWidget(button, alignment=Qt.AlignmentFlag.AlignTop)
+            self._buttons.append(button)
 
     def _choose(self, choice: Choice) -> None:
         self._messages.dismiss()
@@ -204,7 +208,6 @@ class MessageStrip(QFrame):
         theme = self._theme
         ink = {"error": theme.fault, "warning": theme.warning, "note": theme.accent}[severity]
         ground = mix(theme.base, ink, 0.06)
-        self._word.setStyleSheet(f"color: {ink};")
         self.setStyleSheet(
             f"#message-strip {{ background: {ground}; border-left: 4px solid {ink}; }}"
             f"#message-strip QPlainTextEdit {{ background: transparent; color: {theme.text}; }}"

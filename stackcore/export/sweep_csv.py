@@ -123,7 +123,7 @@ def write_csv(job: Job, stream: TextIO, *, stacks: Sequence[Stack] | None = None
 
 
 def _parts(frequencies: FloatArray, angles: FloatArray) -> Iterator[tuple[FloatArray, FloatArray]]:
-    """Yield the sweep in parts, in the order of the rows: all angles of a few frequencies, or some angles of one."""
+    """Yield the sweep in parts, in the order of the rows: all angles of some frequencies, or some of one."""
     step = max(1, _BLOCK // angles.size)
     for first in range(0, frequencies.size, step):
         part = frequencies[first : first + step]

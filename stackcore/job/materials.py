@@ -6,6 +6,7 @@ and the library is not asked. Without a model the library supplies what is not g
 
 from collections.abc import Mapping
 from dataclasses import replace
+from typing import Any
 
 import numpy as np
 
@@ -100,6 +101,6 @@ def _with_library_values(material: MaterialRecord) -> MaterialRecord:
     entry = _entry(material)
     if entry is None or (material.model and _constants(material)):
         return material
-    constants = _completed(_constants(material), entry)
+    constants: dict[str, Any] = dict(_completed(_constants(material), entry))
     source = material.source or entry.provenance.source
     return replace(material, model=entry.model, source=source, **constants)

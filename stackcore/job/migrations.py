@@ -1,8 +1,9 @@
 """The door for files of older versions: one pure function a step.
 
-A step takes the tree of a job file of version n and returns that of version n + 1; it changes nothing it was given
-and does not look whether the values are right, which the codec does afterwards. To raise the version: write the step,
-enter it in `STEPS`, raise `VERSION`, and put a file of the old version under ``tests/stackcore/formats``.
+A step takes the tree of a job file of version n and returns that of version n + 1. It changes nothing it was
+given and does not look whether the values are right, which the codec does afterwards. To raise the version:
+write the step, enter it in `STEPS`, raise `VERSION`, and keep a file of the old version under
+``tests/stackcore/formats``.
 """
 
 from collections.abc import Callable, Mapping

@@ -13,10 +13,10 @@ from typing import BinaryIO
 def replacing(path: str | os.PathLike[str]) -> Iterator[BinaryIO]:
     """Open a new file that takes the place of `path` when the block ends well.
 
-    The new content is written beside the target, brought to the disk, and only then renamed over it; the folder is
-    brought to the disk too. When the block raises, the old file stays as it was. A symbolic link stays a link and the
-    file it points to is replaced; the mode of an old file is kept. What is not a plain file (a pipe, a device) is
-    written to directly.
+    The new content is written beside the target, brought to the disk, and only then renamed over it; the folder
+    is brought to the disk too. When the block raises, the old file stays as it was. A symbolic link stays a link
+    and the file it points to is replaced; the mode of an old file is kept. What is not a plain file (a pipe, a
+    device) is written to directly.
 
     Parameters
     ----------

@@ -1,7 +1,7 @@
 """Text -> exact number with a unit: one number, or a short sum or product of them.
 
-The text is cut into numbers, units and signs; a Python expression is written with a name in place of each number and
-unit, and its syntax tree is walked with a whitelist. No text of the user is ever evaluated.
+The text is cut into numbers, units and signs; a Python expression is written with a name in place of each number
+and unit, and its syntax tree is walked with a whitelist. No text of the user is ever evaluated.
 """
 
 import ast

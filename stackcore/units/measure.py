@@ -40,8 +40,8 @@ def parse_measure(given: str | float | int, dimension: Dimension, *, default_uni
     Parameters
     ----------
     given
-        A number is in the SI base unit. A text is one number and a unit, or a short sum, product or quotient of them:
-        ``2 mm``, ``1/8 in``, ``1 mm + 20 um``, ``3 * 0.2 mm``. One decimal comma is understood.
+        A number is in the SI base unit. A text is one number and a unit, or a short sum, product or quotient of
+        them: ``2 mm``, ``1/8 in``, ``1 mm + 20 um``, ``3 * 0.2 mm``. One decimal comma is understood.
     dimension
         What is expected.
     default_unit
@@ -134,7 +134,7 @@ def format_value(value: float, dimension: Dimension, *, unit: str | None = None,
     dimension
         What it is.
     unit
-        The unit to write it in, as it is to be spelled; None chooses: ``0.9 mm``, ``35 µm``, ``10 GHz``, ``30 deg``.
+        The unit to write it in, as it is to be spelled; None chooses: ``0.9 mm``, ``35 µm``, ``10 GHz``.
     digits
         Significant digits, zeros at the end left out; None writes as many as `parse_measure` needs to find exactly
         `value` again.
@@ -142,8 +142,8 @@ def format_value(value: float, dimension: Dimension, *, unit: str | None = None,
     Returns
     -------
     str
-        Number, space, unit. A value that is not finite is written ``inf``, ``-inf`` or ``nan``, which `parse_measure`
-        refuses.
+        Number, space, unit. A value that is not finite is written ``inf``, ``-inf`` or ``nan``, which
+        `parse_measure` refuses.
 
     Raises
     ------

@@ -4,6 +4,8 @@ from collections.abc import Sequence
 from typing import Final
 
 import numpy as np
+from PySide6.QtGui import QColor, QPalette
+from PySide6.QtWidgets import QWidget
 
 from app.document.view import ViewState
 from app.look.colour import mix
@@ -22,6 +24,15 @@ from stackcore.quantities import QUANTITIES
 _TURNS: Final = {"reflection_phase_deg": 180.0, "transmission_phase_deg": 180.0}
 _FADED: Final = 0.72
 _NORMAL: Final = 1e-12
+
+
+def fill_palette(widget: QWidget, theme: Theme) -> None:
+    """Give a panel the ground and inks of a theme, whatever look the application has."""
+    palette = widget.palette()
+    palette.setColor(QPalette.ColorRole.Window, QColor(theme.base))
+    palette.setColor(QPalette.ColorRole.WindowText, QColor(theme.text))
+    palette.setColor(QPalette.ColorRole.ButtonText, QColor(theme.accent))
+    widget.setPalette(palette)
 
 
 def colours_of(curves: Sequence[Curve], theme: Theme, *, stale: bool) -> tuple[str, ...]:

@@ -61,11 +61,15 @@ def curve_sentence(curve: Curve, *, decibels: bool = False) -> str:
     return f"Worst of {curve.label}: {_worst_text(curve, decibels)}"
 
 
+def value_words(curve: Curve, index: int, *, decibels: bool = False) -> tuple[str, str]:
+    """Return the name of a curve and one of its values with what it is a value of."""
+    value = value_text(curve.quantity, float(curve.raw[index]), curve.unit, decibels=decibels)
+    return curve.label, f"{QUANTITIES[curve.quantity].label} {value}"
+
+
 def point_sentence(curve: Curve, index: int, *, decibels: bool = False) -> str:
     """Return one point of a curve in words, as the status line says it."""
-    value = value_text(curve.quantity, float(curve.raw[index]), curve.unit, decibels=decibels)
-    label = QUANTITIES[curve.quantity].label
-    return f"{frequency_text(float(curve.x[index]))}   {curve.label}   {label} {value}"
+    return "   ".join([frequency_text(float(curve.x[index])), *value_words(curve, index, decibels=decibels)])
 
 
 def hidden_sentence(curves: Sequence[Curve]) -> str:

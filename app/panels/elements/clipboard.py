@@ -10,7 +10,9 @@ from typing import Final
 
 from app.panels.elements.columns import ALL_COLUMNS, MATERIAL, NUMBER, WHAT, Column
 
-_UNIT_IN_TITLE: Final = re.compile(r"^(?P<title>[^,(\[]*?)\s*(?:,\s*(?P<a>\S+)|\((?P<b>[^)]*)\)|\[(?P<c>[^\]]*)\])?$")
+_UNIT_IN_TITLE: Final = re.compile(
+    r"^(?P<title>[^,(\[]*?)\s*(?:,\s*(?P<a>\S+)|\((?P<b>[^)]*)\)|\[(?P<c>[^\]]*)\])?$"
+)
 _BARE_NUMBER: Final = re.compile(r"[-+−]?[\d.,]+(?:[eE][-+]?\d+)?")
 _NOTHING: Final = ("-", "–", "—")
 _FORMULA_STARTS: Final = ("=", "+", "-", "@")

@@ -36,7 +36,9 @@ WHAT: Final = Column(
     "A layer has a material and a thickness. A sheet has no thickness, only an impedance per square.",
 )
 MATERIAL: Final = Column(
-    "material", "Material", "One of the job's materials, air, or an entry of the library, which is then added to the job."
+    "material",
+    "Material",
+    "One of the job's materials, air, or an entry of the library, which is then added to the job.",
 )
 THICKNESS: Final = Column(
     "thickness",

@@ -3,15 +3,25 @@
 import re
 from typing import Final
 
-from PySide6.QtCore import QAbstractItemModel, QEvent, QModelIndex, QObject, QPersistentModelIndex, QRect, QSize, Qt, Signal
-from PySide6.QtGui import QColor, QFont, QFontMetrics, QKeyEvent, QPainter, QPen
+from PySide6.QtCore import (
+    QAbstractItemModel,
+    QEvent,
+    QModelIndex,
+    QObject,
+    QPersistentModelIndex,
+    QRect,
+    QSize,
+    Qt,
+    Signal,
+)
+from PySide6.QtGui import QColor, QFont, QFontMetrics, QPainter, QPen
 from PySide6.QtWidgets import QAbstractItemDelegate, QStyle, QStyledItemDelegate, QStyleOptionViewItem, QWidget
 
 from app.document.reading import unit_of
 from app.look.palette import tabular_font
 from app.look.theme import Theme, kind_style
 from app.panels.elements.columns import MATERIAL, SHEET_COLUMNS, Column
-from app.panels.elements.editors import MaterialBox, QuantityEdit, fault_ground
+from app.panels.elements.editors import MaterialBox, QuantityEdit, fault_ground, is_enter
 from app.panels.elements.model import Ask, ElementsModel
 from app.panels.elements.names import MaterialNames
 
@@ -20,10 +30,7 @@ Index = QModelIndex | QPersistentModelIndex
 PADDING: Final = 8
 SWATCH: Final = 12
 MARK: Final = 14
-MATERIAL_WIDTH: Final = 24
-"""Letters a material's column has room for before its name is cut short."""
 
-_ENTER_KEYS = (Qt.Key.Key_Return, Qt.Key.Key_Enter)
 _PARTS: Final = re.compile(r"(?P<whole>.*?)(?P<fraction>[.,]\d*(?:[eE][-+]?\d+)?)?\s*(?P<unit>[^\d.,()]*)")
 
 
@@ -199,8 +206,7 @@ class CellDelegate(QStyledItemDelegate):
         editor.setGeometry(option.rect)
 
     def eventFilter(self, watched: QObject, event: QEvent) -> bool:
-        is_key = isinstance(event, QKeyEvent) and event.type() == QEvent.Type.KeyPress
-        if is_key and isinstance(watched, QWidget) and event.key() in _ENTER_KEYS:
+        if isinstance(watched, QWidget) and is_enter(event):
             self._finish(watched, advance=True)
             return True
         return super().eventFilter(watched, event)

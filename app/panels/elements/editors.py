@@ -23,6 +23,13 @@ def fault_ground(theme: Theme) -> QColor:
     return QColor(mix(theme.base, theme.fault, 0.16))
 
 
+def is_enter(event: QEvent) -> bool:
+    """Whether `event` is a press of Enter or Return."""
+    if not isinstance(event, QKeyEvent) or event.type() != QEvent.Type.KeyPress:
+        return False
+    return event.key() in _ENTER_KEYS
+
+
 class QuantityEdit(QLineEdit):
     """A line for a quantity with unit; while its text has no value it shows so and says why.
 
@@ -97,7 +104,10 @@ class MaterialBox(QComboBox):
         self.editTextChanged.connect(self._note_typing)
         self.activated.connect(self.chosen)
         # The list that opens while typing gives Enter to the line below it, not to the cell: catch it first.
-        completer.popup().installEventFilter(self)
+        popup = completer.popup()
+        assert popup is not None
+        self._matches = popup
+        popup.installEventFilter(self)
 
     @property
     def typed(self) -> bool:
@@ -111,15 +121,13 @@ class MaterialBox(QComboBox):
         self._typed = False
 
     def eventFilter(self, watched: QObject, event: QEvent) -> bool:
-        popup = self.completer().popup()
-        if watched is popup and isinstance(event, QKeyEvent) and event.type() == QEvent.Type.KeyPress:
-            if event.key() in _ENTER_KEYS:
-                index = popup.currentIndex()
-                if index.isValid():
-                    self.setEditText(str(index.data()))
-                popup.hide()
-                self.entered.emit()
-                return True
+        if watched is self._matches and is_enter(event):
+            index = self._matches.currentIndex()
+            if index.isValid():
+                self.setEditText(str(index.data()))
+            self._matches.hide()
+            self.entered.emit()
+            return True
         return super().eventFilter(watched, event)
 
     def keyPressEvent(self, event: QKeyEvent) -> None:

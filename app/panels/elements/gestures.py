@@ -10,7 +10,7 @@ from app.document.element_edits import NEW_SHEET
 from app.panels.elements.columns import LAYER_CELLS, MATERIAL, SHEET_COLUMNS, WHAT, Column
 from app.panels.elements.lines import WORDS
 from app.panels.elements.names import MaterialNames
-from stackcore.job.records import LayerRecord, SheetRecord
+from stackcore.job.records import JobRecord, LayerRecord, SheetRecord
 from stackcore.units import Dimension, parse_measure
 
 NEW_MATERIAL: Final = "air"
@@ -23,6 +23,12 @@ def typed_edit(names: MaterialNames, cell: Cell, text: str) -> Edit:
     if cell.column in (MATERIAL.name, "front", "back"):
         text = names.given(text)
     return edits.type_into(cell, text)
+
+
+def add_layer_edit(record: JobRecord, stack: int, row: int) -> Edit:
+    """Return the edit that puts a new layer before `row`: of the material before it, `NEW_THICKNESS` thick."""
+    before = [element for element in record.stacks[stack].elements[:row] if isinstance(element, LayerRecord)]
+    return edits.add_layer(stack, row, before[-1].material if before else NEW_MATERIAL, NEW_THICKNESS)
 
 
 def paste_edit(stack: int, row: int, pasted: Sequence[Mapping[str, str]], *, insert: bool) -> Edit:

@@ -145,7 +145,7 @@ class _Reading:
         return CellView(draft.text, draft.text, editable=True, fault=draft.fault)
 
     def _kind(self, material: str) -> str:
-        return kind_of(self.document.job, material) 
+        return kind_of(self.document.job, material)
 
 
 def _in_order(cells: dict[str, CellView]) -> tuple[CellView, ...]:

@@ -58,7 +58,13 @@ class ElementsModel(QAbstractTableModel):
         self._stack_index = session.selection.stack
         self._columns = columns_of(self.stack)
         self._lines = lines_of(self._document, self._stack_index)
+        self._following = False
         self.destroyed.connect(session.subscribe(self._follow))
+
+    @property
+    def following(self) -> bool:
+        """Whether it is telling Qt of a change: what views select meanwhile is their own doing, not a person's."""
+        return self._following
 
     @property
     def stack_index(self) -> int:
@@ -169,9 +175,7 @@ class ElementsModel(QAbstractTableModel):
     def supportedDragActions(self) -> Qt.DropAction:
         return Qt.DropAction.MoveAction
 
-    def moveRows(
-        self, parent: Index, row: int, count: int, destination: Index, before: int, /
-    ) -> bool:
+    def moveRows(self, parent: Index, row: int, count: int, destination: Index, before: int, /) -> bool:
         """Move table rows; True when they moved. Half-spaces stay, and nothing goes outside them."""
         if parent.isValid() or destination.isValid() or count < 1 or row < 1:
             return False
@@ -191,6 +195,13 @@ class ElementsModel(QAbstractTableModel):
     # Following the session
 
     def _follow(self, change: Change) -> None:
+        self._following = True
+        try:
+            self._show(change)
+        finally:
+            self._following = False
+
+    def _show(self, change: Change) -> None:
         stack = change.selection.stack
         if change.kind == "open" or stack != self._stack_index:
             self.beginResetModel()
@@ -199,9 +210,9 @@ class ElementsModel(QAbstractTableModel):
             self._lines = lines_of(change.after, stack)
             self.endResetModel()
         elif change.after is not self._document:
-            self._follow_step(change.after)
+            self._show_step(change.after)
 
-    def _follow_step(self, after: Document) -> None:
+    def _show_step(self, after: Document) -> None:
         old, new = self.stack, after.record.stacks[self._stack_index]
         lines = lines_of(after, self._stack_index)
         self._document = after

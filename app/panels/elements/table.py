@@ -2,7 +2,16 @@
 
 from typing import Final, Literal
 
-from PySide6.QtCore import QEvent, QItemSelection, QItemSelectionModel, QModelIndex, QPersistentModelIndex, QPoint, QRect, Qt, Signal
+from PySide6.QtCore import (
+    QEvent,
+    QItemSelection,
+    QItemSelectionModel,
+    QModelIndex,
+    QPoint,
+    QRect,
+    Qt,
+    Signal,
+)
 from PySide6.QtGui import (
     QColor,
     QDragEnterEvent,
@@ -50,8 +59,8 @@ _ENTER_KEYS: Final = (_Key.Key_Return, _Key.Key_Enter)
 class ElementsTable(QTableView):
     """A lay-up sheet for `ElementsModel`.
 
-    `wanted` is emitted with a command when its keys are pressed, and `left` when F6 is.
-    Enter goes down, Tab goes on to the next cell that can be typed into.
+    `wanted` is emitted with a command when its keys are pressed. Enter goes down, Tab goes on to the next cell that
+    can be typed into, and F6 leaves the table, which Tab does not.
     """
 
     wanted = Signal(str)
@@ -268,11 +277,9 @@ class ElementsTable(QTableView):
 
 def _command(event: QKeyEvent) -> Command | None:
     """Return the command a key stands for, or None."""
-    for standard, command in _STANDARD:
-        if event.matches(standard):
-            return command
     modifiers = event.modifiers() & ~_Mod.KeypadModifier
-    return _KEYS.get((_Key(event.key()), modifiers)) if event.key() in _KNOWN_KEYS else None
-
-
-_KNOWN_KEYS: Final = frozenset(key for key, _ in _KEYS)
+    for (key, wanted), command in _KEYS.items():
+        if event.key() == key and modifiers == wanted:
+            return command
+    # Behind the table's own keys: Shift+Insert also pastes on some systems, and here it adds a sheet.
+    return next((command for standard, command in _STANDARD if event.matches(standard)), None)

@@ -1,0 +1,337 @@
+"""The curves: one quantity over frequency, a curve for each angle and polarization."""
+
+from collections.abc import Callable
+from typing import TYPE_CHECKING
+
+import numpy as np
+from PySide6.QtCore import QPoint, QPointF, Signal
+from PySide6.QtGui import QGuiApplication, QKeyEvent
+from PySide6.QtWidgets import QToolTip, QVBoxLayout, QWidget
+
+from app.document.session import Session
+from app.document.view import View, ViewChange
+from app.look.theme import LIGHT, Theme
+from app.panels.curves import drawing, words
+from app.panels.curves.commands import open_menu, take_key
+from app.panels.curves.copying import data_table, picture_data
+from app.panels.curves.header import Header
+from app.panels.curves.mark_layers import Spot
+from app.panels.curves.picture import paint_picture, paint_svg
+from app.panels.curves.plot import CurvePlot
+from app.panels.curves.plot_commands import PlotCommands
+from app.panels.curves.range_strip import RangeStrip
+from app.panels.curves.scale import FrequencyScale
+from app.series.axis import frequency_axis, quantity_axis
+from app.series.curves import Curve, curves_of
+from stackcore.errors import Severity
+from stackcore.media.base import FloatArray
+
+if TYPE_CHECKING:
+    from app.workers.live import Answer
+
+Tell = Callable[[str, Severity], None]
+
+_REACH = 9.0
+
+
+class CurvesPanel(QWidget):
+    """The plot with its line of words above and the typed ranges below.
+
+    Parameters
+    ----------
+    session
+        Whose sweep the curves cover.
+    view
+        What is shown and marked; markers are made, moved and removed here.
+    theme
+        The look.
+    tell
+        Says what has no place of its own.
+    """
+
+    pointed = Signal(str)
+    """What the mouse or the keys point at, in words, for the status line; empty for nothing."""
+
+    def __init__(
+        self, session: Session, view: View, theme: Theme, tell: Tell, parent: QWidget | None = None
+    ) -> None:
+        super().__init__(parent)
+        self._session, self._view, self._theme, self._tell = session, view, theme, tell
+        self._answer: "Answer | None" = None
+        self._stale = False
+        self._curves: tuple[Curve, ...] = ()
+        self._colours: tuple[str, ...] = ()
+        self._worst_spots: dict[int, Spot] = {}
+        self._shown_as: tuple[object, ...] = ()
+        self.scale = FrequencyScale()
+        self.header = Header(theme, self)
+        self.plot = CurvePlot(theme, self)
+        self.strip = RangeStrip(theme, self)
+        self.commands = PlotCommands(self, view)
+        self._arrange()
+        self._connect()
+        self.set_theme(theme)
+
+    def _arrange(self) -> None:
+        column = QVBoxLayout(self)
+        column.setContentsMargins(8, 4, 4, 4)
+        column.setSpacing(4)
+        column.addWidget(self.header)
+        column.addWidget(self.plot, 1)
+        column.addWidget(self.strip)
+        self.setAutoFillBackground(True)
+        self.setMinimumSize(240, 160)
+        self.setFocusProxy(self.plot)
+
+    def _connect(self) -> None:
+        hand = self.plot.hand
+        hand.pointed.connect(self._point)
+        hand.clicked.connect(self._choose_curve)
+        hand.marker_wanted.connect(lambda at: self.commands.add_marker(self.frequency_at(at)))
+        hand.marker_chosen.connect(lambda index: self._view.set(self, active_marker=index))
+        hand.marker_dragged.connect(
+            lambda index, at: self.commands.move_marker(index, self.frequency_at(at))
+        )
+        hand.menu_wanted.connect(self._open_menu)
+        hand.range_wanted.connect(self.type_range)
+        self.plot.key_taken = self._take_key
+        self.plot.ranges_changed.connect(self._ranges_moved)
+        self.plot.crowding_changed.connect(self._show_legend)
+        self.header.marker_wanted.connect(lambda: self.commands.add_marker(self.commands.place()))
+        self.strip.wanted.connect(self._set_ranges)
+        self.strip.all_wanted.connect(self.plot.show_all)
+        self.strip.closed.connect(self._close_strip)
+        leave = self._view.subscribe(self._view_changed)
+        self.destroyed.connect(lambda: leave())
+
+    # What the window calls
+
+    def show_answer(self, answer: "Answer") -> None:
+        """Draw the curves of an answer."""
+        self._answer = answer
+        self._draw()
+
+    def set_stale(self, stale: bool) -> None:
+        """Say whether the curves belong to an earlier job, because the present one cannot be computed."""
+        if stale != self._stale:
+            self._stale = stale
+            self.header.set_stale(stale)
+            self._draw()
+
+    def set_busy(self, busy: bool) -> None:
+        """Say whether a newer answer is being computed; shown only when it takes longer than a moment."""
+        self.header.set_busy(busy)
+
+    def set_theme(self, theme: Theme) -> None:
+        """Take the colours of a theme."""
+        self._theme = theme
+        drawing.fill_palette(self, theme)
+        self.header.set_theme(theme)
+        self.strip.set_theme(theme)
+        self.plot.set_theme(theme)
+        self._draw()
+
+    # What others ask
+
+    @property
+    def curves(self) -> tuple[Curve, ...]:
+        """The curves shown."""
+        return self._curves
+
+    @property
+    def sweep(self) -> FloatArray:
+        """The frequencies of the curves in Hz; those of the job while there are none."""
+        return self._curves[0].x if self._curves else self._session.record.sweep.frequencies()
+
+    def frequency_at(self, at: QPointF) -> float:
+        """Return the frequency of the sweep nearest to a pixel of the plot area, in Hz."""
+        places = self.scale.positions(self.sweep)
+        wanted = self.plot.frame().position(at.x())
+        return float(self.sweep[int(np.nanargmin(np.abs(places - wanted)))])
+
+    def visible_values(self) -> tuple[float, float] | None:
+        """Return the smallest and largest value between the visible frequencies, or None."""
+        frame = self.plot.frame()
+        found = []
+        for curve in self.plot.curve_layer.curves:
+            inside = (curve.positions >= frame.left) & (curve.positions <= frame.right)
+            found.append(curve.values[inside & np.isfinite(curve.values)])
+        values = np.concatenate(found) if found else np.zeros(0)
+        return (float(values.min()), float(values.max())) if len(values) else None
+
+    def values_at(self, hertz: float) -> tuple[str, ...]:
+        """Return the reading of the chosen curve, or of the first, at the nearest frequency, in words."""
+        if not self._curves:
+            return ()
+        state = self._view.state
+        curve = self._curves[drawing.chosen_index(self._curves, state) or 0]
+        point = int(np.argmin(np.abs(curve.x - hertz)))
+        return words.value_words(curve, point, decibels=state.decibels)
+
+    def type_range(self, axis: str) -> None:
+        """Open the line in which the ranges are typed, at the axis ``left`` or ``bottom``."""
+        self._fill_strip()
+        self.strip.start(axis)
+
+    def copy_data(self) -> None:
+        """Put the curves on the clipboard as a table."""
+        if self._curves:
+            QGuiApplication.clipboard().setText(data_table(self._curves))
+            self.pointed.emit(f"Copied {len(self._curves)} curves of {len(self._curves[0].x)} points.")
+
+    def copy_picture(self) -> None:
+        """Put the plot on the clipboard as a picture in pixels and as a drawing, in the light look."""
+        theme = self._theme
+        self.set_theme(LIGHT)
+        try:
+            data = picture_data(paint_picture(self, self.plot), paint_svg(self, self.plot))
+        finally:
+            self.set_theme(theme)
+        QGuiApplication.clipboard().setMimeData(data)
+        self.pointed.emit("Copied the plot as a picture.")
+
+    def say(self, text: str) -> None:
+        """Put words into the status line."""
+        self.pointed.emit(text)
+
+    # Drawing
+
+    def _view_changed(self, change: ViewChange) -> None:
+        drawn = ("quantity", "decibels", "log_frequency", "polarizations", "active_angle", "active_polarization")
+        if any(getattr(change.before, name) != getattr(change.after, name) for name in drawn):
+            self._draw()
+        else:
+            self._draw_marks()
+
+    def _draw(self) -> None:
+        state = self._view.state
+        self._curves = curves_of(self._answer.response, state) if self._answer is not None else ()
+        curves = self._curves
+        self._colours = drawing.colours_of(curves, self._theme, stale=self._stale)
+        across = frequency_axis(self.sweep, log=state.log_frequency)
+        upward = quantity_axis(state.quantity, self.sweep, decibels=state.decibels)
+        self._units = (across.unit, upward.unit)
+        self.scale = FrequencyScale(across.factor, state.log_frequency)
+        self.plot.bottom_axis.set_title(across.title)
+        self.plot.left_axis.set_title(upward.title)
+        shown_as = (state.quantity, state.decibels, across.unit, state.log_frequency)
+        # Where other numbers stand at an axis, a range of the old ones would show nothing: follow the new.
+        self.plot.follows[0] |= shown_as[2:] != self._shown_as[2:]
+        self.plot.follows[1] |= shown_as[:2] != self._shown_as[:2]
+        self._shown_as = shown_as
+        drawn = drawing.draw_curves(curves, self._colours, self.scale, drawing.chosen_index(curves, state))
+        self.plot.show_curves(
+            drawn,
+            drawing.end_labels(curves, drawn),
+            drawing.extent_of(curves, self.scale, decibels=state.decibels),
+            logarithmic=state.log_frequency,
+        )
+        self._draw_marks()
+        self._speak()
+
+    def _draw_marks(self) -> None:
+        state = self._view.state
+        self._worst_spots = drawing.worst_spots(self._curves, self._colours, self.scale)
+        shown = self._worst_spots if state.worst_shown else {}
+        worst = words.worst_curve(self._curves)
+        order = list(shown)
+        self.plot.worst_layer.set_spots(
+            tuple(shown.values()), order.index(worst) if worst in shown else None
+        )
+        markers = drawing.draw_markers(state, self.plot.curve_layer.curves, self.scale)
+        self.plot.marker_layer.set_markers(markers)
+
+    def _speak(self) -> None:
+        state, curves = self._view.state, self._curves
+        label = drawing.quantity_label(state)
+        self.header.set_worst(words.worst_sentence(curves, decibels=state.decibels))
+        self.header.set_hidden(words.hidden_sentence(curves))
+        self._show_legend()
+        empty = words.empty_sentence(state.quantity, curves)
+        self.plot.note_layer.set_text(empty)
+        said = words.description(curves, decibels=state.decibels)
+        self.plot.setAccessibleName(f"Curves of {label.lower()}")
+        self.plot.setAccessibleDescription(f"{'Last good result. ' if self._stale else ''}{empty} {said}".strip())
+
+    def _show_legend(self) -> None:
+        self.header.legend.set_facts(drawing.legend_facts(self._curves, self._colours, self._view.state))
+        self.header.legend.setVisible(bool(self._curves) and self.plot.end_labels.crowded)
+
+    # Pointing and choosing
+
+    def _nearest(self, at: QPointF) -> tuple[int, int, float] | None:
+        """Return the curve nearest to a pixel: its index, the index of its point, and the pixels between."""
+        frame, best = self.plot.frame(), None
+        places = self.scale.positions(self.sweep)
+        point = int(np.nanargmin(np.abs(places - frame.position(at.x()))))
+        for index, curve in enumerate(self._curves):
+            if np.isfinite(curve.y[point]):
+                gap = abs(frame.down(float(curve.y[point])) - at.y())
+                if best is None or gap < best[2]:
+                    best = (index, point, gap)
+        return best
+
+    def _point(self, at: QPointF | None) -> None:
+        found = self._nearest(at) if at is not None and self._curves else None
+        if at is None or found is None:
+            self.plot.pointer_layer.point(None)
+            self.pointed.emit("")
+            return
+        index, point, _ = found
+        curve, decibels = self._curves[index], self._view.state.decibels
+        spot = Spot(self.scale.position(float(curve.x[point])), float(curve.y[point]), self._colours[index])
+        self.plot.pointer_layer.point(spot)
+        self.pointed.emit(words.point_sentence(curve, point, decibels=decibels))
+        self._hint_worst(at)
+
+    def _hint_worst(self, at: QPointF) -> None:
+        """Say the worst point under the mouse in a tooltip."""
+        frame = self.plot.frame()
+        for index, spot in self._worst_spots.items():
+            gap = QPointF(frame.across(spot.position), frame.down(spot.value)) - at
+            if self._view.state.worst_shown and gap.manhattanLength() <= _REACH:
+                text = words.curve_sentence(self._curves[index], decibels=self._view.state.decibels)
+                place = (at + self.plot.area_rect().topLeft()).toPoint()
+                QToolTip.showText(self.plot.mapToGlobal(place), text, self.plot)
+                return
+        if QToolTip.isVisible():
+            QToolTip.hideText()
+
+    def _choose_curve(self, at: QPointF) -> None:
+        found = self._nearest(at)
+        if found is not None and found[2] <= _REACH:
+            self.choose_curve(found[0])
+
+    def choose_curve(self, index: int) -> None:
+        """Let the wall drawing show the angle and polarization of a curve."""
+        shown = len(self._view.state.polarizations)
+        curve = self._curves[index]
+        self._view.set(self, active_angle=index // shown, active_polarization=curve.polarization)
+        self.pointed.emit(words.curve_sentence(curve, decibels=self._view.state.decibels))
+
+    # Menu, keys and ranges
+
+    def _open_menu(self, at: QPointF, place: QPoint) -> None:
+        self.commands.remember(at)
+        self.menu = open_menu(self.commands.table, self.plot, place)
+
+    def _take_key(self, event: QKeyEvent, run: bool) -> bool:
+        return take_key(self.commands.table, event, run)
+
+    def _ranges_moved(self) -> None:
+        self.plot.pointer_layer.point(None)
+        if self.strip.isVisible():
+            self._fill_strip()
+
+    def _fill_strip(self) -> None:
+        frame = self.plot.frame()
+        hertz = (self.scale.hertz(frame.left), self.scale.hertz(frame.right))
+        self.strip.show_ranges(hertz, (frame.bottom, frame.top), self.scale.factor, self._units)
+
+    def _set_ranges(self, hertz: tuple[float, float], values: tuple[float, float]) -> None:
+        low, high = (self.scale.position(end) for end in hertz)
+        self.plot.set_ranges((low, high), values)
+
+    def _close_strip(self) -> None:
+        self.strip.hide()
+        self.plot.setFocus()
