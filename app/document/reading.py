@@ -40,7 +40,10 @@ def read_relative(text: str) -> complex:
     """
     plain = text.replace("\u2212", "-").strip()
     if pair := _PAIR.fullmatch(plain):
-        parts = re.split(r";|,(?=\s)|,(?![^,]*,)", pair["inner"])
+        inner = pair["inner"]
+        # As in a list: a comma divides unless something clearer does.
+        divider = ";" if ";" in inner else r",\s" if re.search(r",\s", inner) else ","
+        parts = re.split(divider, inner)
         if len(parts) != 2:
             raise UnitError(f"{text!r} is not a pair of numbers", "[real, loss], for example [12, 0.5]")
         return _lossy(_number(parts[0]), _number(parts[1]))

@@ -182,9 +182,7 @@ def curve_colour(theme: Theme, quantity: str, angle_rank: int, angle_count: int)
     if angle_count < 2:
         return colour
     share = min(max(angle_rank, 0), angle_count - 1) / (angle_count - 1)
-    faint = lightness(
-        clear_of(with_lightness(colour, 0.50 if theme.dark else 0.665), (theme.base,), GRAPHICS)
-    )
+    faint = lightness(clear_of(with_lightness(colour, 0.50 if theme.dark else 0.665), (theme.base,), GRAPHICS))
     strong = 0.88 if theme.dark else 0.34
     return with_lightness(colour, faint + (strong - faint) * share)
 

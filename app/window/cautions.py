@@ -86,7 +86,7 @@ ALWAYS: Final = (
     (
         "Shielded rooms",
         (
-            "Wall figures say nothing of escape, door entrapment, alarms, ventilation or fire detection. Power-line "
+            "Wall figures say nothing of escape, door entrapment, alarms, ventilation or fire detection. Power "
             "filters leak current: an ungrounded room can kill. Grounding is for a licensed electrician under the "
             "local code."
         ),

@@ -8,7 +8,7 @@ from pathlib import Path
 from typing import Final, Literal, Protocol
 
 from PySide6.QtCore import Qt
-from PySide6.QtWidgets import QDialog, QFileDialog, QInputDialog, QLineEdit, QMessageBox, QWidget
+from PySide6.QtWidgets import QDialog, QFileDialog, QMessageBox, QWidget
 
 SaveAnswer = Literal["save", "discard", "cancel"]
 OverwriteAnswer = Literal["overwrite", "save as", "cancel"]
@@ -26,9 +26,6 @@ class Dialogs(Protocol):
 
     def ask_overwrite(self, name: str, then: Callable[[OverwriteAnswer], None]) -> None:
         """Ask what to do when the file was changed by someone else since it was read."""
-
-    def ask_text(self, title: str, label: str, text: str, then: Callable[[str], None]) -> None:
-        """Ask for one line of text, beginning with `text`."""
 
     def pick_open(self, folder: Path, then: Callable[[Path], None]) -> None:
         """Ask for a job file to open."""
@@ -78,19 +75,6 @@ class QtDialogs:
 
         box.finished.connect(answer)
         box.open()
-
-    def ask_text(self, title: str, label: str, text: str, then: Callable[[str], None]) -> None:
-        """Ask for one line of text."""
-        dialog = QInputDialog(self._parent)
-        dialog.setAttribute(Qt.WidgetAttribute.WA_DeleteOnClose)
-        dialog.setWindowTitle(title)
-        dialog.setLabelText(label)
-        dialog.setTextValue(text)
-        field = dialog.findChild(QLineEdit)
-        if field is not None:
-            field.selectAll()
-        dialog.textValueSelected.connect(then)
-        dialog.open()
 
     def pick_open(self, folder: Path, then: Callable[[Path], None]) -> None:
         """Ask for a job file to open."""

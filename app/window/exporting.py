@@ -3,6 +3,7 @@
 import contextlib
 import threading
 from collections.abc import Callable, Generator
+from io import TextIOWrapper
 from pathlib import Path
 from typing import Final, NamedTuple
 
@@ -12,7 +13,8 @@ from PySide6.QtWidgets import QHBoxLayout, QLabel, QProgressBar, QPushButton, QW
 from app.window.crash_net import LOGGER
 from app.window.dialogs import Dialogs
 from stackcore.errors import Severity, SlabwrightError
-from stackcore.export.sweep_csv import write_csv
+from stackcore.export import write_csv
+from stackcore.job.replacing import replacing
 from stackcore.job.resolve import Job
 
 Tell = Callable[[str, Severity], None]
@@ -21,8 +23,12 @@ Steps = Callable[[Job, Path], Generator[float, None, None]]
 
 
 def csv_steps(job: Job, path: Path) -> Generator[float, None, None]:
-    """Write every stack of `job` over its sweep to `path` as CSV."""
-    yield from write_csv(job, path)
+    """Write every stack of `job` over its sweep to `path` as CSV; the file changes only when all is written."""
+    with replacing(path) as file:
+        stream = TextIOWrapper(file, encoding="utf-8", newline="")
+        yield from write_csv(job, stream)
+        stream.flush()
+        stream.detach()
 
 
 PATIENCE: Final = 1000

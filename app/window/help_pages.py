@@ -81,8 +81,8 @@ def about_page(theme: Theme, version: str, parts: Iterable[tuple[str, str, str]]
             "<h2>Made with</h2>",
             f"<table cellspacing='0' cellpadding='2'>{rows}</table>",
             (
-                f"<p style='color:{theme.muted}'>Help &gt; Copy diagnostics puts versions and the last lines of the "
-                "log on the clipboard, for a report. It holds no contents of your jobs.</p>"
+                f"<p style='color:{theme.muted}'>Help &gt; Copy diagnostics puts versions and the last lines of "
+                "the log on the clipboard, for a report. It holds no contents of your jobs.</p>"
             ),
         ],
     )

@@ -15,10 +15,11 @@ from app.look.theme import Theme
 from app.window import help_pages
 from app.window.actions import Actions
 from app.window.cautions import Caution, cautions
+from app.window.commands import Commands, HelpCommands, ViewCommands
 from app.window.crash_net import CrashNet
 from app.window.diagnostics import diagnostics, parts, version_of
 from app.window.dialogs import Dialogs, QtDialogs
-from app.window.editing import ElementCommands, StackCommands
+from app.window.editing import ElementQuestions, StackCommands
 from app.window.exporting import Exporter, ProgressLine, csv_steps
 from app.window.files import Files
 from app.window.first_view import first_view
@@ -33,7 +34,7 @@ from app.window.recompute import Recompute
 from app.window.recovery import Leftover, Recovery
 from app.window.samples import samples
 from app.window.status import StatusLine
-from app.window.table import Commands, HelpCommands, ViewCommands, action_table
+from app.window.table import action_table
 from app.workers.live import Answer, LiveLane
 from stackcore.errors import Fault
 
@@ -207,13 +208,13 @@ class MainWindow(QMainWindow):
             exporter=self._exporter,
             recent=self._recent,
             samples=samples(),
-            elements=ElementCommands(session, tell),
-            stacks=StackCommands(session, self._dialogs, tell),
-            markers=MarkerCommands(session, self._view, lambda: self._recompute.answer),
+            elements=self._panels.elements,
+            selected=ElementQuestions(session),
+            stacks=StackCommands(session, tell),
+            rename_stack=self._panels.rename_stack,
+            markers=MarkerCommands(session, self._view, self._panels.curves.commands),
             view=view,
             help=HelpCommands(self.show_help, self._copy_diagnostics),
-            copy=self._panels.elements.copy,
-            paste=self._panels.elements.paste,
             quit=self._quit,
         )
         return Actions(action_table(commands), self, (self._panels.elements, self._panels.wall))

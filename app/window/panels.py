@@ -10,6 +10,7 @@ from app.document.view import View
 from app.look.theme import Theme
 from app.panels.curves.panel import CurvesPanel
 from app.panels.elements.panel import ElementsPanel
+from app.panels.elements.stacks import StackBar
 from app.panels.materials.panel import MaterialsPanel
 from app.panels.readings.panel import ReadingsPanel
 from app.panels.sweep.panel import SweepPanel
@@ -63,6 +64,12 @@ class Panels:
         self.readings.set_theme(theme)
         self.materials.set_theme(theme)
         self.help.set_theme(theme)
+
+    def rename_stack(self) -> None:
+        """Open the line for a new name of the stack, in its place."""
+        bar = self.elements.findChild(StackBar)
+        if bar is not None:
+            bar.rename()
 
     def focus(self, step: int) -> None:
         """Move the focus to the next visible panel (`step` 1) or the one before (-1)."""

@@ -1,58 +1,10 @@
 """The table of actions: everything the menus offer, in their order."""
 
-from collections.abc import Callable, Sequence
-from dataclasses import dataclass
+from collections.abc import Sequence
 
-from app.document.session import Session
 from app.window.actions import Act, Entry
-from app.window.editing import ElementCommands, StackCommands
-from app.window.exporting import Exporter
-from app.window.files import Files
-from app.window.marking import MarkerCommands
-from app.window.recent import RecentFiles
+from app.window.commands import Commands
 from app.window.samples import Sample
-
-Do = Callable[[], None]
-
-
-@dataclass(frozen=True, slots=True)
-class ViewCommands:
-    """What the menu View needs from the window."""
-
-    theme: Callable[[], str]
-    set_theme: Callable[[str], None]
-    materials_shown: Callable[[], bool]
-    toggle_materials: Do
-    reset_layout: Do
-    next_panel: Do
-    previous_panel: Do
-
-
-@dataclass(frozen=True, slots=True)
-class HelpCommands:
-    """What the menu Help needs from the window."""
-
-    show_page: Callable[[str], None]
-    copy_diagnostics: Do
-
-
-@dataclass(frozen=True, slots=True)
-class Commands:
-    """Everything the table refers to."""
-
-    session: Session
-    files: Files
-    exporter: Exporter
-    recent: RecentFiles
-    samples: tuple[Sample, ...]
-    elements: ElementCommands
-    stacks: StackCommands
-    markers: MarkerCommands
-    view: ViewCommands
-    help: HelpCommands
-    copy: Do
-    paste: Do
-    quit: Do
 
 
 def action_table(c: Commands) -> tuple[Act, ...]:
@@ -107,7 +59,7 @@ def _file(c: Commands) -> Sequence[Act]:
 
 def _edit(c: Commands) -> Sequence[Act]:
     menu = "&Edit"
-    elements = c.elements
+    elements, selected = c.elements, c.selected
     return (
         Act(
             "edit.undo",
@@ -133,10 +85,20 @@ def _edit(c: Commands) -> Sequence[Act]:
             "edit.copy",
             menu,
             "&Copy",
-            c.copy,
+            elements.copy,
             ("Ctrl+C",),
-            "Copy the selected elements, as a table that spreadsheets take.",
-            enabled=elements.any_selected,
+            "Copy the selected rows, as a table that spreadsheets take.",
+            place="elements",
+            group=1,
+        ),
+        Act(
+            "edit.cut",
+            menu,
+            "C&ut",
+            elements.cut,
+            ("Ctrl+X",),
+            "Copy the selected elements and delete them.",
+            enabled=selected.any_selected,
             place="elements",
             group=1,
         ),
@@ -144,7 +106,7 @@ def _edit(c: Commands) -> Sequence[Act]:
             "edit.paste",
             menu,
             "&Paste",
-            c.paste,
+            elements.paste,
             ("Ctrl+V",),
             "Paste elements, or a block of cells from a spreadsheet, as one step.",
             place="elements",
@@ -157,7 +119,6 @@ def _edit(c: Commands) -> Sequence[Act]:
             elements.add_layer,
             ("Ctrl+L", "Ins"),
             "Add a layer behind the selected element.",
-            place="window",
             group=2,
         ),
         Act(
@@ -165,7 +126,7 @@ def _edit(c: Commands) -> Sequence[Act]:
             menu,
             "Add &sheet",
             elements.add_sheet,
-            ("Ctrl+Shift+L",),
+            ("Ctrl+Shift+L", "Shift+Ins"),
             "Add a sheet without thickness behind the selected element.",
             group=2,
         ),
@@ -176,7 +137,7 @@ def _edit(c: Commands) -> Sequence[Act]:
             elements.duplicate,
             ("Ctrl+D",),
             "Duplicate the selected elements.",
-            enabled=elements.any_selected,
+            enabled=selected.any_selected,
             place="elements",
             group=2,
         ),
@@ -187,7 +148,7 @@ def _edit(c: Commands) -> Sequence[Act]:
             elements.delete,
             ("Del",),
             "Delete the selected elements.",
-            enabled=elements.any_selected,
+            enabled=selected.any_selected,
             place="elements",
             group=2,
         ),
@@ -195,10 +156,10 @@ def _edit(c: Commands) -> Sequence[Act]:
             "edit.up",
             menu,
             "Move towards the &front",
-            elements.rise,
+            elements.move_up,
             ("Alt+Up",),
             "Move the selected elements one place up in the table, towards the wave.",
-            enabled=elements.can_rise,
+            enabled=selected.can_rise,
             place="elements",
             group=3,
         ),
@@ -206,10 +167,10 @@ def _edit(c: Commands) -> Sequence[Act]:
             "edit.down",
             menu,
             "Move towards the &back",
-            elements.sink,
+            elements.move_down,
             ("Alt+Down",),
             "Move the selected elements one place down in the table, away from the wave.",
-            enabled=elements.can_sink,
+            enabled=selected.can_sink,
             place="elements",
             group=3,
         ),
@@ -229,7 +190,7 @@ def _stack(c: Commands) -> Sequence[Act]:
             ("Ctrl+Shift+D",),
             "Copy this stack, to try a variant of it.",
         ),
-        Act("stack.rename", menu, "&Rename stack…", stacks.rename, ("Ctrl+R",), "Give this stack another name."),
+        Act("stack.rename", menu, "&Rename stack", c.rename_stack, ("Ctrl+R",), "Give this stack another name."),
         Act(
             "stack.delete",
             menu,
@@ -300,7 +261,6 @@ def _markers(c: Commands) -> Sequence[Act]:
             markers.to_worst,
             ("F8",),
             "Put the marker at the worst point over all curves shown, and look at its angle.",
-            enabled=markers.has_result,
             group=1,
         ),
         Act(

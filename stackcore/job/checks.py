@@ -145,10 +145,10 @@ def _within(measure: Measure, allowed: Limits, path: str) -> Iterator[Fault]:
         return
     if measure.value < 0:
         what = "is negative"
-    elif measure.value < allowed.lowest or (measure.value == 0 and allowed.open_below):
-        what = "is 0" if measure.value == 0 else "is too small"
+    elif measure.value == 0:
+        what = "is 0"
     else:
-        what = "is too large"
+        what = "is too small" if measure.value < allowed.lowest else "is too large"
     yield Fault(path, f"{shown(measure.text)} {what}", allowed.allowed)
 
 

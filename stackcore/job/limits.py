@@ -8,7 +8,7 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import Final
 
-from stackcore.units import Dimension, format_value
+from stackcore.units import Dimension
 
 
 @dataclass(frozen=True, slots=True)
@@ -28,17 +28,21 @@ class Limits:
 
     @property
     def allowed(self) -> str:
-        """The range in words: ``0 mm to 1000000 m, for example '2 mm'``."""
-        low, high = (format_value(end, self.dimension) for end in (self.lowest, self.highest))
-        from_low = f"more than {low}, up to {high}" if self.open_below else f"{low} to {high}"
-        return f"{from_low}, for example {self.example or repr(self.dimension.example)}"
+        """The range in words: ``0 m to 1e6 m, for example '2 mm'``."""
+        low, high = (f"{_short(end)} {self.dimension.si_unit}".strip() for end in (self.lowest, self.highest))
+        span = f"more than {low}, up to {high}" if self.open_below else f"{low} to {high}"
+        return f"{span}, for example {self.example or repr(self.dimension.example)}"
+
+
+def _short(value: float) -> str:
+    return f"{value:g}".replace("e+0", "e").replace("e+", "e")
 
 
 LENGTH: Final = Limits(Dimension.LENGTH, 0.0, 1e6)
 FREQUENCY: Final = Limits(Dimension.FREQUENCY, 1e-3, 1e18)
 RESISTANCE: Final = Limits(Dimension.RESISTANCE, 0.0, 1e15)
 INDUCTANCE: Final = Limits(Dimension.INDUCTANCE, 0.0, 1e6)
-CAPACITANCE: Final = Limits(Dimension.CAPACITANCE, 0.0, 1e6, open_below=True)
+CAPACITANCE: Final = Limits(Dimension.CAPACITANCE, 1e-30, 1e6)
 CONDUCTIVITY: Final = Limits(Dimension.CONDUCTIVITY, 0.0, 1e15, open_below=True)
 LOSS_TANGENT: Final = Limits(Dimension.NUMBER, 0.0, 1e9, example="0.015")
 

@@ -32,7 +32,7 @@ class Block:
 
 def blocks(stack: Stack, frequency: FloatArray, angle: FloatArray) -> Iterator[Block]:
     """Yield the blocks of a sweep; each holds at most a few thousand points, whatever the sweep's size."""
-    wide = min(frequency.size, _POINTS)
+    wide = min(max(frequency.size, 1), _POINTS)
     high = max(1, _POINTS // wide)
     maker = SceneMaker(stack, angle)
     for first in range(0, frequency.size, wide):

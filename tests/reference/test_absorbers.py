@@ -139,7 +139,8 @@ def test_jaumann_absorber(sheets: tuple[float, ...], band: float) -> None:
     stack = _jaumann(sheets)
     at = X_BAND * (1 + np.linspace(-band, band, 801) / 2)
     r = solved(stack, list(at))
-    assert float(r.return_loss_dB[:, 0, TE].min()) > 19.95, f"own search ({SECOND_METHOD})"
+    # The sheets are printed to an ohm, which leaves the level open by a few hundredths of a decibel.
+    assert float(r.return_loss_dB[:, 0, TE].min()) > 19.97, f"own search ({SECOND_METHOD})"
     needed = np.log(10) * (SPEED_OF_LIGHT / at[0] - SPEED_OF_LIGHT / at[-1]) / (2 * np.pi**2)
     assert stack.thickness > needed, ROZANOV
 

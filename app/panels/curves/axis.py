@@ -3,6 +3,7 @@
 from typing import Literal
 
 import pyqtgraph as pg
+from PySide6.QtCore import QRectF
 from PySide6.QtGui import QColor, QFont, QFontMetricsF, QPen
 
 from app.look.theme import Theme
@@ -12,13 +13,17 @@ from app.panels.curves.scale import Ticks, linear_ticks, logarithmic_ticks
 class QuietAxis(pg.AxisItem):
     """An axis without a line of its own: ticks are the grid, numbers are plain also on a logarithmic axis.
 
-    Its positions are log₁₀ of the value when `logarithmic` is set, as `FrequencyScale` makes them; the log
+    `degrees` makes its steps parts of a turn. Its positions are log₁₀ of the value when `logarithmic` is set, as `FrequencyScale` makes them; the log
     mode of the plotting library is not used, because it moves curves but not marks.
     """
 
     def __init__(self, orientation: Literal["left", "bottom"]) -> None:
         super().__init__(orientation)
         self.logarithmic = False
+        self.degrees = False
+        self._ink = QColor()
+        self._texts: dict[float, str] = {}
+        self.setZValue(-200)
         self.enableAutoSIPrefix(False)
         self.setGrid(255)
         self.setCacheMode(self.CacheMode.DeviceCoordinateCache)
@@ -43,14 +48,20 @@ class QuietAxis(pg.AxisItem):
         self.setPen(QPen(QColor(0, 0, 0, 0)))
         self.setTickPen(QPen(QColor(theme.line)))
         self.setTextPen(QPen(QColor(theme.muted)))
-        self.label.setDefaultTextColor(QColor(theme.text))
+        self._ink = QColor(theme.text)
+        self._write_title()
 
     def set_title(self, title: str) -> None:
         """Write the title; the numbers beside it carry no unit of their own."""
-        if title == self.labelText and self.label.isVisible():
-            return
-        self.setLabel(title)
-        self.label.setPlainText(title)
+        if title != self.labelText:
+            self.setLabel(title)
+            self._write_title()
+
+    def _write_title(self) -> None:
+        # The library writes titles as markup in the colour of the numbers; these are plain and stronger.
+        self.label.setPlainText(self.labelText)
+        self.label.setDefaultTextColor(self._ink)
+        self.resizeEvent(None)
 
     def ticks(self, low: float, high: float, length: float) -> Ticks:
         """Return what is written between two positions on `length` pixels."""
@@ -58,9 +69,16 @@ class QuietAxis(pg.AxisItem):
         if self.orientation == "left":
             room = metrics.height() * 2.6
         else:
-            room = metrics.horizontalAdvance("0000.0") * 1.7
-        make = logarithmic_ticks if self.logarithmic else linear_ticks
-        return make(low, high, max(2.0, length / room))
+            room = metrics.horizontalAdvance("0000.0") * 1.5
+        most = max(2.0, length / room)
+        if self.logarithmic:
+            return logarithmic_ticks(low, high, most)
+        return linear_ticks(low, high, most, degrees=self.degrees)
+
+    def boundingRect(self) -> QRectF:
+        """Return the axis and its grid, with room for numbers that stand at the very ends."""
+        rect: QRectF = super().boundingRect()
+        return rect.adjusted(0, -10, 0, 10) if self.orientation == "left" else rect.adjusted(-30, 0, 30, 0)
 
     def tickValues(self, minVal: float, maxVal: float, size: float) -> list[tuple[float | None, list[float]]]:
         """Give the plotting library the ticks of this axis: labelled ones, then those between them."""

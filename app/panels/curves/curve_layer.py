@@ -6,7 +6,7 @@ from typing import Any, Final
 
 import numpy as np
 import pyqtgraph as pg
-from PySide6.QtCore import QPointF, Qt
+from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QColor, QPainter, QPen, QPolygonF
 
 from app.panels.curves.frame import Frame, finite_runs
@@ -90,6 +90,8 @@ class CurveLayer(Layer):
 
     def draw(self, painter: QPainter, frame: Frame) -> None:
         """Draw the visible part of each curve; the chosen one lies on top."""
+        # Half a line's width of room, so that a curve along the edge is not cut lengthwise.
+        painter.setClipRect(QRectF(-1.5, -1.5, frame.width + 3.0, frame.height + 3.0))
         for curve in sorted(self._curves, key=lambda one: one.chosen):
             width = LIVE_WIDTH if not self._fine else CHOSEN_WIDTH if curve.chosen else FINE_WIDTH
             pen = QPen(QColor(curve.colour), width)

@@ -89,9 +89,13 @@ def extent_of(curves: Sequence[Curve], scale: FrequencyScale, *, decibels: bool)
     known = [curve.y[np.isfinite(curve.y)] for curve in curves]
     values = np.concatenate(known) if known else np.zeros(0)
     low, high = (float(values.min()), float(values.max())) if len(values) else (0.0, 1.0)
-    fraction = bool(curves) and can_show_decibels(curves[0].quantity) and not decibels
     left, right = ends if ends else (0.0, 1.0)
-    return Extent(left, right, low, high, 0.0 if fraction else None, 1.0 if fraction else None)
+    quantity = curves[0].quantity if curves else ""
+    if quantity in _TURNS:
+        return Extent(left, right, low, high, -_TURNS[quantity], _TURNS[quantity], degrees=True)
+    fraction = bool(curves) and can_show_decibels(quantity) and not decibels
+    degrees = bool(curves) and curves[0].unit == "deg"
+    return Extent(left, right, low, high, top=1.0 if fraction else None, degrees=degrees)
 
 
 def worst_spots(curves: Sequence[Curve], colours: Sequence[str], scale: FrequencyScale) -> dict[int, Spot]:

@@ -1,6 +1,6 @@
 """What is drawn over the grid: items that place data by the visible frame, in the pixels of the plot area."""
 
-from typing import TYPE_CHECKING, Any
+from typing import Any, Final
 
 from PySide6.QtCore import QRectF
 from PySide6.QtGui import QPainter
@@ -8,9 +8,8 @@ from PySide6.QtWidgets import QGraphicsItem, QStyleOptionGraphicsItem, QWidget
 
 from app.panels.curves.frame import Frame
 
-if TYPE_CHECKING:
-    ViewBox = Any
-
+SLACK: Final = 12.0
+"""Pixels that a mark may reach beyond the plot area."""
 
 class Layer(QGraphicsItem):
     """One transparent sheet over the plot area; its own coordinates are the pixels of that area.
@@ -19,10 +18,10 @@ class Layer(QGraphicsItem):
     whether an axis is logarithmic, and keeps pens in pixels for the screen and for pictures alike.
     """
 
-    def __init__(self, area: "ViewBox", height: float) -> None:
+    def __init__(self, area: Any, height: float) -> None:
         super().__init__(area)
         self._area = area
-        self._bounds = QRectF(area.rect())
+        self._bounds = self._room()
         self.setZValue(height)
         area.sigRangeChanged.connect(self._moved)
         area.sigResized.connect(self._resized)
@@ -30,10 +29,11 @@ class Layer(QGraphicsItem):
     def frame(self) -> Frame:
         """Return what is visible, and on how many pixels."""
         (left, right), (bottom, top) = self._area.viewRange()
-        return Frame(left, right, bottom, top, max(self._bounds.width(), 1.0), max(self._bounds.height(), 1.0))
+        rect = self._area.rect()
+        return Frame(left, right, bottom, top, max(rect.width(), 1.0), max(rect.height(), 1.0))
 
     def boundingRect(self) -> QRectF:
-        """Return the plot area."""
+        """Return the plot area, with room for marks that stand on its edge."""
         return self._bounds
 
     def paint(
@@ -52,4 +52,7 @@ class Layer(QGraphicsItem):
 
     def _resized(self, *_: object) -> None:
         self.prepareGeometryChange()
-        self._bounds = QRectF(self._area.rect())
+        self._bounds = self._room()
+
+    def _room(self) -> QRectF:
+        return QRectF(self._area.rect()).adjusted(-SLACK, -SLACK, SLACK, SLACK)

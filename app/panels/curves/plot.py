@@ -42,7 +42,8 @@ _LARGEST: Final = 1e15
 class Extent:
     """The whole of what there is to show: ends of the frequency axis (positions) and of the values.
 
-    `floor` and `top` are ends that the values cannot pass, such as 0 and 1 of a fraction.
+    `floor` and `top` are ends that the values cannot pass, such as 0 and 1 of a fraction; `degrees` says that
+    the values are angles.
     """
 
     left: float
@@ -51,6 +52,11 @@ class Extent:
     high: float
     floor: float | None = None
     top: float | None = None
+    degrees: bool = False
+
+    def values(self, low: float, high: float) -> tuple[float, float]:
+        """Return the range of the axis that shows the values from `low` to `high`."""
+        return round_range(low, high, self.floor, self.top, degrees=self.degrees)
 
 
 class CurvePlot(pg.GraphicsView):
@@ -69,6 +75,8 @@ class CurvePlot(pg.GraphicsView):
         self._extent = Extent(0.0, 1.0, 0.0, 1.0)
         self.area = pg.ViewBox(enableMenu=False, enableMouse=False, defaultPadding=0.0)
         self.area.disableAutoRange()
+        # Marks on the edge are drawn whole; the curves clip themselves.
+        self.area.setFlag(self.area.GraphicsItemFlag.ItemClipsChildrenToShape, False)
         self.left_axis, self.bottom_axis = QuietAxis("left"), QuietAxis("bottom")
         self.end_labels = EndLabels(self.area)
         self.curve_layer = CurveLayer(self.area, 10.0)
@@ -137,6 +145,9 @@ class CurvePlot(pg.GraphicsView):
             self.bottom_axis.logarithmic = logarithmic
             self.follows[0] = True
             self.bottom_axis.picture = None
+        if extent.degrees != self.left_axis.degrees:
+            self.left_axis.degrees = extent.degrees
+            self.left_axis.picture = None
         self._extent = extent
         self.curve_layer.set_curves(curves)
         self.end_labels.set_labels(labels)
@@ -182,8 +193,7 @@ class CurvePlot(pg.GraphicsView):
 
     def fit_values(self, low: float, high: float) -> None:
         """Show these values, rounded outward, and no longer follow the data."""
-        extent = self._extent
-        self.set_ranges(values=round_range(low, high, extent.floor, extent.top))
+        self.set_ranges(values=self._extent.values(low, high))
 
     def set_ranges(
         self,
@@ -225,7 +235,7 @@ class CurvePlot(pg.GraphicsView):
                 left, right = left - span, right + span
             self._set_range(0, (left, right))
         if self.follows[1]:
-            self._set_range(1, round_range(extent.low, extent.high, extent.floor, extent.top))
+            self._set_range(1, extent.values(extent.low, extent.high))
 
     def _set_range(self, axis: int, wanted: tuple[float, float]) -> None:
         if tuple(self.area.viewRange()[axis]) != wanted:

@@ -15,6 +15,7 @@ from stackcore.media.base import FloatArray
 
 _TINY: Final = 1e-300
 _ROUND: Final = (1.0, 2.0, 5.0, 10.0)
+_TURN_PARTS: Final = (15.0, 30.0, 45.0, 90.0, 180.0, 360.0)
 
 
 @dataclass(frozen=True, slots=True)
@@ -65,22 +66,26 @@ class Ticks:
     minor: tuple[float, ...] = ()
 
 
-def round_step(span: float, most: float) -> float:
-    """Return the smallest step of 1, 2 or 5 times a power of ten that divides `span` into at most `most` parts.
+def round_step(span: float, most: float, *, degrees: bool = False) -> float:
+    """Return the smallest round step that divides `span` into at most `most` parts.
+
+    Round is 1, 2 or 5 times a power of ten; for `degrees` from 10 upward a part of a turn that quarters it.
 
     Examples
     --------
-    >>> round_step(4.0, 5)
-    1.0
+    >>> round_step(4.0, 5), round_step(360.0, 10, degrees=True)
+    (1.0, 45.0)
     """
     least = max(span, _TINY) / max(most, 1.0)
+    if degrees and 10.0 < least <= _TURN_PARTS[-1]:
+        return next(step for step in _TURN_PARTS if step >= least * (1 - 1e-9))
     power = 10.0 ** math.floor(math.log10(least))
     return next(step * power for step in _ROUND if step * power >= least * (1 - 1e-9))
 
 
-def linear_ticks(low: float, high: float, most: float) -> Ticks:
+def linear_ticks(low: float, high: float, most: float, *, degrees: bool = False) -> Ticks:
     """Return round numbers between `low` and `high`, at most about `most` of them."""
-    step = round_step(high - low, most)
+    step = round_step(high - low, most, degrees=degrees)
     first, last = math.ceil(low / step - 1e-9), math.floor(high / step + 1e-9)
     major = tuple(index * step for index in range(first, min(last, first + 200) + 1))
     return Ticks(major, number_texts(major, step))
@@ -127,30 +132,37 @@ def number_texts(values: Sequence[float], step: float) -> tuple[str, ...]:
 
 
 def round_range(
-    low: float, high: float, floor: float | None = None, top: float | None = None
+    low: float, high: float, floor: float | None = None, top: float | None = None, *, degrees: bool = False
 ) -> tuple[float, float]:
     """Return a range a little larger than the data, on round numbers, so that it does not tremble with them.
+
+    Zero is not passed by data that do not pass it: a loss from 0 to 2.8 dB is drawn from 0.
 
     Parameters
     ----------
     low, high
         Smallest and largest value to show.
     floor, top
-        Values the range hardly passes unless the data do, such as 0 and 1 of a fraction.
+        Values the range hardly passes unless the data do, such as 1 for a fraction.
+    degrees
+        Round to parts of a turn.
     """
     span = high - low
     first, last = low, high
     if span <= max(abs(low), abs(high)) * 1e-6:
         span = max(abs(high) * 0.02, 1e-12)
         first, last = low - span / 2, high + span / 2
-    step = round_step(span, 10)
+    step = round_step(span, 10, degrees=degrees)
     below = math.floor((first - span * 0.02) / step) * step
     above = math.ceil((last + span * 0.02) / step) * step
     # A hair beyond, so that a curve that lies on the end is not cut in half.
-    if floor is not None and low >= floor:
-        below = max(below, floor - span * 0.012)
-    if top is not None and high <= top:
-        above = min(above, top + span * 0.012)
+    hair = span * 0.012
+    for bound in (0.0, floor):
+        if bound is not None and low >= bound - hair / 10:
+            below = max(below, bound - hair)
+    for bound in (0.0, top):
+        if bound is not None and high <= bound + hair / 10:
+            above = min(above, bound + hair)
     return below, above
 
 

@@ -1,8 +1,5 @@
 """How a cell of the element table is drawn, and what opens in it for typing."""
 
-import re
-from typing import Final
-
 from PySide6.QtCore import (
     QAbstractItemModel,
     QEvent,
@@ -10,11 +7,10 @@ from PySide6.QtCore import (
     QObject,
     QPersistentModelIndex,
     QRect,
-    QSize,
     Qt,
     Signal,
 )
-from PySide6.QtGui import QColor, QFont, QFontMetrics, QPainter, QPen
+from PySide6.QtGui import QColor, QPainter, QPen
 from PySide6.QtWidgets import QAbstractItemDelegate, QStyle, QStyledItemDelegate, QStyleOptionViewItem, QWidget
 
 from app.document.reading import unit_of
@@ -24,14 +20,9 @@ from app.panels.elements.columns import MATERIAL, SHEET_COLUMNS, Column
 from app.panels.elements.editors import MaterialBox, QuantityEdit, fault_ground, is_enter
 from app.panels.elements.model import Ask, ElementsModel
 from app.panels.elements.names import MaterialNames
+from app.panels.elements.widths import MARK, MARK_GAP, PADDING, SWATCH, Widths, split_quantity
 
 Index = QModelIndex | QPersistentModelIndex
-
-PADDING: Final = 8
-SWATCH: Final = 12
-MARK: Final = 14
-
-_PARTS: Final = re.compile(r"(?P<whole>.*?)(?P<fraction>[.,]\d*(?:[eE][-+]?\d+)?)?\s*(?P<unit>[^\d.,()]*)")
 
 
 class CellDelegate(QStyledItemDelegate):
@@ -45,15 +36,15 @@ class CellDelegate(QStyledItemDelegate):
     def __init__(self, theme: Theme, parent: QObject | None = None) -> None:
         super().__init__(parent)
         self._theme = theme
-        self._widths: dict[int, tuple[int, int]] = {}
+        self._widths: tuple[Widths, ...] = ()
 
     def set_theme(self, theme: Theme) -> None:
         """Draw in the colours of `theme` from now on."""
         self._theme = theme
 
-    def forget_widths(self) -> None:
-        """Measure the numbers anew: some of them changed."""
-        self._widths.clear()
+    def set_widths(self, widths: tuple[Widths, ...]) -> None:
+        """Stand numbers by these widths of the columns from now on."""
+        self._widths = widths
 
     # Drawing
 
@@ -65,7 +56,7 @@ class CellDelegate(QStyledItemDelegate):
         faulty = index.data(Ask.FAULT) is not None
         if faulty:
             room = self._paint_mark(painter, room)
-        painter.setFont(self._font(option, index, column))
+        painter.setFont(tabular_font(option.font) if column.dimension is not None else option.font)
         if column is MATERIAL:
             self._paint_material(painter, room, index)
         elif column.dimension is not None and not faulty and index.flags() & Qt.ItemFlag.ItemIsEditable:
@@ -101,7 +92,7 @@ class CellDelegate(QStyledItemDelegate):
         painter.drawText(disc, Qt.AlignmentFlag.AlignCenter, "!")
         painter.setBrush(Qt.BrushStyle.NoBrush)
         painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
-        return room.adjusted(MARK + 6, 0, 0, 0)
+        return room.adjusted(MARK + MARK_GAP, 0, 0, 0)
 
     def _paint_material(self, painter: QPainter, room: QRect, index: Index) -> None:
         kind = index.data(Ask.MATERIAL_KIND)
@@ -126,8 +117,8 @@ class CellDelegate(QStyledItemDelegate):
     def _paint_quantity(self, painter: QPainter, room: QRect, index: Index) -> None:
         metrics = painter.fontMetrics()
         number, fraction, unit = split_quantity(index.data())
-        fraction_width, unit_width = self._column_widths(index, metrics)
-        left = room.right() - unit_width - fraction_width - metrics.horizontalAdvance(number)
+        widths = self._widths[index.column()]
+        left = room.right() - widths.unit - widths.fraction - metrics.horizontalAdvance(number)
         if not number or left < room.left():
             self._paint_words(painter, room, index, self._theme.text)
             return
@@ -135,35 +126,8 @@ class CellDelegate(QStyledItemDelegate):
         vertical = Qt.AlignmentFlag.AlignVCenter
         painter.drawText(QRect(left, room.top(), room.width(), room.height()), vertical, number + fraction)
         painter.setPen(QColor(self._theme.muted))
-        unit_left = room.right() - unit_width + metrics.horizontalAdvance(" ")
+        unit_left = room.right() - widths.unit + metrics.horizontalAdvance(" ")
         painter.drawText(QRect(unit_left, room.top(), room.width(), room.height()), vertical, unit)
-
-    def _column_widths(self, index: Index, metrics: QFontMetrics) -> tuple[int, int]:
-        """Return the widest decimal fraction and the widest unit, with the space before it, of a column."""
-        model = index.model()
-        key = index.column()
-        if key not in self._widths:
-            texts = (model.index(row, index.column()) for row in range(model.rowCount()))
-            parts = [split_quantity(cell.data()) for cell in texts if _is_quantity(cell)]
-            fraction = max((metrics.horizontalAdvance(part[1]) for part in parts), default=0)
-            unit = max((metrics.horizontalAdvance(f" {part[2]}") for part in parts), default=0)
-            self._widths[key] = (fraction, unit)
-        return self._widths[key]
-
-    def _font(self, option: QStyleOptionViewItem, index: Index, column: Column) -> QFont:
-        return tabular_font(option.font) if column.dimension is not None else option.font
-
-    def sizeHint(self, option: QStyleOptionViewItem, index: Index) -> QSize:
-        column: Column = index.data(Ask.COLUMN)
-        metrics = QFontMetrics(self._font(option, index, column))
-        text = index.data() or ""
-        width = metrics.horizontalAdvance(text)
-        if column.dimension is not None and _is_quantity(index):
-            fraction, unit = self._column_widths(index, metrics)
-            width = metrics.horizontalAdvance(split_quantity(text)[0]) + fraction + unit
-        if index.data(Ask.FAULT) is not None:
-            width += MARK + 6
-        return QSize(width + 2 * PADDING + 2, metrics.height() + 12)
 
     # Typing
 
@@ -216,21 +180,3 @@ class CellDelegate(QStyledItemDelegate):
         self.closeEditor.emit(editor, QAbstractItemDelegate.EndEditHint.NoHint)
         if advance:
             self.entered.emit()
-
-
-def split_quantity(text: str) -> tuple[str, str, str]:
-    """Return a quantity's text up to the decimal sign, from there to its unit, and the unit.
-
-    Examples
-    --------
-    >>> split_quantity("12.25 mm"), split_quantity("1/8 in"), split_quantity("377 ohm/sq")
-    (('12', '.25', 'mm'), ('1/8', '', 'in'), ('377', '', 'ohm/sq'))
-    """
-    match = _PARTS.fullmatch(text)
-    if match is None:
-        return text, "", ""
-    return match["whole"], match["fraction"] or "", match["unit"].strip()
-
-
-def _is_quantity(index: Index) -> bool:
-    return bool(index.data()) and index.data(Ask.FAULT) is None and bool(index.flags() & Qt.ItemFlag.ItemIsEditable)

@@ -118,6 +118,9 @@ class MaterialBox(QComboBox):
         """Show `text` as what stands in the cell."""
         self.setCurrentIndex(self.findText(text))
         self.setEditText(text)
+        line = self.lineEdit()
+        assert line is not None
+        line.selectAll()
         self._typed = False
 
     def eventFilter(self, watched: QObject, event: QEvent) -> bool:

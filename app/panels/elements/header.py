@@ -2,7 +2,7 @@
 
 from typing import Final
 
-from PySide6.QtCore import QRect, Qt
+from PySide6.QtCore import QRect, QSize, Qt
 from PySide6.QtGui import QColor, QPainter
 from PySide6.QtWidgets import QHeaderView, QWidget
 
@@ -40,3 +40,7 @@ class QuietHeader(QHeaderView):
         elided = painter.fontMetrics().elidedText(title, Qt.TextElideMode.ElideRight, room.width())
         painter.drawText(room, alignment or Qt.AlignmentFlag.AlignCenter, elided)
         painter.restore()
+
+    def sectionSizeFromContents(self, logicalIndex: int) -> QSize:
+        title = str(self.model().headerData(logicalIndex, self.orientation()) or "")
+        return QSize(self.fontMetrics().horizontalAdvance(title) + 2 * PADDING + 2, self.height())

@@ -13,7 +13,7 @@ from app.document.session import Change, Session
 from app.panels.elements.columns import ALL_COLUMNS, LAYER_COLUMNS, MATERIAL, Column, columns_of
 from app.panels.elements.difference import Inserted, Moved, Removed, Step, step_between
 from app.panels.elements.gestures import typed_edit
-from app.panels.elements.lines import CellView, Line, cell_of, lines_of
+from app.panels.elements.lines import CellView, Line, cell_of, fault_words, lines_of
 from app.panels.elements.names import MaterialNames
 from stackcore.job.records import StackRecord
 
@@ -86,6 +86,11 @@ class ElementsModel(QAbstractTableModel):
         """The columns shown, in order."""
         return self._columns
 
+    @property
+    def lines(self) -> tuple[Line, ...]:
+        """What the rows show, in order."""
+        return self._lines
+
     def line(self, row: int) -> Line:
         """Return what the table's row `row` shows."""
         return self._lines[row]
@@ -122,7 +127,7 @@ class ElementsModel(QAbstractTableModel):
             case Role.AccessibleTextRole:
                 return f"{column.title} of {line.place}: {view.text or 'empty'}"
             case Role.AccessibleDescriptionRole:
-                return _fault_words(view) if view.fault else column.definition
+                return fault_words(view.fault) if view.fault else column.definition
             case Ask.FAULT:
                 return view.fault
             case Ask.LINE_KIND:
@@ -268,15 +273,9 @@ def _runs(rows: Sequence[int]) -> Iterator[tuple[int, int]]:
         yield run[0], run[-1]
 
 
-def _fault_words(view: CellView) -> str:
-    assert view.fault is not None
-    allowed = f". Allowed: {view.fault.allowed}" if view.fault.allowed else ""
-    return f"{view.fault.message}{allowed}."
-
-
 def _tool_tip(view: CellView, line: Line, column: Column) -> str:
     if view.fault is not None:
-        return _fault_words(view)
+        return fault_words(view.fault)
     if column is MATERIAL and view.text:
         return f"{view.text}: material of the {line.place}"
     return column.definition if view.editable else ""

@@ -14,6 +14,7 @@ from app.look.theme import Theme
 from app.panels.elements.clipboard import place, read_block, write_block, write_html
 from app.panels.elements.columns import MATERIAL, SHEET_COLUMNS, WHAT
 from app.panels.elements.gestures import add_layer_edit, move_edit, paste_edit
+from app.panels.elements.lines import fault_words
 from app.panels.elements.model import ElementsModel
 from app.panels.elements.stacks import StackBar
 from app.panels.elements.table import ElementsTable
@@ -265,8 +266,7 @@ class ElementsPanel(QWidget):
         index = self._table.currentIndex() if current is None else current
         fault = self._model.view(index).fault if index.isValid() else None
         if fault is not None:
-            allowed = f". Allowed: {fault.allowed}" if fault.allowed else ""
-            text = f"{fault.message}{allowed}."
+            text = fault_words(fault)
         else:
             drafts = [d for d in self._model.document.drafts if d.cell.stack == self._model.stack_index]
             text = _drafts_words(len(drafts))

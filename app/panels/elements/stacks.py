@@ -97,8 +97,9 @@ class StackBar(QWidget):
         self._name.selectAll()
 
     def eventFilter(self, watched: QObject, event: QEvent) -> bool:
-        is_press = isinstance(event, QKeyEvent) and event.type() == QEvent.Type.KeyPress
-        if watched is self._name and is_press and event.key() == Qt.Key.Key_Escape:
+        if not isinstance(event, QKeyEvent) or event.type() != QEvent.Type.KeyPress:
+            return super().eventFilter(watched, event)
+        if watched is self._name and event.key() == Qt.Key.Key_Escape:
             self._close_line()
             return True
         return super().eventFilter(watched, event)

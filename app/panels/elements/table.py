@@ -32,6 +32,7 @@ from app.panels.elements.columns import LAYER_COLUMNS, MATERIAL
 from app.panels.elements.delegate import CellDelegate
 from app.panels.elements.header import QuietHeader
 from app.panels.elements.model import ElementsModel
+from app.panels.elements.widths import Measuring
 
 Command = Literal["delete", "add_layer", "add_sheet", "move_up", "move_down", "copy", "cut", "paste"]
 
@@ -71,6 +72,7 @@ class ElementsTable(QTableView):
         self._drop_before: int | None = None
         self._delegate = CellDelegate(theme, self)
         self._header = QuietHeader(theme, self)
+        self._measuring = Measuring(self.font())
         self.setHorizontalHeader(self._header)
         self.setModel(model)
         self.setItemDelegate(self._delegate)
@@ -83,7 +85,14 @@ class ElementsTable(QTableView):
             signal.connect(self._fit_columns)
         self.setAccessibleName("Elements of the stack")
         self.setAccessibleDescription("From the front to the back, one row an element. F6 leaves the table.")
+        model.modelReset.connect(self._begin_somewhere)
         self._fit_columns()
+        self._begin_somewhere()
+
+    def _begin_somewhere(self) -> None:
+        """Have a current cell from the start, so that keys have a place: the material in front."""
+        index = self.elements_model().index(0, LAYER_COLUMNS.index(MATERIAL))
+        self.selectionModel().setCurrentIndex(index, QItemSelectionModel.SelectionFlag.NoUpdate)
 
     def _set_up_rows(self) -> None:
         self.verticalHeader().hide()
@@ -134,8 +143,7 @@ class ElementsTable(QTableView):
         flags = QItemSelectionModel.SelectionFlag
         self.selectionModel().select(selection, flags.ClearAndSelect | flags.Rows)
         if rows and self.currentIndex().row() not in rows:
-            column = max(self.currentIndex().column(), 0)
-            index = model.index(rows[0], column)
+            index = model.index(rows[0], self.currentIndex().column())
             self.selectionModel().setCurrentIndex(index, flags.NoUpdate)
             self.scrollTo(index)
 
@@ -259,20 +267,31 @@ class ElementsTable(QTableView):
             painter.setPen(QColor(self._theme.muted))
             painter.drawText(room, Qt.AlignmentFlag.AlignLeft | Qt.TextFlag.TextWordWrap, EMPTY_HINT)
 
+    def changeEvent(self, event: QEvent) -> None:
+        super().changeEvent(event)
+        if event.type() == QEvent.Type.FontChange:
+            self._measuring = Measuring(self.font())
+            self._set_up_rows()
+            self._fit_columns()
+
     def resizeEvent(self, event: QResizeEvent) -> None:
         super().resizeEvent(event)
         self._fit_columns()
 
     def _fit_columns(self) -> None:
         """Give every column the room its texts need, and the materials what is left."""
-        self._delegate.forget_widths()
         model = self.elements_model()
-        place_of_material = LAYER_COLUMNS.index(MATERIAL)
-        others = [column for column in range(model.columnCount()) if column != place_of_material]
-        for column in others:
-            self.resizeColumnToContents(column)
-        taken = sum(self.columnWidth(column) for column in others)
-        self.setColumnWidth(place_of_material, max(LEAST_MATERIAL_WIDTH, self.viewport().width() - taken))
+        widths = self._measuring.widths(model.columns, model.lines)
+        self._delegate.set_widths(widths)
+        taken = sum(
+            width.cell for column, width in zip(model.columns, widths, strict=True) if column is not MATERIAL
+        )
+        left = max(LEAST_MATERIAL_WIDTH, self.viewport().width() - taken)
+        for place, column in enumerate(model.columns):
+            width = left if column is MATERIAL else widths[place].cell
+            if self.columnWidth(place) != width:
+                self.setColumnWidth(place, width)
+        self.viewport().update()
 
 
 def _command(event: QKeyEvent) -> Command | None:

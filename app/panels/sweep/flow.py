@@ -68,16 +68,28 @@ class FlowLayout(QLayout):
         return size
 
     def _place(self, rect: QRect, *, move: bool) -> int:
-        x, y, line = rect.left(), rect.top(), 0
+        y = rect.top()
+        for line in self._lines(rect.width()):
+            x, height = rect.left(), max(size.height() for _, size in line)
+            for item, size in line:
+                if move:
+                    item.setGeometry(QRect(x, y + (height - size.height()) // 2, size.width(), size.height()))
+                x += size.width() + self._across
+            y += height + self._down
+        return max(y - self._down - rect.top(), 0)
+
+    def _lines(self, room: int) -> list[list[tuple[QLayoutItem, QSize]]]:
+        """Return the items that are shown, line by line, each with its size."""
+        lines: list[list[tuple[QLayoutItem, QSize]]] = []
+        used = 0
         for item in self._items:
             if item.isEmpty():
                 continue
             size = item.sizeHint()
-            width = min(size.width(), max(rect.width(), item.minimumSize().width()))
-            if x > rect.left() and x + width > rect.right() + 1:
-                x, y, line = rect.left(), y + line + self._down, 0
-            if move:
-                item.setGeometry(QRect(x, y, width, size.height()))
-            x += width + self._across
-            line = max(line, size.height())
-        return y + line - rect.top()
+            size.setWidth(min(size.width(), max(room, item.minimumSize().width())))
+            if not lines or used + self._across + size.width() > room:
+                lines.append([])
+                used = -self._across
+            lines[-1].append((item, size))
+            used += self._across + size.width()
+        return lines

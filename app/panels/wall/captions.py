@@ -1,11 +1,12 @@
 """What is written around the wave: circumstances, R and T at their arrows, absorbed shares, angles, end names."""
 
 import math
-from dataclasses import dataclass
+from collections.abc import Sequence
+from dataclasses import dataclass, replace
 from typing import Final, Literal
 
 from app.panels.wall.geometry import Box
-from app.panels.wall.labels import INSET, TextMeasure, elided
+from app.panels.wall.labels import TextMeasure, elided
 from app.panels.wall.layout import MARGIN, WallLayout
 from app.panels.wall.rays import Arc, Rays
 from app.panels.wall.wave import Wave
@@ -15,6 +16,8 @@ from app.series.texts import angle_text, frequency_text
 Role = Literal["incident", "reflectance", "transmittance", "absorptance", "angle", "end"]
 
 ARC_GAP: Final = 5.0
+SHEET_CLEAR: Final = 13.0
+"""From a sheet's line to a text beside it, in px."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -24,6 +27,7 @@ class Caption:
     text: str
     box: Box
     role: Role
+    row: int | None = None
 
 
 def captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMeasure) -> tuple[Caption, ...]:
@@ -32,6 +36,7 @@ def captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMeasure) -
     if wave.powers is not None:
         placed += _arrow_captions(layout, rays, wave, measure)
         placed += share_captions(layout, wave, measure)
+        placed += _absorbed_in_all(layout, wave, measure)
     if rays.total:
         placed.append(_total_caption(layout, rays, measure))
     for arc in rays.arcs:
@@ -57,25 +62,52 @@ def circumstances(layout: WallLayout, wave: Wave, measure: TextMeasure) -> tuple
     return tuple(made)
 
 
-def circumstances_height(layout: WallLayout, wave: Wave, measure: TextMeasure) -> float:
-    """Return how much of the wall's height they take."""
-    return max(caption.box.bottom for caption in circumstances(layout, wave, measure)) - layout.body.top
-
-
 def share_captions(layout: WallLayout, wave: Wave, measure: TextMeasure) -> tuple[Caption, ...]:
-    """Return the absorbed share at the foot of each slab that has room for it."""
-    assert wave.powers is not None
-    found = []
+    """Return the absorbed share at the foot of each slab, and beside each sheet, where there is room for it."""
+    if wave.powers is None:
+        return ()
+    found: list[Caption] = []
     for slab in layout.slabs:
         share = wave.powers.absorbed[slab.row]
-        texts = (f"absorbed {share_text(share)}", share_text(share))
-        text = next((text for text in texts if measure.width(text) <= slab.box.width - INSET), "")
+        texts = (f"absorbed {small_share_text(share)}", small_share_text(share))
+        text = next((text for text in texts if measure.width(text) <= slab.box.width - 4), "")
         if text and share > 0:
-            half, bottom = measure.width(text) / 2, slab.box.bottom - 3
-            middle = slab.box.middle
-            box = Box(middle - half, bottom - measure.line, middle + half, bottom)
-            found.append(Caption(text, box, "absorptance"))
+            half = measure.width(text) / 2
+            bottom = _above_level(slab.box, share, measure)
+            box = Box(slab.box.middle - half, bottom - measure.line, slab.box.middle + half, bottom)
+            found.append(Caption(text, box, "absorptance", slab.row))
+    for sheet in layout.sheets:
+        text = small_share_text(wave.powers.absorbed[sheet.row])
+        boxes = (
+            Box(x, sheet.slot.bottom - 3 - (row + 1) * measure.line, x + measure.width(text), 0)
+            for row in (1, 2, 0)
+            for x in (sheet.x + SHEET_CLEAR, sheet.x - SHEET_CLEAR - measure.width(text))
+        )
+        standing = (replace(box, bottom=box.top + measure.line) for box in boxes)
+        free = next((box for box in standing if _is_free(box, layout, found)), None)
+        if free is not None and wave.powers.absorbed[sheet.row] > 0:
+            found.append(Caption(text, free, "absorptance", sheet.row))
     return tuple(found)
+
+
+def small_share_text(share: float) -> str:
+    """Return an absorbed share for the drawing, where less than a hundredth of a per cent is only told as such."""
+    return share_text(share) if share >= 1e-4 or share == 0 else "< 0.01 %"
+
+
+def _above_level(box: Box, share: float, measure: TextMeasure) -> float:
+    """Return the lower edge of a text that keeps clear of the line at the top of a level."""
+    level = share * box.height
+    return box.bottom - 3 if level > measure.line + 6 else box.bottom - 3 - level
+
+
+def _is_free(box: Box, layout: WallLayout, taken: Sequence[Caption]) -> bool:
+    """Return whether a text beside a sheet keeps to the wall and off other sheets, labels and texts."""
+    if box.left < layout.body.left or box.right > layout.body.right:
+        return False
+    if any(box.left - 4 < sheet.x < box.right + 4 for sheet in layout.sheets):
+        return False
+    return not any(box.overlaps(other) for other in (*(one.box for one in taken), *(one.box for one in layout.labels)))
 
 
 def end_names(layout: WallLayout, measure: TextMeasure) -> tuple[Caption, ...]:
@@ -113,6 +145,15 @@ def _arrow_captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMea
 def _below(left: float, bottom: float, text: str, layout: WallLayout, measure: TextMeasure) -> Box:
     top = min(bottom + 2, layout.body.bottom - measure.line)
     return Box(left, top, left + measure.width(text), top + measure.line)
+
+
+def _absorbed_in_all(layout: WallLayout, wave: Wave, measure: TextMeasure) -> list[Caption]:
+    """Return A of the whole wall at the upper right, opposite the circumstances."""
+    assert wave.powers is not None
+    text = f"A {small_share_text(math.fsum(wave.powers.absorbed))}"
+    right, top = layout.width - MARGIN, layout.body.top
+    box = Box(right - measure.width(text), top, right, top + measure.line)
+    return [Caption(text, box, "absorptance")] if layout.wall.elements and box.left > layout.body.right + 4 else []
 
 
 def _total_caption(layout: WallLayout, rays: Rays, measure: TextMeasure) -> Caption:

@@ -13,6 +13,8 @@ from app.panels.wall.scale import ThicknessScale, fit_scale, still_fits
 MARGIN: Final = 8.0
 SHEET_SLOT: Final = 16.0
 """Width given to a sheet, which has no thickness, so that it can be seen and caught."""
+WIDEST: Final = 1.15
+"""Greatest width of a slab as a part of the drawing's height: rays at their angles need the height."""
 FACE_REACH: Final = 5.0
 """How near to a face it is caught, in px."""
 NUMBER_STEPS: Final = (1, 2, 5, 10, 20, 50, 100)
@@ -158,7 +160,7 @@ def lay_out(
 
 def _scale(wall: Wall, room: float, height: float, last: ThicknessScale | None) -> ThicknessScale:
     thicknesses = [part.thickness for part in wall.elements if isinstance(part, LayerPart)]
-    widest = max(1.25 * height, 60.0)
+    widest = max(WIDEST * height, 60.0)
     if last is not None and still_fits(last, thicknesses, room, widest):
         return last
     return fit_scale(thicknesses, room, widest)

@@ -83,6 +83,7 @@ def paint_layout(
     _paint_half_space(painter, layout.back, layout.wall.back, theme, to_left=False)
     for slab in layout.slabs:
         _paint_slab(painter, slab, theme)
+    _paint_label_grounds(painter, layout, theme)
     measure = FontMeasure(QFontMetricsF(painter.font(), painter.device()))
     rays = None if wave is None else rays_in(layout, wave, measure)
     painter.setOpacity(wave_painting.STALE_OPACITY if wave is not None and wave.stale else 1.0)
@@ -98,7 +99,7 @@ def paint_layout(
     painter.setOpacity(wave_painting.STALE_OPACITY if wave is not None and wave.stale else 1.0)
     if wave is not None and rays is not None:
         wave_painting.paint_outside(painter, rays, wave, theme)
-        wave_painting.paint_captions(painter, captions.captions(layout, rays, wave, measure), theme)
+        wave_painting.paint_captions(painter, captions.captions(layout, rays, wave, measure), layout, theme)
     painter.setOpacity(1.0)
     if touch.face is not None:
         _paint_handle(painter, layout, touch.face, touch.tag, theme)
@@ -107,7 +108,8 @@ def paint_layout(
 def rays_in(layout: WallLayout, wave: Wave, measure: TextMeasure) -> Rays:
     """Return the rays, clear of what is written above and below them."""
     foot = measure.line + 4
-    head = captions.circumstances_height(layout, wave, measure)
+    written = [caption.box for caption in captions.circumstances(layout, wave, measure)]
+    head = Box(0, 0, max(box.right for box in written), max(box.bottom for box in written))
     return trace(layout, wave.courses, wave.powers, foot, head)
 
 
@@ -179,6 +181,16 @@ def _paint_selection(painter: QPainter, layout: WallLayout, theme: Theme, touch:
         painter.drawRoundedRect(edge, RADIUS, RADIUS)
 
 
+def _paint_label_grounds(painter: QPainter, layout: WallLayout, theme: Theme) -> None:
+    """Take the hatch away where a label will stand; what the wave does is drawn over that."""
+    painter.setPen(Qt.PenStyle.NoPen)
+    tints = {slab.row: kind_style(theme, slab.part.kind).tint for slab in layout.slabs}
+    for label in layout.labels:
+        if label.leader is None:
+            painter.setBrush(colour(tints[label.row], 0.9))
+            painter.drawRoundedRect(rectangle(label.box.grown(2.5)), 3, 3)
+
+
 def _paint_labels(painter: QPainter, layout: WallLayout, theme: Theme, touch: Touch) -> None:
     for label in layout.labels:
         part = layout.wall.elements[label.row]
@@ -187,11 +199,6 @@ def _paint_labels(painter: QPainter, layout: WallLayout, theme: Theme, touch: To
             x, top, bottom = label.leader
             painter.setPen(QPen(QColor(theme.accent if selected else theme.edge), 1.0))
             painter.drawLine(QPointF(x, top + 2), QPointF(x, bottom))
-        else:
-            style = kind_style(theme, getattr(part, "kind", ""))
-            painter.setPen(Qt.PenStyle.NoPen)
-            painter.setBrush(colour(style.tint, 0.88))
-            painter.drawRoundedRect(rectangle(label.box.grown(2.5)), 3, 3)
         _paint_runs(painter, label, theme, faulty=part.faulty, selected=selected)
 
 

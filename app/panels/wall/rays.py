@@ -19,8 +19,13 @@ from app.panels.wall.refraction import Direction, Directions
 
 Role = Literal["incident", "reflectance", "transmittance"]
 
-LONGEST: Final = 150.0
-"""Length of an arrow outside the wall, in px, where there is room."""
+FULL: Final = 30.0
+"""Height of the incident band in px where there is room."""
+SHORTEST: Final = 150.0
+"""Length of an arrow outside the wall, in px, where there is room; in a wide drawing it is longer."""
+ROOM_IN_FRONT: Final = 0.27
+ROOM_BEHIND: Final = 0.17
+"""Parts of the wall's height kept for the arrows to rise to the front and to fall from the back."""
 FAINTEST: Final = 1.5
 """Bands less tall than this, in px, are drawn this tall and dashed: they show the way and not the power."""
 HEAD: Final = 5.0
@@ -94,6 +99,10 @@ class Rays:
         Whether the wave is totally reflected at the back half-space.
     full
         Height in px that stands for all the incident power.
+    zone
+        Where the wave stays within the wall.
+    wraps
+        Whether it leaves the zone below and enters again above.
     """
 
     incident: Band
@@ -107,9 +116,11 @@ class Rays:
     arcs: tuple[Arc, ...]
     total: bool
     full: float
+    zone: Box
+    wraps: bool
 
 
-def trace(layout: WallLayout, courses: Directions, powers: Powers | None, foot: float, head: float) -> Rays:
+def trace(layout: WallLayout, courses: Directions, powers: Powers | None, foot: float, head: Box) -> Rays:
     """Return the rays in a laid-out wall.
 
     Parameters
@@ -118,14 +129,16 @@ def trace(layout: WallLayout, courses: Directions, powers: Powers | None, foot: 
         Where the wave goes in each medium.
     powers
         How much of it; None draws the ways without widths.
-    foot, head
-        Heights in px kept free at the lower and upper end of the wall, for what is written there.
+    foot
+        Height in px kept free at the lower end of the wall, for what is written there.
+    head
+        What is covered by text at the upper left.
     """
-    full = min(28.0, layout.body.height / 7)
+    full = min(FULL, layout.body.height / 7)
     zone = Box(layout.body.left, layout.body.top + 2, layout.body.right, layout.body.bottom - 2)
     steps = _steps(layout, courses, powers)
     fall = sum(step.fall for step in steps)
-    entry, way_out = _entry_and_exit(zone, fall, full, foot, head)
+    entry, way_out = _entry_and_exit(zone, fall, full, foot, courses.front.angle)
     return _Tracer(layout, courses, powers, full, zone, foot, head).rays(steps, entry, way_out)
 
 
@@ -165,26 +178,27 @@ def _steps(layout: WallLayout, courses: Directions, powers: Powers | None) -> li
     return steps
 
 
-def _entry_and_exit(zone: Box, fall: float, full: float, foot: float, head: float) -> tuple[float, float]:
+def _entry_and_exit(zone: Box, fall: float, full: float, foot: float, angle: float) -> tuple[float, float]:
     """Return where the wave meets the front and where it leaves the back.
 
-    When the whole way fits it stands in the middle; else it wraps, and the entry is chosen so that the way out
-    comes to lie well inside the drawing.
+    When the whole way fits it stands in the middle, as far as the arrows outside leave it there; else it wraps, and
+    the entry is chosen so that the way out comes to lie well inside the drawing.
     """
-    top, bottom = zone.top + head + full / 2, zone.bottom - foot - full / 2
-    middle = (top + bottom) / 2
-    if abs(fall) <= bottom - top:
-        return middle - fall / 2, middle + fall / 2
-    period = zone.height
-    best: tuple[float, float, float] | None = None
-    for share in range(25, 66, 2):
-        entry = zone.top + zone.height * share / 100
-        way_out = zone.top + (entry + fall - zone.top) % period
-        miss = abs(way_out - middle) + 0.5 * abs(entry - middle)
-        if best is None or miss < best[0]:
-            best = (miss, entry, way_out)
-    assert best is not None
-    return best[1], best[2]
+    top, bottom = zone.top + full / 2, zone.bottom - foot - full / 2
+    middle, height = (top + bottom) / 2, bottom - top
+    steepness = min(1.0, 2 * math.sin(angle))
+    highest, lowest = top + ROOM_IN_FRONT * height * steepness, bottom - ROOM_BEHIND * height * steepness
+    if abs(fall) <= lowest - highest:
+        entry = max(highest, highest - fall, min(middle - fall / 2, lowest, lowest - fall))
+        return entry, entry + fall
+    candidates = [zone.top + zone.height * share / 100 for share in range(30, 61, 2)]
+    ways_out = [zone.top + (entry + fall - zone.top) % zone.height for entry in candidates]
+    misses = [
+        abs(way_out - middle) + 0.5 * abs(entry - middle)
+        for entry, way_out in zip(candidates, ways_out, strict=True)
+    ]
+    best = misses.index(min(misses))
+    return candidates[best], ways_out[best]
 
 
 @dataclass(frozen=True, slots=True)
@@ -195,7 +209,7 @@ class _Tracer:
     full: float
     zone: Box
     foot: float
-    head: float
+    head: Box
 
     def rays(self, steps: Sequence[_Step], entry: float, way_out: float) -> Rays:
         body, theta = self.layout.body, self.courses.front.angle
@@ -210,7 +224,7 @@ class _Tracer:
             tails["reflectance"] = _along((body.left, reflection), theta, -1, length)
         back = self.courses.back
         transmitted = None
-        arcs = [Arc(body.left, entry, theta, 46.0, behind=False)]
+        arcs = [self._arc(body.left, entry, theta, behind=False)]
         if back is not None and not back.decays:
             share = None if self.powers is None else self.powers.transmittance
             length = self._length(way_out, back.angle, self.layout.width - body.right)
@@ -218,7 +232,7 @@ class _Tracer:
             transmitted = self._arrow("transmittance", start, back.angle, 1, length, share)
             tails["transmittance"] = _along(start, back.angle, 1, length)
             if abs(back.angle - theta) > 1e-6:
-                arcs.append(Arc(*start, back.angle, 46.0, behind=True))
+                arcs.append(self._arc(*start, back.angle, behind=True))
         return Rays(
             incident,
             reflected,
@@ -231,24 +245,42 @@ class _Tracer:
             tuple(arc for arc in arcs if abs(arc.angle) > _GENTLEST),
             back is not None and back.decays,
             self.full,
+            self.zone,
+            abs(sum(step.fall for step in steps)) > abs(way_out - entry) + 1,
         )
+
+    def _arc(self, x: float, y: float, angle: float, *, behind: bool) -> Arc:
+        """Return an angle's arc, far enough out for its figure to stand clear of the band."""
+        room = (self.layout.width - x if behind else x) - 5 * MARGIN
+        clear = (self.full / 2 + self.layout.line) / max(math.sin(abs(angle) / 2), 1e-3)
+        return Arc(x, y, angle, min(max(clear - 20, 36.0), 110.0, max(room, 20.0)), behind)
+
+    def _longest(self, room: float) -> float:
+        return max(SHORTEST, 0.6 * room)
 
     def _length(self, y: float, angle: float, room: float) -> float:
         """Return how long an arrow from a face at height `y` may be, with `room` px to the edge of the drawing."""
         across = max(room - 2 * MARGIN, 12.0) / max(math.cos(angle), 1e-9)
         limit = self.zone.bottom - self.layout.line - 6 - y if angle >= 0 else y - self.zone.top
         down = max(limit, 16.0) / max(abs(math.sin(angle)), 1e-9)
-        return min(LONGEST, across, down)
+        return min(self._longest(room), across, down)
 
     def _incident(self, entry: float) -> tuple[Band, Point]:
         theta = self.courses.front.angle
         x = self.layout.body.left
+        half = self.full / 2
         across = max(x - 2 * MARGIN, 12.0) / max(math.cos(theta), 1e-9)
-        up = max(entry - self.zone.top - self.head, 16.0) / max(math.sin(theta), 1e-9)
-        length = min(LONGEST, across, up)
+        length = min(self._longest(x), across, self._rise(entry - half - self.zone.top, theta))
+        if x - length * math.cos(theta) - half < self.head.right:
+            length = min(length, self._rise(entry - half - self.head.bottom, theta))
         tail = (x - length * math.cos(theta), entry - length * math.sin(theta))
         outline = _swallow_tail(tail, (x, entry), theta, self.full)
         return Band("incident", outline, 1.0), tail
+
+    @staticmethod
+    def _rise(height: float, angle: float) -> float:
+        """Return how long a ray may be that has `height` px to rise."""
+        return max(height, 16.0) / max(math.sin(angle), 1e-9)
 
     def _reflection(self, entry: float, tail: Point) -> float:
         """Return where the reflected band leaves: lower than the entry as far as the two would cover each other."""

@@ -5,10 +5,11 @@ from dataclasses import replace
 from typing import Final
 
 from PySide6.QtCore import QPointF, QRectF, Qt
-from PySide6.QtGui import QColor, QPainter, QPen, QPolygonF
+from PySide6.QtGui import QColor, QLinearGradient, QPainter, QPen, QPolygonF
 
-from app.look.theme import Theme, curve_colour, label_colour
+from app.look.theme import Theme, curve_colour, kind_style, label_colour
 from app.panels.wall.captions import Caption
+from app.panels.wall.geometry import Box
 from app.panels.wall.layout import WallLayout
 from app.panels.wall.pens import colour, rectangle
 from app.panels.wall.rays import Arc, Band, Rays
@@ -20,26 +21,31 @@ BAND_ALPHA: Final = 0.82
 WITHIN_ALPHA: Final = 0.62
 FAINT_ALPHA: Final = 0.6
 DECAY_ALPHA: Final = 0.25
+INCIDENT_ALPHA: Final = 0.45
+FADE: Final = 22.0
+"""Height in px over which a band that wraps fades."""
 
 
 def paint_levels(painter: QPainter, layout: WallLayout, wave: Wave, theme: Theme) -> None:
-    """Draw the absorbed share of each slab as a level: a slab filled to the top would absorb everything."""
+    """Draw the absorbed share of each element as a level: one filled to the top would absorb everything."""
     if wave.powers is None:
         return
-    for slab in layout.slabs:
-        tall = wave.powers.absorbed[slab.row] * slab.box.height
+    boxes = {slab.row: slab.box for slab in layout.slabs}
+    boxes |= {sheet.row: Box(sheet.x - 5, sheet.slot.top, sheet.x + 5, sheet.slot.bottom) for sheet in layout.sheets}
+    for row, box in boxes.items():
+        tall = wave.powers.absorbed[row] * box.height
         if tall < 0.5:
             continue
-        level = replace(slab.box, top=slab.box.bottom - tall)
+        level = replace(box, top=box.bottom - tall)
         painter.fillRect(rectangle(level), colour(theme.absorption, LEVEL_ALPHA))
-        painter.setPen(QPen(QColor(theme.absorption), 1.6))
+        painter.setPen(QPen(QColor(theme.absorption), 1.6, Qt.PenStyle.SolidLine, Qt.PenCapStyle.FlatCap))
         painter.drawLine(QPointF(level.left, level.top), QPointF(level.right, level.top))
 
 
 def paint_within(painter: QPainter, rays: Rays, theme: Theme) -> None:
     """Draw the wave on its way through the wall."""
     for band in rays.within:
-        _paint_band(painter, band, theme, WITHIN_ALPHA)
+        _paint_band(painter, band, theme, WITHIN_ALPHA, rays.zone if rays.wraps else None)
 
 
 def paint_outside(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> None:
@@ -51,29 +57,45 @@ def paint_outside(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> No
     _paint_field(painter, rays, wave, theme)
 
 
-def paint_captions(painter: QPainter, written: tuple[Caption, ...], theme: Theme) -> None:
-    """Write what belongs to the wave."""
+def paint_captions(
+    painter: QPainter, written: tuple[Caption, ...], layout: WallLayout, theme: Theme
+) -> None:
+    """Write what belongs to the wave, upon a quiet ground where it stands in a slab."""
+    grounds = {slab.row: kind_style(theme, slab.part.kind).tint for slab in layout.slabs}
     for caption in written:
+        if caption.row is not None:
+            painter.setPen(Qt.PenStyle.NoPen)
+            painter.setBrush(colour(grounds.get(caption.row, theme.base), 0.8))
+            painter.drawRoundedRect(rectangle(caption.box.grown(1.5)), 3, 3)
         painter.setPen(QColor(_ink(caption, theme)))
         painter.drawText(rectangle(caption.box).adjusted(0, 0, 4, 0), Qt.AlignmentFlag.AlignVCenter, caption.text)
 
 
 def _ink(caption: Caption, theme: Theme) -> str:
-    if caption.role in ("reflectance", "transmittance"):
+    if caption.row is None and caption.role in ("reflectance", "transmittance", "absorptance"):
         return label_colour(theme, curve_colour(theme, caption.role, 0, 1))
     return theme.muted if caption.role == "angle" else theme.text
 
 
-def _paint_band(painter: QPainter, band: Band, theme: Theme, alpha: float) -> None:
+def _paint_band(
+    painter: QPainter, band: Band, theme: Theme, alpha: float, fading: Box | None = None
+) -> None:
+    """Fill a band; one that wraps fades where it leaves the zone and comes back."""
     code = theme.muted if band.role == "incident" else curve_colour(theme, band.role, 0, 1)
     if band.role == "incident":
-        alpha = 0.45
+        alpha = INCIDENT_ALPHA
     if band.faint:
         alpha = FAINT_ALPHA
     if band.decays:
         alpha = DECAY_ALPHA
     painter.setPen(Qt.PenStyle.NoPen)
     painter.setBrush(colour(code, alpha))
+    if fading is not None:
+        gradient = QLinearGradient(0, fading.top, 0, fading.bottom)
+        edge = FADE / fading.height
+        for place, share in ((0.0, 0.0), (edge, 1.0), (1 - edge, 1.0), (1.0, 0.0)):
+            gradient.setColorAt(place, colour(code, alpha * share))
+        painter.setBrush(gradient)
     painter.drawPolygon(QPolygonF([QPointF(x, y) for x, y in band.outline]))
 
 

@@ -28,7 +28,7 @@ def share_text(share: float) -> str:
     """
     if share >= 0.9995:
         return f"{100 * share:.4g} %" if share < 0.99995 else "100 %"
-    if share >= 1e-3:
+    if share >= 1e-2:
         return f"{100 * share:.3g} %"
     if share >= 1e-4:
         return f"{100 * share:.2g} %"

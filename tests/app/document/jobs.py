@@ -4,7 +4,8 @@ from app.document.session import Session
 from stackcore.job import Job, job_from_json
 
 HARBOUR = """{"format": "slabwright-job", "version": 1, "title": "Harbour radar cover",
-"materials": {"skin": {"label": "Glass-fibre skin", "model": "constant", "permittivity": 4.2, "loss_tangent": 0.015},
+"materials": {"skin": {"label": "Glass-fibre skin", "model": "constant",
+                       "permittivity": 4.2, "loss_tangent": 0.015},
               "core": {"model": "constant", "permittivity": 1.1},
               "steel": {"model": "conductor", "conductivity": "6 MS/m", "permeability": 200}},
 "stacks": [{"name": "A", "front": "air", "back": "air", "elements": [

@@ -5,7 +5,8 @@ from dataclasses import replace
 import pytest
 
 from app.document import edits
-from app.document.document import Cell, Selection, material_cell
+from app.document.cells import value_text
+from app.document.document import Cell, Selection, job_cell, material_cell
 from app.document.session import Session
 from stackcore.job.records import AngleGrid, FrequencyGrid, LayerRecord, MaterialRecord, SheetRecord
 from stackcore.units import Dimension, parse_measure
@@ -237,7 +238,7 @@ def test_sweeps() -> None:
     )
     session.apply(edits.set_angles(["0", "30"]))
     assert session.undo_sentence == "set angles to 0, 30"
-    assert [angle.text for angle in session.record.sweep.angle] == ["0 deg", "30 deg"]  # type: ignore[union-attr]
+    assert value_text(session.record, job_cell("sweep.angle")) == "0 deg; 30 deg"
     session.apply(edits.set_angle_grid("0 deg", "60 deg", 7))
     assert isinstance(session.record.sweep.angle, AngleGrid)
     session.apply(edits.set_frequency_list([9.41e9, "9.5"]))

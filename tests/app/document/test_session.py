@@ -5,6 +5,7 @@ from pathlib import Path
 import pytest
 
 from app.document import edits
+from app.document.cells import value_text
 from app.document.document import Cell, Selection, job_cell
 from app.document.session import Change, Session
 from stackcore.errors import JobError
@@ -170,6 +171,7 @@ def test_a_new_edit_gives_up_what_was_undone() -> None:
 
 
 def drag(session: Session, *thicknesses: float) -> None:
+    """Drag the front face of the first layer through `thicknesses`, in m."""
     for thickness in thicknesses:
         session.apply(edits.set_thickness(0, 0, thickness, merge_key="drag"))
 
@@ -186,7 +188,7 @@ def test_a_drag_is_one_step_however_long_it_rests() -> None:
     session.end_merge()
     drag(session, 4e-3)
     session.undo()
-    assert session.record.stacks[0].elements[0].thickness.text == "3 mm"  # type: ignore[union-attr]
+    assert value_text(session.record, Cell(0, 0, "thickness")) == "3 mm"
     session.undo()
     assert session.job is job
 

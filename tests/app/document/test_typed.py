@@ -14,16 +14,19 @@ THICKNESS = Cell(0, 0, "thickness")
 
 
 def type_into(session: Session, cell: Cell, text: str) -> None:
+    """Type and see that the edit is not refused."""
     assert session.apply(edits.type_into(cell, text)) == ()
 
 
 def thickness(session: Session, row: int, stack: int = 0) -> float:
+    """Return the thickness of a layer in m."""
     element = session.record.stacks[stack].elements[row]
     assert isinstance(element, LayerRecord)
     return element.thickness.value
 
 
 def fault_at(session: Session, cell: Cell) -> str:
+    """Return what is wrong with the draft at `cell`."""
     draft = session.document.draft(cell)
     assert draft is not None
     return str(draft.fault)

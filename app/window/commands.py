@@ -1,0 +1,55 @@
+"""Everything the table of actions refers to, gathered."""
+
+from collections.abc import Callable
+from dataclasses import dataclass
+
+from app.document.session import Session
+from app.panels.elements.panel import ElementsPanel
+from app.window.editing import ElementQuestions, StackCommands
+from app.window.exporting import Exporter
+from app.window.files import Files
+from app.window.marking import MarkerCommands
+from app.window.recent import RecentFiles
+from app.window.samples import Sample
+
+Do = Callable[[], None]
+
+
+@dataclass(frozen=True, slots=True)
+class ViewCommands:
+    """What the menu View needs from the window."""
+
+    theme: Callable[[], str]
+    set_theme: Callable[[str], None]
+    materials_shown: Callable[[], bool]
+    toggle_materials: Do
+    reset_layout: Do
+    next_panel: Do
+    previous_panel: Do
+
+
+@dataclass(frozen=True, slots=True)
+class HelpCommands:
+    """What the menu Help needs from the window."""
+
+    show_page: Callable[[str], None]
+    copy_diagnostics: Do
+
+
+@dataclass(frozen=True, slots=True)
+class Commands:
+    """Everything the table refers to."""
+
+    session: Session
+    files: Files
+    exporter: Exporter
+    recent: RecentFiles
+    samples: tuple[Sample, ...]
+    elements: ElementsPanel
+    selected: ElementQuestions
+    stacks: StackCommands
+    rename_stack: Do
+    markers: MarkerCommands
+    view: ViewCommands
+    help: HelpCommands
+    quit: Do

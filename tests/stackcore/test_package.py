@@ -1,0 +1,42 @@
+"""The package as others import it: names, weight, and no toolkit."""
+
+import subprocess
+import sys
+
+import pytest
+
+import stackcore
+
+
+def test_public_names_are_sorted_and_exist() -> None:
+    """`__all__` holds every public name of the package once, sorted as the linter sorts."""
+    assert len(set(stackcore.__all__)) == len(stackcore.__all__)
+    for name in stackcore.__all__:
+        assert hasattr(stackcore, name)
+
+
+def _modules_after(statement: str) -> set[str]:
+    script = f"import sys\n{statement}\nprint(' '.join(sys.modules))"
+    done = subprocess.run([sys.executable, "-c", script], capture_output=True, text=True, check=True)
+    return set(done.stdout.split())
+
+
+@pytest.mark.parametrize("statement", ["import stackcore", "import stackcore.cli"])
+def test_the_core_loads_no_toolkit_and_no_heavy_science(statement: str) -> None:
+    """Importing the core pulls in neither Qt nor the slow parts of scipy."""
+    loaded = _modules_after(statement)
+
+    assert not {"PySide6", "pyqtgraph", "scipy.optimize", "scipy.interpolate"} & loaded
+
+
+def test_the_package_loads_quickly() -> None:
+    """`import stackcore` adds less than 0.2 s to numpy's own import, the best of five."""
+    script = (
+        "import numpy, time\nbegin = time.perf_counter()\nimport stackcore\nprint(time.perf_counter() - begin)"
+    )
+    times = [
+        float(subprocess.run([sys.executable, "-c", script], capture_output=True, text=True, check=True).stdout)
+        for _ in range(5)
+    ]
+
+    assert min(times) < 0.2
