@@ -16,8 +16,10 @@ _NUMBER: Final = r"(?:\d+(?:[.,]\d*)?|[.,]\d+)(?:[eE][+-]?\d+)?"
 _COMPLEX: Final = re.compile(
     rf"(?P<real>[+-]?\s*{_NUMBER})\s*(?P<sign>[+-])\s*(?:[ij]\s*\*?\s*(?P<after>{_NUMBER})|(?P<before>{_NUMBER})\s*\*?\s*[ij])"
 )
+_SUM: Final = re.compile(r"[\d.,]\s*[+-]\s*[\d.,]")
 _PAIR: Final = re.compile(r"\[(?P<inner>[^\[\]]*)\]")
 _SPACED: Final = re.compile(rf"({_NUMBER}\s+)+{_NUMBER}(\s*[^\s\d.,]+)?")
+_ENTRY: Final = re.compile(rf"{_NUMBER}(?:\s*[^\s\d.,]+)?")
 _UNIT_AT_END: Final = re.compile(r"[\d.,)]\s*(?P<unit>[^\s\d.,()+*-][^\d.,()+*-]*)$")
 _COMMA_IN_NUMBER: Final = re.compile(r"\d,\d")
 
@@ -51,6 +53,9 @@ def read_relative(text: str) -> complex:
         size = _number(match["after"] or match["before"])
         real = _number(match["real"].replace(" ", ""))
         return _lossy(real, size if match["sign"] == "-" else -size)
+    if _SUM.search(plain):
+        # The units would read 4.2 - 0.06 as 4.14; whoever types that has most likely left out the j.
+        raise UnitError(f"{text!r} may be a sum, or a loss without its j", _ALLOWED_RELATIVE)
     try:
         return complex(_number(plain))
     except UnitError as error:
@@ -155,7 +160,7 @@ def _divide(text: str) -> list[str]:
         raise UnitError(f"{text!r} may mean {with_dot} or {divided}", f"write {with_dot} or {divided}")
     if "," in text:
         return re.split(r",(?=\s|$)", text)
-    return text.split(maxsplit=text.count(" ")) if _SPACED.fullmatch(text) else [text]
+    return _ENTRY.findall(text) if _SPACED.fullmatch(text) else [text]
 
 
 def _number(text: str) -> float:

@@ -140,32 +140,36 @@ class Exporter(QObject):
 
 
 class ProgressLine(QWidget):
-    """A bar with Cancel in the status line, while an export takes longer than `PATIENCE`."""
+    """A bar with Cancel in the status line, while an export takes longer than `patience` ms."""
 
-    def __init__(self, exporter: Exporter, parent: QWidget | None = None) -> None:
+    def __init__(self, exporter: Exporter, parent: QWidget | None = None, *, patience: int = PATIENCE) -> None:
         super().__init__(parent)
         self._bar = QProgressBar(self)
         self._bar.setRange(0, 1000)
         self._bar.setFixedWidth(160)
         self._bar.setTextVisible(True)
         self._bar.setAccessibleName("Progress of the CSV export")
-        cancel = QPushButton("Cancel", self)
-        cancel.setToolTip("Give up the export; no file is left.")
-        cancel.clicked.connect(exporter.cancel)
+        self.cancel = QPushButton("Cancel", self)
+        self.cancel.setToolTip("Give up the export; no file is left.")
+        self.cancel.clicked.connect(exporter.cancel)
         row = QHBoxLayout(self)
         row.setContentsMargins(0, 0, 8, 0)
         row.setSpacing(8)
         row.addWidget(QLabel("Exporting CSV", self))
         row.addWidget(self._bar)
-        row.addWidget(cancel)
+        row.addWidget(self.cancel)
         self._wait = QTimer(self)
         self._wait.setObjectName("progress")
         self._wait.setSingleShot(True)
-        self._wait.setInterval(PATIENCE)
+        self._wait.setInterval(patience)
         self._wait.timeout.connect(self.show)
         exporter.progressed.connect(self._show_share, Qt.ConnectionType.QueuedConnection)
         exporter.running.connect(self._run)
         self.hide()
+
+    def share(self) -> float:
+        """Return the share done that is shown, 0 to 1."""
+        return self._bar.value() / self._bar.maximum()
 
     @Slot(float)
     def _show_share(self, share: float) -> None:

@@ -238,7 +238,7 @@ class MainWindow(QMainWindow):
         self.setDockNestingEnabled(True)
         self._actions.fill(self.menuBar())
         self.setStatusBar(self._status)
-        self._status.insertPermanentWidget(0, ProgressLine(self._exporter, self))
+        self._status.add_progress(ProgressLine(self._exporter, self))
         self._arrangement.restore()
         self._view.replace(first_view(self._session.job))
         self._show_title()

@@ -4,26 +4,27 @@ from collections.abc import Iterable
 from typing import Final
 
 from PySide6.QtCore import QSize, Qt
-from PySide6.QtGui import QColor, QPalette, QResizeEvent
-from PySide6.QtWidgets import QLabel, QSizePolicy, QStatusBar, QToolButton, QWidget
+from PySide6.QtGui import QColor, QPainter, QPaintEvent, QPalette, QPen
+from PySide6.QtWidgets import QAbstractButton, QLabel, QSizePolicy, QStatusBar, QWidget
 
 from app.look.theme import Theme
 from app.window.cautions import STANDING, Caution
 
 NOTE_TIME: Final = 6000
 """Milliseconds a passing note stays."""
+PAD: Final = 8
 
 
-class CautionLine(QToolButton):
+class CautionLine(QAbstractButton):
     """The notes for what is shown, cut where there is no room; a click opens them in full."""
 
     def __init__(self, parent: QWidget | None = None) -> None:
         super().__init__(parent)
         self._words = STANDING
-        self.setAutoRaise(True)
         self.setAccessibleName("Cautions")
         self.setFocusPolicy(Qt.FocusPolicy.TabFocus)
-        self.setToolButtonStyle(Qt.ToolButtonStyle.ToolButtonTextOnly)
+        self.setCursor(Qt.CursorShape.PointingHandCursor)
+        self.setAttribute(Qt.WidgetAttribute.WA_Hover)
         self.setSizePolicy(QSizePolicy.Policy.Ignored, QSizePolicy.Policy.Preferred)
 
     def say(self, notes: Iterable[Caution]) -> None:
@@ -31,7 +32,7 @@ class CautionLine(QToolButton):
         self._words = " ".join([*(note.brief for note in notes), STANDING])
         self.setToolTip(f"{self._words}\nClick for all cautions and limits.")
         self.setAccessibleDescription(self._words)
-        self._cut()
+        self.update()
 
     @property
     def words(self) -> str:
@@ -40,18 +41,23 @@ class CautionLine(QToolButton):
 
     def sizeHint(self) -> QSize:
         """Ask for as much room as the words need."""
-        hint = super().sizeHint()
-        return QSize(self.fontMetrics().horizontalAdvance(self._words) + 16, hint.height())
+        metrics = self.fontMetrics()
+        return QSize(metrics.horizontalAdvance(self._words) + 2 * PAD, metrics.height() + PAD)
 
-    def resizeEvent(self, event: QResizeEvent) -> None:
-        """Cut anew for the new width."""
-        super().resizeEvent(event)
-        self._cut()
-
-    def _cut(self) -> None:
-        room = max(self.width() - 16, 0)
-        text = self.fontMetrics().elidedText(self._words, Qt.TextElideMode.ElideRight, room)
-        self.setText(text.replace("&", "&&"))
+    def paintEvent(self, event: QPaintEvent) -> None:
+        """Draw the words from the left, underlined under the mouse, with a frame when focused."""
+        painter = QPainter(self)
+        room = self.rect().adjusted(PAD, 0, -PAD, 0)
+        font = self.font()
+        font.setUnderline(self.underMouse())
+        painter.setFont(font)
+        painter.setPen(self.palette().color(QPalette.ColorRole.WindowText))
+        text = painter.fontMetrics().elidedText(self._words, Qt.TextElideMode.ElideRight, room.width())
+        painter.drawText(room, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, text)
+        if self.hasFocus():
+            painter.setPen(QPen(self.palette().color(QPalette.ColorRole.Highlight), 2))
+            painter.drawRoundedRect(self.rect().adjusted(1, 1, -1, -1), 4, 4)
+        painter.end()
 
 
 class StatusLine(QStatusBar):
@@ -73,10 +79,13 @@ class StatusLine(QStatusBar):
     def set_theme(self, theme: Theme) -> None:
         """Take the colours of `theme`."""
         palette = QPalette(self.palette())
-        for role in (QPalette.ColorRole.WindowText, QPalette.ColorRole.ButtonText):
-            palette.setColor(role, QColor(theme.muted))
+        palette.setColor(QPalette.ColorRole.WindowText, QColor(theme.muted))
         for widget in (self, self.cautions, self._told):
             widget.setPalette(palette)
+
+    def add_progress(self, widget: QWidget) -> None:
+        """Put `widget` between the cautions and the state of the calculation."""
+        self.insertPermanentWidget(1, widget)
 
     @property
     def told(self) -> str:

@@ -5,12 +5,12 @@ A record made by an edit is checked as one read from a file is. What needs media
 
 import cmath
 import math
-from collections.abc import Collection, Iterator
+from collections.abc import Collection, Iterator, Mapping
 from typing import Final
 
-from stackcore.errors import Fault, nearest
+from stackcore.errors import Fault
 from stackcore.job import limits
-from stackcore.job.inspector import join, one_of, shown
+from stackcore.job.inspector import has_lone_surrogate, join, near, one_of, shown
 from stackcore.job.limits import Limits
 from stackcore.job.records import (
     AngleGrid,
@@ -37,16 +37,24 @@ _RIGHT_ANGLE: Final = math.pi / 2
 
 def faults_of(record: JobRecord) -> Iterator[Fault]:
     """Yield every fault that shows in the record alone, in the order of the file."""
+    yield from _text_faults({"title": record.title, "notes": record.notes})
     for material in record.materials:
         yield from material_faults(material, join("materials", material.name))
     yield from _doubled((material.name for material in record.materials), "materials", "")
-    known = (*ALWAYS_DEFINED, *(material.name for material in record.materials))
+    known = dict.fromkeys((*(material.name for material in record.materials), *ALWAYS_DEFINED))
     if not record.stacks:
         yield Fault("stacks", "there is no stack", "at least one stack")
     for place, stack in enumerate(record.stacks):
         yield from _stack_faults(stack, join("stacks", place), known)
     yield from _doubled((stack.name for stack in record.stacks), "stacks", ".name")
     yield from sweep_faults(record.sweep)
+
+
+def _text_faults(texts: Mapping[str, str]) -> Iterator[Fault]:
+    """Yield a fault for each text, given by its path, that cannot be written as UTF-8."""
+    for path, text in texts.items():
+        if has_lone_surrogate(text):
+            yield Fault(path, f"{shown(text)} holds half a character (a lone surrogate)", "whole characters")
 
 
 def _doubled(names: Iterator[str], path: str, member: str) -> Iterator[Fault]:
@@ -66,6 +74,8 @@ def _doubled(names: Iterator[str], path: str, member: str) -> Iterator[Fault]:
 
 def material_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
     """Yield what is wrong with one material, apart from its library reference."""
+    texts = {"label": material.label, "library": material.library, "source": material.source}
+    yield from _text_faults({path: material.name, **{join(path, key): text for key, text in texts.items()}})
     if not material.name.strip():
         yield Fault(path, "the name of the material is empty", "a name")
     if material.name in (*ALWAYS_DEFINED, METAL_NAME):
@@ -76,7 +86,7 @@ def material_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
     if not material.model and not material.library:
         yield Fault(join(path, "model"), "is missing", f"{one_of(MODELS)}, or a library reference")
     if material.model and material.model not in MODELS:
-        given = f"{shown(material.model)} is not known{nearest(material.model, MODELS)}"
+        given = f"{shown(material.model)} is not known{near(material.model, MODELS)}"
         yield Fault(join(path, "model"), given, one_of(MODELS))
     elif material.model:
         yield from _model_faults(material, path)
@@ -153,13 +163,15 @@ def _within(measure: Measure, allowed: Limits, path: str) -> Iterator[Fault]:
 
 
 def _stack_faults(stack: StackRecord, path: str, known: Collection[str]) -> Iterator[Fault]:
+    yield from _text_faults({join(path, "name"): stack.name})
     if not stack.name.strip():
         yield Fault(join(path, "name"), "the name of the stack is empty", "a name")
     if stack.front == METAL_NAME:
         yield Fault(join(path, "front"), "the wave cannot come from a perfect conductor", "a lossless material")
     else:
         yield from _known(stack.front, known, join(path, "front"))
-    yield from _known(stack.back, (*known, METAL_NAME), join(path, "back"))
+    if stack.back != METAL_NAME:
+        yield from _known(stack.back, known, join(path, "back"), f" or {METAL_NAME!r}")
     for place, element in enumerate(stack.elements):
         yield from element_faults(element, join(join(path, "elements"), place), known)
 
@@ -186,10 +198,9 @@ def sheet_faults(sheet: SheetRecord, path: str) -> Iterator[Fault]:
         yield Fault(join(path, name), "a sheet of 0 ohm is a perfect conductor", "a part that is more than 0")
 
 
-def _known(name: str, known: Collection[str], path: str) -> Iterator[Fault]:
+def _known(name: str, known: Collection[str], path: str, more: str = "") -> Iterator[Fault]:
     if name not in known:
-        near = nearest(name, known) if len(name) <= 60 else ""
-        yield Fault(path, f"unknown material {shown(name)}{near}", one_of(known))
+        yield Fault(path, f"unknown material {shown(name)}{near(name, known)}", one_of(known) + more)
 
 
 def sweep_faults(sweep: SweepRecord) -> Iterator[Fault]:
@@ -248,11 +259,14 @@ def _list_faults(count: int, path: str) -> Iterator[Fault]:
     if count == 0:
         yield Fault(path, "the list is empty", "at least one value")
     if count > limits.MOST_LISTED:
-        yield Fault(
-            path, f"the list has {count} values", f"at most {limits.MOST_LISTED}; more as start, stop, points"
-        )
+        allowed = f"at most {limits.MOST_LISTED}; more as start, stop and points"
+        yield Fault(path, f"the list has {count} values", allowed)
 
 
 def _angle_faults(angle: Measure, path: str) -> Iterator[Fault]:
     if not 0 <= angle.value < _RIGHT_ANGLE:
-        yield Fault(path, f"the angle {shown(angle.text)} is out of range", "0 deg or more and below 90 deg")
+        yield Fault(
+            path,
+            f"the angle {shown(angle.text)} is out of range",
+            "0 deg or more and below 90 deg; without a unit, rad",
+        )

@@ -3,10 +3,10 @@
 import re
 from collections.abc import Iterable
 
-from stackcore.errors import Fault, JobError, nearest
+from stackcore.errors import Fault, JobError
 from stackcore.job.decode import FORMAT, JOB_KEYS, decode_job
 from stackcore.job.encode import encode_job
-from stackcore.job.inspector import Inspector, shown
+from stackcore.job.inspector import MOST_FAULTS, Inspector, join, near, shown
 from stackcore.job.migrations import VERSION, migrate
 from stackcore.job.records import JobRecord
 from stackcore.job.resolve import resolve
@@ -53,7 +53,7 @@ allowed: version 1 or older; a newer slabwright reads this file
     record = decode_job({key: current[key] for key in current}, inspector)
     faults = [*inspector.faults, *_not_told_yet(resolve(record).faults, inspector.faulted)]
     if faults:
-        raise JobError(_told(faults, inspector.untold))
+        raise JobError(_told(faults, inspector.untold, record))
     return record
 
 
@@ -71,8 +71,8 @@ def _check_format(tree: dict[str, object], inspector: Inspector) -> None:
         inspector.fault("format", "is missing", f"{FORMAT!r}")
     elif tree["format"] != FORMAT:
         given = tree["format"]
-        near = nearest(given, [FORMAT]) if isinstance(given, str) and len(given) < 60 else ""
-        raise JobError([Fault("format", f"{shown(given)} is not a job file{near}", f"{FORMAT!r}")])
+        hint = near(given, [FORMAT]) if isinstance(given, str) else ""
+        raise JobError([Fault("format", f"{shown(given)} is not a job file{hint}", f"{FORMAT!r}")])
 
 
 def _not_told_yet(faults: Iterable[Fault], faulted: set[str]) -> list[Fault]:
@@ -86,16 +86,19 @@ def _places_above(path: str) -> list[str]:
     return [path, *(path[:end] for end in ends)]
 
 
-def _told(faults: list[Fault], untold: int) -> list[Fault]:
-    """Return `faults` in the order of the file, and how many more there are."""
-    rank = {key: place for place, key in enumerate(JOB_KEYS)}
+def _told(faults: list[Fault], untold: int, record: JobRecord) -> list[Fault]:
+    """Return `faults` in the order of the file, at most `MOST_FAULTS`, and how many more there are."""
+    sections = {key: place for place, key in enumerate(JOB_KEYS)}
+    materials = {join("materials", material.name): place for place, material in enumerate(record.materials)}
 
-    def order(fault: Fault) -> tuple[int, list[tuple[int, str]]]:
-        parts = re.findall(r"\d+|[^\d.\[\]]+", fault.path)
-        top = rank.get(parts[0], len(rank)) if parts else -1
-        return top, [(int(part), "") if part.isdigit() else (-1, part) for part in parts[1:]]
+    def order(fault: Fault) -> tuple[int, list[int]]:
+        section = sections.get(re.split(r"[.\[]", fault.path)[0], -1)
+        if fault.path.startswith("materials"):
+            return section, [materials[place] for place in _places_above(fault.path) if place in materials]
+        return section, [int(digits) for digits in re.findall(r"\[(\d+)\]", fault.path)]
 
     told = sorted(faults, key=order)
+    untold += len(told[MOST_FAULTS:])
     if untold:
-        told.append(Fault("", f"{untold} more faults are not listed", "correct these first"))
+        return [*told[:MOST_FAULTS], Fault("", f"{untold} more faults are not listed", "correct these first")]
     return told

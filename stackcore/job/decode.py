@@ -3,6 +3,7 @@
 from collections.abc import Callable, Mapping
 from typing import Final, Literal, TypeVar
 
+from stackcore.job import limits
 from stackcore.job.inspector import Inspector, join, one_of, shown
 from stackcore.job.limits import SHEET_PARTS
 from stackcore.job.records import (
@@ -35,6 +36,15 @@ MATERIAL_KEYS: Final = ("label", "library", "model", *CONSTANTS, "source")
 
 T = TypeVar("T")
 
+_REQUIRED: Final = {
+    "stacks": '"stacks": [{"name": "A", "elements": []}]',
+    "sweep": '"sweep": {"frequency": ["10 GHz"], "angle": ["0 deg"]}',
+}
+_STACK_REQUIRED: Final = {"name": '"name": "A"', "elements": '"elements": []'}
+_SWEEP_REQUIRED: Final = {"frequency": '"frequency": ["10 GHz"]', "angle": '"angle": ["0 deg"]'}
+_FREQUENCY_REQUIRED: Final = {"start": '"start": "8 GHz"', "stop": '"stop": "12 GHz"', "points": '"points": 401'}
+_ANGLE_REQUIRED: Final = {"start": '"start": "0 deg"', "stop": '"stop": "60 deg"', "points": '"points": 7'}
+
 _POINTS: Final = "a whole number from 1 to 1000000"
 _MILLIMETRE: Final = measure(1e-3, Dimension.LENGTH)
 _LOW: Final = measure(1.0, Dimension.FREQUENCY)
@@ -46,8 +56,8 @@ def decode_job(tree: Mapping[str, object], inspector: Inspector) -> JobRecord:
 
     Where something is wrong a stand-in takes its place, so that what remains can be checked.
     """
-    inspector.mapping(tree, "", JOB_KEYS, ("stacks", "sweep"))
-    stacks = inspector.sequence(tree["stacks"], "stacks") if "stacks" in tree else []
+    inspector.mapping(tree, "", JOB_KEYS, _REQUIRED)
+    stacks = inspector.sequence(tree["stacks"], "stacks", limits.MOST_STACKS) if "stacks" in tree else []
     return JobRecord(
         title=inspector.text(tree.get("title", ""), "title"),
         stacks=tuple(_stack(inspector, value, join("stacks", place)) for place, value in enumerate(stacks)),
@@ -62,6 +72,9 @@ def _materials(inspector: Inspector, value: object) -> tuple[MaterialRecord, ...
         allowed = 'an object: "materials": {"skin": {"model": "constant", "permittivity": 4.2}}'
         inspector.fault("materials", f"{shown(value)} is not an object", allowed)
         return ()
+    if len(value) > limits.MOST_MATERIALS:
+        inspector.fault("materials", f"there are {len(value)} materials", f"at most {limits.MOST_MATERIALS}")
+        return ()
     inspector.repeated(value, "materials")
     return tuple(_material(inspector, key, item, join("materials", key)) for key, item in value.items())
 
@@ -72,6 +85,8 @@ def _material(inspector: Inspector, name: str, value: object, path: str) -> Mate
     if given is None:
         return MaterialRecord(name, model="constant", permittivity=1.0 + 0.0j)
     _loss_twice(inspector, given, path)
+    if not isinstance(given.get("library", ""), str):
+        inspector.faulted.add(join(path, "model"))  # that the model is missing is no second fault
     known = {key: (item, join(path, key)) for key, item in given.items() if key in MATERIAL_KEYS}
 
     def text(key: str) -> str:
@@ -80,8 +95,7 @@ def _material(inspector: Inspector, name: str, value: object, path: str) -> Mate
     def constant(key: str, reader: Callable[[object], T]) -> T | None:
         if key not in known:
             return None
-        item, place = known[key]
-        return inspector.read(lambda: reader(item), place, None)
+        return inspector.constant(*known[key], reader)
 
     return MaterialRecord(
         name,
@@ -103,15 +117,14 @@ def _loss_twice(inspector: Inspector, given: dict[str, object], path: str) -> No
 
 
 def _stack(inspector: Inspector, value: object, path: str) -> StackRecord:
-    given = inspector.mapping(value, path, STACK_KEYS, ("name", "elements"))
+    given = inspector.mapping(value, path, STACK_KEYS, _STACK_REQUIRED)
     if given is None:
         return StackRecord(path)
-    elements = inspector.sequence(given["elements"], join(path, "elements")) if "elements" in given else []
+    place = join(path, "elements")
+    elements = inspector.sequence(given["elements"], place, limits.MOST_ELEMENTS) if "elements" in given else []
     return StackRecord(
         name=inspector.text(given["name"], join(path, "name"), path) if "name" in given else path,
-        elements=tuple(
-            _element(inspector, item, join(join(path, "elements"), place)) for place, item in enumerate(elements)
-        ),
+        elements=tuple(_element(inspector, item, join(place, row)) for row, item in enumerate(elements)),
         front=inspector.text(given.get("front", "air"), join(path, "front"), "air"),
         back=inspector.text(given.get("back", "air"), join(path, "back"), "air"),
     )
@@ -131,7 +144,7 @@ def _element(inspector: Inspector, value: object, path: str) -> ElementRecord:
 
 
 def _layer(inspector: Inspector, value: dict[str, object], path: str) -> LayerRecord:
-    inspector.mapping(value, path, ("layer", "thickness"), ("thickness",))
+    inspector.mapping(value, path, ("layer", "thickness"), {"thickness": '"thickness": "1 mm"'})
     thickness = _MILLIMETRE
     if "thickness" in value:
         thickness = inspector.measure(value["thickness"], join(path, "thickness"), Dimension.LENGTH, _MILLIMETRE)
@@ -142,15 +155,15 @@ def _sheet(inspector: Inspector, value: dict[str, object], path: str) -> SheetRe
     inspector.mapping(value, path, ("sheet", *SHEET_PARTS))
     kind = inspector.choice(value["sheet"], join(path, "sheet"), SHEET_KINDS, "series")
     parts: dict[str, Measure] = {}
-    for name, limits in SHEET_PARTS.items():
+    for name, part in SHEET_PARTS.items():
         if name in value:
-            stand_in = measure(1.0, limits.dimension)
-            parts[name] = inspector.measure(value[name], join(path, name), limits.dimension, stand_in)
+            stand_in = measure(1.0, part.dimension)
+            parts[name] = inspector.measure(value[name], join(path, name), part.dimension, stand_in)
     return SheetRecord(kind, **parts)
 
 
 def _sweep(inspector: Inspector, value: object, present: bool) -> SweepRecord:
-    given = inspector.mapping(value, "sweep", ("frequency", "angle"), ("frequency", "angle")) if present else None
+    given = inspector.mapping(value, "sweep", tuple(_SWEEP_REQUIRED), _SWEEP_REQUIRED) if present else None
     given = given or {}
     return SweepRecord(
         _frequency(inspector, given["frequency"]) if "frequency" in given else (_LOW,),
@@ -163,7 +176,7 @@ def _frequency(inspector: Inspector, value: object) -> FrequencyGrid | tuple[Mea
     listed = _listed(inspector, value, path, Dimension.FREQUENCY, _LOW)
     if listed is not None:
         return listed
-    given = inspector.mapping(value, path, FREQUENCY_KEYS, ("start", "stop", "points")) or {}
+    given = inspector.mapping(value, path, FREQUENCY_KEYS, _FREQUENCY_REQUIRED) or {}
     start, stop, points = _grid(inspector, given, path, Dimension.FREQUENCY, _LOW)
     spacing: Literal["linear", "log"] = "linear"
     if "spacing" in given:
@@ -177,7 +190,7 @@ def _angle(inspector: Inspector, value: object) -> AngleGrid | tuple[Measure, ..
     listed = _listed(inspector, value, path, Dimension.ANGLE, _NORMAL)
     if listed is not None:
         return listed
-    given = inspector.mapping(value, path, ANGLE_KEYS, ANGLE_KEYS) or {}
+    given = inspector.mapping(value, path, ANGLE_KEYS, _ANGLE_REQUIRED) or {}
     return AngleGrid(*_grid(inspector, given, path, Dimension.ANGLE, _NORMAL))
 
 
@@ -186,6 +199,10 @@ def _listed(
 ) -> tuple[Measure, ...] | None:
     """Return the measures of a list, a stand-in for what is neither list nor object, or None for an object."""
     if isinstance(value, list):
+        if len(value) > limits.MOST_LISTED:
+            allowed = f"at most {limits.MOST_LISTED}; more as start, stop and points"
+            inspector.fault(path, f"the list has {len(value)} values", allowed)
+            return (stand_in,)
         return tuple(
             inspector.measure(item, join(path, place), dimension, stand_in) for place, item in enumerate(value)
         )

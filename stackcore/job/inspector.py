@@ -7,7 +7,7 @@ one fault never hides the next. What stands in for what is known by `Inspector.f
 import json
 import math
 import re
-from collections.abc import Callable, Iterable
+from collections.abc import Callable, Collection, Iterable, Mapping
 from dataclasses import dataclass, field
 from typing import Final, TypeVar
 
@@ -22,6 +22,7 @@ T = TypeVar("T")
 _PLAIN_KEY: Final = re.compile(r"[\w-]+")
 _LONGEST_SHOWN: Final = 60
 _LONGEST_MESSAGE: Final = 300
+_MOST_COMPARED: Final = 1000
 
 
 def join(path: str, key: str | int) -> str:
@@ -34,6 +35,11 @@ def join(path: str, key: str | int) -> str:
     if not _PLAIN_KEY.fullmatch(key):
         return f"{path}[{json.dumps(shortened(key), ensure_ascii=True)}]"
     return f"{path}.{key}" if path else key
+
+
+def has_lone_surrogate(text: str) -> bool:
+    """Return whether `text` holds what JSON can escape but UTF-8 cannot write."""
+    return any("\ud800" <= letter <= "\udfff" for letter in text)
 
 
 def shortened(text: str) -> str:
@@ -58,9 +64,14 @@ def shown(value: object) -> str:
     return f"a {type(value).__name__}"
 
 
+def near(given: str, known: Collection[str]) -> str:
+    """Return what `nearest` does, or nothing where the search would take long."""
+    return nearest(given, known) if len(given) <= _LONGEST_SHOWN and len(known) <= _MOST_COMPARED else ""
+
+
 def one_of(names: Iterable[str]) -> str:
     """Return ``one of a, b, c`` for an error, with the names in quotation marks."""
-    listed = [repr(shortened(name)) for name in names]
+    listed = [repr(shortened(name)) for name in dict.fromkeys(names)]
     if len(listed) == 1:
         return listed[0]
     rest = f" and {len(listed) - 20} more" if len(listed) > 20 else ""
@@ -86,9 +97,12 @@ class Inspector:
         self.faults.append(Fault(path, message, allowed))
 
     def mapping(
-        self, value: object, path: str, known: Iterable[str], required: Iterable[str] = ()
+        self, value: object, path: str, known: Iterable[str], required: Mapping[str, str] | None = None
     ) -> dict[str, object] | None:
-        """Return an object whose keys are all in `known`; unknown, missing and doubled keys are faults."""
+        """Return an object whose keys are all in `known`; unknown, missing and doubled keys are faults.
+
+        `required` has, for each key that must be there, an example of it as it stands in a file.
+        """
         if not isinstance(value, dict):
             self.fault(path, f"{shown(value)} is not an object", "an object {...}")
             return None
@@ -96,11 +110,12 @@ class Inspector:
         self.repeated(value, path)
         for key in value:
             if key not in known:
-                near = nearest(key, known) if len(key) <= _LONGEST_SHOWN else ""
-                self.fault(join(path, key), f"unknown key {shown(key)}{near}", one_of(known))
-        for key in required:
+                self.fault(join(path, key), f"unknown key {shown(key)}{near(key, known)}", one_of(known))
+            if self.untold:  # an object of a million wrong keys
+                break
+        for key, example in (required or {}).items():
             if key not in value:
-                self.fault(join(path, key), "is missing", f"{key!r} must be given")
+                self.fault(join(path, key), "is missing", example)
         return value
 
     def repeated(self, value: dict[str, object], path: str) -> None:
@@ -108,19 +123,22 @@ class Inspector:
         for key in getattr(value, "repeated", ()):
             self.fault(join(path, key), f"the key {shown(key)} is given more than once", "each key once")
 
-    def sequence(self, value: object, path: str) -> list[object]:
-        """Return a list."""
-        if isinstance(value, list):
-            return value
-        self.fault(path, f"{shown(value)} is not a list", "a list [...]")
-        return []
+    def sequence(self, value: object, path: str, most: int) -> list[object]:
+        """Return a list of at most `most` values."""
+        if not isinstance(value, list):
+            self.fault(path, f"{shown(value)} is not a list", "a list [...]")
+            return []
+        if len(value) > most:
+            self.fault(path, f"the list has {len(value)} values", f"at most {most}")
+            return []
+        return value
 
     def text(self, value: object, path: str, stand_in: str = "") -> str:
         """Return a text that can be written as UTF-8."""
         if not isinstance(value, str):
             self.fault(path, f"{shown(value)} is not a text", 'a text in quotation marks: "..."')
             return stand_in
-        if any("\ud800" <= letter <= "\udfff" for letter in value):
+        if has_lone_surrogate(value):
             self.fault(path, f"{shown(value)} holds half a character (a lone surrogate)", "whole characters")
             return stand_in
         return value
@@ -130,8 +148,8 @@ class Inspector:
         known = tuple(known)
         if isinstance(value, str) and value in known:
             return value
-        near = nearest(value, known) if isinstance(value, str) and len(value) <= _LONGEST_SHOWN else ""
-        self.fault(path, f"{shown(value)} is not known{near}", one_of(known))
+        hint = near(value, known) if isinstance(value, str) else ""
+        self.fault(path, f"{shown(value)} is not known{hint}", one_of(known))
         return stand_in
 
     def whole(self, value: object, path: str, stand_in: int, allowed: str) -> int:
@@ -148,12 +166,17 @@ class Inspector:
         if isinstance(value, bool) or not isinstance(value, str | int | float):
             self.fault(path, f"{shown(value)} is not {dimension.phrase}", dimension.allowed)
             return stand_in
-        return self.read(lambda: parse_measure(value, dimension), path, stand_in)
-
-    def read(self, read: Callable[[], T], path: str, stand_in: T) -> T:
-        """Return what `read` does, or note the UnitError that it raises."""
         try:
-            return read()
+            return parse_measure(value, dimension)
         except UnitError as error:
             self.fault(path, error.message, error.allowed)
             return stand_in
+
+    def constant(self, value: object, path: str, reader: Callable[[object], T]) -> T | None:
+        """Return what the reader of a material's constant makes of `value`, None where it refuses."""
+        try:
+            return reader(value)
+        except UnitError as error:
+            plain = isinstance(value, str | int | float | list) and not isinstance(value, bool)
+            self.fault(path, error.message if plain else f"{shown(value)} is not a number", error.allowed)
+            return None

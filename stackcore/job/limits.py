@@ -56,6 +56,11 @@ SHEET_PARTS: Final[Mapping[str, Limits]] = {
 }
 """Part of a sheet -> what it may be, in the order of the file."""
 
+MOST_STACKS: Final = 1000
+MOST_MATERIALS: Final = 1000
+MOST_ELEMENTS: Final = 10_000
+"""Of one stack."""
+
 MOST_POINTS: Final = 1_000_000
 """Of a grid of frequencies or angles."""
 

@@ -6,6 +6,7 @@ refused where they stand), and neither a deep nor a huge file can exhaust the ma
 
 import json
 import math
+from collections import Counter
 from collections.abc import Iterable
 from typing import Final
 
@@ -81,8 +82,8 @@ def _decoded(content: bytes) -> str:
 def _object(pairs: list[tuple[str, object]]) -> JsonObject:
     built = JsonObject(pairs)
     if len(built) != len(pairs):
-        keys = [key for key, _ in pairs]
-        built.repeated = tuple(key for key in built if keys.count(key) > 1)
+        counts = Counter(key for key, _ in pairs)
+        built.repeated = tuple(key for key, count in counts.items() if count > 1)
     return built
 
 

@@ -154,7 +154,7 @@ def _walk(node: ast.expr, amounts: list[Amount]) -> Amount:
             return _times(_walk(left, amounts), _walk(right, amounts))
         case ast.BinOp(left=left, op=ast.Div(), right=right):
             return _over(_walk(left, amounts), _walk(right, amounts))
-    raise UnitError("only numbers, units and + - * / ( ) can be read")
+    raise UnitError("only + - * / and ( ) can be read between numbers", "for example '2 * (1 mm + 20 um)'")
 
 
 def _plus(left: Amount, right: Amount, sign: int) -> Amount:

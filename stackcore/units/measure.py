@@ -12,6 +12,7 @@ from stackcore.units.dimensions import UNITS, Dimension
 from stackcore.units.expression import read_amount
 from stackcore.units.spelling import find_unit, plain
 
+_LARGE: Final = 1e300
 _EXACT: Final = Context(prec=60, rounding=ROUND_HALF_EVEN)
 
 
@@ -158,7 +159,9 @@ def format_value(value: float, dimension: Dimension, *, unit: str | None = None,
     value = float(value)
     if not math.isfinite(value):
         return f"{value} {unit or dimension.usual_unit}".strip()
-    if unit is None:
+    if unit is None and abs(value) > _LARGE:
+        unit = dimension.si_unit  # in another one the number itself might be beyond every double
+    elif unit is None:
         # The decimal a person sees, not the double a hair below it, decides: 1e-12 F is 1 pF.
         seen = Decimal(repr(value)) if digits is None else _rounded(Fraction(value), digits)
         unit = _readable_unit(abs(Fraction(seen)), dimension)

@@ -9,6 +9,7 @@ from typing import Any
 
 import numpy as np
 import pytest
+import skrf
 from hypothesis import given, settings
 
 from stackcore.constants import FREE_SPACE_IMPEDANCE, SPEED_OF_LIGHT
@@ -17,8 +18,6 @@ from stackcore.media.constant import VACUUM, ConstantMedium
 from stackcore.sheets.series import SeriesSheet
 from stackcore.stack import Layer, SheetPlacement, Stack
 from tests.strategies import TE, TM, Case, cases
-
-skrf = pytest.importorskip("skrf", reason="scikit-rf is a package of the tests only")
 
 FREQUENCY = np.linspace(2e9, 18e9, 33)
 GLASS_FIBRE = ConstantMedium(4.2 * (1 - 0.015j))

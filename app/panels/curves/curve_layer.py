@@ -95,7 +95,8 @@ class CurveLayer(Layer):
         for curve in sorted(self._curves, key=lambda one: one.chosen):
             width = LIVE_WIDTH if not self._fine else CHOSEN_WIDTH if curve.chosen else FINE_WIDTH
             pen = QPen(QColor(curve.colour), width)
-            pen.setCosmetic(True)
+            # One device pixel, whatever the scale of the screen, is what the raster engine draws fastest.
+            pen.setCosmetic(not self._fine)
             pen.setJoinStyle(Qt.PenJoinStyle.BevelJoin)
             for first, last in curve.runs:
                 first, last = _visible(curve.positions, first, last, frame)

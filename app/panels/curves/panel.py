@@ -183,9 +183,11 @@ class CurvesPanel(QWidget):
         """Put the plot on the clipboard as a picture in pixels and as a drawing, in the light look."""
         theme = self._theme
         self.set_theme(LIGHT)
+        self.header.add.hide()
         try:
             data = picture_data(paint_picture(self, self.plot), paint_svg(self, self.plot))
         finally:
+            self.header.add.show()
             self.set_theme(theme)
         QGuiApplication.clipboard().setMimeData(data)
         self.pointed.emit("Copied the plot as a picture.")

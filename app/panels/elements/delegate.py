@@ -1,5 +1,7 @@
 """How a cell of the element table is drawn, and what opens in it for typing."""
 
+from typing import Final
+
 from PySide6.QtCore import (
     QAbstractItemModel,
     QEvent,
@@ -24,6 +26,8 @@ from app.panels.elements.widths import MARK, MARK_GAP, PADDING, SWATCH, Widths, 
 
 Index = QModelIndex | QPersistentModelIndex
 
+_FINISHED: Final = "slabwright-finished"
+
 
 class CellDelegate(QStyledItemDelegate):
     """Draws every cell; numbers stand with their decimal points below each other and their units behind them.
@@ -36,15 +40,12 @@ class CellDelegate(QStyledItemDelegate):
     def __init__(self, theme: Theme, parent: QObject | None = None) -> None:
         super().__init__(parent)
         self._theme = theme
-        self._widths: tuple[Widths, ...] = ()
+        self.widths: tuple[Widths, ...] = ()
+        """Widths of the columns, by which numbers are stood below each other."""
 
     def set_theme(self, theme: Theme) -> None:
         """Draw in the colours of `theme` from now on."""
         self._theme = theme
-
-    def set_widths(self, widths: tuple[Widths, ...]) -> None:
-        """Stand numbers by these widths of the columns from now on."""
-        self._widths = widths
 
     # Drawing
 
@@ -117,7 +118,7 @@ class CellDelegate(QStyledItemDelegate):
     def _paint_quantity(self, painter: QPainter, room: QRect, index: Index) -> None:
         metrics = painter.fontMetrics()
         number, fraction, unit = split_quantity(index.data())
-        widths = self._widths[index.column()]
+        widths = self.widths[index.column()]
         left = room.right() - widths.unit - widths.fraction - metrics.horizontalAdvance(number)
         if not number or left < room.left():
             self._paint_words(painter, room, index, self._theme.text)
@@ -176,6 +177,10 @@ class CellDelegate(QStyledItemDelegate):
         return super().eventFilter(watched, event)
 
     def _finish(self, editor: QWidget, *, advance: bool) -> None:
+        # A box that loses the focus says once more that its text was chosen.
+        if editor.property(_FINISHED):
+            return
+        editor.setProperty(_FINISHED, True)
         self.commitData.emit(editor)
         self.closeEditor.emit(editor, QAbstractItemDelegate.EndEditHint.NoHint)
         if advance:

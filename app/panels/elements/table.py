@@ -142,7 +142,9 @@ class ElementsTable(QTableView):
             selection.select(model.index(row, 0), model.index(row, model.columnCount() - 1))
         flags = QItemSelectionModel.SelectionFlag
         self.selectionModel().select(selection, flags.ClearAndSelect | flags.Rows)
-        if rows and self.currentIndex().row() not in rows:
+        # Another current cell would shut the one that is open and take what was typed so far for the whole.
+        typing = self.state() == QAbstractItemView.State.EditingState
+        if rows and self.currentIndex().row() not in rows and not typing:
             index = model.index(rows[0], self.currentIndex().column())
             self.selectionModel().setCurrentIndex(index, flags.NoUpdate)
             self.scrollTo(index)
@@ -174,6 +176,9 @@ class ElementsTable(QTableView):
             self.wanted.emit(command)
         elif event.key() in _ENTER_KEYS and event.modifiers() in (_Mod.NoModifier, _Mod.KeypadModifier):
             self.step_down()
+        elif event.key() == _Key.Key_Backspace:
+            # Opens the cell with its text selected, and takes that away.
+            self.edit(self.currentIndex(), QAbstractItemView.EditTrigger.AnyKeyPressed, event)
         elif event.key() == _Key.Key_F6:
             QWidget.focusNextPrevChild(self, not event.modifiers() & _Mod.ShiftModifier)
         else:
@@ -282,7 +287,9 @@ class ElementsTable(QTableView):
         """Give every column the room its texts need, and the materials what is left."""
         model = self.elements_model()
         widths = self._measuring.widths(model.columns, model.lines)
-        self._delegate.set_widths(widths)
+        if widths != self._delegate.widths:
+            self._delegate.widths = widths
+            self.viewport().update()
         taken = sum(
             width.cell for column, width in zip(model.columns, widths, strict=True) if column is not MATERIAL
         )
@@ -291,7 +298,6 @@ class ElementsTable(QTableView):
             width = left if column is MATERIAL else widths[place].cell
             if self.columnWidth(place) != width:
                 self.setColumnWidth(place, width)
-        self.viewport().update()
 
 
 def _command(event: QKeyEvent) -> Command | None:

@@ -107,7 +107,9 @@ def _is_free(box: Box, layout: WallLayout, taken: Sequence[Caption]) -> bool:
         return False
     if any(box.left - 4 < sheet.x < box.right + 4 for sheet in layout.sheets):
         return False
-    return not any(box.overlaps(other) for other in (*(one.box for one in taken), *(one.box for one in layout.labels)))
+    return not any(
+        box.overlaps(other) for other in (*(one.box for one in taken), *(one.box for one in layout.labels))
+    )
 
 
 def end_names(layout: WallLayout, measure: TextMeasure) -> tuple[Caption, ...]:

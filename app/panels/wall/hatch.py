@@ -65,9 +65,7 @@ def _glints(box: Box) -> Iterator[Stroke]:
     """Yield groups of three short slanted strokes, as a pane is marked; whole groups only."""
     group = ((0.0, 14.0), (6.0, 8.0), (-6.0, 8.0))
     across, down, half_width, half_height = 52.0, 44.0, 10.0, 8.0
-    for row in range(
-        math.ceil((box.top + half_height) / down), math.floor((box.bottom - half_height) / down) + 1
-    ):
+    for row in range(math.ceil((box.top + half_height) / down), math.floor((box.bottom - half_height) / down) + 1):
         offset = across / 2 if row % 2 else 0.0
         first = math.ceil((box.left + half_width - offset) / across)
         last = math.floor((box.right - half_width - offset) / across)

@@ -2,6 +2,7 @@
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from itertools import pairwise
 from typing import Final, Literal
 
 from app.panels.wall import labels
@@ -82,6 +83,7 @@ class WallLayout:
     numbers: tuple[Number, ...]
     rail: Box
     line: float
+    edges: tuple[float, ...]
 
     def extent(self, row: int) -> Box:
         """Return the box in which element `row` is caught."""
@@ -100,8 +102,8 @@ class WallLayout:
     def face_at(self, x: float, preferred: Sequence[int] = ()) -> Face | None:
         """Return the face near `x`.
 
-        A face belongs to the layer in front of it; to the one behind where there is none in front, or where only the
-        one behind is among the `preferred` rows.
+        A face belongs to the layer in front of it; to the one behind where there is none in front, or where only
+        the one behind is among the `preferred` rows.
         """
         near = [face for face in self.faces() if abs(face.x - x) <= FACE_REACH]
         if not near:
@@ -250,9 +252,7 @@ def _extents(wall: Wall, edges: Sequence[float], top: float, bottom: float) -> l
     return boxes
 
 
-def _elements(
-    wall: Wall, edges: Sequence[float], body: Box
-) -> tuple[tuple[Slab, ...], tuple[SheetLine, ...]]:
+def _elements(wall: Wall, edges: Sequence[float], body: Box) -> tuple[tuple[Slab, ...], tuple[SheetLine, ...]]:
     slabs: list[Slab] = []
     sheets: list[SheetLine] = []
     boxes = _extents(wall, edges, body.top, body.bottom)
@@ -291,6 +291,7 @@ def _assembled(
         numbers=_numbers(edges, rail, measure),
         rail=rail,
         line=measure.line,
+        edges=tuple(edges),
     )
 
 
@@ -308,7 +309,7 @@ def _numbers(edges: Sequence[float], rail: Box, measure: TextMeasure) -> tuple[N
     for step in NUMBER_STEPS:
         rows = [row for row in range(count) if row == 0 or (row + 1) % step == 0]
         numbers = tuple(_number(row, edges, rail, measure) for row in rows)
-        pairs = zip(numbers, numbers[1:], strict=False)
+        pairs = pairwise(numbers)
         if all(one.box.right + 3 <= other.box.left for one, other in pairs):
             return numbers
     return numbers[:1]

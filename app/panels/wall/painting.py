@@ -73,9 +73,7 @@ def laid_out(
     return lay_out(wall, rect.width(), rect.height(), measure, last=last, held=held)
 
 
-def paint_layout(
-    painter: QPainter, layout: WallLayout, theme: Theme, wave: Wave | None, touch: Touch
-) -> None:
+def paint_layout(painter: QPainter, layout: WallLayout, theme: Theme, wave: Wave | None, touch: Touch) -> None:
     """Draw a wall that is laid out, its upper left corner at the painter's origin."""
     painter.setRenderHint(QPainter.RenderHint.Antialiasing)
     painter.fillRect(QRectF(0, 0, layout.width, layout.height), QColor(theme.base))
@@ -124,9 +122,7 @@ def _paint_strokes(painter: QPainter, lines: Iterable[Stroke], ink: QColor) -> N
     painter.drawLines([QLineF(*line) for line in lines])
 
 
-def _paint_half_space(
-    painter: QPainter, box: Box, part: HalfSpacePart, theme: Theme, *, to_left: bool
-) -> None:
+def _paint_half_space(painter: QPainter, box: Box, part: HalfSpacePart, theme: Theme, *, to_left: bool) -> None:
     """Draw the kind of a half-space beside the wall, fading into the ground; air is drawn as nothing."""
     if not part.kind or box.width < 1:
         return
@@ -202,9 +198,7 @@ def _paint_labels(painter: QPainter, layout: WallLayout, theme: Theme, touch: To
         _paint_runs(painter, label, theme, faulty=part.faulty, selected=selected)
 
 
-def _paint_runs(
-    painter: QPainter, label: Label, theme: Theme, *, faulty: bool, selected: bool
-) -> None:
+def _paint_runs(painter: QPainter, label: Label, theme: Theme, *, faulty: bool, selected: bool) -> None:
     outside = label.leader is not None
     painter.save()
     if label.upright:
@@ -220,16 +214,12 @@ def _paint_runs(
     painter.restore()
 
 
-def _paint_rail(
-    painter: QPainter, layout: WallLayout, measure: TextMeasure, theme: Theme, touch: Touch
-) -> None:
+def _paint_rail(painter: QPainter, layout: WallLayout, measure: TextMeasure, theme: Theme, touch: Touch) -> None:
     """Write the half-spaces' names and the elements' numbers below the wall."""
     for number in layout.numbers:
         selected = number.row in touch.selected
         painter.setPen(QColor(theme.accent if selected else theme.muted))
-        painter.drawText(
-            rectangle(number.box.grown(4)), Qt.AlignmentFlag.AlignCenter, str(number.row + 1)
-        )
+        painter.drawText(rectangle(number.box.grown(4)), Qt.AlignmentFlag.AlignCenter, str(number.row + 1))
     painter.setPen(QColor(theme.text))
     for name in captions.end_names(layout, measure):
         painter.drawText(rectangle(name.box).adjusted(0, 0, 4, 0), Qt.AlignmentFlag.AlignVCenter, name.text)
@@ -238,9 +228,7 @@ def _paint_rail(
         painter.drawText(rectangle(layout.rail), Qt.AlignmentFlag.AlignCenter, EMPTY_HINT)
 
 
-def _paint_handle(
-    painter: QPainter, layout: WallLayout, face: Face, tag: str, theme: Theme
-) -> None:
+def _paint_handle(painter: QPainter, layout: WallLayout, face: Face, tag: str, theme: Theme) -> None:
     """Draw the face under the hand, and while it is dragged the thickness beside it."""
     painter.setPen(QPen(QColor(theme.accent), 2.5))
     painter.drawLine(QPointF(face.x, layout.body.top), QPointF(face.x, layout.body.bottom))
@@ -258,4 +246,3 @@ def _paint_handle(
     painter.drawRoundedRect(pill, RADIUS, RADIUS)
     painter.setPen(QColor(theme.on_accent))
     painter.drawText(pill, Qt.AlignmentFlag.AlignCenter, tag)
-

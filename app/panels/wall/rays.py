@@ -290,9 +290,7 @@ class _Tracer:
         lowest = self.zone.bottom - self.foot - self.full * share / 2
         return min(entry + max(wanted - apart, 0.0), max(lowest, entry))
 
-    def _arrow(
-        self, role: Role, start: Point, angle: float, side: int, length: float, share: float | None
-    ) -> Band:
+    def _arrow(self, role: Role, start: Point, angle: float, side: int, length: float, share: float | None) -> Band:
         tall, faint = _height(share, self.full)
         return Band(role, _arrow_outline(start, angle, side, length, tall), share, faint)
 
@@ -333,9 +331,7 @@ def _wrapped(outline: Sequence[Point], zone: Box) -> Iterable[tuple[Point, ...]]
             yield piece
 
 
-def _arrow_outline(
-    start: Point, angle: float, side: int, length: float, tall: float
-) -> tuple[Point, ...]:
+def _arrow_outline(start: Point, angle: float, side: int, length: float, tall: float) -> tuple[Point, ...]:
     """Return an arrow that leaves a face at `start`; its foot lies along the face, `tall` high."""
     along = (side * math.cos(angle), math.sin(angle))
     normal = (-along[1], along[0])

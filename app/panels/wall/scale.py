@@ -58,7 +58,7 @@ class ThicknessScale:
 
     def width(self, thickness: float) -> float:
         """Return the width in px of a thickness in m."""
-        return self.minimum + self.gain * (thickness / self.reference) ** self.exponent
+        return float(self.minimum + self.gain * (thickness / self.reference) ** self.exponent)
 
     def thickness(self, width: float) -> float:
         """Return the thickness in m drawn `width` px wide; 0 for every width up to the minimum."""

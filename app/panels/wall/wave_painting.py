@@ -31,7 +31,9 @@ def paint_levels(painter: QPainter, layout: WallLayout, wave: Wave, theme: Theme
     if wave.powers is None:
         return
     boxes = {slab.row: slab.box for slab in layout.slabs}
-    boxes |= {sheet.row: Box(sheet.x - 5, sheet.slot.top, sheet.x + 5, sheet.slot.bottom) for sheet in layout.sheets}
+    boxes |= {
+        sheet.row: Box(sheet.x - 5, sheet.slot.top, sheet.x + 5, sheet.slot.bottom) for sheet in layout.sheets
+    }
     for row, box in boxes.items():
         tall = wave.powers.absorbed[row] * box.height
         if tall < 0.5:
@@ -57,9 +59,7 @@ def paint_outside(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> No
     _paint_field(painter, rays, wave, theme)
 
 
-def paint_captions(
-    painter: QPainter, written: tuple[Caption, ...], layout: WallLayout, theme: Theme
-) -> None:
+def paint_captions(painter: QPainter, written: tuple[Caption, ...], layout: WallLayout, theme: Theme) -> None:
     """Write what belongs to the wave, upon a quiet ground where it stands in a slab."""
     grounds = {slab.row: kind_style(theme, slab.part.kind).tint for slab in layout.slabs}
     for caption in written:
@@ -77,9 +77,7 @@ def _ink(caption: Caption, theme: Theme) -> str:
     return theme.muted if caption.role == "angle" else theme.text
 
 
-def _paint_band(
-    painter: QPainter, band: Band, theme: Theme, alpha: float, fading: Box | None = None
-) -> None:
+def _paint_band(painter: QPainter, band: Band, theme: Theme, alpha: float, fading: Box | None = None) -> None:
     """Fill a band; one that wraps fades where it leaves the zone and comes back."""
     code = theme.muted if band.role == "incident" else curve_colour(theme, band.role, 0, 1)
     if band.role == "incident":

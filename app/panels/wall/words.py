@@ -115,4 +115,3 @@ def _real(value: complex) -> str:
 
 def _counted(count: int, word: str) -> str:
     return f"{count or 'no'} {word}{'' if count == 1 else 's'}"
-

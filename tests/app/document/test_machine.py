@@ -258,7 +258,7 @@ class Work(RuleBasedStateMachine):
         assert not self.session.modified
 
 
-Work.TestCase.settings = settings(max_examples=60, stateful_step_count=40)
+Work.TestCase.settings = settings(max_examples=100, stateful_step_count=50)
 TestWork = Work.TestCase
 
 

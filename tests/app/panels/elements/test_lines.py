@@ -1,0 +1,73 @@
+"""The lines of the table as values."""
+
+from app.document import edits
+from app.document.document import Cell
+from app.document.session import Session
+from app.panels.elements.columns import ALL_COLUMNS, LAYER_COLUMNS, THICKNESS, columns_of
+from app.panels.elements.lines import cell_of, fault_words, lines_of, with_unit
+from stackcore.errors import Fault
+from stackcore.units import Dimension, parse_measure
+
+
+def test_lines_read_from_front_to_back(session: Session) -> None:
+    """The half-spaces stand first and last, elements between them with number, kind, material and thickness."""
+    lines = lines_of(session.document, 0)
+
+    assert [line.kind for line in lines] == ["front", "layer", "layer", "layer", "back"]
+    assert [cell.text for cell in lines[2].cells[:4]] == ["2", "Layer", "Copper", "35 um"]
+    assert [cell.text for cell in lines[0].cells[:4]] == ["", "Front", "air", "half-space"]
+    assert lines[2].material_kind == "metal"
+
+
+def test_cells_that_can_be_typed_into(session: Session) -> None:
+    """Of a layer material and thickness, of a sheet its parts, of a half-space the material, and nothing else."""
+    session.apply(edits.add_sheet(0, 0))
+    can = [[cell.editable for cell in line.cells] for line in lines_of(session.document, 0)]
+
+    assert can[0] == can[-1] == [False, False, True, False, False, False, False]
+    assert can[1] == [False, False, False, False, True, True, True]
+    assert can[2] == [False, False, True, True, False, False, False]
+
+
+def test_columns_of_sheets_only_with_a_sheet(session: Session) -> None:
+    """Resistance, inductance and capacitance are there when the stack has a sheet."""
+    assert columns_of(session.record.stacks[0]) == LAYER_COLUMNS
+    session.apply(edits.add_sheet(0, 0))
+    assert columns_of(session.record.stacks[0]) == ALL_COLUMNS
+
+
+def test_bare_number_shows_the_unit_it_means() -> None:
+    """A thickness written without a unit, as a job file may, is shown in metres."""
+    assert with_unit(parse_measure(0.001, Dimension.LENGTH), Dimension.LENGTH) == "0.001 m"
+    assert with_unit(parse_measure("1e-3", Dimension.LENGTH), Dimension.LENGTH) == "1e-3 m"
+    assert with_unit(parse_measure("1/8 in", Dimension.LENGTH), Dimension.LENGTH) == "1/8 in"
+    assert with_unit(parse_measure('0.125"', Dimension.LENGTH), Dimension.LENGTH) == '0.125"'
+
+
+def test_draft_is_shown_in_its_cell(session: Session) -> None:
+    """A text without a value stands in its cell with the fault, and the cells beside it do not change."""
+    before = lines_of(session.document, 0)
+    session.apply(edits.type_into(Cell(0, 1, "thickness"), "thin"))
+    after = lines_of(session.document, 0)
+
+    cell = after[2].cells[3]
+    assert (cell.text, cell.typed) == ("thin", "thin")
+    assert cell.fault is not None
+    assert [line for line in after if line not in before] == [after[2]]
+
+
+def test_cells_lead_back_to_the_document(session: Session) -> None:
+    """A place in the table is the cell of the document whose text it shows."""
+    stack = session.record.stacks[0]
+
+    assert cell_of(stack, 0, 0, THICKNESS) == Cell(0, -1, "front")
+    assert cell_of(stack, 0, 4, THICKNESS) == Cell(0, -1, "back")
+    assert cell_of(stack, 0, 2, THICKNESS) == Cell(0, 1, "thickness")
+
+
+def test_fault_as_sentences() -> None:
+    """Every sentence begins with a capital and ends once."""
+    fault = Fault("x", "'a' is unknown, did you mean 'b'?", "one of b, c")
+
+    assert fault_words(fault) == "'a' is unknown, did you mean 'b'? Allowed: one of b, c."
+    assert fault_words(Fault("x", "it is too long")) == "It is too long."

@@ -1,0 +1,153 @@
+"""Curves made from a response."""
+
+import numpy as np
+import pytest
+
+from app.document.view import ViewState
+from app.series.axis import can_show_decibels, frequency_axis, quantity_axis
+from app.series.curves import curves_of
+from app.series.shown import SHOWN
+from stackcore.media.constant import ConstantMedium
+from stackcore.propagation import solve
+from stackcore.quantities import QUANTITIES
+from stackcore.stack import Layer, Stack
+from tests.app.series.responses import ANGLE, FREQUENCY, slab
+
+FRACTIONS = ("reflectance", "transmittance", "absorptance")
+WORST_HIGH = ("reflectance", "absorptance", "insertion_loss_dB")
+WORST_LOW = ("transmittance", "return_loss_dB", "shielding_effectiveness_dB")
+
+
+def test_every_quantity_has_a_row() -> None:
+    """The table of how quantities are shown knows exactly the quantities there are."""
+    assert SHOWN.keys() == QUANTITIES.keys()
+
+
+@pytest.mark.parametrize("quantity", QUANTITIES)
+def test_a_curve_holds_the_values_of_its_angle_and_polarization(quantity: str) -> None:
+    """Each curve is one column of the response, angle by angle, TE before TM."""
+    response = slab()
+    curves = curves_of(response, ViewState(quantity=quantity))
+    values = getattr(response, quantity) * (1e12 if quantity == "group_delay_s" else 1.0)
+    assert [curve.label for curve in curves] == ["TE 0°", "TM 0°", "TE 60°", "TM 60°", "TE 30°", "TM 30°"]
+    for index, curve in enumerate(curves):
+        assert curve.quantity == quantity
+        assert np.array_equal(curve.x, FREQUENCY)
+        assert np.array_equal(curve.y, values[:, index // 2, index % 2])
+        assert curve.angle == ANGLE[index // 2]
+        assert curve.hidden_points == 0
+
+
+def test_ranks_follow_the_size_of_the_angles() -> None:
+    """The smallest angle has rank 0 wherever it stands in the list."""
+    curves = curves_of(slab(), ViewState(polarizations=("TM",)))
+    assert [(curve.polarization, curve.angle_rank, curve.angle_count) for curve in curves] == [
+        ("TM", 0, 3),
+        ("TM", 2, 3),
+        ("TM", 1, 3),
+    ]
+
+
+@pytest.mark.parametrize("quantity", FRACTIONS)
+def test_decibels_of_a_fraction(quantity: str) -> None:
+    """A fraction of power in decibels is 10 log10 of it, negative, with the same worst frequency."""
+    response = slab()
+    plain = curves_of(response, ViewState(quantity=quantity))
+    decibels = curves_of(response, ViewState(quantity=quantity, decibels=True))
+    for one, other in zip(plain, decibels, strict=True):
+        assert 10 ** (other.y / 10) == pytest.approx(one.y, rel=1e-12)
+        assert (other.unit, one.unit) == ("dB", "")
+        assert one.worst is not None
+        assert other.worst is not None
+        assert one.worst.x == other.worst.x
+
+
+def test_decibels_leave_other_quantities_alone() -> None:
+    """What is no fraction of power ignores the decibel option."""
+    response = slab()
+    for quantity in QUANTITIES.keys() - set(FRACTIONS):
+        assert not can_show_decibels(quantity)
+        one = curves_of(response, ViewState(quantity=quantity))[0]
+        other = curves_of(response, ViewState(quantity=quantity, decibels=True))[0]
+        assert np.array_equal(one.y, other.y)
+        assert one.unit == other.unit
+
+
+@pytest.mark.parametrize("quantity", WORST_HIGH + WORST_LOW)
+def test_the_worst_point(quantity: str) -> None:
+    """The worst point is the largest or the smallest value, whichever is bad, at its frequency."""
+    for curve in curves_of(slab(), ViewState(quantity=quantity)):
+        assert curve.worst is not None
+        assert curve.worst.y == (max(curve.y) if quantity in WORST_HIGH else min(curve.y))
+        assert curve.y[list(curve.x).index(curve.worst.x)] == curve.worst.y
+
+
+@pytest.mark.parametrize("quantity", QUANTITIES.keys() - set(WORST_HIGH + WORST_LOW))
+def test_phases_and_delays_have_no_worst_point(quantity: str) -> None:
+    """Neither end of a phase or a delay is worse."""
+    assert all(curve.worst is None for curve in curves_of(slab(), ViewState(quantity=quantity)))
+
+
+def test_infinite_loss_is_masked_and_counted() -> None:
+    """Behind metal the insertion loss is infinite: nothing to draw, all points counted, told as infinitely bad."""
+    for curve in curves_of(slab(metal_back=True), ViewState(quantity="insertion_loss_dB")):
+        assert np.isnan(curve.y).all()
+        assert np.isposinf(curve.raw).all()
+        assert (curve.hidden_points, curve.worst, curve.worst_infinite) == (5, None, 8e9)
+
+
+def test_zero_transmittance_in_decibels() -> None:
+    """A transmittance of 0 is drawn as it is, and in decibels is minus infinity, masked and the worst."""
+    response = slab(metal_back=True)
+    plain = curves_of(response, ViewState())[0]
+    assert plain.worst is not None
+    assert (plain.worst.y, plain.hidden_points) == (0.0, 0)
+    decibels = curves_of(response, ViewState(decibels=True))[0]
+    assert (decibels.worst, decibels.hidden_points) == (None, 5)
+    assert decibels.raw[0] == -np.inf
+
+
+def test_infinite_goodness_is_not_the_worst() -> None:
+    """Where nothing is reflected the return loss is infinite, which hides a point but is not the worst one."""
+    frequency = np.array([5e9, 14.9896229e9, 16e9])
+    response = solve(Stack((Layer(ConstantMedium(1.0), 1e-3),)), frequency, np.array([0.0]))
+    curve = curves_of(response, ViewState(quantity="return_loss_dB"))[0]
+    assert curve.hidden_points == 3
+    assert curve.worst is None
+    assert curve.worst_infinite is not None
+
+
+@pytest.mark.parametrize(
+    ("frequency", "log", "title", "factor"),
+    [
+        ([8e9, 12e9], False, "Frequency, GHz", 1e-9),
+        ([3e8, 3e9], False, "Frequency, GHz", 1e-9),
+        ([1e4, 1e10], True, "Frequency, MHz", 1e-6),
+        ([1e4, 1e10], False, "Frequency, GHz", 1e-9),
+        ([4e14, 7.5e14], False, "Frequency, THz", 1e-12),
+        ([50.0], False, "Frequency, Hz", 1.0),
+        ([0.5], True, "Frequency, Hz", 1.0),
+    ],
+)
+def test_the_frequency_axis(frequency: list[float], log: bool, title: str, factor: float) -> None:
+    """The unit fits the top of a linear axis and the middle of a logarithmic one."""
+    axis = frequency_axis(np.array(frequency), log=log)
+    assert (axis.title, axis.factor) == (title, factor)
+
+
+@pytest.mark.parametrize(
+    ("quantity", "decibels", "frequency", "title"),
+    [
+        ("insertion_loss_dB", False, 1e10, "Insertion loss, dB"),
+        ("transmittance", False, 1e10, "Transmittance"),
+        ("transmittance", True, 1e10, "Transmittance, dB"),
+        ("group_delay_s", False, 1e10, "Group delay, ps"),
+        ("group_delay_s", True, 5e14, "Group delay, fs"),
+        ("group_delay_s", False, 1e7, "Group delay, ns"),
+        ("group_delay_s", False, 1e4, "Group delay, µs"),
+        ("reflection_phase_deg", False, 1e10, "Reflection phase, deg"),
+    ],
+)
+def test_titles_are_words_with_unit(quantity: str, decibels: bool, frequency: float, title: str) -> None:
+    """The axis of a quantity says what it is and in which unit."""
+    assert quantity_axis(quantity, np.array([frequency]), decibels=decibels).title == title
