@@ -45,14 +45,14 @@ class Exact:
     insertion_phase_delay_deg: Number
 
     @property
-    def shielding_effectiveness_dB(self) -> Number:  # noqa: N802 -- the name of the CSV column
+    def shielding_effectiveness_dB(self) -> Number:
         """20 log10 |t without the stack / t with it|; infinite when nothing comes through."""
         if self.transmission == 0:
             return mpmath.inf
         return 20 * mpmath.log10(abs(self.bare_transmission / self.transmission))
 
     @property
-    def return_loss_dB(self) -> Number:  # noqa: N802 -- the name of the CSV column
+    def return_loss_dB(self) -> Number:
         """-10 log10 R; infinite when nothing is reflected."""
         return -10 * mpmath.log10(self.reflectance) if self.reflectance else mpmath.inf
 
@@ -148,7 +148,9 @@ def _answer(mp: Any, stack: Stack, f: Number, angle: float, polarization: str) -
     for element in reversed(stack.elements):
         if isinstance(element, Layer):
             eps, mu = constitutive(mp, element.medium, f)
-            cosine, x, b = _layer(mp, eps, mu, eps * mu - sine_squared, k0 * mp.mpf(element.thickness), polarization)
+            cosine, x, b = _layer(
+                mp, eps, mu, eps * mu - sine_squared, k0 * mp.mpf(element.thickness), polarization
+            )
             electric, magnetic = cosine * electric + x * magnetic, b * electric + cosine * magnetic
         else:
             magnetic = magnetic + sheet_admittance(mp, element.sheet, f) * electric

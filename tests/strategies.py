@@ -4,10 +4,7 @@ A `Case` is one plane wave on one stack, the unit that most properties speak of.
 vacuum wavelengths, so that every frequency meets electrically thin and thick walls alike.
 """
 
-from __future__ import annotations
-
 from dataclasses import dataclass, replace
-from typing import TYPE_CHECKING
 
 import numpy as np
 from hypothesis import strategies as st
@@ -16,11 +13,9 @@ from stackcore.constants import SPEED_OF_LIGHT
 from stackcore.media.base import AbstractMedium
 from stackcore.media.conductor import ConductorMedium
 from stackcore.media.constant import VACUUM, ConstantMedium
+from stackcore.propagation import Response, solve
 from stackcore.sheets.series import SeriesSheet
 from stackcore.stack import METAL, Element, Layer, PerfectConductor, SheetPlacement, Stack
-
-if TYPE_CHECKING:
-    from stackcore.propagation.response import Response
 
 TE, TM = 0, 1
 
@@ -35,12 +30,10 @@ class Case:
 
     def solve(self) -> Response:
         """Return the response; every floating-point fault but a silent underflow is an error."""
-        from stackcore.propagation.solve import solve
-
         with np.errstate(all="raise", under="ignore"):
             return solve(self.stack, frequency=self.frequency, angle=self.angle)
 
-    def with_elements(self, elements: tuple[Element, ...]) -> Case:
+    def with_elements(self, elements: tuple[Element, ...]) -> "Case":
         """Return the same wave on another set of elements."""
         return replace(self, stack=replace(self.stack, elements=elements))
 

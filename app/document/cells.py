@@ -8,7 +8,7 @@ from app.document.edit import element_at, refuse, stack_at, with_element, with_s
 from app.document.library import with_material
 from app.document.material_cells import MATERIAL_COLUMNS, material_text, with_material_text
 from app.document.material_edits import material_of
-from app.document.reading import list_text, read_like, read_list, read_points
+from app.document.reading import list_text, read_like, read_list, read_points, read_range
 from stackcore.errors import UnitError, nearest
 from stackcore.job.limits import SHEET_PARTS
 from stackcore.job.records import AngleGrid, FrequencyGrid, JobRecord, LayerRecord, SheetRecord, Spacing
@@ -154,7 +154,9 @@ def _frequency(
     old: FrequencyGrid | tuple[Measure, ...], column: str, text: str
 ) -> FrequencyGrid | tuple[Measure, ...]:
     if not isinstance(old, FrequencyGrid) or column == "sweep.frequency":
-        return read_list(text, Dimension.FREQUENCY)
+        wanted = read_range(text, Dimension.FREQUENCY)
+        spacing = old.spacing if isinstance(old, FrequencyGrid) else "linear"
+        return FrequencyGrid(*wanted, spacing) if wanted else read_list(text, Dimension.FREQUENCY)
     part = column.rpartition(".")[2]
     if part == "points":
         return replace(old, points=read_points(text))
@@ -166,7 +168,8 @@ def _frequency(
 
 def _angle(old: AngleGrid | tuple[Measure, ...], column: str, text: str) -> AngleGrid | tuple[Measure, ...]:
     if not isinstance(old, AngleGrid) or column == "sweep.angle":
-        return read_list(text, Dimension.ANGLE)
+        wanted = read_range(text, Dimension.ANGLE)
+        return AngleGrid(*wanted) if wanted else read_list(text, Dimension.ANGLE)
     part = column.rpartition(".")[2]
     if part == "points":
         return replace(old, points=read_points(text))

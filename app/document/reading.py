@@ -20,6 +20,11 @@ _SUM: Final = re.compile(r"[\d.,]\s*[+-]\s*[\d.,]")
 _PAIR: Final = re.compile(r"\[(?P<inner>[^\[\]]*)\]")
 _SPACED: Final = re.compile(rf"({_NUMBER}\s+)+{_NUMBER}(\s*[^\s\d.,]+)?")
 _ENTRY: Final = re.compile(rf"{_NUMBER}(?:\s*[^\s\d.,]+)?")
+_RANGE: Final = re.compile(
+    r"(?:from\s+)?(?P<start>.+?)\s*(?:\bto\b|…|\.\.+)\s*(?P<stop>[^,;]+?)"
+    r"(?:\s*(?:[,;]|\bin\b)\s*(?P<points>\d+)(?:\s*(?:points?|angles?|frequencies))?)?",
+    re.IGNORECASE,
+)
 _UNIT_AT_END: Final = re.compile(r"[\d.,)]\s*(?P<unit>[^\s\d.,()+*-][^\d.,()+*-]*)$")
 _COMMA_IN_NUMBER: Final = re.compile(r"\d,\d")
 
@@ -100,6 +105,34 @@ def read_list(text: str, dimension: Dimension) -> tuple[Measure, ...]:
         raise UnitError("the list is empty", f"values divided by semicolons: {dimension.example}; ...")
     unit = unit_of(entries[-1], dimension) or dimension.usual_unit
     return tuple(parse_measure(entry, dimension, default_unit=unit) for entry in entries)
+
+
+def read_range(text: str, dimension: Dimension) -> tuple[Measure, Measure, int] | None:
+    """Return start, stop and number of points of an even sweep, or None when the text is no range.
+
+    A start without a unit has that of the stop; when that has none either, the usual unit.
+
+    Raises
+    ------
+    UnitError
+        For an end that is no quantity, and for a range that does not say how many points.
+
+    Examples
+    --------
+    >>> start, stop, points = read_range("0 to 60 deg, 7 points", Dimension.ANGLE)
+    >>> start.text, stop.text, points
+    ('0 deg', '60 deg', 7)
+    >>> read_range("0, 30, 45 deg", Dimension.ANGLE) is None
+    True
+    """
+    match = _RANGE.fullmatch(text.strip())
+    if match is None:
+        return None
+    if match["points"] is None:
+        raise UnitError(f"{text!r} does not say how many points", f"{text.strip()}, 7 points")
+    unit = unit_of(match["stop"], dimension) or dimension.usual_unit
+    start, stop = (parse_measure(match[end], dimension, default_unit=unit) for end in ("start", "stop"))
+    return start, stop, int(match["points"])
 
 
 def list_text(measures: tuple[Measure, ...]) -> str:

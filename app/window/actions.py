@@ -186,7 +186,7 @@ def _add_submenu(menu: QMenu, act: Act) -> None:
     fill()
 
 
-def keys_text(act: Act) -> str:
-    """Return the shortcuts of an act for reading: ``Ctrl+Y or Ctrl+Shift+Z``."""
+def keys_text(shortcuts: Iterable[str]) -> str:
+    """Return key sequences for reading: ``Ctrl+Y or Ctrl+Shift+Z``."""
     native = QKeySequence.SequenceFormat.NativeText
-    return " or ".join(QKeySequence(keys).toString(native) for keys in act.shortcuts)
+    return " or ".join(QKeySequence(keys).toString(native) for keys in shortcuts)

@@ -17,7 +17,7 @@ PAGES: Final = {
 }
 """Page name -> heading, in the order of the panel."""
 
-UNIT_WORDS: Final = {"": "a fraction", "dB": "decibels", "deg": "degrees", "s": "seconds"}
+UNIT_WORDS: Final = {"dB": "decibels", "deg": "degrees", "s": "seconds"}
 
 KeyGroup = tuple[str, Sequence[tuple[str, str]]]
 
@@ -27,26 +27,25 @@ def conventions_page(theme: Theme) -> str:
     rows = [f"<p>{escape(text)}</p>" for text in CONVENTIONS.values()]
     quantities = []
     for quantity in QUANTITIES.values():
-        unit = UNIT_WORDS.get(quantity.unit, quantity.unit)
+        unit = f"In {UNIT_WORDS.get(quantity.unit, quantity.unit)}. " if quantity.unit else ""
         symbol = f" <i>{escape(quantity.symbol)}</i>" if quantity.symbol else ""
         quantities.append(
-            f'<h3><a name="{quantity.name}"></a>{escape(quantity.label)}{symbol}</h3>'
+            f'<p class="term"><a name="{quantity.name}"></a>{escape(quantity.label)}{symbol}</p>'
             f"<p>{escape(quantity.definition)}<br>"
-            f'<span style="color:{theme.muted}">In {unit}. {escape(quantity.sign)}<br>'
+            f'<span style="color:{theme.muted}">{escape(unit + quantity.sign)}<br>'
             f"In tables and files: <code>{quantity.name}</code></span></p>"
         )
-    return _page("conventions", [*rows, "<h2>Quantities</h2>", *quantities])
+    return _page("conventions", [*rows, "<p class='heading'>Quantities</p>", *quantities])
 
 
 def keyboard_page(theme: Theme, groups: Iterable[KeyGroup]) -> str:
     """Return the keys, group by group, each a line of key and what it does."""
     parts: list[str] = []
     for heading, lines in groups:
-        parts.append(f"<h2>{escape(heading)}</h2><table cellspacing='0' cellpadding='2'>")
+        parts.append(f"<p class='heading'>{escape(heading)}</p><table cellspacing='0' cellpadding='2'>")
         for keys, what in lines:
             parts.append(
-                f"<tr><td style='color:{theme.muted}; padding-right:16px'>{escape(keys)}</td>"
-                f"<td>{escape(what)}</td></tr>"
+                f"<tr><td width='120' style='color:{theme.muted}'>{escape(keys)}</td><td>{escape(what)}</td></tr>"
             )
         parts.append("</table>")
     return _page("keyboard", parts)
@@ -55,11 +54,11 @@ def keyboard_page(theme: Theme, groups: Iterable[KeyGroup]) -> str:
 def cautions_page(theme: Theme, here: Iterable[Caution]) -> str:
     """Return what the results do not say: first the notes of the present job, then what always holds."""
     parts = [f"<p><b>{escape(STANDING)}</b></p>"]
-    notes = [f"<h3>{escape(caution.brief)}</h3><p>{escape(caution.full)}</p>" for caution in here]
+    notes = [f"<p class='term'>{escape(caution.brief)}</p><p>{escape(caution.full)}</p>" for caution in here]
     if notes:
-        parts += ["<h2>For what is shown now</h2>", *notes]
-    parts.append("<h2>Always</h2>")
-    parts += [f"<h3>{escape(heading)}</h3><p>{escape(text)}</p>" for heading, text in ALWAYS]
+        parts += ["<p class='heading'>For what is shown now</p>", *notes]
+    parts.append("<p class='heading'>Always</p>")
+    parts += [f"<p class='term'>{escape(heading)}</p><p>{escape(text)}</p>" for heading, text in ALWAYS]
     return _page("cautions", parts)
 
 
@@ -78,7 +77,7 @@ def about_page(theme: Theme, version: str, parts: Iterable[tuple[str, str, str]]
                 f"<p><b>Slabwright {escape(version)}</b><br>"
                 "A workbench for flat multilayer walls met by a plane wave.</p>"
             ),
-            "<h2>Made with</h2>",
+            "<p class='heading'>Made with</p>",
             f"<table cellspacing='0' cellpadding='2'>{rows}</table>",
             (
                 f"<p style='color:{theme.muted}'>Help &gt; Copy diagnostics puts versions and the last lines of "
@@ -89,4 +88,4 @@ def about_page(theme: Theme, version: str, parts: Iterable[tuple[str, str, str]]
 
 
 def _page(name: str, parts: Iterable[str]) -> str:
-    return f"<h1>{PAGES[name]}</h1>" + "".join(parts)
+    return f"<p class='title'>{PAGES[name]}</p>" + "".join(parts)

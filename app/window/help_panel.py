@@ -90,10 +90,10 @@ class HelpPanel(QWidget):
 def _style(theme: Theme, font: QFont) -> str:
     size = font.pointSizeF() if font.pointSizeF() > 0 else 9.0
     return f"""
-    h1 {{ font-size: {size * 1.3:.1f}pt; font-weight: 500; margin: 0 0 8px 0; }}
-    h2 {{ font-size: {size * 1.12:.1f}pt; font-weight: 500; margin: 16px 0 4px 0; }}
-    h3 {{ font-size: {size:.1f}pt; font-weight: 600; margin: 12px 0 0 0; }}
     p {{ margin: 4px 0 4px 0; }}
+    p.title {{ font-size: {size * 1.3:.1f}pt; font-weight: 500; margin: 0 0 8px 0; }}
+    p.heading {{ font-size: {size * 1.12:.1f}pt; font-weight: 500; margin: 16px 0 4px 0; }}
+    p.term {{ font-weight: 600; margin: 12px 0 0 0; }}
     code {{ color: {theme.muted}; }}
     a {{ color: {theme.accent}; }}
     """

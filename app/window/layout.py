@@ -4,10 +4,21 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Final
 
-from PySide6.QtCore import QSettings, QSize, Qt
+from PySide6.QtCore import QByteArray, QSettings, QSize, Qt
 from PySide6.QtGui import QColor, QPainter, QPaintEvent
-from PySide6.QtWidgets import QDockWidget, QMainWindow, QSplitter, QSplitterHandle, QVBoxLayout, QWidget
+from PySide6.QtWidgets import (
+    QDockWidget,
+    QHBoxLayout,
+    QLabel,
+    QMainWindow,
+    QSplitter,
+    QSplitterHandle,
+    QToolButton,
+    QVBoxLayout,
+    QWidget,
+)
 
+from app.look.palette import heading_font
 from app.look.theme import Theme
 
 VERSION: Final = 1
@@ -150,14 +161,20 @@ class Arrangement:
     def restore(self) -> None:
         """Arrange everything as it was left, or as at the first run when nothing (usable) is remembered."""
         self._window.resize(FIRST_SIZE)
-        stored = self._settings.value("layout/version", 0, type=int) == VERSION
-        if stored:
-            self._window.restoreGeometry(self._settings.value("layout/geometry"))
-        if not stored or not self._window.restoreState(self._settings.value("layout/state"), VERSION):
+        if self._settings.value("layout/version", 0, type=int) != VERSION or not self._restore_window():
             self.reset()
             return
         for splitter in self.splitters:
-            splitter.restoreState(self._settings.value(f"layout/{splitter.objectName()}"))
+            splitter.restoreState(self._bytes(splitter.objectName()))
+
+    def _restore_window(self) -> bool:
+        self._window.restoreGeometry(self._bytes("geometry"))
+        return self._window.restoreState(self._bytes("state"), VERSION)
+
+    def _bytes(self, key: str) -> QByteArray:
+        """Return a remembered value, or nothing when it is not what it should be."""
+        value = self._settings.value(f"layout/{key}")
+        return value if isinstance(value, QByteArray) else QByteArray()
 
 
 def _stacked(*widgets: QWidget) -> QWidget:
@@ -174,10 +191,29 @@ def _stacked(*widgets: QWidget) -> QWidget:
 def _dock(window: QMainWindow, title: str, widget: QWidget) -> QDockWidget:
     dock = QDockWidget(title, window)
     dock.setObjectName(f"dock {title}")
+    dock.setTitleBarWidget(_title_bar(dock, title))
     dock.setWidget(widget)
     window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
     dock.hide()
     return dock
+
+
+def _title_bar(dock: QDockWidget, title: str) -> QWidget:
+    """Return a heading with Close; it can still be dragged like any title."""
+    bar = QWidget(dock)
+    name = QLabel(title, bar)
+    name.setFont(heading_font(name.font()))
+    close = QToolButton(bar)
+    close.setText("Close")
+    close.setAutoRaise(True)
+    close.setToolTip(f"Close the panel {title}; the menu opens it again.")
+    close.clicked.connect(dock.close)
+    row = QHBoxLayout(bar)
+    row.setContentsMargins(16, 4, 8, 4)
+    row.setSpacing(8)
+    row.addWidget(name, 1)
+    row.addWidget(close)
+    return bar
 
 
 def _share(splitter: QSplitter, share: float, room: int) -> None:

@@ -23,6 +23,7 @@ from app.window.editing import ElementQuestions, StackCommands
 from app.window.exporting import Exporter, ProgressLine, csv_steps
 from app.window.files import Files
 from app.window.first_view import first_view
+from app.window.help_pages import KeyGroup
 from app.window.help_panel import HelpPanel
 from app.window.keys import key_groups
 from app.window.layout import Arrangement
@@ -74,7 +75,7 @@ class MainWindow(QMainWindow):
         super().__init__()
         self._session, self._view, self._settings = session, view, settings
         self._net = crash_net
-        self._leaving = self._closed = False
+        self._closing = self._may_close = self._closed = False
         self._theme = self._chosen_theme()
         self.messages = Messages(self)
         self._strip = MessageStrip(self.messages, self._theme, self)
@@ -153,12 +154,15 @@ class MainWindow(QMainWindow):
 
     def closeEvent(self, event: QCloseEvent) -> None:
         """Ask about unsaved changes, then end everything that runs."""
-        if not self._closed and not self._leaving:
+        if not self._may_close:
+            self._closing = True
+            self._files.leave(self._permit_closing)
+            self._closing = False
+        if self._may_close:
+            self._shut_down()
+            event.accept()
+        else:
             event.ignore()
-            self._files.leave(self._leave)
-            return
-        self._shut_down()
-        event.accept()
 
     def dragEnterEvent(self, event: QDragEnterEvent) -> None:
         """Welcome one local file."""
@@ -183,12 +187,15 @@ class MainWindow(QMainWindow):
         return HelpPanel(
             {
                 "conventions": help_pages.conventions_page,
-                "keyboard": lambda theme: help_pages.keyboard_page(theme, key_groups(self._actions.table)),
+                "keyboard": lambda theme: help_pages.keyboard_page(theme, self._key_groups()),
                 "cautions": lambda theme: help_pages.cautions_page(theme, self._cautions()),
                 "about": lambda theme: help_pages.about_page(theme, version_of("slabwright"), parts()),
             },
             self._theme,
         )
+
+    def _key_groups(self) -> tuple[KeyGroup, ...]:
+        return key_groups(self._actions.table, self._panels.curves.commands.table)
 
     def _make_actions(self) -> Actions:
         session, tell = self._session, self.messages.tell
@@ -225,6 +232,9 @@ class MainWindow(QMainWindow):
         self._recompute.told.connect(self._status.tell)
         self._recompute.answered.connect(self._answered)
         self._recompute.failed.connect(self._failed)
+        self._recompute.busy.connect(self._panels.curves.set_busy)
+        self._panels.curves.pointed.connect(self._status.point)
+        self._panels.wall.edit_requested.connect(self._panels.edit_element)
         self._exporter.running.connect(self._actions.refresh)
         self._status.cautions.clicked.connect(lambda: self.show_help("cautions"))
         self._arrangement.dock(MATERIALS).visibilityChanged.connect(self._actions.refresh)
@@ -320,9 +330,10 @@ class MainWindow(QMainWindow):
     def _quit(self) -> None:
         self.close()
 
-    def _leave(self) -> None:
-        self._leaving = True
-        self.close()
+    def _permit_closing(self) -> None:
+        self._may_close = True
+        if not self._closing:  # Qt does not close a window again that is being closed
+            self.close()
 
     def _shut_down(self) -> None:
         if self._closed:

@@ -10,6 +10,7 @@ from dataclasses import dataclass
 from typing import Final
 
 from PySide6.QtCore import QObject, Qt, Signal
+from PySide6.QtGui import QFont
 from PySide6.QtWidgets import (
     QFrame,
     QHBoxLayout,
@@ -23,7 +24,6 @@ from PySide6.QtWidgets import (
 )
 
 from app.look.colour import mix
-from app.look.palette import heading_font
 from app.look.theme import Theme
 from stackcore.errors import Severity
 
@@ -158,7 +158,9 @@ class MessageStrip(QFrame):
         self.setAccessibleName(f"{WORDS[message.severity]}: {message.text}")
 
     def _build(self) -> None:
-        self._word.setFont(heading_font(self.font()))
+        font = self.font()
+        font.setWeight(QFont.Weight.DemiBold)
+        self._word.setFont(font)
         selectable = Qt.TextInteractionFlag.TextSelectableByMouse | Qt.TextInteractionFlag.TextSelectableByKeyboard
         self._text.setTextInteractionFlags(selectable)
         self._text.setFocusPolicy(Qt.FocusPolicy.NoFocus)
@@ -166,17 +168,17 @@ class MessageStrip(QFrame):
         self._details.setAccessibleName("Every fault with its place")
         self._details.setFrameShape(QFrame.Shape.NoFrame)
         self._details.setTabChangesFocus(True)
-        self._details.setLineWrapMode(QPlainTextEdit.LineWrapMode.NoWrap)
+        self._details.setHorizontalScrollBarPolicy(Qt.ScrollBarPolicy.ScrollBarAlwaysOff)
         self._dismiss.setText("Dismiss")
         self._dismiss.setAutoRaise(True)
         self._dismiss.setToolTip("Take this message away (Esc)")
         self._dismiss.clicked.connect(self._messages.dismiss)
         line = QHBoxLayout()
         line.setSpacing(8)
-        line.addWidget(self._word, alignment=Qt.AlignmentFlag.AlignTop)
+        line.addWidget(self._word)
         line.addWidget(self._text, 1)
         line.addLayout(self._choices)
-        line.addWidget(self._dismiss, alignment=Qt.AlignmentFlag.AlignTop)
+        line.addWidget(self._dismiss)
         column = QVBoxLayout(self)
         column.setContentsMargins(16, 8, 8, 8)
         column.setSpacing(4)
@@ -186,8 +188,9 @@ class MessageStrip(QFrame):
     def _show_details(self, details: tuple[str, ...]) -> None:
         self._details.setVisible(bool(details))
         self._details.setPlainText("\n".join(details))
-        lines = min(len(details), LINES) + 1
-        self._details.setFixedHeight(lines * self._details.fontMetrics().lineSpacing() + 8)
+        lines = min(len(details), LINES)
+        margin = round(2 * self._details.document().documentMargin())
+        self._details.setFixedHeight(lines * self._details.fontMetrics().lineSpacing() + margin)
 
     def _show_choices(self, choices: tuple[Choice, ...]) -> None:
         for old in self._buttons:
@@ -197,7 +200,7 @@ class MessageStrip(QFrame):
         for choice in choices:
             button = QPushButton(choice.words, self)
             button.clicked.connect(lambda _=False, chosen=choice: self._choose(chosen))
-            self._choices.addWidget(button, alignment=Qt.AlignmentFlag.AlignTop)
+            self._choices.addWidget(button)
             self._buttons.append(button)
 
     def _choose(self, choice: Choice) -> None:

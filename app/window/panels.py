@@ -19,9 +19,10 @@ from app.window.exporting import Tell
 from app.window.help_panel import HelpPanel
 from app.window.layout import Places
 from app.window.recompute import Viewer
+from stackcore.job.records import LayerRecord
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True, slots=True, weakref_slot=True)
 class Panels:
     """Every panel by its name."""
 
@@ -71,13 +72,23 @@ class Panels:
         if bar is not None:
             bar.rename()
 
+    def edit_element(self, row: int) -> None:
+        """Open the cell of an element's main value in the table: thickness, or resistance of a sheet."""
+        table = self.elements.table
+        is_layer = isinstance(table.elements_model().stack.elements[row], LayerRecord)
+        table.go_to(row, "thickness" if is_layer else "resistance")
+        table.setFocus(Qt.FocusReason.OtherFocusReason)
+        table.edit(table.currentIndex())
+
     def focus(self, step: int) -> None:
         """Move the focus to the next visible panel (`step` 1) or the one before (-1)."""
         shown = [panel for panel in self.in_order if panel.isVisible()]
-        if not shown:
-            return
-        now = next((place for place, panel in enumerate(shown) if has_focus(panel)), -1 if step > 0 else 0)
-        focus_into(shown[(now + step) % len(shown)])
+        here = next((place for place, panel in enumerate(shown) if has_focus(panel)), -1 if step > 0 else 0)
+        for distance in range(1, len(shown) + 1):
+            panel = shown[(here + step * distance) % len(shown)]
+            focus_into(panel)
+            if has_focus(panel):
+                return
 
 
 def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_panel: HelpPanel) -> Panels:
@@ -88,7 +99,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
         sweep=SweepPanel(session, view, theme, tell),
         curves=CurvesPanel(session, view, theme, tell),
         readings=ReadingsPanel(session, view, theme, tell),
-        materials=MaterialsPanel(session, theme, tell),
+        materials=MaterialsPanel(session, view, theme, tell),
         help=help_panel,
     )
 

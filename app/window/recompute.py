@@ -34,11 +34,14 @@ class Recompute(QObject):
         The faults of a stack that cannot be computed, a tuple.
     answered(object)
         Every answer, after the panels have it.
+    busy(bool)
+        A calculation takes longer than `PATIENCE`, or no longer does.
     """
 
     told = Signal(str)
     failed = Signal(object)
     answered = Signal(object)
+    busy = Signal(bool)
 
     def __init__(
         self, session: Session, view: View, lane: LiveLane, viewers: Sequence[Viewer], parent: QObject
@@ -128,7 +131,8 @@ class Recompute(QObject):
         """Say in words what is shown, and mark it when it is old."""
         drafts = self._session.document.drafts
         late = self._lane.busy and not self._patience.isActive()
-        self._mark(bool(drafts or self._fault or late))
+        self._mark(bool(drafts or self._fault))
+        self.busy.emit(late)
         if drafts:
             more = f", and {len(drafts) - 1} more" if len(drafts) > 1 else ""
             self.told.emit(f"Not up to date: {drafts[0].text!r} is no value ({drafts[0].cell.path}){more}")

@@ -69,9 +69,9 @@ class StatusLine(QStatusBar):
         self._told = QLabel(self)
         self._told.setAccessibleName("State of the calculation")
         self._told.setTextInteractionFlags(Qt.TextInteractionFlag.TextSelectableByMouse)
-        self._told.setContentsMargins(8, 0, 16, 0)
+        self._told.setContentsMargins(8, 0, 8, 0)
         self.setSizeGripEnabled(False)
-        self.setContentsMargins(8, 0, 0, 4)
+        self.setContentsMargins(0, 0, 0, 4)
         self.addWidget(self.cautions, 1)
         self.addPermanentWidget(self._told)
         self.set_theme(theme)
@@ -95,6 +95,13 @@ class StatusLine(QStatusBar):
     def tell(self, text: str) -> None:
         """Say on the right what is computed, or why it is old."""
         self._told.setText(text)
+
+    def point(self, text: str) -> None:
+        """Show what the mouse or the keys point at in the plot, for as long as they do."""
+        if text:
+            self.showMessage(text)
+        else:
+            self.clearMessage()
 
     def note(self, text: str) -> None:
         """Show a passing note."""

@@ -15,6 +15,7 @@ import numpy as np
 from PySide6.QtCore import QObject, Qt, Signal, Slot
 
 from app.document.view import ViewState
+from app.workers.collecting import WindowCollector
 from stackcore.errors import Fault, InputError, SlabwrightError
 from stackcore.job import Job
 from stackcore.media.base import FloatArray
@@ -145,8 +146,11 @@ class LiveLane(QObject):
         self._asked = 0
         self._heard = 0
         self._closed = False
+        # Not a child of the lane: it must still be there to give the search back when the lane is gone.
+        self._collector = WindowCollector()
         # A lane that dies with its parent, never closed, must not leave its thread waiting for ever.
         self.destroyed.connect(self._slot.stop)
+        self.destroyed.connect(self._collector.release)
 
     @property
     def busy(self) -> bool:
@@ -215,9 +219,11 @@ class LiveLane(QObject):
         if self._thread is not None:
             self._thread.join()
             self._thread = None
+        self._collector.release()
 
     def _start(self) -> None:
         if self._thread is None:
+            self._collector.hold()
             # No reference to the lane goes into the thread: the lane can be destroyed while it runs.
             arguments = (self._slot, self._solve, self._relay)
             self._thread = threading.Thread(target=_work, args=arguments, name="live lane", daemon=True)

@@ -8,7 +8,7 @@ A text cell that a spreadsheet would take for a formula, because ``=``, ``+``, `
 comes first in it, is written with an apostrophe in front.
 """
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Generator, Iterator, Sequence
 from typing import Final, TextIO
 
 import numpy as np
@@ -76,7 +76,9 @@ def csv_rows(response: Response, name: str | None = None) -> str:
     return "".join([f"{head}{row}{LINE_END}" for head, row in zip(heads, rows, strict=True)])
 
 
-def write_csv(job: Job, stream: TextIO, *, stacks: Sequence[Stack] | None = None) -> Iterator[float]:
+def write_csv(
+    job: Job, stream: TextIO, *, stacks: Sequence[Stack] | None = None
+) -> Generator[float, None, None]:
     """Solve stacks over the sweep of `job` and write them, yielding after each part the fraction that is done.
 
     The sweep is solved and written in parts, so that its size is bounded by the disk and not by the memory. Nothing

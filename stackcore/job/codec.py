@@ -95,7 +95,8 @@ def _told(faults: list[Fault], untold: int, record: JobRecord) -> list[Fault]:
         section = sections.get(re.split(r"[.\[]", fault.path)[0], -1)
         if fault.path.startswith("materials"):
             return section, [materials[place] for place in _places_above(fault.path) if place in materials]
-        return section, [int(digits) for digits in re.findall(r"\[(\d+)\]", fault.path)]
+        places = [int(digits) for digits in re.findall(r"\[(\d+)\]", fault.path)]
+        return section, [int(fault.path.startswith("sweep.angle")), *places]
 
     told = sorted(faults, key=order)
     untold += len(told[MOST_FAULTS:])

@@ -143,7 +143,7 @@ def _wrapped(values: list[str]) -> str:
         return flat
     lines, line = [], ""
     for value in values:
-        if line and len(line) + len(value) + 8 > _WIDTH:
+        if line and len(line) + len(value) + 9 > _WIDTH:
             lines.append(line)
             line = value
         else:

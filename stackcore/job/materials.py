@@ -101,6 +101,8 @@ def _with_library_values(material: MaterialRecord) -> MaterialRecord:
     entry = _entry(material)
     if entry is None or (material.model and _constants(material)):
         return material
-    constants: dict[str, Any] = dict(_completed(_constants(material), entry))
-    source = material.source or entry.provenance.source
+    given = _constants(material)
+    constants: dict[str, Any] = dict(_completed(given, entry))
+    # The library's source vouches for its own values only.
+    source = material.source or ("" if given else entry.provenance.source)
     return replace(material, model=entry.model, source=source, **constants)

@@ -2,7 +2,7 @@
 
 1 to 40 elements, 1 Hz to 1 PHz, 0 to 89.999 degrees, |ε| to 1e4, loss tangents to 1e3, μ to 1e3, sheets of
 1 milliohm to 1 megohm, perfect, good and bad conductors behind, different half-spaces. Thicknesses run from
-1 nm to 1 m, and stop where a layer that lets the wave through reaches 1e6 rad.
+1 nm to 1 m, and stop where a layer that lets the wave through reaches 1e6 rad (1e4 in a dispersive medium).
 """
 
 import numpy as np
@@ -16,6 +16,7 @@ from stackcore.stack import METAL, Element, Layer, PerfectConductor, SheetPlacem
 from tests.strategies import Case
 
 THICKEST_RAD = 1e6
+THICKEST_DISPERSIVE_RAD = 1e4
 
 
 def random_case(rng: np.random.Generator, *, lossless: bool = False, most: int = 40) -> Case:
@@ -77,12 +78,13 @@ def _back(rng: np.random.Generator, *, lossless: bool) -> AbstractMedium | Perfe
 
 
 def _thickness(rng: np.random.Generator, medium: AbstractMedium, frequency: float) -> float:
-    """Return a thickness in m, less than `THICKEST_RAD` for a medium that carries the wave so far."""
+    """Return a thickness in m, within the thickest phase where the medium carries the wave so far."""
     values = medium.evaluate(np.array(frequency))
     index = np.sqrt(complex(values.permittivity * values.permeability))
     thickest = 1.0
     if abs(index.imag) < 0.1 * abs(index.real):
-        thickest = min(thickest, THICKEST_RAD * SPEED_OF_LIGHT / (2 * np.pi * frequency * abs(index)))
+        phase = THICKEST_DISPERSIVE_RAD if medium.dispersive else THICKEST_RAD
+        thickest = min(thickest, phase * SPEED_OF_LIGHT / (2 * np.pi * frequency * abs(index)))
     return _decades(rng, 1e-9, thickest)
 
 

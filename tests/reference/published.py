@@ -5,22 +5,17 @@ it, ``recalled, re-derived`` (from memory of the source; an independent program 
 memory only) or ``second method`` (no publication: computed by an independent program).
 """
 
-from __future__ import annotations
-
 from collections.abc import Sequence
 from decimal import Decimal
-from typing import TYPE_CHECKING
 
 import numpy as np
 
 from stackcore.constants import SPEED_OF_LIGHT
 from stackcore.media.base import AbstractMedium
 from stackcore.media.constant import VACUUM, ConstantMedium
+from stackcore.propagation import Response, solve
 from stackcore.sheets.series import SeriesSheet
 from stackcore.stack import Element, Layer, PerfectConductor, SheetPlacement, Stack
-
-if TYPE_CHECKING:
-    from stackcore.propagation.response import Response
 
 READ = "read"
 TRANSCRIBED = "read in a transcription"
@@ -50,8 +45,6 @@ def assert_within(value: float, expected: float, tolerance: float, source: str) 
 
 def solved(stack: Stack, frequency: float | Sequence[float], degrees: float | Sequence[float] = 0.0) -> Response:
     """Return the response at frequencies in Hz and angles in degrees."""
-    from stackcore.propagation.solve import solve
-
     return solve(stack, frequency=np.asarray(frequency), angle=np.radians(degrees))
 
 

@@ -5,7 +5,7 @@ import pytest
 
 from stackcore.constants import FREE_SPACE_IMPEDANCE, SPEED_OF_LIGHT
 from stackcore.media.constant import VACUUM, ConstantMedium
-from stackcore.stack import METAL, Layer, Stack
+from stackcore.stack import METAL, Element, Layer, Stack
 from tests.reference.published import (
     READ,
     REDERIVED,
@@ -107,7 +107,9 @@ def test_oblique_screen(degrees: float, te: float, tm: float) -> None:
     for polarization, resistance in ((TE, te), (TM, tm)):
         r = solved(screen(resistance, float(gap)), X_BAND, degrees)
         # Six digits of resistance leave (0.5e-3 / (2 R))² of power.
-        assert float(r.reflectance[0, 0, polarization]) < (0.5e-3 / resistance) ** 2, f"oblique screen ({REDERIVED})"
+        assert float(r.reflectance[0, 0, polarization]) < (0.5e-3 / resistance) ** 2, (
+            f"oblique screen ({REDERIVED})"
+        )
 
 
 @pytest.mark.parametrize(("eps", "thickness", "tangent"), MATCHES)
@@ -135,7 +137,7 @@ def test_thin_magnetic_layer(loss: float, decibels: str) -> None:
 
 @pytest.mark.parametrize(("sheets", "band"), JAUMANN)
 def test_jaumann_absorber(sheets: tuple[float, ...], band: float) -> None:
-    """One to four sheets at quarter-wave spacings keep −20 dB over the printed fractional band, within the limit."""
+    """One to four sheets at quarter-wave spacings keep −20 dB over the printed band, within the limit."""
     stack = _jaumann(sheets)
     at = X_BAND * (1 + np.linspace(-band, band, 801) / 2)
     r = solved(stack, list(at))
@@ -187,7 +189,7 @@ def test_long_wave_slope(mu: float) -> None:
 
 def _jaumann(sheets: tuple[float, ...]) -> Stack:
     """Return the sheets, given from the metal outward, at quarter-wave spacings."""
-    found = []
+    found: list[Element] = []
     for resistance in reversed(sheets):
         found += [sheet(resistance), Layer(VACUUM, WAVELENGTH / 4)]
     return wall(*found, back=METAL)

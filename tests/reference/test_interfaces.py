@@ -1,5 +1,7 @@
 """Where two media meet: Fresnel's formulas, Brewster and critical angles, phases of total reflection."""
 
+from itertools import pairwise
+
 import numpy as np
 import pytest
 
@@ -135,7 +137,9 @@ def test_phase_of_total_reflection(degrees: float, difference: str) -> None:
 @pytest.mark.parametrize(("frequency", "eps", "reflected", "source"), SEA)
 def test_power_reflected_by_the_sea(frequency: float, eps: complex, reflected: str, source: str) -> None:
     """The power reflected at normal incidence by sea water of a printed permittivity is the printed one."""
-    assert_printed(float(solved(wall(back=ConstantMedium(eps)), frequency).reflectance[0, 0, TE]), reflected, source)
+    assert_printed(
+        float(solved(wall(back=ConstantMedium(eps)), frequency).reflectance[0, 0, TE]), reflected, source
+    )
 
 
 def test_wave_impedance_of_sea_water() -> None:
@@ -161,7 +165,7 @@ def _hemisphere(stack: Stack, edges: tuple[float, ...]) -> float:
     """Return 2∫R sin θ cos θ dθ over the pieces between `edges` in degrees, mean of TE and TM."""
     total = 0.0
     nodes, weights = np.polynomial.legendre.leggauss(200)
-    for low, high in zip(edges[:-1], edges[1:], strict=True):
+    for low, high in pairwise(edges):
         # x = u² (3 − 2u) puts the square-root corner of R at the critical angle to rest.
         u = (nodes + 1) / 2
         degrees = low + (high - low) * u * u * (3 - 2 * u)

@@ -15,6 +15,7 @@ from hypothesis import given, settings
 from stackcore.constants import FREE_SPACE_IMPEDANCE, SPEED_OF_LIGHT
 from stackcore.media.conductor import ConductorMedium
 from stackcore.media.constant import VACUUM, ConstantMedium
+from stackcore.propagation import solve
 from stackcore.sheets.series import SeriesSheet
 from stackcore.stack import Layer, SheetPlacement, Stack
 from tests.strategies import TE, TM, Case, cases
@@ -45,8 +46,6 @@ WALLS = {
 @pytest.mark.parametrize("name", WALLS)
 def test_wall_is_a_cascade_of_lines(name: str) -> None:
     """r and t of walls in air equal S11 and S21 of the cascade from 2 to 18 GHz."""
-    from stackcore.propagation.solve import solve
-
     response = solve(WALLS[name], FREQUENCY, 0.0)
     scattering = cascade(WALLS[name], FREQUENCY)
     for polarization in (TE, TM):
@@ -58,8 +57,6 @@ def test_wall_is_a_cascade_of_lines(name: str) -> None:
 
 def test_line_between_different_half_spaces() -> None:
     """With other half-spaces S21 is t times √(Y_back / Y_front), from power waves to tangential fields."""
-    from stackcore.propagation.solve import solve
-
     stack = Stack((Layer(GLASS_FIBRE, 3e-3),), front=ConstantMedium(2.0), back=ConstantMedium(9.0))
     response = solve(stack, FREQUENCY, 0.0)
     scattering = cascade(stack, FREQUENCY)

@@ -70,9 +70,7 @@ def test_quarter_wave_mirror(
 
 def test_pairs_for_a_wanted_reflectance() -> None:
     """0.995 with 2.5 and 1.5 on 1.5 takes seven pairs: six are not enough."""
-    six, seven = (
-        float(solved(mirror(n, False, 2.5, 1.5, 1.5), light(0.5)).reflectance[0, 0, TE]) for n in (6, 7)
-    )
+    six, seven = (float(solved(mirror(n, False, 2.5, 1.5, 1.5), light(0.5)).reflectance[0, 0, TE]) for n in (6, 7))
     assert six < 0.995 < seven, TENNESSEE
 
 
@@ -89,8 +87,8 @@ def test_width_of_the_stop_band() -> None:
     """R of a mirror of 100 pairs is 1 throughout 168.02 nm and falls just outside."""
     stack = mirror(100, False, 2.32, 1.38, 1.52)
     edges = np.array([429.727, 597.749])
-    inside = solved(stack, list(light(1e-3) / (edges + [1.5, -1.5])))
-    outside = solved(stack, list(light(1e-3) / (edges + [-2.5, 4.0])))
+    inside = solved(stack, list(light(1e-3) / (edges + np.array([1.5, -1.5]))))
+    outside = solved(stack, list(light(1e-3) / (edges + np.array([-2.5, 4.0]))))
     assert np.all(inside.reflectance[:, 0, TE] > 0.9999)
     assert np.all(outside.reflectance[:, 0, TE] < 0.99), ORFANIDIS
 
@@ -114,4 +112,6 @@ def test_orders_of_quarter_waves_fall_into_few_classes(layers: int, distinct: in
     found = [
         float(solved(wall(*order), light(0.5)).transmittance[0, 0, TE]) for order in product(kinds, repeat=layers)
     ]
-    assert len(set(np.round(found, 10))) == distinct, f"Hidden symmetries in N-layer dielectric stacks, arXiv ({READ})"
+    assert len(set(np.round(found, 10))) == distinct, (
+        f"Hidden symmetries in N-layer dielectric stacks, arXiv ({READ})"
+    )

@@ -124,7 +124,9 @@ def test_most_that_a_sheet_can_absorb(degrees: float) -> None:
     cosine = float(np.cos(np.radians(degrees)))
     for polarization, best in ((TE, 0.5 / cosine), (TM, 0.5 * cosine)):
         less, most, more = (
-            float(solved(wall(sheet(FREE_SPACE_IMPEDANCE * best * k)), 1e9, degrees).absorptance[0, 0, polarization])
+            float(
+                solved(wall(sheet(FREE_SPACE_IMPEDANCE * best * k)), 1e9, degrees).absorptance[0, 0, polarization]
+            )
             for k in (0.9, 1.0, 1.1)
         )
         assert_within(most, 0.5, 1e-14, WOLTERSDORFF)

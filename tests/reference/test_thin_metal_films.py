@@ -63,7 +63,7 @@ def test_surface_plasmon(metal: str, n: complex, degrees: str, least: str) -> No
 
 @pytest.mark.parametrize(("metal", "n", "degrees"), HALF_SPACE_ANGLES)
 def test_surface_plasmon_of_a_thick_film(metal: str, n: complex, degrees: str) -> None:
-    """The pole of a half-space, n_p sin θ = Re √(ε/(ε + 1)), lies at the printed angle, the dip within 0.2 degrees."""
+    """The pole of a half-space, n_p sin θ = Re √(ε/(ε + 1)), is at the printed angle, the dip within 0.2°."""
     eps = np.conj(n) ** 2
     angle = float(np.degrees(np.arcsin(np.sqrt(eps / (eps + 1)).real / 1.51509)))
     assert_printed(angle, degrees, f"{metal}, {RAETHER}")

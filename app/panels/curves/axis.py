@@ -1,5 +1,6 @@
 """The two axes: plain numbers, a light grid, a title in words."""
 
+from collections.abc import Callable
 from typing import Literal
 
 import pyqtgraph as pg
@@ -13,14 +14,16 @@ from app.panels.curves.scale import Ticks, linear_ticks, logarithmic_ticks
 class QuietAxis(pg.AxisItem):
     """An axis without a line of its own: ticks are the grid, numbers are plain also on a logarithmic axis.
 
-    `degrees` makes its steps parts of a turn. Its positions are log₁₀ of the value when `logarithmic` is set, as `FrequencyScale` makes them; the log
-    mode of the plotting library is not used, because it moves curves but not marks.
+    `degrees` makes its steps parts of a turn; `spell` writes the numbers of a logarithmic axis instead.
+    Its positions are log₁₀ of the value when `logarithmic` is set, as `FrequencyScale` makes them; the log mode
+    of the plotting library is not used, because it moves curves but not marks.
     """
 
     def __init__(self, orientation: Literal["left", "bottom"]) -> None:
         super().__init__(orientation)
         self.logarithmic = False
         self.degrees = False
+        self.spell: Callable[[float], str] | None = None
         self._ink = QColor()
         self._texts: dict[float, str] = {}
         self.setZValue(-200)
@@ -72,7 +75,7 @@ class QuietAxis(pg.AxisItem):
             room = metrics.horizontalAdvance("0000.0") * 1.5
         most = max(2.0, length / room)
         if self.logarithmic:
-            return logarithmic_ticks(low, high, most)
+            return logarithmic_ticks(low, high, most, self.spell)
         return linear_ticks(low, high, most, degrees=self.degrees)
 
     def boundingRect(self) -> QRectF:

@@ -61,8 +61,8 @@ def open_menu(commands: Iterable[Command], parent: QWidget, at: QPoint) -> QMenu
         if group is not None and command.group != group:
             menu.addSeparator()
         group = command.group
-        shown = QKeySequence(command.keys[0]).toString(QKeySequence.SequenceFormat.NativeText) if command.keys else ""
-        action = menu.addAction(f"{command.text}\t{shown}" if shown else command.text)
+        keys = [QKeySequence(key).toString(QKeySequence.SequenceFormat.NativeText) for key in command.keys[:1]]
+        action = menu.addAction("\t".join([command.text, *keys]))
         action.setToolTip(command.tip)
         action.setStatusTip(command.tip)
         action.setEnabled(command.enabled())

@@ -4,7 +4,7 @@ from collections.abc import Sequence
 
 import numpy as np
 from PySide6.QtCore import QBuffer, QByteArray, QIODevice, QMimeData
-from PySide6.QtGui import QImage
+from PySide6.QtGui import QImage, QImageWriter
 
 from app.series.curves import Curve
 from stackcore.quantities import QUANTITIES
@@ -36,7 +36,6 @@ def picture_data(image: QImage, svg: QByteArray) -> QMimeData:
         data.setData("image/svg+xml", svg)
     png = QBuffer()
     png.open(QIODevice.OpenModeFlag.WriteOnly)
-    # PySide's stub knows only file names and devices with a bytes format.
-    image.save(png, "PNG")
+    QImageWriter(png, QByteArray(b"png")).write(image)
     data.setData("image/png", png.data())
     return data

@@ -11,14 +11,17 @@ from PySide6.QtGui import QColor, QPainter, QPen, QPolygonF
 
 from app.panels.curves.frame import Frame, finite_runs
 from app.panels.curves.layer import Layer
-from stackcore.media.base import FloatArray
+from stackcore.arrays import FloatArray
 
 LIVE_WIDTH: Final = 1.0
 FINE_WIDTH: Final = 1.6
 CHOSEN_WIDTH: Final = 2.4
-# A stroke wider than a pixel costs the raster engine time that grows faster than its length; short pieces,
-# overlapping by one segment so that no joint shows, keep it proportional.
+# A stroke wider than a pixel costs the raster engine time that grows faster than its length; short pieces keep
+# it proportional. They overlap by a fraction of a pixel, so that no joint shows.
 _PIECE: Final = 48
+_JOIN: Final = 0.6
+_FEW_POINTS: Final = 40
+_POINT: Final = 2.5
 # Points beyond which the finer drawing would take longer than a person waits without noticing.
 _FINE_POINTS: Final = 60_000
 
@@ -102,10 +105,11 @@ class CurveLayer(Layer):
                 first, last = _visible(curve.positions, first, last, frame)
                 across = frame.across(curve.positions[first:last])
                 down = frame.down(curve.values[first:last])
-                if last - first == 1:
-                    _draw_dot(painter, curve, QPointF(across[0], down[0]))
-                elif last > first:
+                if last - first > 1:
                     _draw_run(painter, pen, curve.dashes, across, down)
+                if last - first == 1 or len(curve.values) <= _FEW_POINTS:
+                    for x, y in zip(across.tolist(), down.tolist(), strict=True):
+                        _draw_dot(painter, curve, QPointF(x, y))
 
 
 def _visible(positions: FloatArray, first: int, last: int, frame: Frame) -> tuple[int, int]:
@@ -128,20 +132,32 @@ def _draw_run(
         return
     pen.setCapStyle(Qt.PenCapStyle.FlatCap)
     painter.setPen(pen)
-    lengths = np.concatenate(([0.0], np.cumsum(np.hypot(np.diff(across), np.diff(down))))) if dashes else None
+    steps = np.hypot(np.diff(across), np.diff(down))
+    lengths = np.concatenate(([0.0], np.cumsum(steps)))
     for begin in range(0, len(across) - 1, _PIECE):
-        start, stop = max(begin - 1, 0), begin + _PIECE + 1
-        if lengths is not None:
-            pen.setDashOffset(float(lengths[start]) / width)
+        stop = begin + _PIECE + 1
+        points = polygon(across[begin:stop], down[begin:stop])
+        lead = 0.0
+        if begin and steps[begin - 1] > 0:
+            lead = min(_JOIN, float(steps[begin - 1]))
+            back = lead / steps[begin - 1]
+            points.prepend(
+                QPointF(
+                    across[begin] + (across[begin - 1] - across[begin]) * back,
+                    down[begin] + (down[begin - 1] - down[begin]) * back,
+                )
+            )
+        if dashes:
+            pen.setDashOffset((float(lengths[begin]) - lead) / width)
             painter.setPen(pen)
-        painter.drawPolyline(polygon(across[start:stop], down[start:stop]))
+        painter.drawPolyline(points)
 
 
 def _draw_dot(painter: QPainter, curve: DrawnCurve, at: QPointF) -> None:
-    """Draw a point without neighbours: filled for a solid curve, open for a dashed one."""
-    painter.setPen(QPen(QColor(curve.colour), 1.6))
-    painter.setBrush(Qt.BrushStyle.NoBrush if curve.dashes else QColor(curve.colour))
-    painter.drawEllipse(at, 3.0, 3.0)
+    """Draw a computed point, so that a few listed frequencies do not pass for a continuous sweep."""
+    painter.setPen(Qt.PenStyle.NoPen)
+    painter.setBrush(QColor(curve.colour))
+    painter.drawEllipse(at, _POINT, _POINT)
     painter.setBrush(Qt.BrushStyle.NoBrush)
 
 

@@ -24,6 +24,7 @@ from stackcore.quantities import QUANTITIES
 _TURNS: Final = {"reflection_phase_deg": 180.0, "transmission_phase_deg": 180.0}
 _FADED: Final = 0.72
 _NORMAL: Final = 1e-12
+_GRAINS: Final = {"dB": 1e-9, "deg": 1e-7}
 
 
 def fill_palette(widget: QWidget, theme: Theme) -> None:
@@ -61,9 +62,7 @@ def draw_curves(
             order = np.argsort(positions, kind="stable")
             positions, values = positions[order], values[order]
         leap = _TURNS.get(curve.quantity, np.inf)
-        drawn.append(
-            DrawnCurve(positions, values, colour, dashes(curve.polarization), index == chosen, leap)
-        )
+        drawn.append(DrawnCurve(positions, values, colour, dashes(curve.polarization), index == chosen, leap))
     return tuple(drawn)
 
 
@@ -90,12 +89,14 @@ def extent_of(curves: Sequence[Curve], scale: FrequencyScale, *, decibels: bool)
     values = np.concatenate(known) if known else np.zeros(0)
     low, high = (float(values.min()), float(values.max())) if len(values) else (0.0, 1.0)
     left, right = ends if ends else (0.0, 1.0)
-    quantity = curves[0].quantity if curves else ""
-    if quantity in _TURNS:
-        return Extent(left, right, low, high, -_TURNS[quantity], _TURNS[quantity], degrees=True)
-    fraction = bool(curves) and can_show_decibels(quantity) and not decibels
-    degrees = bool(curves) and curves[0].unit == "deg"
-    return Extent(left, right, low, high, top=1.0 if fraction else None, degrees=degrees)
+    if not curves:
+        return Extent(left, right, low, high)
+    quantity, unit = curves[0].quantity, curves[0].unit
+    turn = _TURNS.get(quantity)
+    floor, top = (-turn, turn) if turn is not None else (None, None)
+    if can_show_decibels(quantity) and not decibels:
+        top = 1.0
+    return Extent(left, right, low, high, floor, top, unit == "deg", _GRAINS.get(unit, 1e-30))
 
 
 def worst_spots(curves: Sequence[Curve], colours: Sequence[str], scale: FrequencyScale) -> dict[int, Spot]:
@@ -107,9 +108,7 @@ def worst_spots(curves: Sequence[Curve], colours: Sequence[str], scale: Frequenc
     }
 
 
-def draw_markers(
-    state: ViewState, drawn: Sequence[DrawnCurve], scale: FrequencyScale
-) -> tuple[DrawnMarker, ...]:
+def draw_markers(state: ViewState, drawn: Sequence[DrawnCurve], scale: FrequencyScale) -> tuple[DrawnMarker, ...]:
     """Return the markers; the active one also says its frequency."""
     markers = []
     for index, hertz in enumerate(state.markers):

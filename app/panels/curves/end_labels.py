@@ -86,9 +86,7 @@ class EndLabels(pg.GraphicsWidget):
         self._labels = tuple(labels)
         self._fit()
 
-    def paint(
-        self, painter: QPainter, option: QStyleOptionGraphicsItem, widget: QWidget | None = None
-    ) -> None:
+    def paint(self, painter: QPainter, option: QStyleOptionGraphicsItem, widget: QWidget | None = None) -> None:
         """Write the names."""
         if self._places is None:
             return

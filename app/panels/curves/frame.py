@@ -5,7 +5,7 @@ from typing import Final, overload
 
 import numpy as np
 
-from stackcore.media.base import FloatArray
+from stackcore.arrays import FloatArray
 
 FARTHEST: Final = 1e6
 """Pixels beyond which a point is not placed: the line to it looks the same and drawing stays exact."""

@@ -11,6 +11,7 @@ from app.panels.curves.frame import Frame
 SLACK: Final = 12.0
 """Pixels that a mark may reach beyond the plot area."""
 
+
 class Layer(QGraphicsItem):
     """One transparent sheet over the plot area; its own coordinates are the pixels of that area.
 
@@ -36,9 +37,7 @@ class Layer(QGraphicsItem):
         """Return the plot area, with room for marks that stand on its edge."""
         return self._bounds
 
-    def paint(
-        self, painter: QPainter, option: QStyleOptionGraphicsItem, widget: QWidget | None = None
-    ) -> None:
+    def paint(self, painter: QPainter, option: QStyleOptionGraphicsItem, widget: QWidget | None = None) -> None:
         """Draw; subclasses fill in `draw`."""
         painter.setRenderHint(QPainter.RenderHint.Antialiasing)
         self.draw(painter, self.frame())

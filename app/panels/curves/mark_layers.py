@@ -102,9 +102,7 @@ class MarkerLayer(Layer):
                     painter.drawEllipse(QPointF(x, y), _DOT, _DOT)
             self._draw_flag(painter, frame, marker, x, colour)
 
-    def _draw_flag(
-        self, painter: QPainter, frame: Frame, marker: DrawnMarker, x: float, colour: QColor
-    ) -> None:
+    def _draw_flag(self, painter: QPainter, frame: Frame, marker: DrawnMarker, x: float, colour: QColor) -> None:
         metrics = QFontMetricsF(self.font)
         width = max(metrics.horizontalAdvance(marker.text) + 8.0, 18.0)
         left = min(max(x - width / 2, 0.5), max(frame.width - width - 0.5, 0.5))

@@ -1,7 +1,7 @@
 """The curves: one quantity over frequency, a curve for each angle and polarization."""
 
 from collections.abc import Callable
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, Final
 
 import numpy as np
 from PySide6.QtCore import QPoint, QPointF, Signal
@@ -23,15 +23,19 @@ from app.panels.curves.range_strip import RangeStrip
 from app.panels.curves.scale import FrequencyScale
 from app.series.axis import frequency_axis, quantity_axis
 from app.series.curves import Curve, curves_of
+from app.series.texts import frequency_text
+from stackcore.arrays import FloatArray
 from stackcore.errors import Severity
-from stackcore.media.base import FloatArray
 
 if TYPE_CHECKING:
     from app.workers.live import Answer
 
 Tell = Callable[[str, Severity], None]
 
-_REACH = 9.0
+WIDE: Final = 1e5
+"""Ratio of the ends of a logarithmic band from which numbers carry their own unit: 1 kHz ... 1 THz."""
+
+_REACH: Final = 9.0
 
 
 class CurvesPanel(QWidget):
@@ -57,7 +61,7 @@ class CurvesPanel(QWidget):
     ) -> None:
         super().__init__(parent)
         self._session, self._view, self._theme, self._tell = session, view, theme, tell
-        self._answer: "Answer | None" = None
+        self._answer: Answer | None = None
         self._stale = False
         self._curves: tuple[Curve, ...] = ()
         self._colours: tuple[str, ...] = ()
@@ -89,9 +93,7 @@ class CurvesPanel(QWidget):
         hand.clicked.connect(self._choose_curve)
         hand.marker_wanted.connect(lambda at: self.commands.add_marker(self.frequency_at(at)))
         hand.marker_chosen.connect(lambda index: self._view.set(self, active_marker=index))
-        hand.marker_dragged.connect(
-            lambda index, at: self.commands.move_marker(index, self.frequency_at(at))
-        )
+        hand.marker_dragged.connect(lambda index, at: self.commands.move_marker(index, self.frequency_at(at)))
         hand.menu_wanted.connect(self._open_menu)
         hand.range_wanted.connect(self.type_range)
         self.plot.key_taken = self._take_key
@@ -214,7 +216,9 @@ class CurvesPanel(QWidget):
         upward = quantity_axis(state.quantity, self.sweep, decibels=state.decibels)
         self._units = (across.unit, upward.unit)
         self.scale = FrequencyScale(across.factor, state.log_frequency)
-        self.plot.bottom_axis.set_title(across.title)
+        wide = state.log_frequency and float(self.sweep.max()) > float(self.sweep.min()) * WIDE
+        self.plot.bottom_axis.spell = self._spell if wide else None
+        self.plot.bottom_axis.set_title("Frequency" if wide else across.title)
         self.plot.left_axis.set_title(upward.title)
         shown_as = (state.quantity, state.decibels, across.unit, state.log_frequency)
         # Where other numbers stand at an axis, a range of the old ones would show nothing: follow the new.
@@ -231,15 +235,16 @@ class CurvesPanel(QWidget):
         self._draw_marks()
         self._speak()
 
+    def _spell(self, value: float) -> str:
+        return frequency_text(value / self.scale.factor)
+
     def _draw_marks(self) -> None:
         state = self._view.state
         self._worst_spots = drawing.worst_spots(self._curves, self._colours, self.scale)
         shown = self._worst_spots if state.worst_shown else {}
         worst = words.worst_curve(self._curves)
         order = list(shown)
-        self.plot.worst_layer.set_spots(
-            tuple(shown.values()), order.index(worst) if worst in shown else None
-        )
+        self.plot.worst_layer.set_spots(tuple(shown.values()), order.index(worst) if worst in shown else None)
         markers = drawing.draw_markers(state, self.plot.curve_layer.curves, self.scale)
         self.plot.marker_layer.set_markers(markers)
 

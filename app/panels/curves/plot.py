@@ -42,8 +42,8 @@ _LARGEST: Final = 1e15
 class Extent:
     """The whole of what there is to show: ends of the frequency axis (positions) and of the values.
 
-    `floor` and `top` are ends that the values cannot pass, such as 0 and 1 of a fraction; `degrees` says that
-    the values are angles.
+    `floor` and `top` are ends that the values cannot pass, such as 1 of a fraction; `degrees` says that the
+    values are angles; below `grain` they are rounding errors.
     """
 
     left: float
@@ -53,10 +53,11 @@ class Extent:
     floor: float | None = None
     top: float | None = None
     degrees: bool = False
+    grain: float = 1e-30
 
     def values(self, low: float, high: float) -> tuple[float, float]:
         """Return the range of the axis that shows the values from `low` to `high`."""
-        return round_range(low, high, self.floor, self.top, degrees=self.degrees)
+        return round_range(low, high, self.floor, self.top, degrees=self.degrees, grain=self.grain)
 
 
 class CurvePlot(pg.GraphicsView):

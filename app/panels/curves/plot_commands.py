@@ -1,6 +1,7 @@
 """What can be done with the curves and their markers, as the table that keys and menu share."""
 
-from typing import TYPE_CHECKING
+from functools import partial
+from typing import TYPE_CHECKING, Final
 
 from PySide6.QtCore import QPointF
 
@@ -12,6 +13,17 @@ from app.series.texts import frequency_text
 
 if TYPE_CHECKING:
     from app.panels.curves.panel import CurvesPanel
+
+
+_STEPS: Final = {
+    "Left": -1,
+    "Right": 1,
+    "Ctrl+Left": -10,
+    "Ctrl+Right": 10,
+    "Home": -(10**9),
+    "End": 10**9,
+}
+"""Key -> steps of the sweep that the active marker goes."""
 
 
 class PlotCommands:
@@ -184,18 +196,15 @@ class PlotCommands:
                 enabled=lambda: words.worst_curve(self._panel.curves) is not None,
                 group=1,
             ),
-            Command("Remove marker", self.remove, ("Del", "Backspace"), "Remove the active marker.", enabled=some, group=1),
-            *(
-                Command("", lambda steps=steps: self.step(steps), (key,))
-                for key, steps in {
-                    "Left": -1,
-                    "Right": 1,
-                    "Ctrl+Left": -10,
-                    "Ctrl+Right": 10,
-                    "Home": -(10**9),
-                    "End": 10**9,
-                }.items()
+            Command(
+                "Remove marker",
+                self.remove,
+                ("Del", "Backspace"),
+                "Remove the active marker.",
+                enabled=some,
+                group=1,
             ),
+            *(Command("", partial(self.step, steps), (key,)) for key, steps in _STEPS.items()),
             Command("", lambda: self.next_marker(1), ("N", "PgDown")),
             Command("", lambda: self.next_marker(-1), ("P", "PgUp")),
             Command("", lambda: self.next_curve(1), ("Down",)),

@@ -5,13 +5,13 @@ for curves, markers, worst points and typed ranges alike.
 """
 
 import math
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from typing import Final
 
 import numpy as np
 
-from stackcore.media.base import FloatArray
+from stackcore.arrays import FloatArray
 
 _TINY: Final = 1e-300
 _ROUND: Final = (1.0, 2.0, 5.0, 10.0)
@@ -91,8 +91,8 @@ def linear_ticks(low: float, high: float, most: float, *, degrees: bool = False)
     return Ticks(major, number_texts(major, step))
 
 
-def logarithmic_ticks(low: float, high: float, most: float) -> Ticks:
-    """Return ticks for an axis of log₁₀ values, written as plain numbers.
+def logarithmic_ticks(low: float, high: float, most: float, spell: Callable[[float], str] | None = None) -> Ticks:
+    """Return ticks for an axis of log₁₀ values, written as plain numbers or as `spell` writes a value.
 
     Decades are thinned when they are many; 1-2-5 or all digits are written when there is room; within
     less than half a decade the numbers are evenly spaced round ones.
@@ -113,10 +113,11 @@ def logarithmic_ticks(low: float, high: float, most: float) -> Ticks:
         for digit in digits
     ]
     kept = [(at, value) for at, value in inside if low - 1e-9 <= at <= high + 1e-9]
-    between = () if every > 1 else tuple(d + math.log10(n) for d in decades for n in range(1, 10))
+    roomy = high - low <= 0.7 * most
+    between = tuple(d + math.log10(n) for d in decades for n in range(1, 10)) if roomy else ()
     written = {round(at, 9) for at, _ in kept}
     minor = tuple(at for at in between if low <= at <= high and round(at, 9) not in written)
-    return Ticks(tuple(at for at, _ in kept), tuple(_plain(value) for _, value in kept), minor)
+    return Ticks(tuple(at for at, _ in kept), tuple((spell or _plain)(value) for _, value in kept), minor)
 
 
 def number_texts(values: Sequence[float], step: float) -> tuple[str, ...]:
@@ -132,7 +133,13 @@ def number_texts(values: Sequence[float], step: float) -> tuple[str, ...]:
 
 
 def round_range(
-    low: float, high: float, floor: float | None = None, top: float | None = None, *, degrees: bool = False
+    low: float,
+    high: float,
+    floor: float | None = None,
+    top: float | None = None,
+    *,
+    degrees: bool = False,
+    grain: float = 1e-30,
 ) -> tuple[float, float]:
     """Return a range a little larger than the data, on round numbers, so that it does not tremble with them.
 
@@ -146,11 +153,15 @@ def round_range(
         Values the range hardly passes unless the data do, such as 1 for a fraction.
     degrees
         Round to parts of a turn.
+    grain
+        Values smaller than this are rounding errors: they are drawn as zero in a range around it.
     """
+    if max(abs(low), abs(high)) < grain:
+        return -1.0, 1.0
     span = high - low
     first, last = low, high
     if span <= max(abs(low), abs(high)) * 1e-6:
-        span = max(abs(high) * 0.02, 1e-12)
+        span = abs(high) * 0.02
         first, last = low - span / 2, high + span / 2
     step = round_step(span, 10, degrees=degrees)
     below = math.floor((first - span * 0.02) / step) * step

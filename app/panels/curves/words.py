@@ -15,6 +15,13 @@ MOST_READ: Final = 24
 """Curves named one by one in the description for screen readers; more would be read for minutes."""
 
 
+_NOTHING: Final = {
+    "reflectance": "nothing is reflected",
+    "return_loss_dB": "nothing is reflected",
+    "absorptance": "nothing is absorbed",
+}
+
+
 def worst_curve(curves: Sequence[Curve]) -> int | None:
     """Return the index of the curve with the worst value of all; an infinitely bad one comes first."""
     best: int | None = None
@@ -88,7 +95,7 @@ def empty_sentence(quantity: str, curves: Sequence[Curve]) -> str:
     if any(np.isfinite(curve.y).any() for curve in curves):
         return ""
     if any(np.isinf(curve.raw).any() for curve in curves):
-        return f"{label} is infinite at every frequency: nothing passes."
+        return f"{label} is infinite at every frequency: {_NOTHING.get(quantity, 'nothing passes')}."
     return f"{label} has no value here: there is no wave whose {label.lower()} could be told."
 
 
@@ -98,9 +105,9 @@ def description(curves: Sequence[Curve], *, decibels: bool = False) -> str:
         return "No curves yet."
     first = curves[0]
     low, high = float(first.x.min()), float(first.x.max())
+    count = "1 curve" if len(curves) == 1 else f"{len(curves)} curves"
     parts = [
-        f"{QUANTITIES[first.quantity].label} from {frequency_text(low)} to {frequency_text(high)}, "
-        f"{len(curves)} {'curve' if len(curves) == 1 else 'curves'}.",
+        f"{QUANTITIES[first.quantity].label} from {frequency_text(low)} to {frequency_text(high)}, {count}.",
         f"{worst_sentence(curves, decibels=decibels)}.",
     ]
     if len(curves) <= MOST_READ:

@@ -3,31 +3,18 @@
 from collections.abc import Sequence
 
 from PySide6.QtCore import QEvent, QObject, Qt, Signal
-from PySide6.QtGui import QColor, QKeyEvent, QPalette, QWheelEvent
+from PySide6.QtGui import QKeyEvent, QPalette, QWheelEvent
 from PySide6.QtWidgets import QComboBox, QCompleter, QLineEdit, QWidget
 
-from app.look.colour import mix
 from app.look.theme import Theme
+from app.panels.tables.delegate import fault_ground, is_enter
 from stackcore.errors import UnitError
 from stackcore.units import Dimension, parse_measure
 
 OFFERED_AT_ONCE = 14
 """Rows of the list of materials shown without scrolling."""
 
-_ENTER_KEYS = (Qt.Key.Key_Return, Qt.Key.Key_Enter)
 _LIST_KEYS = (Qt.Key.Key_Up, Qt.Key.Key_Down, Qt.Key.Key_PageUp, Qt.Key.Key_PageDown)
-
-
-def fault_ground(theme: Theme) -> QColor:
-    """Return the ground of a cell whose text has no value."""
-    return QColor(mix(theme.base, theme.fault, 0.16))
-
-
-def is_enter(event: QEvent) -> bool:
-    """Whether `event` is a press of Enter or Return."""
-    if not isinstance(event, QKeyEvent) or event.type() != QEvent.Type.KeyPress:
-        return False
-    return event.key() in _ENTER_KEYS
 
 
 class QuantityEdit(QLineEdit):

@@ -13,8 +13,10 @@ from app.document.session import Change, Session
 from app.panels.elements.columns import ALL_COLUMNS, LAYER_COLUMNS, MATERIAL, Column, columns_of
 from app.panels.elements.difference import Inserted, Moved, Removed, Step, step_between
 from app.panels.elements.gestures import typed_edit
-from app.panels.elements.lines import CellView, Line, cell_of, fault_words, lines_of
+from app.panels.elements.lines import CellView, Line, cell_of, lines_of
 from app.panels.elements.names import MaterialNames
+from app.panels.tables.delegate import Ask
+from app.panels.tables.words import fault_words
 from stackcore.job.records import StackRecord
 
 Index = QModelIndex | QPersistentModelIndex
@@ -25,16 +27,14 @@ _RIGHT: Final = Qt.AlignmentFlag.AlignRight | Qt.AlignmentFlag.AlignVCenter
 _LEFT: Final = Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter
 
 
-class Ask(IntEnum):
-    """What a delegate asks of a cell beyond Qt's own roles."""
+class Asked(IntEnum):
+    """What the delegate asks of a cell of this table, beyond `Ask`."""
 
-    FAULT = Role.UserRole + 1
-    """The `Fault` of a text that has no value, or None."""
-    LINE_KIND = Role.UserRole + 2
+    LINE_KIND = Ask.OWN
     """``front``, ``layer``, ``sheet`` or ``back``."""
-    MATERIAL_KIND = Role.UserRole + 3
+    MATERIAL_KIND = Ask.OWN + 1
     """Kind of the row's material, or an empty text."""
-    COLUMN = Role.UserRole + 4
+    COLUMN = Ask.OWN + 2
     """The `Column`."""
 
 
@@ -130,11 +130,13 @@ class ElementsModel(QAbstractTableModel):
                 return fault_words(view.fault) if view.fault else column.definition
             case Ask.FAULT:
                 return view.fault
-            case Ask.LINE_KIND:
+            case Ask.ASIDE:
+                return not line.is_element
+            case Asked.LINE_KIND:
                 return line.kind
-            case Ask.MATERIAL_KIND:
+            case Asked.MATERIAL_KIND:
                 return line.material_kind
-            case Ask.COLUMN:
+            case Asked.COLUMN:
                 return column
         return None
 

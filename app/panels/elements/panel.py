@@ -14,10 +14,10 @@ from app.look.theme import Theme
 from app.panels.elements.clipboard import place, read_block, write_block, write_html
 from app.panels.elements.columns import MATERIAL, SHEET_COLUMNS, WHAT
 from app.panels.elements.gestures import add_layer_edit, move_edit, paste_edit
-from app.panels.elements.lines import fault_words
 from app.panels.elements.model import ElementsModel
 from app.panels.elements.stacks import StackBar
 from app.panels.elements.table import ElementsTable
+from app.panels.tables.words import fault_words
 from stackcore.errors import Severity
 
 Tell = Callable[[str, Severity], None]
@@ -217,9 +217,13 @@ class ElementsPanel(QWidget):
         commands[name]()
 
     def _apply(self, edit: Edit) -> bool:
+        before = self._session.document
         faults = self._session.apply(edit, self)
         for fault in faults:
             self._tell(str(fault), fault.severity)
+        if not faults and self._session.document is before:
+            # A row that moves past one just like it changes nothing, and yet it is further on.
+            self._session.select(edit.selection(before, self._session.selection), self._table)
         return not faults
 
     def _move(self, step: int) -> None:

@@ -6,11 +6,9 @@ from PySide6.QtCore import (
     QEvent,
     QItemSelection,
     QItemSelectionModel,
-    QModelIndex,
     QPoint,
     QRect,
     Qt,
-    Signal,
 )
 from PySide6.QtGui import (
     QColor,
@@ -25,14 +23,14 @@ from PySide6.QtGui import (
     QPen,
     QResizeEvent,
 )
-from PySide6.QtWidgets import QAbstractItemView, QHeaderView, QTableView, QWidget
+from PySide6.QtWidgets import QAbstractItemView, QWidget
 
 from app.look.theme import Theme
 from app.panels.elements.columns import LAYER_COLUMNS, MATERIAL
 from app.panels.elements.delegate import CellDelegate
-from app.panels.elements.header import QuietHeader
 from app.panels.elements.model import ElementsModel
 from app.panels.elements.widths import Measuring
+from app.panels.tables.table import QuietTable
 
 Command = Literal["delete", "add_layer", "add_sheet", "move_up", "move_down", "copy", "cut", "paste"]
 
@@ -54,38 +52,30 @@ _KEYS: Final[dict[tuple[Qt.Key, Qt.KeyboardModifier], Command]] = {
     (_Key.Key_Up, _Mod.AltModifier): "move_up",
     (_Key.Key_Down, _Mod.AltModifier): "move_down",
 }
-_ENTER_KEYS: Final = (_Key.Key_Return, _Key.Key_Enter)
 
 
-class ElementsTable(QTableView):
+class ElementsTable(QuietTable):
     """A lay-up sheet for `ElementsModel`.
 
-    `wanted` is emitted with a command when its keys are pressed. Enter goes down, Tab goes on to the next cell that
-    can be typed into, and F6 leaves the table, which Tab does not.
+    Rows are dragged and moved as one block. `wanted` is emitted with a `Command` when its keys are pressed.
     """
 
-    wanted = Signal(str)
-
     def __init__(self, model: ElementsModel, theme: Theme, parent: QWidget | None = None) -> None:
-        super().__init__(parent)
+        self._delegate = CellDelegate(theme)
+        super().__init__(self._delegate, theme, parent)
+        self._delegate.setParent(self)
         self._theme = theme
         self._drop_before: int | None = None
-        self._delegate = CellDelegate(theme, self)
-        self._header = QuietHeader(theme, self)
         self._measuring = Measuring(self.font())
-        self.setHorizontalHeader(self._header)
         self.setModel(model)
-        self.setItemDelegate(self._delegate)
-        self._delegate.entered.connect(lambda: self.step_down())
-        self._set_up_rows()
         self._set_up_dragging()
         for signal in (model.dataChanged, model.rowsInserted, model.rowsRemoved, model.modelReset):
             signal.connect(self._fit_columns)
         for signal in (model.columnsInserted, model.columnsRemoved):
             signal.connect(self._fit_columns)
+        model.modelReset.connect(self._begin_somewhere)
         self.setAccessibleName("Elements of the stack")
         self.setAccessibleDescription("From the front to the back, one row an element. F6 leaves the table.")
-        model.modelReset.connect(self._begin_somewhere)
         self._fit_columns()
         self._begin_somewhere()
 
@@ -93,19 +83,6 @@ class ElementsTable(QTableView):
         """Have a current cell from the start, so that keys have a place: the material in front."""
         index = self.elements_model().index(0, LAYER_COLUMNS.index(MATERIAL))
         self.selectionModel().setCurrentIndex(index, QItemSelectionModel.SelectionFlag.NoUpdate)
-
-    def _set_up_rows(self) -> None:
-        self.verticalHeader().hide()
-        self.verticalHeader().setSectionResizeMode(QHeaderView.ResizeMode.Fixed)
-        self.verticalHeader().setDefaultSectionSize(self.fontMetrics().height() + 12)
-        self.setShowGrid(False)
-        self.setFrameShape(self.Shape.NoFrame)
-        self.setSelectionBehavior(QAbstractItemView.SelectionBehavior.SelectRows)
-        self.setSelectionMode(QAbstractItemView.SelectionMode.ExtendedSelection)
-        triggers = QAbstractItemView.EditTrigger
-        self.setEditTriggers(triggers.AnyKeyPressed | triggers.EditKeyPressed | triggers.DoubleClicked)
-        self.setHorizontalScrollMode(QAbstractItemView.ScrollMode.ScrollPerPixel)
-        self.setWordWrap(False)
 
     def _set_up_dragging(self) -> None:
         self.setDragEnabled(True)
@@ -119,9 +96,7 @@ class ElementsTable(QTableView):
     def set_theme(self, theme: Theme) -> None:
         """Draw in the colours of `theme` from now on."""
         self._theme = theme
-        self._delegate.set_theme(theme)
-        self._header.set_theme(theme)
-        self.viewport().update()
+        super().set_theme(theme)
 
     def elements_model(self) -> ElementsModel:
         """Return the model."""
@@ -143,8 +118,7 @@ class ElementsTable(QTableView):
         flags = QItemSelectionModel.SelectionFlag
         self.selectionModel().select(selection, flags.ClearAndSelect | flags.Rows)
         # Another current cell would shut the one that is open and take what was typed so far for the whole.
-        typing = self.state() == QAbstractItemView.State.EditingState
-        if rows and self.currentIndex().row() not in rows and not typing:
+        if rows and self.currentIndex().row() not in rows and not self.typing:
             index = model.index(rows[0], self.currentIndex().column())
             self.selectionModel().setCurrentIndex(index, flags.NoUpdate)
             self.scrollTo(index)
@@ -152,54 +126,15 @@ class ElementsTable(QTableView):
     def go_to(self, element: int, column: str) -> None:
         """Make the cell of `column` of an element the current one and select its row."""
         names = [shown.name for shown in self.elements_model().columns]
-        self.setCurrentIndex(self.elements_model().index(element + 1, names.index(column)))
+        self.go(self.elements_model().index(element + 1, names.index(column)))
 
-    def step_down(self) -> None:
-        """Go to the cell below, as Enter does; at the last row stay."""
-        index = self.currentIndex()
-        below = self.model().index(index.row() + 1, index.column())
-        if below.isValid():
-            self.setCurrentIndex(below)
-
-    # Keys
-
-    def event(self, event: QEvent) -> bool:
-        # What the table does itself must not be taken by a shortcut of the window while the table has the focus.
-        if event.type() == QEvent.Type.ShortcutOverride and isinstance(event, QKeyEvent) and _command(event):
-            event.accept()
-            return True
-        return super().event(event)
-
-    def keyPressEvent(self, event: QKeyEvent) -> None:
-        command = _command(event)
-        if command is not None:
-            self.wanted.emit(command)
-        elif event.key() in _ENTER_KEYS and event.modifiers() in (_Mod.NoModifier, _Mod.KeypadModifier):
-            self.step_down()
-        elif event.key() == _Key.Key_Backspace:
-            # Opens the cell with its text selected, and takes that away.
-            self.edit(self.currentIndex(), QAbstractItemView.EditTrigger.AnyKeyPressed, event)
-        elif event.key() == _Key.Key_F6:
-            QWidget.focusNextPrevChild(self, not event.modifiers() & _Mod.ShiftModifier)
-        else:
-            super().keyPressEvent(event)
-            return
-        event.accept()
-
-    def moveCursor(self, action: QAbstractItemView.CursorAction, modifiers: Qt.KeyboardModifier) -> QModelIndex:
-        """Return where a key goes; Tab and Shift+Tab go to cells that can be typed into, round at the ends."""
-        steps = {QAbstractItemView.CursorAction.MoveNext: 1, QAbstractItemView.CursorAction.MovePrevious: -1}
-        if action not in steps or not self.currentIndex().isValid():
-            return super().moveCursor(action, modifiers)
-        model, step = self.model(), steps[action]
-        rows, columns = model.rowCount(), model.columnCount()
-        place = self.currentIndex().row() * columns + self.currentIndex().column()
-        for _ in range(rows * columns):
-            place = (place + step) % (rows * columns)
-            index = model.index(*divmod(place, columns))
-            if index.flags() & Qt.ItemFlag.ItemIsEditable:
-                return index
-        return self.currentIndex()
+    def command_of(self, event: QKeyEvent) -> Command | Literal[""]:
+        modifiers = event.modifiers() & ~_Mod.KeypadModifier
+        for (key, wanted), command in _KEYS.items():
+            if event.key() == key and modifiers == wanted:
+                return command
+        # Behind the table's own keys: Shift+Insert also pastes on some systems, and here it adds a sheet.
+        return next((command for standard, command in _STANDARD if event.matches(standard)), "")
 
     # Dragging
 
@@ -276,7 +211,7 @@ class ElementsTable(QTableView):
         super().changeEvent(event)
         if event.type() == QEvent.Type.FontChange:
             self._measuring = Measuring(self.font())
-            self._set_up_rows()
+            self.set_row_height()
             self._fit_columns()
 
     def resizeEvent(self, event: QResizeEvent) -> None:
@@ -298,13 +233,3 @@ class ElementsTable(QTableView):
             width = left if column is MATERIAL else widths[place].cell
             if self.columnWidth(place) != width:
                 self.setColumnWidth(place, width)
-
-
-def _command(event: QKeyEvent) -> Command | None:
-    """Return the command a key stands for, or None."""
-    modifiers = event.modifiers() & ~_Mod.KeypadModifier
-    for (key, wanted), command in _KEYS.items():
-        if event.key() == key and modifiers == wanted:
-            return command
-    # Behind the table's own keys: Shift+Insert also pastes on some systems, and here it adds a sheet.
-    return next((command for standard, command in _STANDARD if event.matches(standard)), None)

@@ -10,11 +10,7 @@ from PySide6.QtGui import QFont, QFontMetrics
 from app.look.palette import tabular_font
 from app.panels.elements.columns import Column
 from app.panels.elements.lines import CellView, Line
-
-PADDING: Final = 8
-SWATCH: Final = 12
-MARK: Final = 14
-MARK_GAP: Final = 6
+from app.panels.tables.delegate import MARK, MARK_GAP, PADDING
 
 _PARTS: Final = re.compile(r"(?P<whole>.*?)(?P<fraction>[.,]\d*(?:[eE][-+]?\d+)?)?\s*(?P<unit>[^\d.,()]*)")
 _MOST_TEXTS: Final = 4096

@@ -47,7 +47,7 @@ class ReadingsPanel(QWidget):
     ) -> None:
         super().__init__(parent)
         self._session, self._view, self._theme, self._tell = session, view, theme, tell
-        self._answer: "Answer | None" = None
+        self._answer: Answer | None = None
         self.model = ReadingsModel(self)
         self.table = ReadingsTable(self.model, theme)
         self.hint = QLabel(HINT)
@@ -170,7 +170,7 @@ class ReadingsPanel(QWidget):
         self.table.selectionModel().setCurrentIndex(place, QItemSelectionModel.SelectionFlag.ClearAndSelect)
 
     def _open_menu(self, at: QPoint) -> None:
-        menu = QMenu(self)
+        menu = self.menu = QMenu(self)
         menu.addAction("Copy\tCtrl+C", self.copy)
         menu.addAction("Copy all readings", self.copy_all)
         index = self.table.indexAt(at)

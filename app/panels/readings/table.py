@@ -51,15 +51,15 @@ class ReadingDelegate(QStyledItemDelegate):
 
     def sizeHint(self, option: QStyleOptionViewItem, index: Index) -> QSize:
         """Return the room of the widest parts of the column side by side, and of the note below them."""
-        metrics = QFontMetricsF(option.font)  # type: ignore[attr-defined]  # missing in PySide's stub
+        metrics = QFontMetricsF(option.font)
         *parts, note = self._widths(metrics, index.column())
         return QSize(round(max(sum(parts), note)) + 2 * SIDE, row_height(metrics, self._has_note(index)))
 
     def paint(self, painter: QPainter, option: QStyleOptionViewItem, index: Index) -> None:
         """Draw the cell."""
-        rect: QRect = option.rect  # type: ignore[attr-defined]  # missing in PySide's stub
-        state: QStyle.StateFlag = option.state  # type: ignore[attr-defined]  # as above
-        font: QFont = option.font  # type: ignore[attr-defined]  # as above
+        rect: QRect = option.rect
+        state: QStyle.StateFlag = option.state
+        font: QFont = option.font
         painter.save()
         painter.setFont(font)
         if state & QStyle.StateFlag.State_Selected:
@@ -116,9 +116,7 @@ class CurveHeader(QHeaderView):
         """Return the room of sample and name."""
         metrics = QFontMetricsF(self.font())
         text = str(self._model.headerData(section, Qt.Orientation.Horizontal))
-        return QSize(
-            round(metrics.horizontalAdvance(text)) + _SAMPLE + 3 * SIDE, round(metrics.height()) + 8
-        )
+        return QSize(round(metrics.horizontalAdvance(text)) + _SAMPLE + 3 * SIDE, round(metrics.height()) + 8)
 
     def paintSection(self, painter: QPainter, rect: QRect, section: int) -> None:
         """Draw sample and name, right aligned like the numbers."""

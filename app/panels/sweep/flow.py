@@ -27,11 +27,11 @@ class FlowLayout(QLayout):
         """Return the number of items."""
         return len(self._items)
 
-    def itemAt(self, index: int) -> QLayoutItem | None:  # type: ignore[override]  # Qt asks past the end for None
+    def itemAt(self, index: int) -> QLayoutItem | None:
         """Return an item, or None past the end."""
         return self._items[index] if 0 <= index < len(self._items) else None
 
-    def takeAt(self, index: int) -> QLayoutItem | None:  # type: ignore[override]  # as above
+    def takeAt(self, index: int) -> QLayoutItem | None:
         """Take an item out, or return None past the end."""
         return self._items.pop(index) if 0 <= index < len(self._items) else None
 

@@ -8,17 +8,17 @@ from PySide6.QtGui import QColor, QPalette
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QWidget
 
 from app.document import edits
-from app.document.document import Cell, job_cell
+from app.document.document import job_cell
 from app.document.reading import list_text
 from app.document.session import Change, Session
 from app.document.view import View, ViewChange
 from app.look.theme import Theme
 from app.panels.sweep.field import QuietChoice, QuietField, QuietSwitch
 from app.panels.sweep.flow import FlowLayout
-from app.panels.sweep.phrases import angles_text, read_angle_range
+from app.panels.sweep.phrases import angles_text
 from app.series.axis import can_show_decibels
 from stackcore.conventions import CONVENTIONS, POLARIZATIONS
-from stackcore.errors import Fault, Severity
+from stackcore.errors import Severity
 from stackcore.job.records import FrequencyGrid, Spacing
 from stackcore.quantities import QUANTITIES, Quantity
 
@@ -75,7 +75,6 @@ class SweepPanel(QWidget):
     ) -> None:
         super().__init__(parent)
         self._session, self._view, self._theme, self._tell = session, view, theme, tell
-        self._refused: dict[str, tuple[str, Fault]] = {}
         self._captions: list[QLabel] = []
         self.setAccessibleName("What is computed and shown")
         self._make_controls()
@@ -99,7 +98,8 @@ class SweepPanel(QWidget):
             palette = caption.palette()
             palette.setColor(QPalette.ColorRole.WindowText, QColor(theme.muted))
             caption.setPalette(palette)
-        for control in (*self._fields.values(), *self._choices, *self.switches.values()):
+        controls: list[QuietField | QuietChoice | QuietSwitch] = [*self._fields.values(), *self._choices]
+        for control in [*controls, *self.switches.values()]:
             control.set_theme(theme)
 
     # Making
@@ -175,8 +175,6 @@ class SweepPanel(QWidget):
     # Showing
 
     def _session_changed(self, change: Change) -> None:
-        if change.after.record.sweep != change.before.record.sweep or change.kind == "open":
-            self._refused.clear()
         self._show_sweep()
 
     def _view_changed(self, change: ViewChange) -> None:
@@ -192,9 +190,7 @@ class SweepPanel(QWidget):
             texts[LIST] = list_text(sweep.frequency)
         for column, field in self._fields.items():
             draft = self._session.document.draft(job_cell(column))
-            if column in self._refused:
-                field.show_text(*self._refused[column])
-            elif draft is not None:
+            if draft is not None:
                 field.show_text(draft.text, draft.fault)
             else:
                 field.show_text(texts.get(column, ""))
@@ -220,14 +216,8 @@ class SweepPanel(QWidget):
     # Changing
 
     def _typed(self, column: str, text: str) -> None:
-        self._refused.pop(column, None)
-        if column == ANGLES and (wanted := read_angle_range(text)) is not None:
-            edit = edits.set_angle_grid(wanted.start, wanted.stop, wanted.points)
-        else:
-            edit = edits.type_into(Cell(0, -1, column), text)
-        faults = self._session.apply(edit, self)
-        if faults:
-            self._refused[column] = (text, faults[0])
+        for fault in self._session.apply(edits.type_into(job_cell(column), text), self):
+            self._tell(str(fault), fault.severity)
         self._show_sweep()
 
     def _choose_spacing(self, wanted: str) -> None:

@@ -8,14 +8,15 @@ from typing import Final, Literal
 from app.panels.wall.geometry import Box
 from app.panels.wall.labels import TextMeasure, elided
 from app.panels.wall.layout import MARGIN, WallLayout
-from app.panels.wall.rays import Arc, Rays
+from app.panels.wall.rays import FIGURE, Arc, Arrow, Clear, Powers, Rays, trace
 from app.panels.wall.wave import Wave
 from app.panels.wall.words import share_text, tilt_text
 from app.series.texts import angle_text, frequency_text
 
 Role = Literal["incident", "reflectance", "transmittance", "absorptance", "angle", "end"]
 
-ARC_GAP: Final = 5.0
+END_GAP: Final = 6.0
+"""Between the end of an arrow and what is written there, in px."""
 SHEET_CLEAR: Final = 13.0
 """From a sheet's line to a text beside it, in px."""
 
@@ -30,20 +31,32 @@ class Caption:
     row: int | None = None
 
 
+def rays_in(layout: WallLayout, wave: Wave, measure: TextMeasure) -> Rays:
+    """Return the rays of a wave, clear of what will be written about it."""
+    written = [caption.box for caption in circumstances(layout, wave, measure)]
+    head = Box(0, 0, max(box.right for box in written), max(box.bottom for box in written))
+    texts = () if wave.powers is None else arrow_texts(wave.powers)
+    caption = max((measure.width(text) + END_GAP for text in texts), default=0.0)
+    return trace(layout, wave.courses, wave.powers, Clear(head, measure.line + 4, caption))
+
+
 def captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMeasure) -> tuple[Caption, ...]:
-    """Return everything written around the wave, none of it upon another."""
-    placed = [*circumstances(layout, wave, measure)]
+    """Return everything written around the wave, what matters most first; what would cover another is left out."""
+    wanted = [*circumstances(layout, wave, measure)]
     if wave.powers is not None:
-        placed += _arrow_captions(layout, rays, wave, measure)
-        placed += share_captions(layout, wave, measure)
-        placed += _absorbed_in_all(layout, wave, measure)
+        wanted += _arrow_captions(layout, rays, wave, measure)
+        wanted += share_captions(layout, wave, measure)
+        wanted += _absorbed_in_all(layout, wave, measure)
     if rays.total:
-        placed.append(_total_caption(layout, rays, measure))
-    for arc in rays.arcs:
-        caption = _angle_caption(arc, measure)
-        taken = [other.box for other in placed]
-        if caption.box.right < layout.width and not any(caption.box.overlaps(box) for box in taken):
+        wanted.append(_total_caption(layout, rays, measure))
+    wanted += [_angle_caption(arc, measure) for arc in rays.arcs]
+    taken = [label.box for label in layout.labels]
+    placed = []
+    for caption in wanted:
+        inside = caption.box.left >= 0 and caption.box.right <= layout.width
+        if inside and caption.text and not any(caption.box.overlaps(box) for box in taken):
             placed.append(caption)
+            taken.append(caption.box)
     return tuple(placed)
 
 
@@ -126,27 +139,45 @@ def end_names(layout: WallLayout, measure: TextMeasure) -> tuple[Caption, ...]:
     return Caption(front, left, "end"), Caption(back, right, "end")
 
 
+def arrow_texts(powers: Powers) -> tuple[str, str]:
+    """Return what is written at the ends of the reflected and of the transmitted arrow."""
+    return f"R {share_text(powers.reflectance)}", f"T {share_text(powers.transmittance)}"
+
+
 def _arrow_captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMeasure) -> list[Caption]:
     assert wave.powers is not None
+    texts = arrow_texts(wave.powers)
     made = []
     if rays.reflected is not None:
-        text = f"R {share_text(wave.powers.reflectance)}"
-        bottom = max(y for _, y in rays.reflected.outline)
-        left = max(rays.tails["reflectance"][0], MARGIN)
-        left = min(left, layout.body.left - MARGIN - measure.width(text))
-        made.append(Caption(text, _below(left, bottom, text, layout, measure), "reflectance"))
+        edges = (MARGIN, layout.body.left - MARGIN)
+        made.append(_arrow_caption(rays.reflected, texts[0], "reflectance", edges, layout, measure))
     if rays.transmitted is not None:
-        text = f"T {share_text(wave.powers.transmittance)}"
-        bottom = max(y for _, y in rays.transmitted.outline)
-        left = min(rays.tails["transmittance"][0], layout.width - MARGIN) - measure.width(text)
-        left = max(left, layout.body.right + MARGIN)
-        made.append(Caption(text, _below(left, bottom, text, layout, measure), "transmittance"))
+        edges = (layout.body.right + MARGIN, layout.width - MARGIN)
+        made.append(_arrow_caption(rays.transmitted, texts[1], "transmittance", edges, layout, measure))
     return made
 
 
-def _below(left: float, bottom: float, text: str, layout: WallLayout, measure: TextMeasure) -> Box:
-    top = min(bottom + 2, layout.body.bottom - measure.line)
-    return Box(left, top, left + measure.width(text), top + measure.line)
+def _arrow_caption(
+    arrow: Arrow,
+    text: str,
+    role: Role,
+    edges: tuple[float, float],
+    layout: WallLayout,
+    measure: TextMeasure,
+) -> Caption:
+    """Return a caption beyond the end of its arrow, or below it where there is no room, between two x."""
+    width, line = measure.width(text), measure.line
+    x, y = arrow.end
+    leftward = x < arrow.foot[0]
+    if arrow.beside:
+        left = x - END_GAP - width if leftward else x + END_GAP
+        top = y - line / 2
+    else:
+        left = x if leftward else x - width
+        top = max(corner[1] for corner in arrow.band.outline) + 2
+    left = min(max(left, edges[0]), max(edges[1] - width, edges[0]))
+    top = min(max(top, layout.body.top), layout.body.bottom - line)
+    return Caption(text, Box(left, top, left + width, top + line), role)
 
 
 def _absorbed_in_all(layout: WallLayout, wave: Wave, measure: TextMeasure) -> list[Caption]:
@@ -155,14 +186,15 @@ def _absorbed_in_all(layout: WallLayout, wave: Wave, measure: TextMeasure) -> li
     text = f"A {small_share_text(math.fsum(wave.powers.absorbed))}"
     right, top = layout.width - MARGIN, layout.body.top
     box = Box(right - measure.width(text), top, right, top + measure.line)
-    return [Caption(text, box, "absorptance")] if layout.wall.elements and box.left > layout.body.right + 4 else []
+    shown = layout.wall.elements and box.left > layout.body.right + 4
+    return [Caption(text, box, "absorptance")] if shown else []
 
 
 def _total_caption(layout: WallLayout, rays: Rays, measure: TextMeasure) -> Caption:
     room = layout.width - MARGIN - layout.body.right - 2 * MARGIN
     text = elided("total reflection", room, measure)
     left = layout.body.right + 2 * MARGIN
-    top = rays.exit - measure.line / 2
+    top = rays.way_out - measure.line / 2
     return Caption(text, Box(left, top, left + measure.width(text), top + measure.line), "transmittance")
 
 
@@ -173,7 +205,7 @@ def _angle_caption(arc: Arc, measure: TextMeasure) -> Caption:
     width = measure.width(text)
     # In front the incident ray comes from above: the angle opens upward there.
     lean = arc.angle / 2 if arc.behind else -arc.angle / 2
-    reach = arc.radius + ARC_GAP + width / 2
+    reach = arc.radius + FIGURE
     x = arc.x + side * reach * math.cos(lean)
     y = arc.y + reach * math.sin(lean)
     box = Box(x - width / 2, y - measure.line / 2, x + width / 2, y + measure.line / 2)

@@ -10,8 +10,8 @@ from typing import Final
 from app.look.theme import Hatch
 from app.panels.wall.geometry import Box, Stroke
 
-DOT: Final = 0.6
-"""Half the length of a dot: a stroke so short that its round ends make it a point."""
+DOT: Final = 0.8
+"""Half the length of a dot: a stroke so short that it is seen as a point."""
 
 
 def strokes(hatch: Hatch, box: Box) -> tuple[Stroke, ...]:

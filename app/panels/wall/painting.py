@@ -18,13 +18,13 @@ from app.panels.wall.labels import Label, TextMeasure
 from app.panels.wall.layout import Face, Held, Slab, WallLayout, lay_out
 from app.panels.wall.parts import HalfSpacePart, Wall
 from app.panels.wall.pens import FontMeasure, colour, rectangle
-from app.panels.wall.rays import Rays, trace
 from app.panels.wall.scale import ThicknessScale
 from app.panels.wall.symbols import paint_sheet
 from app.panels.wall.wave import Wave
 from app.panels.wall.words import EMPTY_HINT
 
 RADIUS: Final = 4.0
+HATCH_ALPHA: Final = 0.65
 
 
 @dataclass(frozen=True, slots=True)
@@ -83,7 +83,7 @@ def paint_layout(painter: QPainter, layout: WallLayout, theme: Theme, wave: Wave
         _paint_slab(painter, slab, theme)
     _paint_label_grounds(painter, layout, theme)
     measure = FontMeasure(QFontMetricsF(painter.font(), painter.device()))
-    rays = None if wave is None else rays_in(layout, wave, measure)
+    rays = None if wave is None else captions.rays_in(layout, wave, measure)
     painter.setOpacity(wave_painting.STALE_OPACITY if wave is not None and wave.stale else 1.0)
     if wave is not None and rays is not None:
         wave_painting.paint_levels(painter, layout, wave, theme)
@@ -103,22 +103,15 @@ def paint_layout(painter: QPainter, layout: WallLayout, theme: Theme, wave: Wave
         _paint_handle(painter, layout, touch.face, touch.tag, theme)
 
 
-def rays_in(layout: WallLayout, wave: Wave, measure: TextMeasure) -> Rays:
-    """Return the rays, clear of what is written above and below them."""
-    foot = measure.line + 4
-    written = [caption.box for caption in captions.circumstances(layout, wave, measure)]
-    head = Box(0, 0, max(box.right for box in written), max(box.bottom for box in written))
-    return trace(layout, wave.courses, wave.powers, foot, head)
-
-
 def _paint_slab(painter: QPainter, slab: Slab, theme: Theme) -> None:
     style = kind_style(theme, slab.part.kind)
     painter.fillRect(rectangle(slab.box), QColor(style.tint))
-    _paint_strokes(painter, strokes(style.hatch, slab.box), colour(style.ink, 0.55))
+    _paint_strokes(painter, strokes(style.hatch, slab.box), colour(style.ink, HATCH_ALPHA))
 
 
 def _paint_strokes(painter: QPainter, lines: Iterable[Stroke], ink: QColor) -> None:
-    painter.setPen(QPen(ink, 1.2, Qt.PenStyle.SolidLine, Qt.PenCapStyle.RoundCap))
+    # Lines of width 1 are drawn many times faster than broader ones.
+    painter.setPen(QPen(ink, 1.0, Qt.PenStyle.SolidLine, Qt.PenCapStyle.FlatCap))
     painter.drawLines([QLineF(*line) for line in lines])
 
 
@@ -132,7 +125,7 @@ def _paint_half_space(painter: QPainter, box: Box, part: HalfSpacePart, theme: T
     far = near - reach if to_left else near + reach
     seen = replace(box, left=min(near, far), right=max(near, far))
     painter.fillRect(rectangle(seen), QColor(style.tint))
-    _paint_strokes(painter, strokes(style.hatch, seen), colour(style.ink, 0.55))
+    _paint_strokes(painter, strokes(style.hatch, seen), colour(style.ink, HATCH_ALPHA))
     veil = QLinearGradient(near, 0, far, 0)
     veil.setColorAt(0.0, colour(theme.base, 0.0))
     veil.setColorAt(0.25, colour(theme.base, 0.15))

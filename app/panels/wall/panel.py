@@ -22,10 +22,10 @@ from app.document.session import Change, Session
 from app.document.view import View, ViewChange
 from app.look.theme import Theme
 from app.panels.wall import keys, tips, words
-from app.panels.wall.captions import captions
+from app.panels.wall.captions import captions, rays_in
 from app.panels.wall.drag import FaceDrag
 from app.panels.wall.layout import Face, WallLayout, lay_out
-from app.panels.wall.painting import Touch, paint_layout, rays_in
+from app.panels.wall.painting import Touch, paint_layout
 from app.panels.wall.parts import LayerPart, Wall, wall_of
 from app.panels.wall.pens import FontMeasure
 from app.panels.wall.scale import ThicknessScale

@@ -1,16 +1,13 @@
 """What the drawing shows, read from a job: the half-spaces and the elements between, with their words."""
 
 from dataclasses import dataclass
-from typing import Final
 
 from app.document.document import Document
+from app.document.library import ALWAYS_DEFINED, PERFECT_METAL
 from app.series.kinds import kind_of
 from stackcore.job.records import LayerRecord, SheetRecord, StackRecord
 from stackcore.job.resolve import Job
 from stackcore.units import Dimension, Measure, format_value
-
-METAL_NAME: Final = "metal"
-EMPTY_NAMES: Final = ("air", "vacuum")
 
 
 @dataclass(frozen=True, slots=True)
@@ -63,9 +60,8 @@ def wall_of(document: Document, stack: int) -> Wall:
 
 def half_space(job: Job, name: str) -> HalfSpacePart:
     """Return the half-space made of the material called `name`."""
-    if name == METAL_NAME:
-        return HalfSpacePart("metal", "metal")
-    return HalfSpacePart(shown_name(job, name), "" if name in EMPTY_NAMES else kind_of(job, name))
+    kind = "" if name in ALWAYS_DEFINED else kind_of(job, name)
+    return HalfSpacePart(name if name == PERFECT_METAL else shown_name(job, name), kind)
 
 
 def shown_name(job: Job, name: str) -> str:

@@ -13,7 +13,8 @@ from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from typing import Final, Literal
 
-from app.panels.wall.geometry import Box, Point, within_rows
+from app.panels.wall.arrows import HEAD, along, arriving_outline, leaving_outline, wrapped
+from app.panels.wall.geometry import Box, Point
 from app.panels.wall.layout import MARGIN, WallLayout
 from app.panels.wall.refraction import Direction, Directions
 
@@ -28,9 +29,10 @@ ROOM_BEHIND: Final = 0.17
 """Parts of the wall's height kept for the arrows to rise to the front and to fall from the back."""
 FAINTEST: Final = 1.5
 """Bands less tall than this, in px, are drawn this tall and dashed: they show the way and not the power."""
-HEAD: Final = 5.0
-"""How far an arrow's head stands out from its shaft, in px."""
-_GENTLEST: Final = 0.02
+LEAST_BESIDE: Final = 60.0
+"""Room in px for an arrow from which its caption stands beyond its end."""
+FIGURE: Final = 20.0
+"""From an arc to the middle of its figure, in px."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -79,20 +81,40 @@ class Arc:
 
 
 @dataclass(frozen=True, slots=True)
+class Arrow:
+    """A band outside the wall.
+
+    Parameters
+    ----------
+    band
+        What is drawn.
+    foot
+        Where its middle meets the face.
+    end
+        Its outer end: the tip of an arrow that leaves, the tail of the one that comes.
+    beside
+        Whether its caption stands beyond its end; else it stands below.
+    """
+
+    band: Band
+    foot: Point
+    end: Point
+    beside: bool = False
+
+
+@dataclass(frozen=True, slots=True)
 class Rays:
     """Everything of the wave.
 
     Parameters
     ----------
     incident, reflected, transmitted
-        The arrows outside; `reflected` is None while R is unknown or nothing is reflected, `transmitted` is None
-        behind metal and in total reflection.
+        The arrows outside; `reflected` is None when nothing is reflected, `transmitted` behind metal and in total
+        reflection.
     within
         The band through the wall, piece by piece.
-    entry, reflection, exit
-        Where the incident, reflected and transmitted bands meet the wall: y in px.
-    tails
-        Outer ends of the arrows, by role.
+    way_out
+        Where the wave meets the back, y in px.
     arcs
         Angles to write.
     total
@@ -105,14 +127,11 @@ class Rays:
         Whether it leaves the zone below and enters again above.
     """
 
-    incident: Band
-    reflected: Band | None
-    transmitted: Band | None
+    incident: Arrow
+    reflected: Arrow | None
+    transmitted: Arrow | None
     within: tuple[Band, ...]
-    entry: float
-    reflection: float
-    exit: float
-    tails: dict[Role, Point]
+    way_out: float
     arcs: tuple[Arc, ...]
     total: bool
     full: float
@@ -120,7 +139,26 @@ class Rays:
     wraps: bool
 
 
-def trace(layout: WallLayout, courses: Directions, powers: Powers | None, foot: float, head: Box) -> Rays:
+@dataclass(frozen=True, slots=True)
+class Clear:
+    """What the rays keep clear of.
+
+    Parameters
+    ----------
+    head
+        Covered by text at the upper left.
+    foot
+        Height in px at the lower end of the wall, for the absorbed shares.
+    caption
+        Width in px of what is written at the end of an arrow.
+    """
+
+    head: Box
+    foot: float
+    caption: float
+
+
+def trace(layout: WallLayout, courses: Directions, powers: Powers | None, clear: Clear) -> Rays:
     """Return the rays in a laid-out wall.
 
     Parameters
@@ -129,17 +167,29 @@ def trace(layout: WallLayout, courses: Directions, powers: Powers | None, foot: 
         Where the wave goes in each medium.
     powers
         How much of it; None draws the ways without widths.
-    foot
-        Height in px kept free at the lower end of the wall, for what is written there.
-    head
-        What is covered by text at the upper left.
+    clear
+        What is kept free for text.
     """
     full = min(FULL, layout.body.height / 7)
     zone = Box(layout.body.left, layout.body.top + 2, layout.body.right, layout.body.bottom - 2)
     steps = _steps(layout, courses, powers)
-    fall = sum(step.fall for step in steps)
-    entry, way_out = _entry_and_exit(zone, fall, full, foot, courses.front.angle)
-    return _Tracer(layout, courses, powers, full, zone, foot, head).rays(steps, entry, way_out)
+    fall = math.fsum(step.fall for step in steps)
+    entry, way_out = _entry_and_exit(zone, fall, full, clear.foot, courses.front.angle)
+    tracer = _Tracer(layout, courses, powers, full, zone, clear)
+    incident = tracer.incident(entry)
+    back = courses.back
+    return Rays(
+        incident,
+        tracer.reflected(incident),
+        tracer.transmitted(way_out),
+        tuple(tracer.bands(steps, entry)),
+        way_out,
+        tuple(tracer.arcs(entry, way_out)),
+        back is not None and back.decays,
+        full,
+        zone,
+        abs(fall) > abs(way_out - entry) + 1,
+    )
 
 
 @dataclass(frozen=True, slots=True)
@@ -208,93 +258,48 @@ class _Tracer:
     powers: Powers | None
     full: float
     zone: Box
-    foot: float
-    head: Box
+    clear: Clear
 
-    def rays(self, steps: Sequence[_Step], entry: float, way_out: float) -> Rays:
-        body, theta = self.layout.body, self.courses.front.angle
-        reflectance = None if self.powers is None else self.powers.reflectance
-        incident, tail = self._incident(entry)
-        reflection = self._reflection(entry, tail)
-        tails: dict[Role, Point] = {"incident": tail}
-        reflected = None
-        if reflectance != 0:
-            length = self._length(reflection, theta, body.left)
-            reflected = self._arrow("reflectance", (body.left, reflection), theta, -1, length, reflectance)
-            tails["reflectance"] = _along((body.left, reflection), theta, -1, length)
+    def incident(self, entry: float) -> Arrow:
+        """Return the arrow that comes, as long as it can be under what is written above."""
+        theta, x, half = self.courses.front.angle, self.layout.body.left, self.full / 2
+        length = min(_longest(x), _across(x, theta), _rise(entry - half - self.zone.top, theta))
+        if x - length * math.cos(theta) - half < self.clear.head.right:
+            length = min(length, _rise(entry - half - self.clear.head.bottom, theta))
+        tail = along((x, entry), -theta, -1, length)
+        outline = arriving_outline(tail, (x, entry), theta, self.full)
+        return Arrow(Band("incident", outline, 1.0), (x, entry), tail)
+
+    def reflected(self, incident: Arrow) -> Arrow | None:
+        """Return the arrow that goes back, from lower than the entry as far as the two would cover each other."""
+        if self.powers is not None and self.powers.reflectance == 0:
+            return None
+        share = None if self.powers is None else self.powers.reflectance
+        tall, entry = _height(share, self.full)[0], incident.foot[1]
+        wanted = (self.full + tall) / 2 + HEAD + 4 - 2 * (entry - incident.end[1])
+        lowest = self.zone.bottom - self.clear.foot - tall / 2
+        start = (self.layout.body.left, min(entry + max(wanted, 0.0), max(lowest, entry)))
+        return self._leaving("reflectance", start, self.courses.front.angle, -1, share)
+
+    def transmitted(self, way_out: float) -> Arrow | None:
+        """Return the arrow that goes on, or None when there is no way on."""
         back = self.courses.back
-        transmitted = None
-        arcs = [self._arc(body.left, entry, theta, behind=False)]
-        if back is not None and not back.decays:
-            share = None if self.powers is None else self.powers.transmittance
-            length = self._length(way_out, back.angle, self.layout.width - body.right)
-            start = (body.right, way_out)
-            transmitted = self._arrow("transmittance", start, back.angle, 1, length, share)
-            tails["transmittance"] = _along(start, back.angle, 1, length)
-            if abs(back.angle - theta) > 1e-6:
-                arcs.append(self._arc(*start, back.angle, behind=True))
-        return Rays(
-            incident,
-            reflected,
-            transmitted,
-            tuple(self._bands(steps, entry)),
-            entry,
-            reflection,
-            way_out,
-            tails,
-            tuple(arc for arc in arcs if abs(arc.angle) > _GENTLEST),
-            back is not None and back.decays,
-            self.full,
-            self.zone,
-            abs(sum(step.fall for step in steps)) > abs(way_out - entry) + 1,
-        )
+        if back is None or back.decays:
+            return None
+        share = None if self.powers is None else self.powers.transmittance
+        return self._leaving("transmittance", (self.layout.body.right, way_out), back.angle, 1, share)
 
-    def _arc(self, x: float, y: float, angle: float, *, behind: bool) -> Arc:
-        """Return an angle's arc, far enough out for its figure to stand clear of the band."""
-        room = (self.layout.width - x if behind else x) - 5 * MARGIN
-        clear = (self.full / 2 + self.layout.line) / max(math.sin(abs(angle) / 2), 1e-3)
-        return Arc(x, y, angle, min(max(clear - 20, 36.0), 110.0, max(room, 20.0)), behind)
+    def arcs(self, entry: float, way_out: float) -> Iterable[Arc]:
+        """Yield the angle of incidence, and the one behind where it is another."""
+        theta, back = self.courses.front.angle, self.courses.back
+        found = [self._arc(self.layout.body.left, entry, theta, 1.0, behind=False)]
+        if back is not None and not back.decays and abs(back.angle - theta) > 1e-6:
+            share = 0.0 if self.powers is None else self.powers.transmittance
+            found.append(self._arc(self.layout.body.right, way_out, back.angle, share, behind=True))
+        yield from (arc for arc in found if arc is not None)
 
-    def _longest(self, room: float) -> float:
-        return max(SHORTEST, 0.6 * room)
-
-    def _length(self, y: float, angle: float, room: float) -> float:
-        """Return how long an arrow from a face at height `y` may be, with `room` px to the edge of the drawing."""
-        across = max(room - 2 * MARGIN, 12.0) / max(math.cos(angle), 1e-9)
-        limit = self.zone.bottom - self.layout.line - 6 - y if angle >= 0 else y - self.zone.top
-        down = max(limit, 16.0) / max(abs(math.sin(angle)), 1e-9)
-        return min(self._longest(room), across, down)
-
-    def _incident(self, entry: float) -> tuple[Band, Point]:
-        theta = self.courses.front.angle
-        x = self.layout.body.left
-        half = self.full / 2
-        across = max(x - 2 * MARGIN, 12.0) / max(math.cos(theta), 1e-9)
-        length = min(self._longest(x), across, self._rise(entry - half - self.zone.top, theta))
-        if x - length * math.cos(theta) - half < self.head.right:
-            length = min(length, self._rise(entry - half - self.head.bottom, theta))
-        tail = (x - length * math.cos(theta), entry - length * math.sin(theta))
-        outline = _swallow_tail(tail, (x, entry), theta, self.full)
-        return Band("incident", outline, 1.0), tail
-
-    @staticmethod
-    def _rise(height: float, angle: float) -> float:
-        """Return how long a ray may be that has `height` px to rise."""
-        return max(height, 16.0) / max(math.sin(angle), 1e-9)
-
-    def _reflection(self, entry: float, tail: Point) -> float:
-        """Return where the reflected band leaves: lower than the entry as far as the two would cover each other."""
-        apart = 2 * (entry - tail[1])
-        share = 1.0 if self.powers is None else self.powers.reflectance
-        wanted = self.full * (1 + share) / 2 + HEAD + 4
-        lowest = self.zone.bottom - self.foot - self.full * share / 2
-        return min(entry + max(wanted - apart, 0.0), max(lowest, entry))
-
-    def _arrow(self, role: Role, start: Point, angle: float, side: int, length: float, share: float | None) -> Band:
-        tall, faint = _height(share, self.full)
-        return Band(role, _arrow_outline(start, angle, side, length, tall), share, faint)
-
-    def _bands(self, steps: Sequence[_Step], entry: float) -> Iterable[Band]:
+    def bands(self, steps: Sequence[_Step], entry: float) -> Iterable[Band]:
+        """Yield the pieces of the wave within the wall, brought into the zone."""
         y = entry
         for step in steps:
             first, faint = _height(step.before, self.full)
@@ -305,9 +310,35 @@ class _Tracer:
                 (step.right, y + step.fall + last / 2),
                 (step.left, y + first / 2),
             )
-            for piece in _wrapped(outline, self.zone):
+            for piece in wrapped(outline, self.zone):
                 yield Band("transmittance", piece, step.before, faint, step.direction.decays)
             y += step.fall
+
+    def _leaving(self, role: Role, start: Point, angle: float, side: int, share: float | None) -> Arrow:
+        tall, faint = _height(share, self.full)
+        wing = tall * math.cos(angle) / 2 + HEAD
+        room = self.layout.width - start[0] if side > 0 else start[0]
+        lowest = self.zone.bottom - wing * math.cos(angle)
+        beside = room - self.clear.caption - 2 * MARGIN > LEAST_BESIDE
+        if beside:
+            room -= self.clear.caption + MARGIN
+        else:
+            lowest -= self.layout.line + 2
+        down = lowest - start[1] if angle >= 0 else start[1] - self.zone.top - wing
+        length = min(_longest(room), _across(room, angle), _rise(down, abs(angle)))
+        outline = leaving_outline(start, angle, side, length, tall)
+        return Arrow(Band(role, outline, share, faint), start, along(start, angle, side, length), beside)
+
+    def _arc(self, x: float, y: float, angle: float, share: float, *, behind: bool) -> Arc | None:
+        """Return an angle's arc, so far out that its figure is clear of the band; None without room for that."""
+        room = (self.layout.width - x if behind else x) - 5 * MARGIN
+        half = share * self.full * math.cos(angle) / 2
+        opening = max(math.sin(abs(angle) / 2), 1e-3)
+        radius = min(max((half + self.layout.line) / opening - FIGURE, 36.0), 110.0, room)
+        if not behind and x - radius < self.clear.head.right:
+            radius = min(radius, _rise(y - self.clear.head.bottom, angle))
+        clear = (radius + FIGURE) * opening >= half + 0.4 * self.layout.line
+        return Arc(x, y, angle, radius, behind) if clear and radius > FIGURE else None
 
 
 def _height(share: float | None, full: float) -> tuple[float, bool]:
@@ -316,56 +347,15 @@ def _height(share: float | None, full: float) -> tuple[float, bool]:
     return (tall, False) if tall >= FAINTEST else (FAINTEST, True)
 
 
-def _along(start: Point, angle: float, side: int, length: float) -> Point:
-    return start[0] + side * length * math.cos(angle), start[1] + length * math.sin(angle)
+def _longest(room: float) -> float:
+    return max(SHORTEST, 0.6 * room)
 
 
-def _wrapped(outline: Sequence[Point], zone: Box) -> Iterable[tuple[Point, ...]]:
-    """Yield the parts of an outline brought into the zone, each by a whole number of its heights."""
-    first = math.floor((min(y for _, y in outline) - zone.top) / zone.height)
-    last = math.floor((max(y for _, y in outline) - zone.top) / zone.height)
-    for turn in range(first, last + 1):
-        shift = turn * zone.height
-        piece = within_rows(((x, y - shift) for x, y in outline), zone.top, zone.bottom)
-        if len(piece) > 2:
-            yield piece
+def _across(room: float, angle: float) -> float:
+    """Return how long a ray may be that has `room` px to the edge of the drawing."""
+    return max(room - 2 * MARGIN, 12.0) / max(math.cos(angle), 1e-9)
 
 
-def _arrow_outline(start: Point, angle: float, side: int, length: float, tall: float) -> tuple[Point, ...]:
-    """Return an arrow that leaves a face at `start`; its foot lies along the face, `tall` high."""
-    along = (side * math.cos(angle), math.sin(angle))
-    normal = (-along[1], along[0])
-    half = tall * math.cos(angle) / 2
-    wing = half + HEAD
-    head = min(wing * 1.2, length * 0.6)
-    tip = (start[0] + along[0] * length, start[1] + along[1] * length)
-    neck = (tip[0] - along[0] * head, tip[1] - along[1] * head)
-    turn = 1 if normal[1] > 0 else -1
-
-    def beside(point: Point, off: float) -> Point:
-        return point[0] + normal[0] * off * turn, point[1] + normal[1] * off * turn
-
-    return (
-        (start[0], start[1] - tall / 2),
-        beside(neck, -half),
-        beside(neck, -wing),
-        tip,
-        beside(neck, wing),
-        beside(neck, half),
-        (start[0], start[1] + tall / 2),
-    )
-
-
-def _swallow_tail(tail: Point, end: Point, angle: float, tall: float) -> tuple[Point, ...]:
-    """Return the incident band from a notched tail to the face, along which it is `tall` high."""
-    along = (math.cos(angle), math.sin(angle))
-    half = tall * math.cos(angle) / 2
-    normal = (-along[1] * half, along[0] * half)
-    notch = (tail[0] + along[0] * half * 0.8, tail[1] + along[1] * half * 0.8)
-    return (
-        (end[0], end[1] - tall / 2),
-        (tail[0] - normal[0], tail[1] - normal[1]),
-        notch,
-        (tail[0] + normal[0], tail[1] + normal[1]),
-        (end[0], end[1] + tall / 2),
-    )
+def _rise(height: float, angle: float) -> float:
+    """Return how long a ray may be that has `height` px to rise or fall."""
+    return max(height, 16.0) / max(math.sin(angle), 1e-9)

@@ -1,5 +1,7 @@
 """What the wave does at the marker: frequency, angle, polarization, ways and powers as one value."""
 
+import math
+import sys
 from dataclasses import dataclass
 
 from app.panels.wall.rays import Powers
@@ -58,10 +60,16 @@ def wave_in(
 
 
 def powers_of(response: Response, polarization: str) -> Powers:
-    """Return the powers at the first frequency and angle of a response."""
+    """Return the powers at the first frequency and angle of a response.
+
+    A transmittance too small for a double, as of a thick metal sheet, is not 0: it becomes the smallest one.
+    """
     point = (0, 0, POLARIZATIONS.index(polarization))
+    transmittance = float(response.transmittance[point])
+    if transmittance == 0 and math.isfinite(response.insertion_loss_dB[point]):
+        transmittance = sys.float_info.min
     return Powers(
         float(response.reflectance[point]),
-        float(response.transmittance[point]),
+        transmittance,
         tuple(float(share) for share in response.element_absorptance[point]),
     )

@@ -53,9 +53,9 @@ def paint_within(painter: QPainter, rays: Rays, theme: Theme) -> None:
 def paint_outside(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> None:
     """Draw the arrows in the half-spaces with their angles and the direction of the electric field."""
     _paint_normals(painter, rays, theme)
-    for band in (rays.incident, rays.reflected, rays.transmitted):
-        if band is not None:
-            _paint_band(painter, band, theme, BAND_ALPHA)
+    for arrow in (rays.incident, rays.reflected, rays.transmitted):
+        if arrow is not None:
+            _paint_band(painter, arrow.band, theme, BAND_ALPHA)
     _paint_field(painter, rays, wave, theme)
 
 
@@ -63,9 +63,11 @@ def paint_captions(painter: QPainter, written: tuple[Caption, ...], layout: Wall
     """Write what belongs to the wave, upon a quiet ground where it stands in a slab."""
     grounds = {slab.row: kind_style(theme, slab.part.kind).tint for slab in layout.slabs}
     for caption in written:
-        if caption.row is not None:
+        end = layout.wall.front if caption.box.right < layout.body.left else layout.wall.back
+        if caption.row is not None or end.kind:
+            ground = theme.base if caption.row is None else grounds.get(caption.row, theme.base)
             painter.setPen(Qt.PenStyle.NoPen)
-            painter.setBrush(colour(grounds.get(caption.row, theme.base), 0.8))
+            painter.setBrush(colour(ground, 0.8))
             painter.drawRoundedRect(rectangle(caption.box.grown(1.5)), 3, 3)
         painter.setPen(QColor(_ink(caption, theme)))
         painter.drawText(rectangle(caption.box).adjusted(0, 0, 4, 0), Qt.AlignmentFlag.AlignVCenter, caption.text)
@@ -118,7 +120,7 @@ def _paint_angle(painter: QPainter, arc: Arc, theme: Theme) -> None:
 
 def _paint_field(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> None:
     """Mark the electric field on the incident ray: a point toward the eye for TE, a double arrow for TM."""
-    tail, end = rays.tails["incident"], (rays.incident.outline[0][0], rays.entry)
+    tail, end = rays.incident.end, rays.incident.foot
     x, y = tail[0] + 0.42 * (end[0] - tail[0]), tail[1] + 0.42 * (end[1] - tail[1])
     ink = QColor(theme.text)
     painter.setPen(QPen(ink, 1.4))

@@ -6,7 +6,15 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from app.document.reading import list_text, read_like, read_list, read_points, read_relative, relative_text
+from app.document.reading import (
+    list_text,
+    read_like,
+    read_list,
+    read_points,
+    read_range,
+    read_relative,
+    relative_text,
+)
 from stackcore.errors import UnitError
 from stackcore.units import Dimension, Measure, parse_measure
 
@@ -101,3 +109,26 @@ def test_points_are_whole() -> None:
     assert read_points(" 4e2 ") == 400
     with pytest.raises(UnitError, match="whole"):
         read_points("4.5")
+
+
+@pytest.mark.parametrize(
+    ("text", "start", "stop", "points"),
+    [
+        ("0 to 60 deg, 7 points", "0 deg", "60 deg", 7),
+        ("0 deg to 60 deg, 7 points", "0 deg", "60 deg", 7),
+        ("from 0 to 1 rad in 11 angles", "0 rad", "1 rad", 11),
+        ("10 to 20; 3", "10 deg", "20 deg", 3),
+    ],
+)
+def test_ranges(text: str, start: str, stop: str, points: int) -> None:
+    """An even sweep as a person says it, and as the cell itself writes it."""
+    found = read_range(text, Dimension.ANGLE)
+    assert found is not None
+    assert (found[0].text, found[1].text, found[2]) == (start, stop, points)
+
+
+def test_what_is_no_range_or_not_a_whole_one() -> None:
+    """A list is no range; a range without a number of points says what is missing."""
+    assert read_range("0, 30, 45 deg", Dimension.ANGLE) is None
+    with pytest.raises(UnitError, match="how many points"):
+        read_range("0 to 60 deg", Dimension.ANGLE)

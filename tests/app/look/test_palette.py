@@ -26,9 +26,7 @@ def test_disabled_text_differs_from_enabled_text(qapp: QApplication) -> None:
     """What cannot be used now is drawn in another ink."""
     palette = palette_of(LIGHT)
     role = QPalette.ColorRole.ButtonText
-    assert palette.color(QPalette.ColorGroup.Disabled, role) != palette.color(
-        QPalette.ColorGroup.Active, role
-    )
+    assert palette.color(QPalette.ColorGroup.Disabled, role) != palette.color(QPalette.ColorGroup.Active, role)
 
 
 def test_choices_of_theme(qapp: QApplication) -> None:

@@ -6,6 +6,7 @@ import pytest
 
 from app.document.view import ViewState
 from app.look.theme import DARK, LIGHT
+from app.panels.curves.commands import Command
 from app.window import help_pages
 from app.window.actions import Act
 from app.window.cautions import (
@@ -70,13 +71,15 @@ def test_outside_the_range_of_a_material_is_told() -> None:
 
 
 def test_the_first_view_says_something_about_the_job() -> None:
-    """Metal behind shows return loss, a metal layer shielding, anything else what passes."""
-    record = small_job().record
-    views = [first_view(Job(replace(record, stacks=(stack,)))).quantity for stack in record.stacks]
-    assert views == ["transmittance", "return_loss_dB", "shielding_effectiveness_dB"]
+    """Metal behind shows return loss, a shield its shielding, a lossy wall its loss, else what passes."""
+    text = JOB.replace('"metal", "elements": [', '"air", "elements": [{"sheet": "series", "resistance": "20 ohm"},')
+    records = (*small_job().record.stacks, job_from_json(text).stacks[1])
+    views = [first_view(Job(replace(small_job().record, stacks=(stack,)))).quantity for stack in records]
+    assert views == ["transmittance", "return_loss_dB", "shielding_effectiveness_dB", "insertion_loss_dB"]
     log = Job(job_from_json(JOB.replace('"linear"', '"log"')))
     assert first_view(log).log_frequency
     assert not first_view(small_job()).log_frequency
+    assert first_view(small_job()).markers == (10e9,)
 
 
 def test_the_definitions_page_has_every_convention_and_quantity() -> None:
@@ -106,11 +109,14 @@ def test_the_keyboard_page_lists_every_shortcut_of_the_table() -> None:
         Act("b", "&File", "Print", lambda: None),
         Act("c", "&Edit", "&Redo", lambda: None, ("Ctrl+Y", "Ctrl+Shift+Z")),
     )
-    page = help_pages.keyboard_page(DARK, key_groups(acts))
+    plot = (Command("Copy data", lambda: None, ("Ctrl+Shift+C",)), Command("", lambda: None, ("X",)))
+    page = help_pages.keyboard_page(DARK, key_groups(acts, plot))
     assert "Menu File" in page
     assert "Ctrl+Y or Ctrl+Shift+Z" in page
     assert ">Save<" in page
     assert "Print" not in page
+    assert page.index("In the plot") < page.index("Ctrl+Shift+C") < page.index("Menu File")
+    assert ">X<" not in page
 
 
 def test_pages_escape_what_could_be_markup() -> None:

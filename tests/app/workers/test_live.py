@@ -89,9 +89,9 @@ def test_an_answer(qtbot: QtBot, make_lane: MakeLane) -> None:
     number = lane.ask(
         slab(), FREQUENCY, ANGLE, marker_frequency=9.1e9, marker_angle=float(ANGLE[1]), markers=markers
     )
-    assert lane.busy
+    busy = [lane.busy]
     qtbot.waitUntil(lambda: len(heard.answers) == 1)
-    assert not lane.busy
+    assert [*busy, lane.busy] == [True, False]
     (answer,) = heard.answers
     assert answer.question.number == number
     assert np.array_equal(answer.response.transmittance, solve(slab(), FREQUENCY, ANGLE).transmittance)
@@ -231,8 +231,8 @@ def test_a_lane_that_dies_with_its_parent_ends_its_thread(qtbot: QtBot) -> None:
     lane.ask(slab(), FREQUENCY, ANGLE)
     assert gate.entered.acquire(timeout=10)
     (thread,) = (thread for thread in threading.enumerate() if thread.name == "live lane")
-    parent.deleteLater()
-    qtbot.waitSignal(parent.destroyed, raising=True).wait()
+    with qtbot.waitSignal(parent.destroyed):
+        parent.deleteLater()
     gate.open.release()
     thread.join(10)
     assert not thread.is_alive()

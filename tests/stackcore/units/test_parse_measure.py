@@ -4,6 +4,8 @@ import math
 
 import numpy as np
 import pytest
+from hypothesis import given
+from hypothesis import strategies as st
 
 from stackcore.errors import UnitError
 from stackcore.units import Dimension, Measure, known_units, parse_measure
@@ -258,3 +260,27 @@ def test_the_wrong_dimension_is_told(dimension: Dimension) -> None:
                 parse_measure(other.example, dimension)
             assert other.word in caught.value.message
             assert dimension.word in caught.value.message
+
+
+PIECES = st.sampled_from(
+    [*"0123456789.,eE+-*/()% '\"°µΩ", "mm", "um", "in", "GHz", "ohm/sq", " ", "1e308", "1e-320"]
+)
+
+
+@given(
+    text=st.one_of(st.text(max_size=40), st.lists(PIECES, max_size=25).map("".join)),
+    dimension=st.sampled_from(Dimension),
+)
+def test_any_text_is_a_quantity_or_a_unit_error(text: str, dimension: Dimension) -> None:
+    """Whatever is typed gives a finite value that its text gives again, or an error with what is allowed."""
+    try:
+        found = parse_measure(text, dimension, default_unit=dimension.usual_unit or None)
+    except UnitError as error:
+        refused = error
+    else:
+        assert math.isfinite(found.value)
+        assert parse_measure(found.text, dimension) == found
+        return
+    assert refused.message
+    assert refused.allowed
+    assert str(refused).isprintable()

@@ -1,6 +1,6 @@
 """Pint as a second opinion on the size of every unit that both know."""
 
-from typing import Final
+from typing import Any, Final
 
 import hypothesis.strategies as st
 import pint
@@ -9,7 +9,7 @@ from hypothesis import given
 
 from stackcore.units import Dimension, parse_measure
 
-REGISTRY: Final = pint.UnitRegistry()
+REGISTRY: Final[Any] = pint.UnitRegistry()
 
 UNITS: Final = [
     *((Dimension.LENGTH, unit, unit, "m") for unit in ("nm", "um", "mm", "cm", "m", "km", "in", "micron")),

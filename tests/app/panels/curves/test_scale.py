@@ -110,8 +110,38 @@ def test_round_range_holds_the_data(low: float, span: float) -> None:
 
 
 def test_round_range_of_a_fraction_stops_at_its_ends() -> None:
-    """A transmittance from 0.31 to 0.999 is not drawn above 1."""
-    assert round_range(0.31, 0.999, 0.0, 1.0)[1] == 1.0
+    """A transmittance from 0.31 to 0.999 is drawn a hair above 1, and not to 1.2."""
+    low, high = round_range(0.31, 0.999, top=1.0)
+    assert low == 0.2
+    assert 1.0 < high < 1.02
+
+
+def test_round_range_does_not_pass_zero_without_need() -> None:
+    """A loss from 0.001 to 2.8 begins at about zero; one from −0.5 begins below it."""
+    assert -0.05 < round_range(0.001, 2.8)[0] <= 0.0
+    assert round_range(-0.5, 2.8)[0] <= -0.5
+    assert 0.0 <= round_range(-30.0, -0.2)[1] < 0.5
+
+
+def test_round_range_of_rounding_errors_is_a_plain_one() -> None:
+    """A loss of 1e-15 dB is nothing, and is not enlarged until it looks like something."""
+    assert round_range(0.0, 1e-15, grain=1e-9) == (-1.0, 1.0)
+    assert round_range(1e-8, 2e-8)[1] < 1e-7
+
+
+def test_degrees_are_divided_like_a_turn() -> None:
+    """Steps of angles from 10 upward quarter a turn; smaller ones are 1, 2 and 5."""
+    assert round_step(360.0, 10, degrees=True) == 45.0
+    assert round_step(360.0, 3, degrees=True) == 180.0
+    assert round_step(20.0, 10, degrees=True) == 2.0
+    assert linear_ticks(-180.0, 180.0, 5, degrees=True).texts == ("−180", "−90", "0", "90", "180")
+
+
+def test_a_wide_axis_writes_numbers_with_their_unit() -> None:
+    """Over many decades the caller spells the numbers; they are thinned as usual."""
+    ticks = logarithmic_ticks(-6.0, 6.0, 7, spell=lambda value: f"<{value:g}>")
+    assert ticks.texts[0] == "<1e-06>"
+    assert len(ticks.texts) <= 8
 
 
 def test_round_range_stays_while_the_data_tremble() -> None:

@@ -1,5 +1,7 @@
 """Texts of a column do not cover each other and stay where they are wanted."""
 
+from itertools import pairwise
+
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
@@ -15,9 +17,9 @@ def test_no_text_covers_another(wanted: list[float]) -> None:
     placed = spread(wanted, 15.0, 0.0, 300.0)
     assert placed is not None
     ordered = sorted(placed)
-    assert all(below - above >= 15.0 - 1e-6 for above, below in zip(ordered, ordered[1:], strict=False))
+    assert all(below - above >= 15.0 - 1e-6 for above, below in pairwise(ordered))
     assert all(7.5 - 1e-6 <= place <= 292.5 + 1e-6 for place in placed)
-    for one, other in zip(range(len(wanted)), range(1, len(wanted)), strict=False):
+    for one, other in pairwise(range(len(wanted))):
         if wanted[one] < wanted[other]:
             assert placed[one] < placed[other]
 

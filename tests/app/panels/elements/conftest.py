@@ -1,10 +1,9 @@
 """A session with a few elements, and the panel that shows it."""
 
-from collections.abc import Iterator
 from dataclasses import dataclass, field
 
 import pytest
-from PySide6.QtCore import Qt
+from PySide6.QtCore import QItemSelectionModel, Qt
 from PySide6.QtTest import QTest
 from PySide6.QtWidgets import QApplication, QLineEdit, QWidget
 from pytestqt.qtbot import QtBot
@@ -64,7 +63,9 @@ class Shown:
 
     def go(self, row: int, column: int) -> None:
         """Make a cell the current one, as a click does."""
-        self.panel.table.setCurrentIndex(self.panel.table.elements_model().index(row, column))
+        index = self.panel.table.elements_model().index(row, column)
+        flags = QItemSelectionModel.SelectionFlag
+        self.panel.table.selectionModel().setCurrentIndex(index, flags.ClearAndSelect | flags.Rows)
 
     def at(self) -> tuple[int, int]:
         """Return row and column of the current cell."""
@@ -90,7 +91,7 @@ class Shown:
 
 
 @pytest.fixture
-def shown(qtbot: QtBot, session: Session) -> Iterator[Shown]:
+def shown(qtbot: QtBot, session: Session) -> Shown:
     """Show the panel with the focus in its table."""
     said: list[tuple[str, Severity]] = []
     panel = ElementsPanel(session, LIGHT, lambda text, severity: said.append((text, severity)))
@@ -100,4 +101,4 @@ def shown(qtbot: QtBot, session: Session) -> Iterator[Shown]:
     panel.activateWindow()
     panel.table.setFocus()
     qtbot.waitUntil(panel.table.hasFocus)
-    yield Shown(panel, session, said)
+    return Shown(panel, session, said)

@@ -57,9 +57,7 @@ def test_block_without_header_starts_at_the_current_cell(text: str, anchor: str,
 
 @given(
     rows=st.lists(
-        st.lists(
-            st.text(st.characters(exclude_categories=["Cs", "Cc", "Z"]), max_size=6), min_size=4, max_size=4
-        ),
+        st.lists(st.text(st.characters(exclude_categories=["Cs", "Cc", "Z"]), max_size=6), min_size=4, max_size=4),
         min_size=1,
         max_size=5,
     ).filter(lambda rows: any(rows[-1]) and "–" not in str(rows) and "—" not in str(rows) and "-" not in str(rows))

@@ -4,7 +4,8 @@ from app.document import edits
 from app.document.document import Cell
 from app.document.session import Session
 from app.panels.elements.columns import ALL_COLUMNS, LAYER_COLUMNS, THICKNESS, columns_of
-from app.panels.elements.lines import cell_of, fault_words, lines_of, with_unit
+from app.panels.elements.lines import cell_of, lines_of, with_unit
+from app.panels.tables.words import fault_words
 from stackcore.errors import Fault
 from stackcore.units import Dimension, parse_measure
 

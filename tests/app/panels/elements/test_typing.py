@@ -116,7 +116,7 @@ def test_material_by_its_name(shown: Shown) -> None:
 
 
 def test_material_from_the_library_by_keys(shown: Shown) -> None:
-    """A part of a name, then Down and Enter, takes the entry from the library and adds it to the job in one step."""
+    """A part of a name, then Down and Enter, takes an entry of the library into the job in one step."""
     before = len(shown.session.record.materials)
     shown.go(3, MATERIAL)
     shown.keys("library: alum")

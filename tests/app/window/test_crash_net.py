@@ -1,0 +1,103 @@
+"""What nobody caught is written down and told, from every thread and from Qt."""
+
+import sys
+import threading
+from collections.abc import Iterator
+from pathlib import Path
+
+import pytest
+from PySide6.QtCore import QTimer, qCritical, qInstallMessageHandler, qWarning
+from pytestqt.qtbot import QtBot
+
+from app.window.crash_net import LOG_NAME, CrashNet
+
+
+@pytest.fixture
+def net(qtbot: QtBot, tmp_path: Path) -> Iterator[CrashNet]:
+    """An installed net; everything is as before at the end, also the handler of pytest-qt."""
+    hooks = sys.excepthook, threading.excepthook
+    handler = qInstallMessageHandler(None)
+    net = CrashNet(tmp_path)
+    net.install()
+    yield net
+    net.remove()
+    sys.excepthook, threading.excepthook = hooks
+    qInstallMessageHandler(handler)
+
+
+def log(folder: Path) -> str:
+    """Return what was written."""
+    return (folder / LOG_NAME).read_text(encoding="utf-8")
+
+
+def test_an_exception_in_a_slot_is_told_and_logged(qtbot: QtBot, net: CrashNet, tmp_path: Path) -> None:
+    """The sentence names the exception; the log has where it came from; the program goes on."""
+
+    def slot() -> None:
+        raise ZeroDivisionError("by nothing")
+
+    with qtbot.captureExceptions(), qtbot.waitSignal(net.caught) as caught:
+        QTimer.singleShot(0, lambda: net.report(_raised(slot)))
+    assert caught.args is not None
+    assert "ZeroDivisionError: by nothing" in caught.args[0]
+    assert "Your job is kept" in caught.args[0]
+    assert "in slot" in log(tmp_path)
+    assert "in slot" in net.tail()
+
+
+def test_the_hook_of_python_is_the_net(qtbot: QtBot, net: CrashNet) -> None:
+    """What reaches the interpreter's hook reaches the net."""
+    error = _raised(lambda: int("x"))
+    with qtbot.waitSignal(net.caught) as caught:
+        sys.excepthook(type(error), error, error.__traceback__)
+    assert caught.args is not None
+    assert "ValueError" in caught.args[0]
+
+
+def test_an_exception_in_a_thread_is_told_in_the_thread_of_the_window(
+    qtbot: QtBot, net: CrashNet, tmp_path: Path
+) -> None:
+    """A thread that dies of an exception is told of."""
+    with qtbot.waitSignal(net.caught) as caught:
+        thread = threading.Thread(target=lambda: int("x"))
+        thread.start()
+        thread.join()
+    assert caught.args is not None
+    assert "ValueError" in caught.args[0]
+    assert "ValueError" in log(tmp_path)
+
+
+def test_messages_of_qt_are_logged_and_the_bad_ones_told(qtbot: QtBot, net: CrashNet, tmp_path: Path) -> None:
+    """A warning of Qt is only written down, a critical one also told; noise of the platform is neither."""
+    told: list[str] = []
+    net.caught.connect(told.append)
+    qWarning("a warning")
+    qWarning("This plugin does not support propagateSizeHints()")
+    assert told == []
+    qCritical("a critical fault")
+    assert told == ["The window toolkit reports a fault: a critical fault"]
+    assert "WARNING Qt: a warning" in log(tmp_path)
+    assert "propagateSizeHints" not in log(tmp_path)
+
+
+def test_removing_gives_the_hooks_back(qtbot: QtBot, tmp_path: Path) -> None:
+    """After remove the interpreter has its own hooks, and removing twice does no harm."""
+    hooks = sys.excepthook, threading.excepthook
+    handler = qInstallMessageHandler(None)
+    net = CrashNet(tmp_path)
+    net.install()
+    net.remove()
+    net.remove()
+    assert sys.excepthook is sys.__excepthook__
+    assert net.tail() == ""
+    sys.excepthook, threading.excepthook = hooks
+    qInstallMessageHandler(handler)
+
+
+def _raised(call: object) -> Exception:
+    assert callable(call)
+    try:
+        call()
+    except Exception as error:
+        return error
+    raise AssertionError("nothing was raised")

@@ -1,0 +1,123 @@
+"""From an edit to painted curves, in the whole window, offscreen."""
+
+import tempfile
+from collections.abc import Callable, Iterator
+from pathlib import Path
+from time import perf_counter
+
+from PySide6.QtCore import QCoreApplication, QEvent, QEventLoop, QObject, QSettings, QTimer
+
+from app.document import edits
+from app.document.session import Session
+from app.document.view import View
+from app.window.main_window import MainWindow
+from app.window.open import make_application
+from stackcore.job import Job
+from stackcore.job.records import (
+    FrequencyGrid,
+    JobRecord,
+    LayerRecord,
+    MaterialRecord,
+    StackRecord,
+    SweepRecord,
+)
+from stackcore.units import ANGLE, FREQUENCY, LENGTH, measure
+from tests.bench.solver import LAYERS, wall
+from tests.bench.timing import floor_seconds, in_turns
+
+POINTS = 2001
+LIMIT_MS = 5000
+
+
+def job() -> Job:
+    """Return the bench's wall as a job: 20 layers, 2001 frequencies, 3 angles."""
+    layers = [element for element in wall().elements if hasattr(element, "medium")]
+    materials = tuple(
+        MaterialRecord(f"m{index}", model="constant", permittivity=complex(layer.medium.permittivity))  # type: ignore[attr-defined]
+        for index, layer in enumerate(layers)
+    )
+    elements = tuple(
+        LayerRecord(f"m{index}", measure(layer.thickness, LENGTH))  # type: ignore[union-attr]
+        for index, layer in enumerate(layers)
+    )
+    grid = FrequencyGrid(measure(8e9, FREQUENCY), measure(12e9, FREQUENCY), POINTS)
+    angles = tuple(measure(value, ANGLE) for value in (0.0, 0.5, 1.0))
+    return Job(JobRecord("Bench", (StackRecord("A", elements),), SweepRecord(grid, angles), materials))
+
+
+def painted_window() -> tuple[MainWindow, Callable[[], None]]:
+    """Return the window with the bench's job, its curves painted, and what closes it."""
+    folder = tempfile.TemporaryDirectory(prefix="slabwright-bench-")
+    make_application()
+    session = Session()
+    session.open_job(job())
+    settings = QSettings(str(Path(folder.name) / "settings.ini"), QSettings.Format.IniFormat)
+    window = MainWindow(session, View(), settings, Path(folder.name))
+    window.resize(1280, 840)
+    window.show()
+    wait_for_curves(window)
+
+    def close() -> None:
+        session.save(Path(folder.name) / "bench.slabjob")
+        window.close()
+        window.deleteLater()
+        QCoreApplication.sendPostedEvents(None, QEvent.Type.DeferredDelete.value)
+        folder.cleanup()
+
+    return window, close
+
+
+class _Painted(QObject):
+    """Ends a loop at the first paint of a widget after it was armed."""
+
+    def __init__(self, loop: QEventLoop) -> None:
+        super().__init__()
+        self.armed = False
+        self._loop = loop
+
+    def eventFilter(self, watched: QObject, event: QEvent) -> bool:  # noqa: N802
+        if self.armed and event.type() == QEvent.Type.Paint:
+            QTimer.singleShot(0, self._loop.quit)
+        return False
+
+
+def wait_for_curves(window: MainWindow) -> None:
+    """Run the event loop until the newest answer has been painted."""
+    loop = QEventLoop()
+    painted = _Painted(loop)
+    plot = window.panels.curves.plot.viewport()
+    plot.installEventFilter(painted)
+
+    def arm(_: object) -> None:
+        painted.armed = True
+        plot.update()
+
+    window.recompute.answered.connect(arm)
+    QTimer.singleShot(LIMIT_MS, loop.quit)
+    loop.exec()
+    window.recompute.answered.disconnect(arm)
+    plot.removeEventFilter(painted)
+    if not painted.armed:
+        raise TimeoutError("no answer came")
+
+
+def report() -> Iterator[str]:
+    """Yield one line a figure."""
+    window, close = painted_window()
+    session = window.session
+    state = {"thickness": 1e-3}
+
+    def edit() -> float:
+        state["thickness"] += 1e-6
+        begin = perf_counter()
+        session.apply(edits.set_thickness(0, 3, state["thickness"]))
+        wait_for_curves(window)
+        return perf_counter() - begin
+
+    edit()
+    turns = in_turns(15, floor=lambda: floor_seconds(LAYERS * POINTS * 3), edit=edit)
+    yield (
+        f"edit to painted curves, {LAYERS} layers, {POINTS} points, 3 angles: "
+        f"{turns.middle('edit') * 1e3:.1f} ms ({turns.ratio('edit', 'floor'):.1f} floors)"
+    )
+    close()
