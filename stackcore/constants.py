@@ -1,8 +1,9 @@
 """Constants of nature in SI units.
 
-Source: BIPM, The International System of Units, 9th edition (2019), for the exact speed of light;
-CODATA 2022 recommended values (NIST SP 961, 2024) for the vacuum permittivity. The other two follow from them,
-so that the four always agree with each other to the last bit.
+Source: BIPM, The International System of Units, 9th edition (2019), for the exact speed of light, Planck constant
+and elementary charge; CODATA 2022 recommended values (NIST SP 961, 2024) for the vacuum permittivity and the mass of
+the electron. The vacuum permeability and the wave impedance follow from the first two, so that the four always agree
+with each other to the last bit.
 """
 
 from typing import Final
@@ -18,3 +19,12 @@ VACUUM_PERMEABILITY: Final = 1.0 / (VACUUM_PERMITTIVITY * SPEED_OF_LIGHT**2)
 
 FREE_SPACE_IMPEDANCE: Final = 1.0 / (VACUUM_PERMITTIVITY * SPEED_OF_LIGHT)
 """Wave impedance of free space, ohm (376.730 313 4)."""
+
+PLANCK_CONSTANT: Final = 6.626_070_15e-34
+"""J·s, exact."""
+
+ELEMENTARY_CHARGE: Final = 1.602_176_634e-19
+"""C, exact; also the joules of one electronvolt."""
+
+ELECTRON_MASS: Final = 9.109_383_713_9e-31
+"""kg."""

@@ -103,7 +103,7 @@ def read_list(text: str, dimension: Dimension) -> tuple[Measure, ...]:
     entries = [entry for entry in entries if entry]
     if not entries:
         raise UnitError("the list is empty", f"values divided by semicolons: {dimension.example}; ...")
-    unit = unit_of(entries[-1], dimension) or dimension.usual_unit
+    unit = unit_of(entries[-1], dimension)
     return tuple(parse_measure(entry, dimension, default_unit=unit) for entry in entries)
 
 
@@ -155,20 +155,14 @@ def read_points(text: str) -> int:
 
 
 def unit_of(text: str, dimension: Dimension) -> str:
-    """Return the unit `text` ends with, or an empty text when it has none of `dimension`.
+    """Return the unit `text` ends with, or the usual one when it has none of `dimension`.
 
     Examples
     --------
     >>> unit_of("35 um", Dimension.LENGTH), unit_of("1/8 in", Dimension.LENGTH), unit_of("7", Dimension.LENGTH)
-    ('um', 'in', '')
+    ('um', 'in', 'mm')
     """
-    match = _UNIT_AT_END.search(text.strip())
-    if match:
-        unit = match["unit"].strip()
-        with contextlib.suppress(UnitError):
-            parse_measure(f"1 {unit}", dimension)
-            return unit
-    return ""
+    return _own_unit(text, dimension) or dimension.usual_unit
 
 
 def read_like(old: Measure | None, text: str, dimension: Dimension) -> Measure:
@@ -181,8 +175,18 @@ def read_like(old: Measure | None, text: str, dimension: Dimension) -> Measure:
     >>> read_like(Measure(35e-6, "35 um"), "40", Dimension.LENGTH)
     Measure(value=4e-05, text='40 um')
     """
-    unit = dimension.usual_unit if old is None else unit_of(old.text, dimension) or dimension.si_unit
+    unit = dimension.usual_unit if old is None else _own_unit(old.text, dimension) or dimension.si_unit
     return parse_measure(text.strip(), dimension, default_unit=unit)
+
+
+def _own_unit(text: str, dimension: Dimension) -> str:
+    match = _UNIT_AT_END.search(text.strip())
+    if match:
+        unit = match["unit"].strip()
+        with contextlib.suppress(UnitError):
+            parse_measure(f"1 {unit}", dimension)
+            return unit
+    return ""
 
 
 def _divide(text: str) -> list[str]:

@@ -3,7 +3,7 @@
 from dataclasses import replace
 from typing import Final
 
-from app.document.cells import check_cell, material_and_constant, value_text, with_text
+from app.document.cells import check_cell, material_and_constant, with_text
 from app.document.document import WHOLE_ROW, Cell, Document, Draft
 from app.document.edit import Edit, with_record, without_draft
 from app.document.history import Brief
@@ -50,12 +50,6 @@ def type_into(cell: Cell, text: str) -> Edit:
         return Document(document.job, (*without_draft(document.drafts, cell), draft))
 
     return Edit(_sentence(cell, text), change, merge_key=Brief(("type into", cell)))
-
-
-def shown_text(document: Document, cell: Cell) -> str:
-    """Return what is to be read at `cell`: the draft as it was typed, or else the text of the value."""
-    draft = document.draft(cell)
-    return value_text(document.record, cell) if draft is None else draft.text
 
 
 def settle(document: Document) -> Document:

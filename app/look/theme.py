@@ -47,7 +47,7 @@ class Theme:
     stale
         Curves and drawings that belong to an earlier job (at least 3:1).
     reflection, transmission, absorption, shielding, reflection_phase, transmission_phase, delay, group_delay
-        Data hues, at least 3:1 on `base`.
+        Data hues, at least 4.5:1 on `base`, where names stand in the colour of their curve.
     """
 
     name: Literal["light", "dark"]
@@ -96,14 +96,14 @@ LIGHT: Final = Theme(
     warning="#855300",
     good="#2c6b3f",
     stale="#8d887e",
-    reflection="#d55e00",
+    reflection="#bf5100",
     transmission="#0072b2",
-    absorption="#008a64",
-    shielding="#2787ba",
-    reflection_phase="#b85c8e",
+    absorption="#00835f",
+    shielding="#14788c",
+    reflection_phase="#af5486",
     transmission_phase="#6b4e9b",
-    delay="#8f7f00",
-    group_delay="#a86c00",
+    delay="#817300",
+    group_delay="#a06700",
 )
 """Warm greys, for daylight, for print and for export."""
 
@@ -126,7 +126,7 @@ DARK: Final = Theme(
     reflection="#f0783c",
     transmission="#4fa8e0",
     absorption="#2dbb90",
-    shielding="#7cc8f2",
+    shielding="#74cbdb",
     reflection_phase="#d98db8",
     transmission_phase="#b39ae0",
     delay="#d9cc4a",
@@ -176,14 +176,16 @@ def curve_colour(theme: Theme, quantity: str, angle_rank: int, angle_count: int)
     Returns
     -------
     str
-        ``#rrggbb``, at least 3:1 on ``theme.base``. Steeper is darker on light and lighter on dark.
+        ``#rrggbb``, at least 4.5:1 on ``theme.base``, so that the curve's label can have it. Steeper is darker on
+        light and lighter on dark.
     """
     colour = hue(theme, quantity)
     if angle_count < 2:
         return colour
     share = min(max(angle_rank, 0), angle_count - 1) / (angle_count - 1)
-    faint = lightness(clear_of(with_lightness(colour, 0.50 if theme.dark else 0.665), (theme.base,), GRAPHICS))
-    strong = 0.88 if theme.dark else 0.34
+    faintest = with_lightness(colour, 0.50 if theme.dark else 0.665)
+    faint = lightness(clear_of(faintest, (theme.base,), TEXT + 0.05))
+    strong = 0.92 if theme.dark else 0.32
     return with_lightness(colour, faint + (strong - faint) * share)
 
 

@@ -115,17 +115,6 @@ def angle_text(angle: float) -> str:
     return f"{format_value(angle, Dimension.ANGLE, unit='deg', digits=6).removesuffix(' deg')}°"
 
 
-def length_text(length: float) -> str:
-    """Return a length in m for the screen.
-
-    Examples
-    --------
-    >>> length_text(0.00123456)
-    '1.235 mm'
-    """
-    return format_value(length, Dimension.LENGTH, digits=DIGITS)
-
-
 def _fixed(value: float, decimals: int) -> str:
     """Return `value` with fixed decimals, fewer from 1000 upward, where nobody reads them."""
     if abs(value) >= 1000:

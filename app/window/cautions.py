@@ -4,6 +4,7 @@ A note never blocks. The tool computes electrical results of flat, infinite wall
 approvals and law have their own codes and their own licensed people.
 """
 
+import math
 from dataclasses import dataclass
 from typing import Final
 
@@ -14,6 +15,10 @@ from stackcore.propagation.response import Response
 
 STANDING: Final = "Infinite flat sheets, plane wave; verify by test."
 """Holds for every result and is always shown."""
+
+
+GRAZING: Final = math.radians(80.0)
+"""Angle beyond which a real panel is too short for the footprint of the wave."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -138,7 +143,7 @@ def cautions(job: Job, stack: int, view: ViewState, response: Response | None) -
         found.append(BEYOND)
     if _outside_range(job, stack):
         found.append(VALID_RANGE)
-    if float(job.sweep.angles().max()) > 1.396:  # 80 deg
+    if float(job.sweep.angles().max()) > GRAZING:
         found.append(STEEP)
     if _conducts(job, stack) and not found:
         found.append(CONDUCTIVE_COAT)

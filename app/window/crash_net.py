@@ -11,7 +11,7 @@ import traceback
 from logging.handlers import RotatingFileHandler
 from pathlib import Path
 from types import TracebackType
-from typing import Final
+from typing import Any, Final
 
 from PySide6.QtCore import (
     QMessageLogContext,
@@ -55,6 +55,7 @@ class CrashNet(QObject):
         super().__init__(parent)
         self.log_file = folder / LOG_NAME
         self._handler: RotatingFileHandler | None = None
+        self._before: tuple[Any, Any, Any] = (sys.excepthook, threading.excepthook, None)
 
     def install(self) -> None:
         """Open the log and take the hooks of Python, of its threads and of Qt."""
@@ -65,23 +66,22 @@ class CrashNet(QObject):
         LOGGER.addHandler(handler)
         LOGGER.setLevel(logging.INFO)
         self._handler = handler
+        self._before = (sys.excepthook, threading.excepthook, qInstallMessageHandler(self._qt_message))
         sys.excepthook = self._exception
         threading.excepthook = self._thread_exception
-        qInstallMessageHandler(self._qt_message)
 
     def remove(self) -> None:
-        """Give the hooks back and close the log."""
+        """Give the hooks back to whoever had them and close the log."""
         if self._handler is None:
             return
-        sys.excepthook = sys.__excepthook__
-        threading.excepthook = threading.__excepthook__
-        qInstallMessageHandler(None)
+        sys.excepthook, threading.excepthook, qt_handler = self._before
+        qInstallMessageHandler(qt_handler)
         LOGGER.removeHandler(self._handler)
         self._handler.close()
         self._handler = None
 
     def report(self, error: BaseException) -> None:
-        """Write an exception down and say so."""
+        """Write an exception down and say so; the local variables of where it came from are let go."""
         self._exception(type(error), error, error.__traceback__)
 
     def tail(self, lines: int = 40) -> str:
@@ -95,6 +95,9 @@ class CrashNet(QObject):
             sys.__excepthook__(kind, error, trace)
             return
         LOGGER.error("".join(traceback.format_exception(kind, error, trace)).rstrip())
+        # Frames that end in an error are kept with it. A painter in one of them would outlive the surface it
+        # paints on, and that ends the process.
+        traceback.clear_frames(trace)
         self.caught.emit(f"Something went wrong inside Slabwright ({kind.__name__}: {error}). Your job is kept.")
 
     def _thread_exception(self, args: threading.ExceptHookArgs) -> None:

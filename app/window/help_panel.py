@@ -32,7 +32,7 @@ class HelpPanel(QWidget):
         self._text.setAccessibleName("Help")
         self._text.setFrameShape(QFrame.Shape.NoFrame)
         self._text.setOpenLinks(False)
-        self._text.document().setDocumentMargin(16)
+        self._text.document().setDocumentMargin(12)
         self._buttons = QButtonGroup(self)
         self._build()
         self.setFocusProxy(self._text)
@@ -66,7 +66,7 @@ class HelpPanel(QWidget):
 
     def _build(self) -> None:
         row = QHBoxLayout()
-        row.setContentsMargins(12, 4, 8, 4)
+        row.setContentsMargins(4, 0, 4, 4)
         row.setSpacing(4)
         for name in self._pages:
             button = QToolButton(self)

@@ -27,7 +27,13 @@ VERSION: Final = 1
 FIRST_SIZE: Final = QSize(1280, 840)
 WALL_SHARE: Final = 0.34
 TABLE_SHARE: Final = 0.38
+TABLE_WIDEST: Final = 640
+"""The table has what it needs to be read; on a wide screen the curves take the rest."""
 READINGS_SHARE: Final = 0.26
+READINGS_TALLEST: Final = 190
+BESIDE_SHARE: Final = 0.25
+BESIDE_WIDEST: Final = 400
+"""Share and width of a panel that is opened beside for the first time."""
 HANDLE: Final = 9
 """Width of the gap between panels, which is where they are resized."""
 
@@ -125,6 +131,7 @@ class Arrangement:
         column.addWidget(self._whole, 1)
         window.setCentralWidget(centre)
         self._docks = {title: _dock(window, title, widget) for title, widget in beside}
+        self._placed: set[str] = set()
 
     @property
     def splitters(self) -> tuple[QuietSplitter, ...]:
@@ -134,6 +141,16 @@ class Arrangement:
     def dock(self, title: str) -> QDockWidget:
         """Return the dock of the panel with this title."""
         return self._docks[title]
+
+    def open_beside(self, title: str) -> None:
+        """Show the panel with this title; the first time in a good width."""
+        dock = self._docks[title]
+        dock.show()
+        dock.raise_()
+        if title not in self._placed:
+            width = min(round(self._window.width() * BESIDE_SHARE), BESIDE_WIDEST)
+            self._window.resizeDocks([dock], [width], Qt.Orientation.Horizontal)
+        self._placed.add(title)
 
     def set_theme(self, theme: Theme) -> None:
         """Take the colours of `theme`."""
@@ -146,9 +163,14 @@ class Arrangement:
             dock.setFloating(False)
             self._window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
             dock.hide()
-        _share(self._whole, WALL_SHARE, self._window.height())
-        _share(self._lower, TABLE_SHARE, self._window.width())
-        _share(self._results, 1 - READINGS_SHARE, round(self._window.height() * (1 - WALL_SHARE)))
+        self._placed.clear()
+        width, height = self._window.width(), self._window.height()
+        wall = round(height * WALL_SHARE)
+        table = min(round(width * TABLE_SHARE), TABLE_WIDEST)
+        readings = min(round((height - wall) * READINGS_SHARE), READINGS_TALLEST)
+        _divide(self._whole, (wall, height - wall), (1, 2))
+        _divide(self._lower, (table, width - table), (1, 2))
+        _divide(self._results, (height - wall - readings, readings), (1, 0))
 
     def save(self) -> None:
         """Remember size, place and shares."""
@@ -164,6 +186,7 @@ class Arrangement:
         if self._settings.value("layout/version", 0, type=int) != VERSION or not self._restore_window():
             self.reset()
             return
+        self._placed.update(self._docks)
         for splitter in self.splitters:
             splitter.restoreState(self._bytes(splitter.objectName()))
 
@@ -209,15 +232,14 @@ def _title_bar(dock: QDockWidget, title: str) -> QWidget:
     close.setToolTip(f"Close the panel {title}; the menu opens it again.")
     close.clicked.connect(dock.close)
     row = QHBoxLayout(bar)
-    row.setContentsMargins(16, 4, 8, 4)
+    row.setContentsMargins(8, 4, 4, 4)
     row.setSpacing(8)
     row.addWidget(name, 1)
     row.addWidget(close)
     return bar
 
 
-def _share(splitter: QSplitter, share: float, room: int) -> None:
-    first = round(room * share)
-    splitter.setSizes([first, max(room - first, 1)])
-    for place in range(splitter.count()):
-        splitter.setStretchFactor(place, round(100 * (share if place == 0 else 1 - share)))
+def _divide(splitter: QSplitter, sizes: Sequence[int], stretch: Sequence[int]) -> None:
+    splitter.setSizes(list(sizes))
+    for place, factor in enumerate(stretch):
+        splitter.setStretchFactor(place, factor)

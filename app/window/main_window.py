@@ -146,9 +146,7 @@ class MainWindow(QMainWindow):
 
     def show_help(self, page: str) -> None:
         """Show a page of the help panel, the definitions at the quantity that is shown."""
-        dock = self._arrangement.dock(HELP)
-        dock.show()
-        dock.raise_()
+        self._arrangement.open_beside(HELP)
         self._panels.help.show_page(page, self._view.state.quantity if page == "conventions" else "")
         focus_into(self._panels.help)
 
@@ -204,7 +202,7 @@ class MainWindow(QMainWindow):
             theme=self._theme_choice,
             set_theme=self.set_theme_choice,
             materials_shown=lambda: not materials.isHidden(),
-            toggle_materials=lambda: materials.setVisible(materials.isHidden()),
+            toggle_materials=self._toggle_materials,
             reset_layout=self._arrangement.reset,
             next_panel=lambda: self._panels.focus(1),
             previous_panel=lambda: self._panels.focus(-1),
@@ -326,6 +324,13 @@ class MainWindow(QMainWindow):
     def _dropped(self, event: QDropEvent) -> Path | None:
         urls = event.mimeData().urls()
         return Path(urls[0].toLocalFile()) if len(urls) == 1 and urls[0].isLocalFile() else None
+
+    def _toggle_materials(self) -> None:
+        dock = self._arrangement.dock(MATERIALS)
+        if dock.isHidden():
+            self._arrangement.open_beside(MATERIALS)
+        else:
+            dock.hide()
 
     def _quit(self) -> None:
         self.close()

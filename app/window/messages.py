@@ -190,7 +190,7 @@ class MessageStrip(QFrame):
         self._details.setPlainText("\n".join(details))
         lines = min(len(details), LINES)
         margin = round(2 * self._details.document().documentMargin())
-        self._details.setFixedHeight(lines * self._details.fontMetrics().lineSpacing() + margin)
+        self._details.setFixedHeight(lines * self._details.fontMetrics().lineSpacing() + margin + 4)
 
     def _show_choices(self, choices: tuple[Choice, ...]) -> None:
         for old in self._buttons:

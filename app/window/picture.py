@@ -1,10 +1,11 @@
 """``slabwright picture``: the main window with a job, drawn to a PNG without a display."""
 
 import argparse
+import contextlib
 import os
 import re
 import tempfile
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
 from pathlib import Path
 from typing import Final, NoReturn
 
@@ -12,6 +13,7 @@ from PySide6.QtCore import QBuffer, QCoreApplication, QEvent, QEventLoop, QIODev
 
 from app.document.session import Session
 from app.document.view import View
+from app.window.crash_net import CrashNet
 from app.window.main_window import THEME_KEY, MainWindow
 from app.window.open import make_application
 from stackcore.cli.telling import DONE, one_line, tell
@@ -56,7 +58,8 @@ def main(argv: Sequence[str]) -> int:
         return int(end.code or 0)
     except InputError as error:
         return tell(error)
-    os.environ.setdefault("QT_QPA_PLATFORM", "offscreen")
+    if not os.environ.get("QT_QPA_PLATFORM"):
+        os.environ["QT_QPA_PLATFORM"] = "offscreen"
     if scale != 1:
         os.environ["QT_SCALE_FACTOR"] = f"{scale:g}"
     try:
@@ -112,7 +115,7 @@ def draw(job: Path, width: int, height: int, *, dark: bool = False) -> bytes:
     session = Session()
     session.open(job)
     make_application()
-    with tempfile.TemporaryDirectory(prefix="slabwright-") as folder:
+    with tempfile.TemporaryDirectory(prefix="slabwright-") as folder, _strict(Path(folder)):
         settings = QSettings(str(Path(folder) / "settings.ini"), QSettings.Format.IniFormat)
         settings.setValue(THEME_KEY, "dark" if dark else "light")
         window = MainWindow(session, View(), settings, Path(folder))
@@ -126,6 +129,21 @@ def draw(job: Path, width: int, height: int, *, dark: bool = False) -> bytes:
             window.close()
             window.deleteLater()
             QCoreApplication.sendPostedEvents(None, QEvent.Type.DeferredDelete.value)
+
+
+@contextlib.contextmanager
+def _strict(folder: Path) -> Iterator[None]:
+    """Refuse a picture in whose making anything went wrong: part of it may be missing."""
+    told: list[str] = []
+    net = CrashNet(folder)
+    net.caught.connect(told.append)
+    net.install()
+    try:
+        yield
+    finally:
+        net.remove()
+    if told:
+        raise InputError([Fault("", told[0])])
 
 
 def _wait(window: MainWindow) -> None:
@@ -158,7 +176,11 @@ def _wait(window: MainWindow) -> None:
 def _png(window: MainWindow) -> bytes:
     buffer = QBuffer()
     buffer.open(QIODevice.OpenModeFlag.WriteOnly)
-    window.grab().save(buffer, "PNG")
+    try:
+        window.grab().save(buffer, "PNG")
+    except Exception as error:
+        # What a panel raises while it is painted comes out here.
+        raise InputError([Fault("", f"the window could not be drawn: {error}")]) from error
     return bytes(buffer.data().data())
 
 

@@ -8,7 +8,7 @@ from collections.abc import Callable, Sequence
 from typing import Final
 
 from stackcore.cli import sweep
-from stackcore.cli.telling import GIVEN_UP, WRONG, one_line, tell
+from stackcore.cli.telling import DONE, GIVEN_UP, let_go_of_standard_output, one_line, tell
 from stackcore.errors import Fault, SlabwrightError, nearest
 
 __all__ = ["main"]
@@ -54,20 +54,25 @@ def main(argv: Sequence[str] | None = None) -> int:
     first = arguments[0] if arguments else ""
     try:
         if first in ("-h", "--help"):
-            print(HELP, end="")
-            return 0
+            return _say(HELP)
         if first == "--version":
-            print(f"slabwright {_version()}")
-            return 0
+            return _say(f"slabwright {_version()}\n")
         if first in COMMANDS:
             return COMMANDS[first](arguments[1:])
         return _window(arguments)
     except SlabwrightError as error:
         return tell(error)
     except BrokenPipeError:
+        let_go_of_standard_output()
         return one_line("standard output was closed before everything was written")
     except KeyboardInterrupt:
         return GIVEN_UP
+
+
+def _say(text: str) -> int:
+    # Flushed here, because an error at the end of the process could no longer be told in one line.
+    print(text, end="", flush=True)
+    return DONE
 
 
 def _version() -> str:
@@ -89,5 +94,4 @@ def _window(arguments: list[str]) -> int:
         known = (*COMMANDS, *WINDOW_COMMANDS)
         allowed = f"{', '.join(known)}, or a job file"
         return tell([Fault("", f"there is no command and no file {first!r}{nearest(first, known)}", allowed)])
-    status = open_window(arguments)
-    return status if status is not None else WRONG
+    return open_window(arguments)

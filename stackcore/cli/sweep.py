@@ -9,7 +9,7 @@ from collections.abc import Iterator, Sequence
 from pathlib import Path
 from typing import TYPE_CHECKING, BinaryIO, NoReturn, TextIO
 
-from stackcore.cli.telling import DONE, one_line, tell
+from stackcore.cli.telling import DONE, let_go_of_standard_output, one_line, tell
 from stackcore.errors import Fault, InputError, nearest
 
 if TYPE_CHECKING:
@@ -112,7 +112,7 @@ def _to_standard_output(job: "Job", stacks: tuple["Stack", ...]) -> int:
             _write(job, stacks, stream)
         sys.stdout.flush()
     except OSError as error:
-        _let_go_of_standard_output()
+        let_go_of_standard_output()
         if isinstance(error, BrokenPipeError):
             return one_line("standard output was closed before all rows were written")
         return one_line(f"standard output cannot be written: {error.strerror or error}")
@@ -137,11 +137,3 @@ def _write(job: "Job", stacks: tuple["Stack", ...], stream: TextIO) -> None:
 
     for _ in write_csv(job, stream, stacks=stacks):
         pass
-
-
-def _let_go_of_standard_output() -> None:
-    """Point standard output at nothing, so that the interpreter does not stumble over it when it ends."""
-    with contextlib.suppress(OSError, ValueError):
-        nothing = os.open(os.devnull, os.O_WRONLY)
-        os.dup2(nothing, sys.stdout.fileno())
-        os.close(nothing)

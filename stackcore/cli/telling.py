@@ -1,5 +1,7 @@
 """What the command line says on standard error: one line a fault."""
 
+import contextlib
+import os
 import sys
 from collections.abc import Iterable
 from typing import Final
@@ -30,3 +32,11 @@ def one_line(text: str) -> int:
     if sys.stderr is not None:
         print(f"slabwright: {shown}", file=sys.stderr)
     return WRONG
+
+
+def let_go_of_standard_output() -> None:
+    """Point standard output at nothing, so that the interpreter does not stumble over it when it ends."""
+    with contextlib.suppress(OSError, ValueError):
+        nothing = os.open(os.devnull, os.O_WRONLY)
+        os.dup2(nothing, sys.stdout.fileno())
+        os.close(nothing)

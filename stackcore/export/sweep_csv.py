@@ -76,9 +76,7 @@ def csv_rows(response: Response, name: str | None = None) -> str:
     return "".join([f"{head}{row}{LINE_END}" for head, row in zip(heads, rows, strict=True)])
 
 
-def write_csv(
-    job: Job, stream: TextIO, *, stacks: Sequence[Stack] | None = None
-) -> Generator[float, None, None]:
+def write_csv(job: Job, stream: TextIO, *, stacks: Sequence[Stack] | None = None) -> Generator[float, None, None]:
     """Solve stacks over the sweep of `job` and write them, yielding after each part the fraction that is done.
 
     The sweep is solved and written in parts, so that its size is bounded by the disk and not by the memory. Nothing

@@ -32,6 +32,12 @@ ALWAYS_DEFINED: Final = ("air", "vacuum")
 METAL_NAME: Final = "metal"
 """Name of the perfect conductor as a back."""
 
+CONSTANTS: Final = ("permittivity", "loss_tangent", "permeability", "conductivity")
+"""The constants a material of a job may have, whatever its model, in the order of the file."""
+
+JOB_MODELS: Final = {name: model for name, model in MODELS.items() if set(model.readers) <= set(CONSTANTS)}
+"""The models a job file can spell out; those of the library that need other constants can only be referred to."""
+
 _RIGHT_ANGLE: Final = math.pi / 2
 
 
@@ -84,10 +90,10 @@ def material_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
         )
         yield Fault(path, f"{material.name!r} {what}", "another name for this material")
     if not material.model and not material.library:
-        yield Fault(join(path, "model"), "is missing", f"{one_of(MODELS)}, or a library reference")
-    if material.model and material.model not in MODELS:
-        given = f"{shown(material.model)} is not known{near(material.model, MODELS)}"
-        yield Fault(join(path, "model"), given, one_of(MODELS))
+        yield Fault(join(path, "model"), "is missing", f"{one_of(JOB_MODELS)}, or a library reference")
+    if material.model and material.model not in JOB_MODELS:
+        given = f"{shown(material.model)} is not known{near(material.model, JOB_MODELS)}"
+        yield Fault(join(path, "model"), given, one_of(JOB_MODELS))
     elif material.model:
         yield from _model_faults(material, path)
     yield from _constant_faults(material, path)
@@ -95,7 +101,7 @@ def material_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
 
 def _model_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
     """Yield constants that the model does not take, and those it needs."""
-    model = MODELS[material.model]
+    model = JOB_MODELS[material.model]
     for name in given_constants(material):
         if name not in model.readers:
             message = f"the model {material.model!r} has no {name}"
@@ -109,8 +115,7 @@ def _model_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
 
 def given_constants(material: MaterialRecord) -> tuple[str, ...]:
     """Return the names of the constants a material has."""
-    names = ("permittivity", "loss_tangent", "permeability", "conductivity")
-    return tuple(name for name in names if getattr(material, name) is not None)
+    return tuple(name for name in CONSTANTS if getattr(material, name) is not None)
 
 
 def _constant_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:

@@ -3,7 +3,7 @@
 from collections.abc import Callable, Mapping
 from typing import Final, Literal, TypeVar
 
-from stackcore.job import limits
+from stackcore.job import checks, limits
 from stackcore.job.inspector import Inspector, join, one_of, shown
 from stackcore.job.limits import SHEET_PARTS
 from stackcore.job.records import (
@@ -17,7 +17,7 @@ from stackcore.job.records import (
     StackRecord,
     SweepRecord,
 )
-from stackcore.media.models import MODELS, read_conductivity, read_loss_tangent, read_relative
+from stackcore.media.models import read_conductivity, read_loss_tangent, read_relative
 from stackcore.units import Dimension, Measure, measure
 
 FORMAT: Final = "slabwright-job"
@@ -29,10 +29,7 @@ FREQUENCY_KEYS: Final = ("start", "stop", "points", "spacing")
 ANGLE_KEYS: Final = ("start", "stop", "points")
 SHEET_KINDS: Final = ("series",)
 
-CONSTANTS: Final = ("permittivity", "loss_tangent", "permeability", "conductivity")
-"""The constants a material may have, whatever its model, in the order of the file."""
-
-MATERIAL_KEYS: Final = ("label", "library", "model", *CONSTANTS, "source")
+MATERIAL_KEYS: Final = ("label", "library", "model", *checks.CONSTANTS, "source")
 
 T = TypeVar("T")
 
@@ -100,7 +97,7 @@ def _material(inspector: Inspector, name: str, value: object, path: str) -> Mate
     return MaterialRecord(
         name,
         label=text("label"),
-        model=inspector.choice(*known["model"], MODELS, "") if "model" in known else "",
+        model=inspector.choice(*known["model"], checks.JOB_MODELS, "") if "model" in known else "",
         library=text("library"),
         permittivity=constant("permittivity", read_relative),
         permeability=constant("permeability", read_relative),

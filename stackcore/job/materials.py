@@ -11,7 +11,7 @@ from typing import Any
 import numpy as np
 
 from stackcore.errors import Fault, LibraryError
-from stackcore.job.checks import given_constants
+from stackcore.job.checks import JOB_MODELS, given_constants
 from stackcore.job.records import JobRecord, MaterialRecord
 from stackcore.media.base import AbstractMedium, Provenance
 from stackcore.media.library import LibraryEntry, library_entry
@@ -30,10 +30,10 @@ def medium_of(material: MaterialRecord) -> AbstractMedium:
     """
     entry = _entry(material)
     constants, model = _constants(material), material.model
+    if entry is not None and not constants:
+        return entry.medium
     if not model and entry is not None:
         constants, model = _completed(constants, entry), entry.model
-    elif not constants and entry is not None:
-        constants = dict(entry.constants)
     medium = MODELS[model].build(constants, None, Provenance(material.source))
     if entry is not None and _same_constants(medium, entry.medium):
         return entry.medium  # which also knows its range, spread and source
@@ -87,7 +87,8 @@ def _same_constants(medium: AbstractMedium, other: AbstractMedium) -> bool:
 def with_resolved_library(record: JobRecord) -> JobRecord:
     """Return `record` with model, constants and source written beside every library reference.
 
-    So a job means the same where the library has moved on. Constants that stand there already stay.
+    So a job means the same where the library has moved on. Constants that stand there already stay; a model that
+    a job file cannot spell out stays a reference.
 
     Raises
     ------
@@ -99,7 +100,7 @@ def with_resolved_library(record: JobRecord) -> JobRecord:
 
 def _with_library_values(material: MaterialRecord) -> MaterialRecord:
     entry = _entry(material)
-    if entry is None or (material.model and _constants(material)):
+    if entry is None or entry.model not in JOB_MODELS or (material.model and _constants(material)):
         return material
     given = _constants(material)
     constants: dict[str, Any] = dict(_completed(given, entry))

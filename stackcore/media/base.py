@@ -7,9 +7,14 @@
 5. `dispersive` is False only when the values do not depend on frequency at all; the solver then works out the
    refraction once per angle.
 6. Outside `valid_range` the model is still evaluated; who shows the result must say so.
+7. `constant_slopes` are the analytic derivatives with respect to each real constant, per SI unit of it, all others
+   held. Names are those of the job file, with the place in a list as in a path: ``terms[1].relaxation_time``.
+   A complex constant counts as two, its real part under its own name and its loss as ``…_loss``. They may depend on
+   frequency even where the values do not (the slope with respect to a conductivity of 0).
 """
 
 from abc import ABC, abstractmethod
+from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import Final
 
@@ -69,6 +74,14 @@ class Constitutive:
     permeability_slope: ComplexArray
 
 
+@dataclass(frozen=True, slots=True)
+class ConstantSlope:
+    """Derivatives of relative ε and μ with respect to one real constant, per SI unit of it, at some frequencies."""
+
+    permittivity: ComplexArray
+    permeability: ComplexArray
+
+
 class AbstractMedium(ABC):
     """What a layer or a half-space is made of. See the module's numbered contract."""
 
@@ -92,3 +105,7 @@ class AbstractMedium(ABC):
     @abstractmethod
     def evaluate(self, frequency: FloatArray) -> Constitutive:
         """Return ε and μ, relative, and their slopes, at `frequency` in Hz (any shape, all > 0)."""
+
+    @abstractmethod
+    def constant_slopes(self, frequency: FloatArray) -> Mapping[str, ConstantSlope]:
+        """Return, by name of the constant, the slopes of ε and μ at `frequency` in Hz, arrays of its shape."""

@@ -1,11 +1,22 @@
 """A medium whose relative permittivity and permeability do not depend on frequency."""
 
-from dataclasses import dataclass
+from collections.abc import Mapping
+from dataclasses import dataclass, field
+from typing import Literal
 
 import numpy as np
 
 from stackcore.arrays import FloatArray
-from stackcore.media.base import UNSOURCED, AbstractMedium, Constitutive, FrequencyRange, Provenance
+from stackcore.media.base import (
+    UNSOURCED,
+    AbstractMedium,
+    ConstantSlope,
+    Constitutive,
+    FrequencyRange,
+    Provenance,
+)
+from stackcore.media.checks import check_loss, check_positive, check_relative
+from stackcore.media.parts import everywhere
 
 
 @dataclass(frozen=True, slots=True)
@@ -16,6 +27,9 @@ class ConstantMedium(AbstractMedium):
     ----------
     permittivity, permeability
         ε′ − jε″ and μ′ − jμ″ with ε″, μ″ ≥ 0 (`stackcore.conventions`).
+    loss_as
+        Which constant the dielectric loss was given by: ``part`` for ε″, ``tangent`` for tan δ. The values do not
+        depend on it, `constant_slopes` do: with ``tangent`` the loss grows with ε′ (`with_loss_tangent`).
     valid_range, provenance
         See `stackcore.media.base`.
 
@@ -27,6 +41,8 @@ class ConstantMedium(AbstractMedium):
     Notes
     -----
     A constant ε′ with constant ε″ ≠ 0 is not causal over all frequencies; it stands for a narrow band.
+    `stackcore.media.wideband` is causal and nearly as constant. A conductivity beside it is in
+    `stackcore.media.lossy_dielectric`.
 
     Examples
     --------
@@ -36,17 +52,32 @@ class ConstantMedium(AbstractMedium):
 
     permittivity: complex
     permeability: complex = 1.0 + 0.0j
+    loss_as: Literal["part", "tangent"] = field(default="part", kw_only=True)
     valid_range: FrequencyRange | None = None
     provenance: Provenance = UNSOURCED
 
     def __post_init__(self) -> None:
-        for name, value in (("permittivity", self.permittivity), ("permeability", self.permeability)):
-            if not np.isfinite(value):
-                raise ValueError(f"{name} {value} is not finite")
-            if complex(value).imag > 0:
-                raise ValueError(f"{name} {value} has gain: its imaginary part must be 0 or negative")
-            if value == 0:
-                raise ValueError(f"{name} must not be 0")
+        check_relative("permittivity", self.permittivity)
+        check_relative("permeability", self.permeability)
+        if self.loss_as not in ("part", "tangent"):
+            raise ValueError(f"loss_as {self.loss_as!r} is unknown; there are part, tangent")
+        if self.loss_as == "tangent":
+            check_positive("permittivity", complex(self.permittivity).real)
+
+    @classmethod
+    def with_loss_tangent(
+        cls,
+        permittivity: float,
+        loss_tangent: float,
+        permeability: complex = 1.0 + 0.0j,
+        valid_range: FrequencyRange | None = None,
+        provenance: Provenance = UNSOURCED,
+    ) -> "ConstantMedium":
+        """Return the medium of ε′ (1 − j tan δ), ε′ > 0 and tan δ ≥ 0."""
+        check_loss("loss_tangent", loss_tangent)
+        loss = permittivity * loss_tangent
+        value = complex(permittivity, -loss) if loss else complex(permittivity)
+        return cls(value, permeability, valid_range, provenance, loss_as="tangent")
 
     @property
     def dispersive(self) -> bool:
@@ -61,6 +92,23 @@ class ConstantMedium(AbstractMedium):
             zero,
             zero,
         )
+
+    def constant_slopes(self, frequency: FloatArray) -> Mapping[str, ConstantSlope]:
+        one, zero = everywhere(1.0, frequency), everywhere(0.0, frequency)
+        epsilon = complex(self.permittivity)
+        if self.loss_as == "tangent":
+            slopes = {
+                "permittivity": ConstantSlope(one * complex(1.0, epsilon.imag / epsilon.real), zero),
+                "loss_tangent": ConstantSlope(one * complex(0.0, -epsilon.real), zero),
+            }
+        else:
+            slopes = {
+                "permittivity": ConstantSlope(one, zero),
+                "permittivity_loss": ConstantSlope(-1j * one, zero),
+            }
+        slopes["permeability"] = ConstantSlope(zero, one)
+        slopes["permeability_loss"] = ConstantSlope(zero, -1j * one)
+        return slopes
 
 
 VACUUM = ConstantMedium(1.0 + 0.0j)

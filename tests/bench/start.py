@@ -11,7 +11,7 @@ import os, time
 begin = time.perf_counter()
 os.environ["QT_QPA_PLATFORM"] = "offscreen"
 from tests.bench.window import painted_window
-window, close = painted_window()
+window, session, close = painted_window()
 print(time.perf_counter() - begin)
 close()
 """

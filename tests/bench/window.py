@@ -5,6 +5,7 @@ from collections.abc import Callable, Iterator
 from pathlib import Path
 from time import perf_counter
 
+from pyqtgraph import GraphicsView
 from PySide6.QtCore import QCoreApplication, QEvent, QEventLoop, QObject, QSettings, QTimer
 
 from app.document import edits
@@ -21,7 +22,7 @@ from stackcore.job.records import (
     StackRecord,
     SweepRecord,
 )
-from stackcore.units import ANGLE, FREQUENCY, LENGTH, measure
+from stackcore.units import Dimension, measure
 from tests.bench.solver import LAYERS, wall
 from tests.bench.timing import floor_seconds, in_turns
 
@@ -37,20 +38,20 @@ def job() -> Job:
         for index, layer in enumerate(layers)
     )
     elements = tuple(
-        LayerRecord(f"m{index}", measure(layer.thickness, LENGTH))  # type: ignore[union-attr]
+        LayerRecord(f"m{index}", measure(layer.thickness, Dimension.LENGTH))  # type: ignore[union-attr]
         for index, layer in enumerate(layers)
     )
-    grid = FrequencyGrid(measure(8e9, FREQUENCY), measure(12e9, FREQUENCY), POINTS)
-    angles = tuple(measure(value, ANGLE) for value in (0.0, 0.5, 1.0))
+    grid = FrequencyGrid(measure(8e9, Dimension.FREQUENCY), measure(12e9, Dimension.FREQUENCY), POINTS)
+    angles = tuple(measure(value, Dimension.ANGLE) for value in (0.0, 0.5, 1.0))
     return Job(JobRecord("Bench", (StackRecord("A", elements),), SweepRecord(grid, angles), materials))
 
 
-def painted_window() -> tuple[MainWindow, Callable[[], None]]:
-    """Return the window with the bench's job, its curves painted, and what closes it."""
+def painted_window() -> tuple[MainWindow, Session, Callable[[], None]]:
+    """Return the window with the bench's job, its curves painted, its session, and what closes it."""
     folder = tempfile.TemporaryDirectory(prefix="slabwright-bench-")
     make_application()
     session = Session()
-    session.open_job(job())
+    session.start_from(job(), "bench")
     settings = QSettings(str(Path(folder.name) / "settings.ini"), QSettings.Format.IniFormat)
     window = MainWindow(session, View(), settings, Path(folder.name))
     window.resize(1280, 840)
@@ -64,7 +65,7 @@ def painted_window() -> tuple[MainWindow, Callable[[], None]]:
         QCoreApplication.sendPostedEvents(None, QEvent.Type.DeferredDelete.value)
         folder.cleanup()
 
-    return window, close
+    return window, session, close
 
 
 class _Painted(QObject):
@@ -85,7 +86,7 @@ def wait_for_curves(window: MainWindow) -> None:
     """Run the event loop until the newest answer has been painted."""
     loop = QEventLoop()
     painted = _Painted(loop)
-    plot = window.panels.curves.plot.viewport()
+    plot = window.panels.curves.findChild(GraphicsView).viewport()
     plot.installEventFilter(painted)
 
     def arm(_: object) -> None:
@@ -103,12 +104,11 @@ def wait_for_curves(window: MainWindow) -> None:
 
 def report() -> Iterator[str]:
     """Yield one line a figure."""
-    window, close = painted_window()
-    session = window.session
+    window, session, close = painted_window()
     state = {"thickness": 1e-3}
 
     def edit() -> float:
-        state["thickness"] += 1e-6
+        state["thickness"] += 2e-5
         begin = perf_counter()
         session.apply(edits.set_thickness(0, 3, state["thickness"]))
         wait_for_curves(window)

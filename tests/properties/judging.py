@@ -42,7 +42,13 @@ def misses(case: Case) -> list[Miss]:
         ]
         for quantity, got, right in rows:
             found += _power_miss(quantity, name, float(got[0, 0, p]), right, case)
-        found += _shielding_miss(name, float(response.shielding_effectiveness_dB[0, 0, p]), truth)
+        for quantity, got, right in (
+            ("shielding", response.shielding_effectiveness_dB, truth.shielding_effectiveness_dB),
+            ("insertion loss", response.insertion_loss_dB, truth.shielding_effectiveness_dB),
+            ("return loss", response.return_loss_dB, truth.return_loss_dB),
+        ):
+            found += _decibel_miss(quantity, name, float(got[0, 0, p]), right)
+        found += _reflection_phase_miss(name, float(response.reflection_phase_deg[0, 0, p]), truth)
         if not isinstance(case.stack.back, PerfectConductor):
             delay = float(response.insertion_phase_delay_deg[0, 0, p])
             log_t = complex(response.log_transmission[0, 0, p])
@@ -78,13 +84,24 @@ def _power_miss(quantity: str, polarization: str, got: float, right: mpmath.mpf,
     return [Miss(quantity, polarization, got, float(right), error)] if not error <= TOLERANCE else []
 
 
-def _shielding_miss(polarization: str, got: float, truth: Exact) -> list[Miss]:
-    """Return the miss of the shielding effectiveness: relative to it, or to 1 dB when it is less."""
-    right = truth.shielding_effectiveness_dB
+def _decibel_miss(quantity: str, polarization: str, got: float, right: mpmath.mpf) -> list[Miss]:
+    """Return the miss of a number of decibels: relative to it, or to 1 dB when it is less."""
+    if quantity == "return loss" and right > 900:  # no reflection to the reference, see NO_REFLECTION
+        return [] if got > 900 else [Miss(quantity, polarization, got, float(right), float("inf"))]
     if right == mpmath.inf:
-        return [] if got == np.inf else [Miss("shielding", polarization, got, np.inf, float("inf"))]
+        return [] if got == np.inf else [Miss(quantity, polarization, got, np.inf, float("inf"))]
     error = float(abs(mpmath.mpf(got) - right) / max(1, abs(right)))
-    return [Miss("shielding", polarization, got, float(right), error)] if not error <= TOLERANCE else []
+    return [Miss(quantity, polarization, got, float(right), error)] if not error <= TOLERANCE else []
+
+
+def _reflection_phase_miss(polarization: str, got: float, truth: Exact) -> list[Miss]:
+    """Return the miss of the phase of r, modulo 360 degrees, where anything is reflected: 1e-7 degrees."""
+    if truth.reflectance < NO_REFLECTION:
+        return []
+    right = mpmath.degrees(mpmath.arg(truth.reflection))
+    turns = mpmath.mpf(got) - right
+    error = float(abs(turns - 360 * mpmath.nint(turns / 360)))
+    return [Miss("reflection phase", polarization, got, float(right), error)] if not error <= 1e-7 else []
 
 
 def _phase_miss(polarization: str, got: float, truth: Exact, case: Case, log_t: complex) -> list[Miss]:

@@ -11,10 +11,11 @@ from app.panels.curves.frame import Frame
 if TYPE_CHECKING:
     from app.panels.curves.plot import CurvePlot
 
-Zone = Literal["area", "left", "bottom", "outside"]
+Zone = Literal["area", "above", "left", "bottom", "outside"]
 
 _STILL: Final = 4.0
 _NOTCH: Final = 0.85
+_MOVABLE: Final = ("area", "left", "bottom")
 
 
 @dataclass(slots=True)
@@ -61,13 +62,15 @@ class PlottingHand(QObject):
             return "left"
         if point.y() > area.bottom() and area.left() <= point.x() <= area.right():
             return "bottom"
+        if point.y() < area.top() and area.left() <= point.x() <= area.right():
+            return "above"
         return "outside"
 
     def press(self, event: QMouseEvent) -> None:
         """Begin a click or a drag."""
         point, zone = event.position(), self.zone(event.position())
         self._drag = _Drag("press", point, self._plot.frame(), zone, event.button())
-        if event.button() != Qt.MouseButton.LeftButton or zone != "area":
+        if event.button() != Qt.MouseButton.LeftButton or zone not in ("area", "above"):
             return
         marker = self._marker_at(point)
         if marker is not None:
@@ -87,7 +90,7 @@ class PlottingHand(QObject):
             self.pointed.emit(None)
         if drag.kind == "marker":
             self.marker_dragged.emit(drag.marker, self._plot.in_area(point))
-        elif drag.kind == "pan" and drag.button != Qt.MouseButton.RightButton and drag.zone != "outside":
+        elif drag.kind == "pan" and drag.button != Qt.MouseButton.RightButton and drag.zone in _MOVABLE:
             self._pan(drag, point)
         elif drag.kind == "box":
             self._plot.pointer_layer.set_box(self._box(drag, point))
@@ -113,14 +116,14 @@ class PlottingHand(QObject):
             return
         if zone == "area":
             self._plot.show_all()
-        elif zone != "outside":
+        elif zone in ("left", "bottom"):
             self.range_wanted.emit(zone)
 
     def wheel(self, event: QWheelEvent) -> None:
         """Zoom at the mouse; over an axis only along it."""
         zone = self.zone(event.position())
         turned = event.angleDelta().y() or event.angleDelta().x()
-        if zone == "outside" or turned == 0:
+        if zone not in _MOVABLE or turned == 0:
             event.ignore()
             return
         factor = _NOTCH ** (turned / 120)
@@ -136,13 +139,15 @@ class PlottingHand(QObject):
         zone = self.zone(point)
         shapes = {"left": Qt.CursorShape.SizeVerCursor, "bottom": Qt.CursorShape.SizeHorCursor}
         shape = shapes.get(zone, Qt.CursorShape.ArrowCursor)
-        if zone == "area":
-            shape = Qt.CursorShape.CrossCursor if self._marker_at(point) is None else Qt.CursorShape.SplitHCursor
+        if zone in ("area", "above") and self._marker_at(point) is not None:
+            shape = Qt.CursorShape.SplitHCursor
+        elif zone == "area":
+            shape = Qt.CursorShape.CrossCursor
         self._plot.viewport().setCursor(shape)
         self.pointed.emit(self._plot.in_area(point) if zone == "area" else None)
 
     def _marker_at(self, point: QPointF) -> int | None:
-        return self._plot.marker_layer.near(self._plot.in_area(point).x(), self._plot.frame())
+        return self._plot.marker_layer.at(self._plot.in_area(point), self._plot.frame())
 
     def _pan(self, drag: _Drag, point: QPointF) -> None:
         moved = point - drag.start

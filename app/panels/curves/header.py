@@ -78,7 +78,7 @@ class Header(QWidget):
         if busy == self._busy:
             return
         self._busy = busy
-        if busy:
+        if busy and self.isVisible():
             self._wait.start()
         else:
             self._wait.stop()

@@ -9,7 +9,7 @@ from PySide6.QtWidgets import QGraphicsItem, QStyleOptionGraphicsItem, QWidget
 from app.panels.curves.frame import Frame
 
 SLACK: Final = 12.0
-"""Pixels that a mark may reach beyond the plot area."""
+"""Pixels that a mark may reach beyond the plot area; twice as many above, where the flags of markers are."""
 
 
 class Layer(QGraphicsItem):
@@ -54,4 +54,4 @@ class Layer(QGraphicsItem):
         self._bounds = self._room()
 
     def _room(self) -> QRectF:
-        return QRectF(self._area.rect()).adjusted(-SLACK, -SLACK, SLACK, SLACK)
+        return QRectF(self._area.rect()).adjusted(-SLACK, -2 * SLACK, SLACK, SLACK)

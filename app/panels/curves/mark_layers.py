@@ -13,6 +13,7 @@ from app.panels.curves.layer import Layer
 
 _DOT: Final = 3.5
 _FLAG: Final = 4.0
+_REACH: Final = 6.0
 
 
 @dataclass(frozen=True, slots=True)
@@ -79,11 +80,21 @@ class MarkerLayer(Layer):
         self.markers = tuple(markers)
         self.update()
 
-    def near(self, across: float, frame: Frame, reach: float = 6.0) -> int | None:
-        """Return the index of the marker within `reach` pixels, the nearest one, or None."""
-        gaps = [abs(frame.across(marker.position) - across) for marker in self.markers]
+    def at(self, point: QPointF, frame: Frame) -> int | None:
+        """Return the index of the marker whose line or flag is at a pixel of the plot area, or None."""
+        if point.y() < 0:
+            flags = [self.flag(marker, frame) for marker in self.markers]
+            return next((index for index, flag in enumerate(flags) if flag.contains(point)), None)
+        gaps = [abs(frame.across(marker.position) - point.x()) for marker in self.markers]
         best = min(range(len(gaps)), key=gaps.__getitem__, default=None)
-        return best if best is not None and gaps[best] <= reach else None
+        return best if best is not None and gaps[best] <= _REACH else None
+
+    def flag(self, marker: DrawnMarker, frame: Frame) -> QRectF:
+        """Return where the flag of a marker is: above the plot area, so that it hides no curve."""
+        metrics = QFontMetricsF(self.font)
+        width, height = max(metrics.horizontalAdvance(marker.text) + 8.0, 18.0), metrics.height() + 2.0
+        left = frame.across(marker.position) - width / 2
+        return QRectF(min(max(left, 0.5), max(frame.width - width - 0.5, 0.5)), -height - 2.5, width, height)
 
     def draw(self, painter: QPainter, frame: Frame) -> None:
         """Draw the markers, the active one on top."""
@@ -93,20 +104,16 @@ class MarkerLayer(Layer):
                 continue
             colour = QColor(self.theme.accent if marker.active else self.theme.muted)
             painter.setPen(QPen(colour, 1.0))
-            painter.drawLine(QPointF(x, 0.0), QPointF(x, frame.height))
+            painter.drawLine(QPointF(x, -2.5), QPointF(x, frame.height))
             for spot in marker.spots:
                 y = frame.down(spot.value)
                 if frame.holds(x, y):
                     painter.setPen(QPen(QColor(self.theme.base), 1.0))
                     painter.setBrush(QColor(spot.colour))
                     painter.drawEllipse(QPointF(x, y), _DOT, _DOT)
-            self._draw_flag(painter, frame, marker, x, colour)
+            self._draw_flag(painter, marker, self.flag(marker, frame), colour)
 
-    def _draw_flag(self, painter: QPainter, frame: Frame, marker: DrawnMarker, x: float, colour: QColor) -> None:
-        metrics = QFontMetricsF(self.font)
-        width = max(metrics.horizontalAdvance(marker.text) + 8.0, 18.0)
-        left = min(max(x - width / 2, 0.5), max(frame.width - width - 0.5, 0.5))
-        flag = QRectF(left, 0.5, width, metrics.height() + 2.0)
+    def _draw_flag(self, painter: QPainter, marker: DrawnMarker, flag: QRectF, colour: QColor) -> None:
         painter.setFont(self.font)
         painter.setPen(QPen(colour, 1.0))
         painter.setBrush(colour if marker.active else QColor(self.theme.base))

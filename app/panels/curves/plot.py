@@ -13,6 +13,7 @@ from PySide6.QtGui import (
     QFocusEvent,
     QFont,
     QFontInfo,
+    QFontMetricsF,
     QKeyEvent,
     QMouseEvent,
     QPen,
@@ -99,7 +100,7 @@ class CurvePlot(pg.GraphicsView):
 
     def _arrange(self) -> None:
         layout = pg.GraphicsLayout()
-        layout.setContentsMargins(0, 10, 8, 0)
+        layout.setContentsMargins(0, round(QFontMetricsF(self.font()).height()) + 6, 8, 5)
         layout.setSpacing(0)
         layout.addItem(self.left_axis, 0, 0)
         layout.addItem(self.area, 0, 1)
@@ -158,6 +159,12 @@ class CurvePlot(pg.GraphicsView):
     def rouse(self) -> None:
         """Draw fast from now until nothing has changed for a while."""
         self.curve_layer.set_fine(False)
+        if self.isVisible():
+            self._rest.start()
+
+    def showEvent(self, event: object) -> None:
+        """Wait for rest."""
+        super().showEvent(event)
         self._rest.start()
 
     def hideEvent(self, event: object) -> None:

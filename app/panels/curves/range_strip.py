@@ -5,7 +5,7 @@ from typing import Final
 
 from PySide6.QtCore import Qt, Signal
 from PySide6.QtGui import QColor, QKeyEvent, QPalette
-from PySide6.QtWidgets import QLabel, QPushButton, QWidget
+from PySide6.QtWidgets import QLabel, QToolButton, QWidget
 
 from app.look.theme import Theme
 from app.panels.sweep.field import QuietField
@@ -31,9 +31,9 @@ class RangeStrip(QWidget):
         tip = "An end of an axis of the plot; the sweep stays as it is."
         self.fields = tuple(QuietField(theme, name.capitalize(), tip, "0000.0 GHz") for name in _NAMES)
         self._labels = [QLabel(text) for text in ("Frequency from", "to", "Values from", "to")]
-        self._show_all = QPushButton("Show all")
+        self._show_all = _quiet_button("Show all")
         self._show_all.setToolTip("Show everything and follow the data again.")
-        self._close = QPushButton("Done")
+        self._close = _quiet_button("Done")
         self._close.setToolTip("Close this line and go back to the plot.")
         flow = FlowLayout(self, across=6, down=2)
         for label, field in zip(self._labels, self.fields, strict=True):
@@ -118,3 +118,12 @@ class RangeStrip(QWidget):
             return None
         field.show_text(text)
         return value
+
+
+def _quiet_button(text: str) -> QToolButton:
+    """Return a button that is only a word until it is pointed at or focused."""
+    button = QToolButton()
+    button.setText(text)
+    button.setAutoRaise(True)
+    button.setFocusPolicy(Qt.FocusPolicy.StrongFocus)
+    return button

@@ -13,6 +13,10 @@ from stackcore.units import Dimension, parse_measure
 
 OFFERED_AT_ONCE = 14
 """Rows of the list of materials shown without scrolling."""
+WIDEST_LIST = 420
+"""Of the list of materials, in pixels; longer offers are cut short."""
+LIST_EXTRA = 32
+"""Pixels beside the text in a list: its margins and the scroll bar."""
 
 _LIST_KEYS = (Qt.Key.Key_Up, Qt.Key.Key_Down, Qt.Key.Key_PageUp, Qt.Key.Key_PageDown)
 
@@ -95,6 +99,10 @@ class MaterialBox(QComboBox):
         assert popup is not None
         self._matches = popup
         popup.installEventFilter(self)
+        # As wide as the longest offer, however narrow the cell.
+        widest = min(max((self.fontMetrics().horizontalAdvance(offer) for offer in offers), default=0), WIDEST_LIST)
+        popup.setMinimumWidth(widest + LIST_EXTRA)
+        self.view().setMinimumWidth(widest + LIST_EXTRA)
 
     @property
     def typed(self) -> bool:

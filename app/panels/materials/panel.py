@@ -65,6 +65,7 @@ class MaterialsPanel(QWidget):
         self._cautions = words("", self)
         self._caption = words(LOSS_ONCE, self)
         self._arrange()
+        self.setFocusProxy(self._table)
         self._table.wanted.connect(lambda _command: self.remove())
         self._table.selectionModel().currentChanged.connect(lambda *_indexes: self._show_note())
         self.destroyed.connect(session.subscribe(lambda _change: self._show_note()))

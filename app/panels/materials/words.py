@@ -34,7 +34,7 @@ def reading_at(medium: AbstractMedium, frequency: float) -> str:
     --------
     >>> from stackcore.media.constant import ConstantMedium
     >>> reading_at(ConstantMedium(4.2 - 0.063j), 1e10), reading_at(ConductorMedium(5.8e7), 1e10)
-    ('ε′ 4.2, tan δ 0.015', 'skin depth 0.6609 µm')
+    ('ε′ 4.2, tan δ 0.015', 'skin depth 660.9 nm')
     """
     at = np.array([frequency])
     if isinstance(medium, ConductorMedium):

@@ -279,4 +279,4 @@ def _in_the_way(one: Place, other: Place) -> bool:
     if one.tier == other.tier:
         return one.left < other.right + GAP and other.left < one.right + GAP
     upper, lower = (one, other) if one.tier > other.tier else (other, one)
-    return False
+    return lower.left - LEADER_GAP < upper.leader < lower.right + LEADER_GAP

@@ -97,8 +97,10 @@ def paint_layout(painter: QPainter, layout: WallLayout, theme: Theme, wave: Wave
     painter.setOpacity(wave_painting.STALE_OPACITY if wave is not None and wave.stale else 1.0)
     if wave is not None and rays is not None:
         wave_painting.paint_outside(painter, rays, wave, theme)
-        wave_painting.paint_captions(painter, captions.captions(layout, rays, wave, measure), layout, theme)
     painter.setOpacity(1.0)
+    if wave is not None and rays is not None:
+        written = captions.captions(layout, rays, wave, measure)
+        wave_painting.paint_captions(painter, written, layout, theme, stale=wave.stale)
     if touch.face is not None:
         _paint_handle(painter, layout, touch.face, touch.tag, theme)
 

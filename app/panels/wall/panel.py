@@ -142,11 +142,14 @@ class WallPanel(QWidget):
         return FontMeasure(QFontMetricsF(self.font(), self))
 
     def paintEvent(self, event: QPaintEvent) -> None:
+        layout, wave = self.layout_now, self.wave
         painter = QPainter(self)
-        painter.setFont(self.font())
-        layout = self.layout_now
-        paint_layout(painter, layout, self._theme, self.wave, self._touch(layout))
-        painter.end()
+        try:
+            painter.setFont(self.font())
+            paint_layout(painter, layout, self._theme, wave, self._touch(layout))
+        finally:
+            # A painter left open when an error passes brings the whole program down.
+            painter.end()
 
     def _touch(self, layout: WallLayout) -> Touch:
         face, tag = self._face, ""

@@ -59,8 +59,15 @@ def paint_outside(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> No
     _paint_field(painter, rays, wave, theme)
 
 
-def paint_captions(painter: QPainter, written: tuple[Caption, ...], layout: WallLayout, theme: Theme) -> None:
-    """Write what belongs to the wave, upon a quiet ground where it stands in a slab."""
+def paint_captions(
+    painter: QPainter,
+    written: tuple[Caption, ...],
+    layout: WallLayout,
+    theme: Theme,
+    *,
+    stale: bool = False,
+) -> None:
+    """Write what belongs to the wave, upon a quiet ground where it stands in a slab; all in one ink when stale."""
     grounds = {slab.row: kind_style(theme, slab.part.kind).tint for slab in layout.slabs}
     for caption in written:
         end = layout.wall.front if caption.box.right < layout.body.left else layout.wall.back
@@ -69,7 +76,7 @@ def paint_captions(painter: QPainter, written: tuple[Caption, ...], layout: Wall
             painter.setPen(Qt.PenStyle.NoPen)
             painter.setBrush(colour(ground, 0.8))
             painter.drawRoundedRect(rectangle(caption.box.grown(1.5)), 3, 3)
-        painter.setPen(QColor(_ink(caption, theme)))
+        painter.setPen(QColor(theme.stale if stale else _ink(caption, theme)))
         painter.drawText(rectangle(caption.box).adjusted(0, 0, 4, 0), Qt.AlignmentFlag.AlignVCenter, caption.text)
 
 

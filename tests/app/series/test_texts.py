@@ -11,7 +11,6 @@ from app.series.texts import (
     beyond_practical,
     exact_text,
     frequency_text,
-    length_text,
     number_text,
     value_text,
 )
@@ -87,10 +86,9 @@ def test_a_number_on_screen_is_near_the_value(value: float, quantity: str) -> No
 
 
 def test_other_texts() -> None:
-    """Frequencies, angles and lengths read in readable units, short."""
+    """Frequencies and angles read in readable units, short."""
     assert frequency_text(9.4e9) == "9.4 GHz"
     assert frequency_text(9.4e9, "MHz") == "9400 MHz"
     assert frequency_text(1e9 / 3) == "333.3333 MHz"
     assert angle_text(math.radians(45)) == "45°"
     assert angle_text(0.1) == "5.72958°"
-    assert length_text(35e-6) == "35 µm"

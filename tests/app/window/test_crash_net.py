@@ -1,12 +1,13 @@
 """What nobody caught is written down and told, from every thread and from Qt."""
 
+import subprocess
 import sys
 import threading
 from collections.abc import Iterator
 from pathlib import Path
 
 import pytest
-from PySide6.QtCore import QTimer, qCritical, qInstallMessageHandler, qWarning
+from PySide6.QtCore import QTimer, qCritical, qWarning
 from pytestqt.qtbot import QtBot
 
 from app.window.crash_net import LOG_NAME, CrashNet
@@ -15,14 +16,10 @@ from app.window.crash_net import LOG_NAME, CrashNet
 @pytest.fixture
 def net(qtbot: QtBot, tmp_path: Path) -> Iterator[CrashNet]:
     """An installed net; everything is as before at the end, also the handler of pytest-qt."""
-    hooks = sys.excepthook, threading.excepthook
-    handler = qInstallMessageHandler(None)
     net = CrashNet(tmp_path)
     net.install()
     yield net
     net.remove()
-    sys.excepthook, threading.excepthook = hooks
-    qInstallMessageHandler(handler)
 
 
 def log(folder: Path) -> str:
@@ -81,17 +78,51 @@ def test_messages_of_qt_are_logged_and_the_bad_ones_told(qtbot: QtBot, net: Cras
 
 
 def test_removing_gives_the_hooks_back(qtbot: QtBot, tmp_path: Path) -> None:
-    """After remove the interpreter has its own hooks, and removing twice does no harm."""
+    """After remove the hooks are those of before, and removing twice does no harm."""
     hooks = sys.excepthook, threading.excepthook
-    handler = qInstallMessageHandler(None)
     net = CrashNet(tmp_path)
     net.install()
+    assert (sys.excepthook, threading.excepthook) != hooks
     net.remove()
     net.remove()
-    assert sys.excepthook is sys.__excepthook__
+    assert (sys.excepthook, threading.excepthook) == hooks
     assert net.tail() == ""
-    sys.excepthook, threading.excepthook = hooks
-    qInstallMessageHandler(handler)
+
+
+PAINTING = """
+import sys, tempfile
+from pathlib import Path
+from PySide6.QtCore import QTimer
+from PySide6.QtGui import QPainter
+from PySide6.QtWidgets import QApplication, QWidget
+from app.window.crash_net import CrashNet
+
+class Broken(QWidget):
+    def paintEvent(self, event):
+        painter = QPainter(self)
+        painter.drawPoint(1, 1)
+        raise ValueError("in the middle of painting")
+
+application = QApplication([])
+told = []
+net = CrashNet(Path(tempfile.mkdtemp()))
+net.caught.connect(told.append)
+net.install()
+widget = Broken()
+widget.show()
+again = QTimer()
+again.timeout.connect(widget.update)
+again.start(5)
+QTimer.singleShot(400, application.quit)
+application.exec()
+print(len(told) > 1 and "in the middle of painting" in told[0])
+"""
+
+
+def test_an_exception_while_painting_does_not_end_the_process() -> None:
+    """A panel that fails to draw itself is told of, frame after frame, and the program lives on."""
+    done = subprocess.run([sys.executable, "-c", PAINTING], capture_output=True, text=True, check=False, timeout=60)
+    assert (done.returncode, done.stdout.strip()) == (0, "True"), done.stderr
 
 
 def _raised(call: object) -> Exception:

@@ -107,6 +107,19 @@ def test_a_faulty_job_draws_nothing_and_tells_every_fault(
         draw(job, 800, 600)
 
 
+def test_a_picture_with_a_part_missing_is_refused(
+    qtbot: QtBot, tmp_path: Path, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    """When a panel fails to draw itself there is no picture, and the reason is told."""
+
+    def fail(*_: object) -> None:
+        raise ValueError("in the middle of painting")
+
+    monkeypatch.setattr("app.panels.wall.panel.paint_layout", fail)
+    with pytest.raises(InputError, match="in the middle of painting"):
+        draw(job_file(tmp_path), 800, 600)
+
+
 @pytest.mark.parametrize("size", ["", "800", "800x", "x600", "0x0", "100x100", f"{LARGEST + 1}x600", "8e2x600"])
 def test_sizes_that_are_none_are_refused(size: str) -> None:
     """What is no size says what would be one."""

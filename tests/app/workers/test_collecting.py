@@ -2,6 +2,7 @@
 
 import gc
 import threading
+import weakref
 from collections.abc import Iterator
 
 import numpy as np
@@ -30,7 +31,7 @@ class Knot(QObject):
     def __init__(self, freed_in: list[str]) -> None:
         super().__init__()
         self.itself = self
-        self.destroyed.connect(lambda: freed_in.append(threading.current_thread().name))
+        weakref.finalize(self, lambda: freed_in.append(threading.current_thread().name))
 
 
 def litter(stack: Stack, frequency: FloatArray, angle: FloatArray) -> Response:

@@ -1,6 +1,7 @@
 """``slabwright``: help, version, and who gets which command line."""
 
 import importlib.metadata
+import os
 import subprocess
 import sys
 from collections.abc import Callable, Sequence
@@ -172,6 +173,17 @@ def test_module_runs_as_the_command(job_file: Path) -> None:
     )
     assert process.stderr == "0 []"
     assert process.stdout.startswith("stack,frequency_Hz,")
+
+
+def test_help_into_a_closed_pipe_is_one_line() -> None:
+    """Help that nobody reads any more ends in one line as well, also while the process ends."""
+    reader, writer = os.pipe()
+    os.close(reader)
+    command = [sys.executable, "-m", "stackcore", "--help"]
+    process = subprocess.run(command, stdout=writer, stderr=subprocess.PIPE, text=True, check=False)
+    os.close(writer)
+    assert process.returncode == 2
+    assert process.stderr == "slabwright: standard output was closed before everything was written\n"
 
 
 def test_help_does_not_read_jobs() -> None:

@@ -8,7 +8,7 @@ import numpy as np
 import pytest
 
 from stackcore.errors import JobError, LibraryError
-from stackcore.job import Job, job_from_json, with_resolved_library
+from stackcore.job import Job, job_from_json, materials, with_resolved_library
 from stackcore.job.records import (
     AngleGrid,
     FrequencyGrid,
@@ -131,6 +131,15 @@ def test_a_reference_that_is_needed_must_exist() -> None:
     record = JobRecord("", (StackRecord("A"),), SWEEP, (MaterialRecord("cu", library="metals/coper"),))
     with pytest.raises(LibraryError, match="did you mean 'metals/copper'"):
         with_resolved_library(record)
+
+
+def test_a_model_that_a_job_cannot_spell_out_stays_a_reference(monkeypatch: pytest.MonkeyPatch) -> None:
+    """A library entry of another model can be referred to, and saving leaves it a reference."""
+    entry = replace(library_entry("plastics/ptfe"), model="other", constants=(("strength", 2.0),))
+    monkeypatch.setattr(materials, "library_entry", lambda key: entry)
+    job = job_of(MaterialRecord("a", library="liquids/other"))
+    assert job.media["a"] is entry.medium
+    assert with_resolved_library(job.record) == job.record
 
 
 LAYER = LayerRecord("air", measure(1e-3, Dimension.LENGTH))

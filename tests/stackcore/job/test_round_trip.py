@@ -15,7 +15,7 @@ VALIDATOR = jsonschema.Draft202012Validator(json.loads(SCHEMA.read_text(encoding
 
 
 @given(records())
-@settings(max_examples=150)
+@settings(max_examples=60)
 def test_a_record_survives_its_text(record: JobRecord) -> None:
     """Every record comes back from its text as it was, every text as typed."""
     text = job_to_json(record)
@@ -24,14 +24,14 @@ def test_a_record_survives_its_text(record: JobRecord) -> None:
 
 
 @given(records())
-@settings(max_examples=100)
+@settings(max_examples=40)
 def test_texts_follow_the_schema(record: JobRecord) -> None:
     """What is written follows the schema of the file, which knows nothing of this code."""
     VALIDATOR.validate(json.loads(job_to_json(record)))
 
 
 @given(records())
-@settings(max_examples=50)
+@settings(max_examples=25)
 def test_library_values_beside_a_reference_change_nothing(record: JobRecord) -> None:
     """A job with the library's values written in has the same stacks as the one that only refers to it."""
     assert Job(with_resolved_library(record)).stacks == Job(record).stacks

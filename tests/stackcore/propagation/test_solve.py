@@ -1,5 +1,7 @@
 """What the solver accepts, the shape of what it gives, and that blocks leave no trace."""
 
+from collections.abc import Mapping
+
 import numpy as np
 import pytest
 
@@ -16,7 +18,7 @@ from stackcore import (
     solve,
 )
 from stackcore.arrays import FloatArray
-from stackcore.media.base import AbstractMedium, Constitutive, FrequencyRange, Provenance
+from stackcore.media.base import AbstractMedium, ConstantSlope, Constitutive, FrequencyRange, Provenance
 from stackcore.propagation import blocks
 
 GLASS = ConstantMedium(6.31 - 0.14j)
@@ -134,6 +136,9 @@ class _FrontOfGas(AbstractMedium):
     def evaluate(self, frequency: FloatArray) -> Constitutive:
         one = np.ones(np.shape(frequency), dtype=np.complex128)
         return Constitutive(1 + 0.1 * one * frequency / 1e10, one, 0.1e-10 * one, 0 * one)
+
+    def constant_slopes(self, frequency: FloatArray) -> Mapping[str, ConstantSlope]:
+        return {}  # its two numbers are not constants of a job
 
 
 def test_a_front_may_depend_on_frequency(monkeypatch: pytest.MonkeyPatch) -> None:

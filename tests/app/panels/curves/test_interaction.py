@@ -397,3 +397,16 @@ def test_the_copied_picture_is_light_sharp_and_a_drawing(bench: Bench) -> None:
     assert "TE 60°" in drawing
     assert bench.plot.backgroundBrush().color().name() == DARK.base
     assert bench.panel.header.add.isVisible()
+
+
+def test_a_marker_is_taken_by_its_flag(bench: Bench) -> None:
+    """The flag stands above the curves, hides none, and can be dragged."""
+    bench.view.set(markers=(9 * GHZ,))
+    frame = bench.plot.frame()
+    flag = bench.plot.marker_layer.flag(bench.plot.marker_layer.markers[0], frame)
+    assert flag.bottom() < 0
+    start = (flag.center() + QPointF(12, 0) + bench.plot.area_rect().topLeft()).toPoint()
+    assert start.y() > 0
+    bench.drag(start, bench.pixel(11 * GHZ, 0.8))
+    assert bench.view.state.markers == pytest.approx((11 * GHZ,))
+    assert bench.plot.frame() == frame

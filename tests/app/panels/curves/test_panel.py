@@ -218,7 +218,7 @@ def test_fine_lines_have_their_ink(bench: Bench) -> None:
     bench.plot.curve_layer.set_fine(True)
     fine = inked()
     assert fine > thin
-    assert fine > 150
+    assert fine > 80
 
 
 def test_a_sweep_of_one_frequency_is_drawn_as_points(bench: Bench) -> None:

@@ -5,8 +5,6 @@ from app.document.document import Cell
 from app.document.session import Session
 from app.panels.elements.columns import ALL_COLUMNS, LAYER_COLUMNS, THICKNESS, columns_of
 from app.panels.elements.lines import cell_of, lines_of, with_unit
-from app.panels.tables.words import fault_words
-from stackcore.errors import Fault
 from stackcore.units import Dimension, parse_measure
 
 
@@ -64,11 +62,3 @@ def test_cells_lead_back_to_the_document(session: Session) -> None:
     assert cell_of(stack, 0, 0, THICKNESS) == Cell(0, -1, "front")
     assert cell_of(stack, 0, 4, THICKNESS) == Cell(0, -1, "back")
     assert cell_of(stack, 0, 2, THICKNESS) == Cell(0, 1, "thickness")
-
-
-def test_fault_as_sentences() -> None:
-    """Every sentence begins with a capital and ends once."""
-    fault = Fault("x", "'a' is unknown, did you mean 'b'?", "one of b, c")
-
-    assert fault_words(fault) == "'a' is unknown, did you mean 'b'? Allowed: one of b, c."
-    assert fault_words(Fault("x", "it is too long")) == "It is too long."

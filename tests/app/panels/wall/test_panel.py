@@ -191,7 +191,8 @@ def test_while_dragging_the_thickness_is_shown_at_the_face(desk: Desk) -> None:
     def tag() -> int:
         image = desk.panel.grab().toImage()
         x = round(desk.face(1).x)
-        return sum(image.pixel(left, 95) == pixel(LIGHT.accent) for left in range(x - 45, x + 45))
+        beside = [*range(x - 45, x - 12), *range(x + 12, x + 45)]
+        return sum(image.pixel(left, y) == pixel(LIGHT.accent) for left in beside for y in range(80, 120))
 
     start = desk.face(1).x
     assert tag() == 0
