@@ -1,9 +1,9 @@
 """Constants of nature in SI units.
 
 Source: BIPM, The International System of Units, 9th edition (2019), for the exact speed of light, Planck constant
-and elementary charge; CODATA 2022 recommended values (NIST SP 961, 2024) for the vacuum permittivity and the mass of
-the electron. The vacuum permeability and the wave impedance follow from the first two, so that the four always agree
-with each other to the last bit.
+and elementary charge; CODATA 2022 recommended values (NIST SP 961, 2024) for the vacuum permittivity and the mass
+of the electron. The vacuum permeability and the wave impedance follow from the first two, so that the four always
+agree with each other to the last bit.
 """
 
 from typing import Final

@@ -1,4 +1,4 @@
-"""A good conductor: a conductivity beside the vacuum's permittivity; slow carriers and a rough surface if wanted."""
+"""A good conductor: a conductivity beside the vacuum's permittivity; slow carriers, a rough surface if wanted."""
 
 from collections.abc import Mapping
 from dataclasses import dataclass, field

@@ -41,8 +41,8 @@ class DebyeMedium(AbstractMedium):
 
     Notes
     -----
-    One relaxation time for all dipoles, no inertia: right for simple polar liquids up to some tens of GHz. Far above
-    the relaxation the model absorbs too much, as it knows no inertia. Source: P. Debye, Polar Molecules (1929).
+    One relaxation time for all dipoles, no inertia: right for simple polar liquids up to some tens of GHz. Far
+    above the relaxation the model absorbs too much, as it knows no inertia. Source: P. Debye, Polar Molecules (1929).
 
     Examples
     --------

@@ -42,9 +42,10 @@ class DrudeMedium(AbstractMedium):
 
     Notes
     -----
-    One kind of carrier, a collision rate that does not depend on frequency, no transitions between bands. A fit in
-    the visible must not be carried down to radio frequency: its `conductivity` there is often far below the metal's.
-    ε passes through 0 at the screened plasma frequency; without collisions an exact 0 is moved by the last digit.
+    One kind of carrier, a collision rate that does not depend on frequency, no transitions between bands. A fit
+    in the visible must not be carried down to radio frequency: its `conductivity` there is often far below the
+    metal's. ε passes through 0 at the screened plasma frequency; without collisions an exact 0 is moved by the last
+    digit.
     Source: P. Drude, Ann. Phys. 306, 566 (1900).
 
     Examples

@@ -48,7 +48,7 @@ class MultiDebyeMedium(AbstractMedium):
     Notes
     -----
     Any passive relaxation over a finite band can be fitted by such a sum, about one term a decade, and the fit
-    stays causal. Source: P. Debye, Polar Molecules (1929), superposed as by H. Fröhlich, Theory of Dielectrics (1949).
+    stays causal. Sources: P. Debye, Polar Molecules (1929); for sums, H. Fröhlich, Theory of Dielectrics (1949).
 
     Examples
     --------

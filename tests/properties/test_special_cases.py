@@ -69,7 +69,8 @@ def test_layer_without_any_wave_number() -> None:
             if (1 - eps) + eps * np.cos(angle) ** 2 == 0:
                 zeros += 1
                 layers = (Layer(VACUUM, 3 * WAVELENGTH), Layer(GLASS, 1e-3), Layer(VACUUM, WAVELENGTH))
-                hold(Case(Stack(layers, front=ConstantMedium(float(eps))), X_BAND, float(angle)))
+                prism = ConstantMedium(float(eps))  # also behind: a back at its critical angle has its own test
+                hold(Case(Stack(layers, front=prism, back=prism), X_BAND, float(angle)))
     assert zeros > 5, "the search no longer meets the case it is for"
 
 

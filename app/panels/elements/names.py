@@ -10,7 +10,7 @@ from stackcore.job.records import JobRecord
 from stackcore.media.library import read_library
 
 LIBRARY_MARK: Final = "library: "
-METAL_SHOWN: Final = "metal (perfect conductor)"
+METAL_SHOWN: Final = "perfect conductor"
 
 
 class MaterialNames:

@@ -42,6 +42,7 @@ class ReadingsModel(QAbstractTableModel):
         self._rows: tuple[ReadingRow, ...] = ()
         self._curves: tuple[Curve, ...] = ()
         self._tip = ""
+        self._texts: list[list[CellText]] = []
 
     @property
     def rows(self) -> tuple[ReadingRow, ...]:
@@ -59,6 +60,7 @@ class ReadingsModel(QAbstractTableModel):
         if not same:
             self.beginResetModel()
         self._rows, self._curves, self._tip = rows, curves, tip
+        self._texts = [[_cell_text(row, column) for row in rows] for column in range(len(curves))]
         if not same:
             self.endResetModel()
         elif rows and curves:
@@ -72,17 +74,11 @@ class ReadingsModel(QAbstractTableModel):
 
     def cell_text(self, index: Index) -> CellText:
         """Return the text of a cell, cut at its decimal point."""
-        reading = self.reading(index)
-        if reading is None:
-            return CellText("", "")
-        whole, point, rest = reading.number.partition(".")
-        marker = self._rows[index.row()].marker
-        note = f"at {frequency_text(reading.frequency)}" if marker is None else ""
-        return CellText(whole, point + rest, unit_suffix(reading.unit), note)
+        return self._texts[index.column()][index.row()] if index.isValid() else CellText("", "")
 
     def column_texts(self, column: int) -> list[CellText]:
         """Return the texts of a column, cut at their decimal points."""
-        return [self.cell_text(self.index(row, column)) for row in range(len(self._rows))]
+        return self._texts[column]
 
     def rowCount(self, parent: Index = _ROOT) -> int:
         """Return the number of rows."""
@@ -121,3 +117,12 @@ class ReadingsModel(QAbstractTableModel):
             return None
         row = self._rows[section]
         return row.label if row.marker is None else f"{row.marker + 1}   {row.label}"
+
+
+def _cell_text(row: ReadingRow, column: int) -> CellText:
+    reading = row.cells[column]
+    if reading is None:
+        return CellText("", "")
+    whole, point, rest = reading.number.partition(".")
+    note = f"at {frequency_text(reading.frequency)}" if row.marker is None else ""
+    return CellText(whole, point + rest, unit_suffix(reading.unit), note)

@@ -27,7 +27,7 @@ from PySide6.QtWidgets import (
 )
 
 from app.look.theme import Theme, curve_colour, dashes
-from app.panels.readings.model import ReadingsModel
+from app.panels.readings.model import CellText, ReadingsModel
 
 Index = QModelIndex | QPersistentModelIndex
 
@@ -48,6 +48,7 @@ class ReadingDelegate(QStyledItemDelegate):
         self._model = model
         self.theme = theme
         self.stale = False
+        self._known: dict[int, tuple[list[CellText], QFontMetricsF, tuple[float, float, float, float]]] = {}
 
     def sizeHint(self, option: QStyleOptionViewItem, index: Index) -> QSize:
         """Return the room of the widest parts of the column side by side, and of the note below them."""
@@ -91,14 +92,22 @@ class ReadingDelegate(QStyledItemDelegate):
         return self._model.rows[index.row()].marker is None
 
     def _widths(self, metrics: QFontMetricsF, column: int) -> tuple[float, float, float, float]:
-        """Return the widest whole part, rest, unit and note of a column, in pixels."""
+        """Return the widest whole part, rest, unit and note of a column, in pixels.
+
+        Asked for every cell at every paint, so the last answer is kept for as long as the texts are the same.
+        """
         cells = self._model.column_texts(column)
-        return (
+        known = self._known.get(column)
+        if known is not None and known[0] is cells and known[1] == metrics:
+            return known[2]
+        widths = (
             max((metrics.horizontalAdvance(cell.whole) for cell in cells), default=0.0),
             max((metrics.horizontalAdvance(cell.rest) for cell in cells), default=0.0),
             max((metrics.horizontalAdvance(cell.unit) for cell in cells), default=0.0),
             max((metrics.horizontalAdvance(cell.note) for cell in cells), default=0.0),
         )
+        self._known[column] = (cells, metrics, widths)
+        return widths
 
 
 class CurveHeader(QHeaderView):

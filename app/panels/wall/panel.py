@@ -19,7 +19,7 @@ from app.document import edits
 from app.document.document import Document, Selection
 from app.document.edit import Edit
 from app.document.session import Change, Session
-from app.document.view import View, ViewChange
+from app.document.view import View, ViewChange, ViewState
 from app.look.theme import Theme
 from app.panels.wall import keys, tips, words
 from app.panels.wall.captions import captions, rays_in
@@ -31,6 +31,7 @@ from app.panels.wall.pens import FontMeasure
 from app.panels.wall.scale import ThicknessScale
 from app.panels.wall.wave import Wave, wave_in
 from stackcore.errors import Fault, Severity
+from stackcore.job.records import SweepRecord
 from stackcore.stack import Stack
 
 if TYPE_CHECKING:
@@ -68,6 +69,7 @@ class WallPanel(QWidget):
         self._scale: ThicknessScale | None = None
         self._layout: WallLayout | None = None
         self._wall: tuple[Document, int, Wall] | None = None
+        self._wave: tuple[tuple[object, ...], Wave] | None = None
         self._face: Face | None = None
         self._drag: FaceDrag | None = None
         self.setObjectName("wall")
@@ -125,14 +127,19 @@ class WallPanel(QWidget):
     @property
     def wave(self) -> Wave:
         """The wave at the marker: that of the newest answer, or without powers before there is one."""
-        state, job = self._view.state, self._session.job
-        polarization = state.active_polarization
-        answer = self._answer
-        if answer is None or len(answer.at_marker.stack.elements) != len(self._solved.elements):
-            frequency, angle = state.marker_frequency(job.sweep), state.marker_angle(job.sweep)
-            return wave_in(self._solved, frequency, angle, polarization)
+        job, answer = self._session.job, self._answer
+        state, stack = self._view.state, self._solved
+        key = (stack, job.sweep, state, answer, self._stale)
+        if self._wave is None or any(old is not new for old, new in zip(self._wave[0], key, strict=True)):
+            self._wave = (key, self._wave_now(stack, job.sweep, state))
+        return self._wave[1]
+
+    def _wave_now(self, stack: Stack, sweep: SweepRecord, state: ViewState) -> Wave:
+        polarization, answer = state.active_polarization, self._answer
+        if answer is None or len(answer.at_marker.stack.elements) != len(stack.elements):
+            return wave_in(stack, state.marker_frequency(sweep), state.marker_angle(sweep), polarization)
         frequency, angle = answer.question.marker_frequency, answer.question.marker_angle
-        return wave_in(self._solved, frequency, angle, polarization, answer.at_marker, stale=self._stale)
+        return wave_in(stack, frequency, angle, polarization, answer.at_marker, stale=self._stale)
 
     @property
     def _solved(self) -> Stack:

@@ -108,7 +108,6 @@ def test_material_by_its_name(shown: Shown) -> None:
     """A material of the job is typed by its label, in any case."""
     shown.go(1, MATERIAL)
     shown.keys("copper")
-    press(Key.Key_Escape)  # shuts the list of matches
     press(Key.Key_Return)
 
     assert shown.texts()[1][MATERIAL] == "Copper"
@@ -146,7 +145,6 @@ def test_perfect_conductor_only_behind(shown: Shown) -> None:
     """The back may be a perfect conductor; the front is refused it in place."""
     shown.go(4, MATERIAL)
     shown.keys("metal")
-    press(Key.Key_Escape)
     press(Key.Key_Return)
     assert shown.session.record.stacks[0].back == "metal"
 
