@@ -42,7 +42,7 @@ class DebyeMedium(AbstractMedium):
     Notes
     -----
     One relaxation time for all dipoles, no inertia: right for simple polar liquids up to some tens of GHz. Far
-    above the relaxation the model absorbs too much, as it knows no inertia. Source: P. Debye, Polar Molecules (1929).
+    above the relaxation it absorbs too much. Source: P. Debye, Polar Molecules (1929).
 
     Examples
     --------

@@ -55,7 +55,7 @@ class DrudeLorentzMedium(AbstractMedium):
     --------
     >>> metal = DrudeLorentzMedium.from_electronvolts(9.0, 0.8, 0.05, [(0.1, 0.5, 4.5)])
     >>> complex(np.round(metal.evaluate(np.array(5e14)).permittivity, 3))
-    (-13.666-0.443j)
+    (-13.641-0.399j)
     """
 
     high_frequency_permittivity: float

@@ -43,8 +43,8 @@ class LossyDielectricMedium(AbstractMedium):
     Notes
     -----
     A measured loss tangent mostly holds the conductivity already: give the loss once. The conductive part is
-    causal; a constant ε″ is not and stands for a narrow band. Source: J. A. Stratton, Electromagnetic Theory (1941),
-    section 5.2.
+    causal; a constant ε″ is not and stands for a narrow band. Source: J. A. Stratton, Electromagnetic Theory
+    (1941), section 5.2.
 
     Examples
     --------

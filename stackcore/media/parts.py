@@ -8,6 +8,9 @@ from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import VACUUM_PERMITTIVITY
 from stackcore.media.base import ConstantSlope, Constitutive
 
+Slopes = Mapping[str, ComplexArray | complex]
+"""Name of a constant -> what it changes, in the shape of the frequencies or the same at all of them."""
+
 _LAST_DIGIT = float(np.finfo(np.float64).eps)
 
 
@@ -38,17 +41,13 @@ def magnetic(permeability: ComplexArray, slope: ComplexArray) -> Constitutive:
     return Constitutive(one, permeability, zero, np.asarray(slope, dtype=np.complex128))
 
 
-def electric_slopes(
-    frequency: FloatArray, slopes: Mapping[str, ComplexArray | complex]
-) -> dict[str, ConstantSlope]:
+def electric_slopes(frequency: FloatArray, slopes: Slopes) -> dict[str, ConstantSlope]:
     """Return the slopes of ε by name of the constant, in the shape of `frequency`; μ has none."""
     zero = everywhere(0.0, frequency)
     return {name: ConstantSlope(_shaped(slope, frequency), zero) for name, slope in slopes.items()}
 
 
-def magnetic_slopes(
-    frequency: FloatArray, slopes: Mapping[str, ComplexArray | complex]
-) -> dict[str, ConstantSlope]:
+def magnetic_slopes(frequency: FloatArray, slopes: Slopes) -> dict[str, ConstantSlope]:
     """Return the slopes of μ by name of the constant, in the shape of `frequency`; ε has none."""
     zero = everywhere(0.0, frequency)
     return {name: ConstantSlope(zero, _shaped(slope, frequency)) for name, slope in slopes.items()}

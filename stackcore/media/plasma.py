@@ -40,7 +40,7 @@ class PlasmaMedium(AbstractMedium):
 
     Notes
     -----
-    Cold, uniform, without a static magnetic field, ions at rest, collision rate independent of the electrons' speed.
+    Cold, uniform, without a static magnetic field, ions at rest, collision rate independent of the speed.
     Source: V. L. Ginzburg, The Propagation of Electromagnetic Waves in Plasmas (1964).
 
     Examples

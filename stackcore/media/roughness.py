@@ -4,9 +4,10 @@
     Groiss              K = 1 + exp(−(δ/2Δ)^1.6)
 
 Δ is the rms roughness and δ the skin depth of the smooth metal. Both go from 1 to 2; the first was fitted to
-grooves across the current (S. P. Morgan), the second to measured foils. Neither holds for surfaces with a developed
-area of much more than twice the flat one. Sources: E. Hammerstad, O. Jensen, IEEE MTT-S Int. Microwave Symp. Digest,
-407 (1980); S. Groiss, I. Bardi, O. Biro, K. Preis, K. R. Richter, IEEE Trans. Magn. 32, 894 (1996); both recalled.
+grooves across the current (S. P. Morgan), the second to measured foils. Neither holds for surfaces with a
+developed area of much more than twice the flat one. Sources: E. Hammerstad, O. Jensen, IEEE MTT-S Int. Microwave
+Symp. Digest, 407 (1980); S. Groiss, I. Bardi, O. Biro, K. Preis, K. R. Richter, IEEE Trans. Magn. 32, 894 (1996);
+both recalled.
 """
 
 from typing import Final

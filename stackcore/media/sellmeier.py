@@ -50,8 +50,8 @@ class SellmeierMedium(AbstractMedium):
     Raises
     ------
     ValueError
-        For a constant that is not finite, a pole at no wavelength, or a strength below 0, which would be gain at its
-        pole; named with its place.
+        For a constant that is not finite, a pole at no wavelength, or a strength below 0, which would be gain at
+        its pole; named with its place.
 
     Notes
     -----
@@ -95,8 +95,8 @@ class SellmeierMedium(AbstractMedium):
     ) -> "SellmeierMedium":
         """Return the medium of n² = A + Σ Bλ²/(λ² − C²) + Dλ², λ in µm.
 
-        `terms` are pairs of B and C. With `squared`, the published form is Bλ²/(λ² − C) and C is in µm², as in glass
-        catalogues. n² − 1 = … has the constant 1.
+        `terms` are pairs of B and C. With `squared`, the published form is Bλ²/(λ² − C) and C is in µm², as in
+        glass catalogues. n² − 1 = … has the constant 1.
         """
         made = tuple(SellmeierTerm(b, _pole(place, c, squared)) for place, (b, c) in enumerate(terms))
         return cls(made, constant, quadratic, valid_range, provenance)

@@ -2,9 +2,9 @@
 
     ε = ε∞ + m L(f),    L = ln((f₂ + jf)/(f₁ + jf)),    f₁ < f₂
 
-Between the corners f₁ and f₂ the loss is nearly mπ/2 and ε′ falls by m ln 10 a decade. Two classes give the two
-constants in the two ways they are known: `WidebandMedium` by permittivity and loss tangent at one frequency, as on a
-laminate's data sheet; `WidebandStepMedium` by ε∞ and the whole step.
+Between the corners f₁ and f₂ the loss is nearly mπ/2 and ε′ falls by m ln 10 a decade. Two classes take the two
+ways in which ε∞ and m are known: `WidebandMedium` permittivity and loss tangent at one frequency, as on a
+laminate's data sheet; `WidebandStepMedium` ε∞ and the whole step.
 
 Source: A. R. Djordjevic, R. M. Biljic, V. D. Likar-Smiljanic, T. K. Sarkar, IEEE Trans. Electromagn. Compat. 43(4),
 662 (2001), in the form with natural logarithms.

@@ -13,18 +13,18 @@ from tests.bench.timing import floor_seconds, in_turns, seconds
 LAYERS = 20
 
 
-def wall(layers: int = LAYERS, *, lossy: bool = True) -> Stack:
-    """Return a stack of different layers of constant media, the same at every run."""
+def layers(count: int = LAYERS, *, lossy: bool = True) -> list[tuple[complex, float]]:
+    """Return permittivity and thickness in m of different layers, the same at every run."""
     rng = np.random.default_rng(20)
-    return Stack(
-        tuple(
-            Layer(
-                ConstantMedium(complex(rng.uniform(2, 10), -rng.uniform(0.01, 0.1) if lossy else 0.0)),
-                rng.uniform(0.5e-3, 3e-3),
-            )
-            for _ in range(layers)
-        )
-    )
+    return [
+        (complex(rng.uniform(2, 10), -rng.uniform(0.01, 0.1) if lossy else 0.0), rng.uniform(0.5e-3, 3e-3))
+        for _ in range(count)
+    ]
+
+
+def wall(count: int = LAYERS, *, lossy: bool = True) -> Stack:
+    """Return a stack of `layers` in air."""
+    return Stack(tuple(Layer(ConstantMedium(epsilon), d) for epsilon, d in layers(count, lossy=lossy)))
 
 
 def plain_product(

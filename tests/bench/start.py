@@ -37,6 +37,7 @@ def report() -> Iterator[str]:
     )
     for name, label in (("numpy", "import numpy"), ("core", "import stackcore"), ("help", "--help")):
         more = turns.middle(name) - turns.middle("bare")
-        yield f"{label}: {more * 1e3:.0f} ms more than a bare interpreter ({turns.ratio(name, 'bare'):.1f} times it)"
+        ratio = turns.ratio(name, "bare")
+        yield f"{label}: {more * 1e3:.0f} ms more than a bare interpreter ({ratio:.1f} times it)"
     paint = in_turns(5, paint=lambda: _told(_FIRST_PAINT))
     yield f"from nothing imported to the window painted with curves: {paint.middle('paint') * 1e3:.0f} ms"

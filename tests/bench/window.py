@@ -23,7 +23,7 @@ from stackcore.job.records import (
     SweepRecord,
 )
 from stackcore.units import Dimension, measure
-from tests.bench.solver import LAYERS, wall
+from tests.bench.solver import LAYERS, layers
 from tests.bench.timing import floor_seconds, in_turns
 
 POINTS = 2001
@@ -32,15 +32,9 @@ LIMIT_MS = 5000
 
 def job() -> Job:
     """Return the bench's wall as a job: 20 layers, 2001 frequencies, 3 angles."""
-    layers = [element for element in wall().elements if hasattr(element, "medium")]
-    materials = tuple(
-        MaterialRecord(f"m{index}", model="constant", permittivity=complex(layer.medium.permittivity))  # type: ignore[attr-defined]
-        for index, layer in enumerate(layers)
-    )
-    elements = tuple(
-        LayerRecord(f"m{index}", measure(layer.thickness, Dimension.LENGTH))  # type: ignore[union-attr]
-        for index, layer in enumerate(layers)
-    )
+    parts = [(f"m{index}", epsilon, thickness) for index, (epsilon, thickness) in enumerate(layers())]
+    materials = tuple(MaterialRecord(name, model="constant", permittivity=epsilon) for name, epsilon, _ in parts)
+    elements = tuple(LayerRecord(name, measure(thickness, Dimension.LENGTH)) for name, _, thickness in parts)
     grid = FrequencyGrid(measure(8e9, Dimension.FREQUENCY), measure(12e9, Dimension.FREQUENCY), POINTS)
     angles = tuple(measure(value, Dimension.ANGLE) for value in (0.0, 0.5, 1.0))
     return Job(JobRecord("Bench", (StackRecord("A", elements),), SweepRecord(grid, angles), materials))
@@ -76,7 +70,7 @@ class _Painted(QObject):
         self.armed = False
         self._loop = loop
 
-    def eventFilter(self, watched: QObject, event: QEvent) -> bool:  # noqa: N802
+    def eventFilter(self, watched: QObject, event: QEvent) -> bool:
         if self.armed and event.type() == QEvent.Type.Paint:
             QTimer.singleShot(0, self._loop.quit)
         return False
@@ -86,7 +80,9 @@ def wait_for_curves(window: MainWindow) -> None:
     """Run the event loop until the newest answer has been painted."""
     loop = QEventLoop()
     painted = _Painted(loop)
-    plot = window.panels.curves.findChild(GraphicsView).viewport()
+    view = window.panels.curves.findChild(GraphicsView)
+    assert view is not None
+    plot = view.viewport()
     plot.installEventFilter(painted)
 
     def arm(_: object) -> None:

@@ -31,9 +31,7 @@ def test_the_core_loads_no_toolkit_and_no_heavy_science(statement: str) -> None:
 
 def test_the_package_loads_quickly() -> None:
     """`import stackcore` adds less than 0.2 s to numpy's own import, the best of five."""
-    script = (
-        "import numpy, time\nbegin = time.perf_counter()\nimport stackcore\nprint(time.perf_counter() - begin)"
-    )
+    script = "import numpy, time\nbegin = time.perf_counter()\nimport stackcore\nprint(time.perf_counter() - begin)"
     times = [
         float(subprocess.run([sys.executable, "-c", script], capture_output=True, text=True, check=True).stdout)
         for _ in range(5)

@@ -22,7 +22,9 @@ STACKS = {
         (Layer(ConductorMedium(1e5), 2e-6), Layer(ConstantMedium(6.3 - 0.1j), 4e-3)), back=ConstantMedium(2.0)
     ),
     "metal": Stack((Layer(ConductorMedium(5.8e7), 5e-6),), back=ConductorMedium(1e3)),
-    "evanescent": Stack((Layer(ConstantMedium(1.0 + 0j), 2e-3),), front=ConstantMedium(4.0), back=ConstantMedium(4.0)),
+    "evanescent": Stack(
+        (Layer(ConstantMedium(1.0 + 0j), 2e-3),), front=ConstantMedium(4.0), back=ConstantMedium(4.0)
+    ),
 }
 
 
