@@ -93,9 +93,10 @@ def constitutive(mp: Any, medium: AbstractMedium, f: Number) -> tuple[Number, Nu
     """Return relative ε and μ of `medium` from its fields."""
     if isinstance(medium, ConstantMedium):
         return mp.mpc(medium.permittivity), mp.mpc(medium.permeability)
-    if isinstance(medium, ConductorMedium):
-        loss = mp.mpf(medium.conductivity) / (2 * mp.pi * mp.mpf(VACUUM_PERMITTIVITY) * f)
-        return mp.mpc(1, -loss), mp.mpc(medium.permeability)
+    if isinstance(medium, ConductorMedium) and medium.roughness == 0:
+        omega = 2 * mp.pi * f
+        slowed = mp.mpf(medium.conductivity) / mp.mpc(1, omega * mp.mpf(medium.relaxation_time))
+        return 1 - mp.j * slowed / (omega * mp.mpf(VACUUM_PERMITTIVITY)), mp.mpc(medium.permeability)
     raise TypeError(f"no exact form of {type(medium).__name__} here")
 
 

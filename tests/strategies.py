@@ -77,9 +77,10 @@ def lossy_media(highest: float = 100.0) -> st.SearchStrategy[ConstantMedium]:
 
 
 def conductors() -> st.SearchStrategy[ConductorMedium]:
-    """Return conductors from damp soil to silver, some of them magnetic."""
+    """Return conductors from damp soil to silver, some of them magnetic, some with slow carriers."""
     mu = st.one_of(st.just(1.0), decades(1.0, 1000.0))
-    return st.builds(ConductorMedium, decades(1e-3, 6.3e7), mu)
+    slow = st.one_of(st.just(0.0), decades(1e-16, 1e-12))
+    return st.builds(ConductorMedium, decades(1e-3, 6.3e7), mu, relaxation_time=slow)
 
 
 def media() -> st.SearchStrategy[AbstractMedium]:

@@ -146,3 +146,13 @@ def _worst(quantity: str, x: FloatArray, raw: FloatArray) -> tuple[Point | None,
         return Point(float(x[place]), float(raw[place])), None
     # argmax of values that are all infinitely good still points somewhere: every point is then the worst.
     return None, float(x[place])
+
+
+LONG: int = 20_000
+"""Points from which a quantity takes so long that the window must not work it out itself."""
+
+
+def takes_long(response: Response, quantity: str) -> bool:
+    """Return whether `quantity` of `response` is not worked out yet and would keep the window waiting."""
+    points = response.frequency.size * response.angle.size
+    return points > LONG and not response.knows(quantity)

@@ -100,7 +100,7 @@ class Recompute(QObject):
     def _looked(self, change: ViewChange) -> None:
         sweep = self._session.job.sweep
         points = [
-            (state.marker_frequency(sweep), state.marker_angle(sweep), state.markers)
+            (state.marker_frequency(sweep), state.marker_angle(sweep), state.markers, state.quantity)
             for state in (change.before, change.after)
         ]
         if points[0] != points[1]:

@@ -2,14 +2,23 @@
 
 from collections.abc import Sequence
 
-from app.window.actions import Act, Entry
+from app.window.actions import Act
 from app.window.commands import Commands
-from app.window.samples import Sample
+from app.window.submenus import recent_entries, sample_entries
+from app.window.table_of_views import arrangement_acts, help_acts, markers_acts, theme_acts, worst_acts
 
 
 def action_table(c: Commands) -> tuple[Act, ...]:
     """Return every act, in the order of the menus."""
-    return (*_file(c), *_edit(c), *_stack(c), *_markers(c), *_view(c), *_help(c))
+    parts = (
+        *(_file, _save),
+        *(_history, _clipboard, _new_elements, _elements, _order),
+        *(_stack, _other_stacks),
+        *(markers_acts, worst_acts),
+        *(theme_acts, arrangement_acts),
+        help_acts,
+    )
+    return tuple(act for part in parts for act in part(c))
 
 
 def _file(c: Commands) -> Sequence[Act]:
@@ -23,7 +32,7 @@ def _file(c: Commands) -> Sequence[Act]:
             "Open sa&mple",
             c.files.new,
             tip="Open a copy of a sample job.",
-            entries=lambda: _sample_entries(c),
+            entries=lambda: sample_entries(c),
         ),
         Act(
             "file.recent",
@@ -31,8 +40,14 @@ def _file(c: Commands) -> Sequence[Act]:
             "Open &recent",
             c.files.new,
             tip="Open a job file used lately.",
-            entries=lambda: _recent_entries(c),
+            entries=lambda: recent_entries(c),
         ),
+    )
+
+
+def _save(c: Commands) -> Sequence[Act]:
+    menu = "&File"
+    return (
         Act("file.save", menu, "&Save", c.files.save, ("Ctrl+S",), "Save the job to its file.", group=1),
         Act(
             "file.save_as",
@@ -57,9 +72,8 @@ def _file(c: Commands) -> Sequence[Act]:
     )
 
 
-def _edit(c: Commands) -> Sequence[Act]:
+def _history(c: Commands) -> Sequence[Act]:
     menu = "&Edit"
-    elements, selected = c.elements, c.selected
     return (
         Act(
             "edit.undo",
@@ -81,6 +95,13 @@ def _edit(c: Commands) -> Sequence[Act]:
             enabled=lambda: bool(c.session.redo_sentence),
             words=lambda: f"&Redo {c.session.redo_sentence}".rstrip(),
         ),
+    )
+
+
+def _clipboard(c: Commands) -> Sequence[Act]:
+    menu = "&Edit"
+    elements, selected = c.elements, c.selected
+    return (
         Act(
             "edit.copy",
             menu,
@@ -112,6 +133,13 @@ def _edit(c: Commands) -> Sequence[Act]:
             place="elements",
             group=1,
         ),
+    )
+
+
+def _new_elements(c: Commands) -> Sequence[Act]:
+    menu = "&Edit"
+    elements = c.elements
+    return (
         Act(
             "edit.add_layer",
             menu,
@@ -130,6 +158,13 @@ def _edit(c: Commands) -> Sequence[Act]:
             "Add a sheet without thickness behind the selected element.",
             group=2,
         ),
+    )
+
+
+def _elements(c: Commands) -> Sequence[Act]:
+    menu = "&Edit"
+    elements, selected = c.elements, c.selected
+    return (
         Act(
             "edit.duplicate",
             menu,
@@ -152,6 +187,13 @@ def _edit(c: Commands) -> Sequence[Act]:
             place="elements",
             group=2,
         ),
+    )
+
+
+def _order(c: Commands) -> Sequence[Act]:
+    menu = "&Edit"
+    elements, selected = c.elements, c.selected
+    return (
         Act(
             "edit.up",
             menu,
@@ -199,6 +241,13 @@ def _stack(c: Commands) -> Sequence[Act]:
             tip="Delete this stack; the last one stays.",
             enabled=stacks.several,
         ),
+    )
+
+
+def _other_stacks(c: Commands) -> Sequence[Act]:
+    menu = "&Stack"
+    stacks = c.stacks
+    return (
         Act(
             "stack.next",
             menu,
@@ -220,152 +269,3 @@ def _stack(c: Commands) -> Sequence[Act]:
             group=1,
         ),
     )
-
-
-def _markers(c: Commands) -> Sequence[Act]:
-    menu = "&Markers"
-    markers = c.markers
-    return (
-        Act(
-            "markers.add",
-            menu,
-            "&Add marker",
-            markers.add,
-            ("Ctrl+K",),
-            "Add a marker in the widest gap between markers; arrow keys move it.",
-        ),
-        Act(
-            "markers.next",
-            menu,
-            "&Next marker",
-            markers.next,
-            ("F7",),
-            "Go to the next marker in frequency.",
-            enabled=markers.any,
-            group=1,
-        ),
-        Act(
-            "markers.previous",
-            menu,
-            "&Previous marker",
-            markers.previous,
-            ("Shift+F7",),
-            "Go to the marker before in frequency.",
-            enabled=markers.any,
-            group=1,
-        ),
-        Act(
-            "markers.worst",
-            menu,
-            "To the &worst point",
-            markers.to_worst,
-            ("F8",),
-            "Put the marker at the worst point over all curves shown, and look at its angle.",
-            group=1,
-        ),
-        Act(
-            "markers.remove",
-            menu,
-            "&Remove marker",
-            markers.remove,
-            ("Ctrl+Shift+K",),
-            "Remove the marker.",
-            enabled=markers.any,
-            group=2,
-        ),
-    )
-
-
-def _view(c: Commands) -> Sequence[Act]:
-    menu = "&View"
-    view = c.view
-
-    def theme(choice: str, text: str, tip: str) -> Act:
-        return Act(
-            f"view.{choice}",
-            menu,
-            text,
-            lambda: view.set_theme(choice),
-            tip=tip,
-            checked=lambda: view.theme() == choice,
-            choice="theme",
-        )
-
-    return (
-        theme("auto", "Theme of the &system", "Light or dark as the system is."),
-        theme("light", "&Light theme", "Dark ink on warm grey."),
-        theme("dark", "&Dark theme", "Light ink on blue grey."),
-        Act(
-            "view.materials",
-            menu,
-            "&Materials",
-            view.toggle_materials,
-            ("Ctrl+Shift+M",),
-            "Show or hide the materials of the job and the library, beside the work.",
-            checked=view.materials_shown,
-            group=1,
-        ),
-        Act(
-            "view.next_panel",
-            menu,
-            "&Next panel",
-            view.next_panel,
-            ("F6",),
-            "Move the keyboard focus to the next panel.",
-            group=2,
-        ),
-        Act(
-            "view.previous_panel",
-            menu,
-            "&Previous panel",
-            view.previous_panel,
-            ("Shift+F6",),
-            "Move the keyboard focus to the panel before.",
-            group=2,
-        ),
-        Act("view.reset", menu, "&Reset layout", view.reset_layout, tip="Arrange everything as at first.", group=3),
-    )
-
-
-def _help(c: Commands) -> Sequence[Act]:
-    menu = "&Help"
-
-    def page(name: str, text: str, shortcuts: tuple[str, ...], tip: str, group: int = 0) -> Act:
-        return Act(f"help.{name}", menu, text, lambda: c.help.show_page(name), shortcuts, tip, group=group)
-
-    return (
-        page("conventions", "&Conventions and definitions", ("F1",), "Signs, phases and every quantity defined."),
-        page("keyboard", "&Keyboard", ("Ctrl+F1",), "Every key."),
-        page("cautions", "C&autions and limits", (), "What the results do not say."),
-        Act(
-            "help.diagnostics",
-            menu,
-            "Copy &diagnostics",
-            c.help.copy_diagnostics,
-            tip="Put versions and the last lines of the log on the clipboard, for a report.",
-            group=1,
-        ),
-        page("about", "A&bout Slabwright", (), "Version and licences.", group=1),
-    )
-
-
-def _sample_entries(c: Commands) -> tuple[Entry, ...]:
-    def entry(sample: Sample) -> Entry:
-        return Entry(sample.title, lambda: c.files.open_sample(sample), tip=sample.path.name)
-
-    return tuple(entry(sample) for sample in c.samples)
-
-
-def _recent_entries(c: Commands) -> tuple[Entry, ...]:
-    paths = c.recent.paths()
-
-    def entry(number: int, name: str, index: int) -> Entry:
-        path = paths[index]
-        there = path.exists()
-        tip = str(path) if there else f"{path} is not there"
-        text = f"&{number % 10} {name}".replace("&10", "1&0")
-        return Entry(text, lambda: c.files.open_path(path), there, tip)
-
-    if not paths:
-        return (Entry("No files yet", lambda: None, enabled=False),)
-    return tuple(entry(index + 1, path.name, index) for index, path in enumerate(paths))

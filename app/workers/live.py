@@ -20,6 +20,7 @@ from stackcore.errors import Fault, InputError, SlabwrightError
 from stackcore.job import Job
 from stackcore.media.base import FloatArray
 from stackcore.propagation import Response, solve
+from stackcore.quantities import QUANTITIES
 from stackcore.stack import Stack
 
 Solve = Callable[[Stack, FloatArray, FloatArray], Response]
@@ -41,6 +42,8 @@ class Question:
         The one point of the wall drawing, Hz and rad.
     markers
         Frequencies in Hz of all markers, for the readings.
+    quantity
+        CSV column that will be shown, worked out beforehand; empty for none.
     """
 
     number: int
@@ -50,6 +53,7 @@ class Question:
     marker_frequency: float
     marker_angle: float
     markers: tuple[float, ...] = ()
+    quantity: str = ""
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -166,6 +170,7 @@ class LiveLane(QObject):
         marker_frequency: float | None = None,
         marker_angle: float | None = None,
         markers: tuple[float, ...] = (),
+        quantity: str = "",
     ) -> int:
         """Ask a new question and return its number; the present calculation is finished first.
 
@@ -177,6 +182,8 @@ class LiveLane(QObject):
             The point of the wall drawing; by default the middle frequency and the first angle.
         markers
             Frequencies to be solved exactly for the readings.
+        quantity
+            What will be shown of the response: worked out here, not in the window's thread.
 
         Returns
         -------
@@ -196,6 +203,7 @@ class LiveLane(QObject):
             middle if marker_frequency is None else marker_frequency,
             float(angle[0]) if marker_angle is None else marker_angle,
             markers,
+            quantity,
         )
         self._slot.put(question)
         self._start()
@@ -210,6 +218,7 @@ class LiveLane(QObject):
             marker_frequency=view.marker_frequency(job.sweep),
             marker_angle=view.marker_angle(job.sweep),
             markers=view.markers,
+            quantity=view.quantity,
         )
 
     def close(self) -> None:
@@ -255,6 +264,7 @@ def _result(question: Question, solve: Solve) -> Answer | Failure:
         at_markers = None
         if question.markers:
             at_markers = solve(question.stack, np.array(question.markers), question.angle)
+        _prepare(question, response, at_marker, at_markers)
     except InputError as error:
         return Failure(question, error.faults)
     except SlabwrightError as error:
@@ -266,3 +276,12 @@ def _result(question: Question, solve: Solve) -> Answer | Failure:
         message = f"the calculation failed: {type(error).__name__}: {error}"
         return Failure(question, (Fault("", message, "please report this with the job file"),))
     return Answer(question, response, at_marker, at_markers, time.perf_counter() - begun)
+
+
+def _prepare(question: Question, response: Response, at_marker: Response, at_markers: Response | None) -> None:
+    """Work out what the panels will ask of the responses, which compute a quantity when it is first asked for."""
+    for part in (response, at_markers):
+        if question.quantity and part is not None:
+            QUANTITIES[question.quantity].values(part)
+    for name in ("reflectance", "transmittance", "absorptance", "element_absorptance"):
+        getattr(at_marker, name)

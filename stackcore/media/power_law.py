@@ -34,7 +34,7 @@ class PowerLawMedium(AbstractMedium):
         c ≥ 0, the conductivity at 1 GHz in S/m, and d. σ holds all of the loss.
     valid_range, provenance
         See `stackcore.media.base`. Editions of the recommendation differ by up to 42 per cent in σ and belong into
-        the source: ``ITU-R P.2040-3 (08/2023), table of material properties``.
+        the source: ``ITU-R P.2040-3 (2023), concrete``.
 
     Raises
     ------

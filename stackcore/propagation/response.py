@@ -44,6 +44,10 @@ class Response:
     _log_ratio: FloatArray
     _bare_transmittance: FloatArray
 
+    def knows(self, name: str) -> bool:
+        """Return whether the attribute `name` can be had without computing: it was asked for before, or is free."""
+        return name in vars(self) or name in ("reflection", "log_transmission")
+
     @property
     def reflection(self) -> ComplexArray:
         """Complex r of the tangential electric field at the front face."""

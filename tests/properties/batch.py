@@ -51,7 +51,8 @@ def random_medium(rng: np.random.Generator, *, lossless: bool = False) -> Abstra
     if kind == 0:
         return ConstantMedium(eps, mu)
     if kind == 1:
-        return ConductorMedium(_decades(rng, 1e-4, 6.3e7), mu)
+        slow = _decades(rng, 1e-16, 1e-12) if rng.random() < 0.3 else 0.0
+        return ConductorMedium(_decades(rng, 1e-4, 6.3e7), mu, relaxation_time=slow)
     tangent = min(_decades(rng, 1e-6, 1e3), 1e4 / abs(eps))
     mu_loss = mu * _decades(rng, 1e-3, 10.0) if mu != 1.0 and kind == 2 else 0.0
     return ConstantMedium(eps - 1j * abs(eps) * tangent, mu - 1j * mu_loss)

@@ -4,7 +4,8 @@ import numpy as np
 import pytest
 from scipy.optimize import brentq
 
-from stackcore.constants import SPEED_OF_LIGHT
+from stackcore.constants import SPEED_OF_LIGHT, VACUUM_PERMITTIVITY
+from stackcore.media.conductor import ConductorMedium
 from stackcore.media.constant import VACUUM
 from stackcore.stack import Layer
 from tests.reference.published import (
@@ -39,6 +40,8 @@ TUNNELLING = [  # index, degrees, gap in wavelengths, T of TE, T of TM, source
     (1.5, 45.0, 1.0, "0.01704718", "0.04251028", ZHU),
     (1.5, 43.0, 0.25, "0.54585500", "0.82115355", HOMEWORK),
 ]
+
+PLASMA = [(0.3, "2.0965697"), (0.5, "2.3094011"), (0.8, "3.3333333")]  # ω/ω_p, delay in units of 1/ω_p
 
 SLAB_DELAYS = [  # index, phase across the slab in quarter turns, delay in units of thickness / c
     (3.0, 2, 5.0, "resonance, (n/2)(n² + 1)/n"),
@@ -99,6 +102,19 @@ def test_group_delay_of_a_slab(n: float, quarters: int, expected: float, what: s
     np.testing.assert_allclose(
         delay * SPEED_OF_LIGHT / thickness, expected, rtol=1e-12, err_msg=f"{what} ({SECOND_METHOD})"
     )
+
+
+@pytest.mark.parametrize(("ratio", "delay"), PLASMA)
+def test_delay_through_a_plasma(ratio: float, delay: str) -> None:
+    """Below cutoff the delay of a thick plasma is 2/√(ω_p² − ω²), however thick it is (T. E. Hartman, 1962)."""
+    plasma_frequency = 1e10
+    relaxation = 1e12 / plasma_frequency
+    plasma = ConductorMedium(VACUUM_PERMITTIVITY * plasma_frequency**2 * relaxation, relaxation_time=relaxation)
+    for depths in (12.0, 30.0):
+        thickness = depths * SPEED_OF_LIGHT / plasma_frequency / np.sqrt(1 - ratio**2)
+        r = solved(wall(Layer(plasma, float(thickness))), ratio * plasma_frequency / (2 * np.pi))
+        found = float(r.group_delay_s[0, 0, TE]) * plasma_frequency
+        assert_printed(found, delay, f"plasma slab, thick limit ({SECOND_METHOD})")
 
 
 @pytest.mark.parametrize("n", [1.5, 2.0, 4.0])

@@ -22,7 +22,7 @@ from app.panels.curves.plot_commands import PlotCommands
 from app.panels.curves.range_strip import RangeStrip
 from app.panels.curves.scale import FrequencyScale
 from app.series.axis import frequency_axis, quantity_axis
-from app.series.curves import Curve, curves_of
+from app.series.curves import Curve, curves_of, takes_long
 from app.series.texts import frequency_text
 from stackcore.arrays import FloatArray
 from stackcore.errors import Severity
@@ -201,6 +201,8 @@ class CurvesPanel(QWidget):
     # Drawing
 
     def _view_changed(self, change: ViewChange) -> None:
+        if self._answer is not None and takes_long(self._answer.response, change.after.quantity):
+            return  # it is being worked out elsewhere and comes as an answer
         drawn = ("quantity", "decibels", "log_frequency", "polarizations", "active_angle", "active_polarization")
         if any(getattr(change.before, name) != getattr(change.after, name) for name in drawn):
             self._draw()

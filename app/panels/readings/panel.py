@@ -13,7 +13,7 @@ from app.look.theme import Theme
 from app.panels.readings.model import ReadingsModel
 from app.panels.readings.table import ReadingsTable
 from app.panels.sweep.panel import quantity_tip
-from app.series.curves import curves_of
+from app.series.curves import curves_of, takes_long
 from app.series.markers import remove_marker
 from app.series.readings import readings_of, table_text
 from stackcore.errors import Severity
@@ -131,7 +131,8 @@ class ReadingsPanel(QWidget):
         return "".join("\t".join([line[0], *(line[c + 1] for c in columns)]) + "\n" for line in kept)
 
     def _view_changed(self, change: ViewChange) -> None:
-        self._show()
+        if self._answer is None or not takes_long(self._answer.response, change.after.quantity):
+            self._show()
 
     def _show(self) -> None:
         state = self._view.state

@@ -108,7 +108,7 @@ def test_another_stack_is_computed_when_it_is_looked_at(qtbot: QtBot, bench: Ben
 
 
 def test_moving_the_marker_asks_for_its_point(qtbot: QtBot, bench: Bench) -> None:
-    """The point of the wall drawing follows the marker and the angle; another quantity asks nothing."""
+    """The point of the wall drawing follows the marker and the angle; decibels ask nothing."""
     bench.view.set(markers=(9e9,))
     qtbot.waitUntil(bench.settled)
     assert bench.panel.answers[-1].question.marker_frequency == 9e9
@@ -116,9 +116,17 @@ def test_moving_the_marker_asks_for_its_point(qtbot: QtBot, bench: Bench) -> Non
     qtbot.waitUntil(bench.settled)
     assert bench.panel.answers[-1].question.marker_angle == pytest.approx(np.pi / 4)
     count = len(bench.panel.answers)
-    bench.view.set(quantity="reflectance")
+    bench.view.set(decibels=True)
     assert bench.settled()
     assert len(bench.panel.answers) == count
+
+
+def test_another_quantity_is_worked_out_beside_the_window(qtbot: QtBot, bench: Bench) -> None:
+    """A quantity that was not shown yet comes as an answer that knows it already."""
+    assert not bench.panel.answers[-1].response.knows("group_delay_s")
+    bench.view.set(quantity="group_delay_s")
+    qtbot.waitUntil(bench.settled)
+    assert bench.panel.answers[-1].response.knows("group_delay_s")
 
 
 def test_a_text_that_is_no_value_makes_the_result_stale(qtbot: QtBot, bench: Bench) -> None:
