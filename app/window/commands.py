@@ -17,12 +17,12 @@ Do = Callable[[], None]
 
 @dataclass(frozen=True, slots=True)
 class ViewCommands:
-    """What the menu View needs from the window."""
+    """What the menu View needs from the window; panels opened beside go by their title."""
 
     theme: Callable[[], str]
     set_theme: Callable[[str], None]
-    materials_shown: Callable[[], bool]
-    toggle_materials: Do
+    shown: Callable[[str], bool]
+    toggle: Callable[[str], None]
     reset_layout: Do
     next_panel: Do
     previous_panel: Do

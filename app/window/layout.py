@@ -13,6 +13,7 @@ from PySide6.QtWidgets import (
     QMainWindow,
     QSplitter,
     QSplitterHandle,
+    QTabBar,
     QToolButton,
     QVBoxLayout,
     QWidget,
@@ -21,8 +22,12 @@ from PySide6.QtWidgets import (
 from app.look.palette import heading_font
 from app.look.theme import Theme
 
-VERSION: Final = 1
+VERSION: Final = 2
 """Of the arrangement; raised when panels come or go, and an older one is then forgotten."""
+
+MATERIALS: Final = "Materials"
+NOTES: Final = "Title and notes"
+HELP: Final = "Help"
 
 FIRST_SIZE: Final = QSize(1280, 840)
 WALL_SHARE: Final = 0.34
@@ -132,6 +137,7 @@ class Arrangement:
         window.setCentralWidget(centre)
         self._docks = {title: _dock(window, title, widget) for title, widget in beside}
         self._placed: set[str] = set()
+        self._put_beside()
 
     @property
     def splitters(self) -> tuple[QuietSplitter, ...]:
@@ -142,6 +148,17 @@ class Arrangement:
         """Return the dock of the panel with this title."""
         return self._docks[title]
 
+    def shown(self, title: str) -> bool:
+        """Whether the panel with this title is shown."""
+        return not self._docks[title].isHidden()
+
+    def toggle(self, title: str) -> None:
+        """Show the panel with this title, or hide it."""
+        if self.shown(title):
+            self._docks[title].hide()
+        else:
+            self.open_beside(title)
+
     def open_beside(self, title: str) -> None:
         """Show the panel with this title; the first time in a good width."""
         dock = self._docks[title]
@@ -151,6 +168,9 @@ class Arrangement:
             width = min(round(self._window.width() * BESIDE_SHARE), BESIDE_WIDEST)
             self._window.resizeDocks([dock], [width], Qt.Orientation.Horizontal)
         self._placed.add(title)
+        # Qt makes the row of tabs when two panels share a place.
+        for tabs in self._window.findChildren(QTabBar, options=Qt.FindChildOption.FindDirectChildrenOnly):
+            tabs.setAccessibleName("Panels beside")
 
     def set_theme(self, theme: Theme) -> None:
         """Take the colours of `theme`."""
@@ -159,10 +179,7 @@ class Arrangement:
 
     def reset(self) -> None:
         """Arrange everything as at the first run, in the size the window has."""
-        for dock in self._docks.values():
-            dock.setFloating(False)
-            self._window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
-            dock.hide()
+        self._put_beside()
         self._placed.clear()
         width, height = self._window.width(), self._window.height()
         wall = round(height * WALL_SHARE)
@@ -171,6 +188,17 @@ class Arrangement:
         _divide(self._whole, (wall, height - wall), (1, 2))
         _divide(self._lower, (table, width - table), (1, 2))
         _divide(self._results, (height - wall - readings, readings), (1, 0))
+
+    def _put_beside(self) -> None:
+        """Put every panel of the side to the right, closed, in one place: those open together become tabs."""
+        first, *others = self._docks.values()
+        for dock in (first, *others):
+            dock.setFloating(False)
+            self._window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
+        for dock in others:
+            self._window.tabifyDockWidget(first, dock)
+        for dock in (first, *others):
+            dock.hide()
 
     def save(self) -> None:
         """Remember size, place and shares."""
@@ -216,8 +244,6 @@ def _dock(window: QMainWindow, title: str, widget: QWidget) -> QDockWidget:
     dock.setObjectName(f"dock {title}")
     dock.setTitleBarWidget(_title_bar(dock, title))
     dock.setWidget(widget)
-    window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
-    dock.hide()
     return dock
 
 

@@ -26,7 +26,7 @@ from app.window.first_view import first_view
 from app.window.help_pages import KeyGroup
 from app.window.help_panel import HelpPanel
 from app.window.keys import key_groups
-from app.window.layout import Arrangement
+from app.window.layout import HELP, MATERIALS, NOTES, Arrangement
 from app.window.marking import MarkerCommands
 from app.window.messages import Choice, Message, Messages, MessageStrip
 from app.window.panels import Panels, focus_into, make_panels
@@ -39,8 +39,6 @@ from app.window.table import action_table
 from app.workers.live import Answer, LiveLane
 from stackcore.errors import Fault
 
-MATERIALS: Final = "Materials"
-HELP: Final = "Help"
 THEME_KEY: Final = "look/theme"
 UNSOLVED: Final = "This stack cannot be computed; the curves show the last one that could."
 
@@ -84,7 +82,7 @@ class MainWindow(QMainWindow):
         self._arrangement = Arrangement(
             self,
             self._panels.places(self._strip),
-            ((MATERIALS, self._panels.materials), (HELP, self._panels.help)),
+            ((MATERIALS, self._panels.materials), (NOTES, self._panels.notes), (HELP, self._panels.help)),
             self._theme,
             settings,
         )
@@ -197,12 +195,11 @@ class MainWindow(QMainWindow):
 
     def _make_actions(self) -> Actions:
         session, tell = self._session, self.messages.tell
-        materials = self._arrangement.dock(MATERIALS)
         view = ViewCommands(
             theme=self._theme_choice,
             set_theme=self.set_theme_choice,
-            materials_shown=lambda: not materials.isHidden(),
-            toggle_materials=self._toggle_materials,
+            shown=self._arrangement.shown,
+            toggle=self._arrangement.toggle,
             reset_layout=self._arrangement.reset,
             next_panel=lambda: self._panels.focus(1),
             previous_panel=lambda: self._panels.focus(-1),
@@ -235,7 +232,8 @@ class MainWindow(QMainWindow):
         self._panels.wall.edit_requested.connect(self._panels.edit_element)
         self._exporter.running.connect(self._actions.refresh)
         self._status.cautions.clicked.connect(lambda: self.show_help("cautions"))
-        self._arrangement.dock(MATERIALS).visibilityChanged.connect(self._actions.refresh)
+        for title in (MATERIALS, NOTES):
+            self._arrangement.dock(title).visibilityChanged.connect(self._actions.refresh)
         QGuiApplication.styleHints().colorSchemeChanged.connect(self._take_theme)
         if self._net is not None:
             self._net.caught.connect(self._caught)
@@ -324,13 +322,6 @@ class MainWindow(QMainWindow):
     def _dropped(self, event: QDropEvent) -> Path | None:
         urls = event.mimeData().urls()
         return Path(urls[0].toLocalFile()) if len(urls) == 1 and urls[0].isLocalFile() else None
-
-    def _toggle_materials(self) -> None:
-        dock = self._arrangement.dock(MATERIALS)
-        if dock.isHidden():
-            self._arrangement.open_beside(MATERIALS)
-        else:
-            dock.hide()
 
     def _quit(self) -> None:
         self.close()

@@ -44,7 +44,7 @@ def open_window(job: Path | None) -> int:
     state = state_folder()
     net = CrashNet(state)
     net.install()
-    window = MainWindow(Session(report=net.report), View(), open_settings(), state, crash_net=net)
+    window = MainWindow(Session(report=net.report), View(report=net.report), open_settings(), state, crash_net=net)
     window.show()
     window.offer_leftovers()
     if job is not None:

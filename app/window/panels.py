@@ -18,6 +18,7 @@ from app.panels.wall.panel import WallPanel
 from app.window.exporting import Tell
 from app.window.help_panel import HelpPanel
 from app.window.layout import Places
+from app.window.notes_panel import NotesPanel
 from app.window.recompute import Viewer
 from stackcore.job.records import LayerRecord
 
@@ -32,6 +33,7 @@ class Panels:
     curves: CurvesPanel
     readings: ReadingsPanel
     materials: MaterialsPanel
+    notes: NotesPanel
     help: HelpPanel
 
     @property
@@ -49,6 +51,7 @@ class Panels:
             self.curves,
             self.readings,
             self.materials,
+            self.notes,
             self.help,
         )
 
@@ -64,6 +67,7 @@ class Panels:
         self.curves.set_theme(theme)
         self.readings.set_theme(theme)
         self.materials.set_theme(theme)
+        self.notes.set_theme(theme)
         self.help.set_theme(theme)
 
     def rename_stack(self) -> None:
@@ -100,6 +104,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
         curves=CurvesPanel(session, view, theme, tell),
         readings=ReadingsPanel(session, view, theme, tell),
         materials=MaterialsPanel(session, view, theme, tell),
+        notes=NotesPanel(session, tell),
         help=help_panel,
     )
 

@@ -4,6 +4,7 @@ from collections.abc import Sequence
 
 from app.window.actions import Act
 from app.window.commands import Commands
+from app.window.layout import MATERIALS, NOTES
 
 
 def markers_acts(c: Commands) -> Sequence[Act]:
@@ -100,11 +101,21 @@ def arrangement_acts(c: Commands) -> Sequence[Act]:
         Act(
             "view.materials",
             menu,
-            "&Materials",
-            view.toggle_materials,
+            MATERIALS.replace("M", "&M", 1),
+            lambda: view.toggle(MATERIALS),
             ("Ctrl+Shift+M",),
             "Show or hide the materials of the job and the library, beside the work.",
-            checked=view.materials_shown,
+            checked=lambda: view.shown(MATERIALS),
+            group=1,
+        ),
+        Act(
+            "view.notes",
+            menu,
+            NOTES.replace("T", "&T", 1),
+            lambda: view.toggle(NOTES),
+            ("Ctrl+I",),
+            "Show or hide title and notes of the job, beside the work.",
+            checked=lambda: view.shown(NOTES),
             group=1,
         ),
         Act(

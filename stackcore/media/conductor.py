@@ -16,7 +16,7 @@ from stackcore.media.base import (
     Provenance,
 )
 from stackcore.media.checks import check_loss, check_positive, check_relative
-from stackcore.media.parts import complex_of, conduction, everywhere
+from stackcore.media.parts import both_slopes, complex_of, conduction, everywhere
 from stackcore.media.roughness import HAMMERSTAD_JENSEN, ROUGHNESS_RULES, roughness_factor
 
 
@@ -100,16 +100,15 @@ class ConductorMedium(AbstractMedium):
         loss, _, excess = self._parts(frequency)
         slowed = 1 / complex_of(1.0, 2 * np.pi * frequency * self.relaxation_time)
         by_time = complex_of(0.0, -2 * np.pi * frequency) * slowed * loss
-        zero = np.zeros_like(loss)
-        by_roughness = -4 / self.roughness * excess * loss if self.roughness else zero
-        by_mu = -2 / complex(self.permeability).real * excess * loss if self.roughness else zero
-        return {
-            "conductivity": ConstantSlope(loss * (1 - 2 * excess) / self.conductivity, zero),
-            "permeability": ConstantSlope(by_mu, everywhere(1.0, frequency)),
-            "permeability_loss": ConstantSlope(zero, everywhere(-1j, frequency)),
-            "relaxation_time": ConstantSlope(by_time, zero),
-            "roughness": ConstantSlope(by_roughness, zero),
+        electric: dict[str, ComplexArray | complex] = {
+            "conductivity": loss * (1 - 2 * excess) / self.conductivity,
+            "relaxation_time": by_time,
+            "roughness": 0.0,
         }
+        if self.roughness:
+            electric["roughness"] = -4 / self.roughness * excess * loss
+            electric["permeability"] = -2 / complex(self.permeability).real * excess * loss
+        return both_slopes(frequency, electric, {"permeability": 1.0, "permeability_loss": -1j})
 
     def skin_depth(self, frequency: FloatArray) -> FloatArray:
         """Return the depth in m at which the field of a smooth conductor has fallen to 1/e, at `frequency` in Hz.

@@ -16,7 +16,7 @@ from stackcore.media.base import (
     Provenance,
 )
 from stackcore.media.checks import check_loss, check_positive, check_relative
-from stackcore.media.parts import everywhere
+from stackcore.media.parts import both_slopes
 
 
 @dataclass(frozen=True, slots=True)
@@ -94,21 +94,12 @@ class ConstantMedium(AbstractMedium):
         )
 
     def constant_slopes(self, frequency: FloatArray) -> Mapping[str, ConstantSlope]:
-        one, zero = everywhere(1.0, frequency), everywhere(0.0, frequency)
         epsilon = complex(self.permittivity)
+        electric: dict[str, complex] = {"permittivity": 1.0, "permittivity_loss": -1j}
         if self.loss_as == "tangent":
-            slopes = {
-                "permittivity": ConstantSlope(one * complex(1.0, epsilon.imag / epsilon.real), zero),
-                "loss_tangent": ConstantSlope(one * complex(0.0, -epsilon.real), zero),
-            }
-        else:
-            slopes = {
-                "permittivity": ConstantSlope(one, zero),
-                "permittivity_loss": ConstantSlope(-1j * one, zero),
-            }
-        slopes["permeability"] = ConstantSlope(zero, one)
-        slopes["permeability_loss"] = ConstantSlope(zero, -1j * one)
-        return slopes
+            tangent = -epsilon.imag / epsilon.real
+            electric = {"permittivity": 1 - 1j * tangent, "loss_tangent": -1j * epsilon.real}
+        return both_slopes(frequency, electric, {"permeability": 1.0, "permeability_loss": -1j})
 
 
 VACUUM = ConstantMedium(1.0 + 0.0j)

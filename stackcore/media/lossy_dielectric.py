@@ -5,7 +5,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from stackcore.arrays import FloatArray
+from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.media.base import (
     UNSOURCED,
     AbstractMedium,
@@ -15,7 +15,7 @@ from stackcore.media.base import (
     Provenance,
 )
 from stackcore.media.checks import check_loss, check_positive, check_relative
-from stackcore.media.parts import conduction, everywhere
+from stackcore.media.parts import both_slopes, conduction, everywhere
 
 
 @dataclass(frozen=True, slots=True)
@@ -92,16 +92,9 @@ class LossyDielectricMedium(AbstractMedium):
         return Constitutive(permittivity, permeability, slope, np.zeros_like(permeability))
 
     def constant_slopes(self, frequency: FloatArray) -> Mapping[str, ConstantSlope]:
-        one, zero = everywhere(1.0, frequency), everywhere(0.0, frequency)
-        slopes: dict[str, ConstantSlope] = {}
+        electric: dict[str, ComplexArray | complex] = {"permittivity": 1.0, "loss_part": -1j}
         if self.loss_part is None:
             tangent = self.loss_tangent or 0.0
-            slopes["permittivity"] = ConstantSlope(one * complex(1, -tangent), zero)
-            slopes["loss_tangent"] = ConstantSlope(one * complex(0, -self.permittivity), zero)
-        else:
-            slopes["permittivity"] = ConstantSlope(one, zero)
-            slopes["loss_part"] = ConstantSlope(-1j * one, zero)
-        slopes["conductivity"] = ConstantSlope(conduction(frequency), zero)
-        slopes["permeability"] = ConstantSlope(zero, one)
-        slopes["permeability_loss"] = ConstantSlope(zero, -1j * one)
-        return slopes
+            electric = {"permittivity": 1 - 1j * tangent, "loss_tangent": -1j * self.permittivity}
+        electric["conductivity"] = conduction(frequency)
+        return both_slopes(frequency, electric, {"permeability": 1.0, "permeability_loss": -1j})

@@ -43,14 +43,27 @@ def magnetic(permeability: ComplexArray, slope: ComplexArray) -> Constitutive:
 
 def electric_slopes(frequency: FloatArray, slopes: Slopes) -> dict[str, ConstantSlope]:
     """Return the slopes of ε by name of the constant, in the shape of `frequency`; μ has none."""
-    zero = everywhere(0.0, frequency)
-    return {name: ConstantSlope(_shaped(slope, frequency), zero) for name, slope in slopes.items()}
+    return both_slopes(frequency, slopes, {})
 
 
 def magnetic_slopes(frequency: FloatArray, slopes: Slopes) -> dict[str, ConstantSlope]:
     """Return the slopes of μ by name of the constant, in the shape of `frequency`; ε has none."""
+    return both_slopes(frequency, {}, slopes)
+
+
+def both_slopes(
+    frequency: FloatArray, of_permittivity: Slopes, of_permeability: Slopes
+) -> dict[str, ConstantSlope]:
+    """Return the slopes of ε and μ by name of the constant, in the shape of `frequency`; 0 where one has none."""
     zero = everywhere(0.0, frequency)
-    return {name: ConstantSlope(zero, _shaped(slope, frequency)) for name, slope in slopes.items()}
+    names = dict.fromkeys([*of_permittivity, *of_permeability])
+    return {
+        name: ConstantSlope(
+            _shaped(of_permittivity[name], frequency) if name in of_permittivity else zero,
+            _shaped(of_permeability[name], frequency) if name in of_permeability else zero,
+        )
+        for name in names
+    }
 
 
 def _shaped(slope: ComplexArray | complex, frequency: FloatArray) -> ComplexArray:

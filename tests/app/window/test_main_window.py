@@ -13,8 +13,7 @@ from app.document import edits
 from app.document.document import Selection
 from app.look.settings import open_settings
 from app.look.theme import DARK, LIGHT
-from app.window.layout import VERSION
-from app.window.main_window import HELP, MATERIALS
+from app.window.layout import HELP, MATERIALS, NOTES, VERSION
 from app.window.panels import has_focus
 from stackcore.errors import Fault
 from tests.app.window.conftest import Bench, MakeWindow
@@ -186,6 +185,24 @@ def test_materials_open_beside_and_never_over(bench: Bench) -> None:
     assert not bench.window.panels.materials.isVisible()
 
 
+def test_title_and_notes_are_typed_beside(bench: Bench) -> None:
+    """What is typed is in the job at once, in one go it is one step to undo, and both follow undo."""
+    bench.trigger("view.notes")
+    notes = bench.window.panels.notes
+    notes.title.setFocus()
+    notes.title.selectAll()
+    bench.type("Pier cover")
+    assert bench.session.record.title == "Pier cover"
+    bench.press(Qt.Key.Key_Tab)
+    bench.type("for the pier")
+    assert bench.session.record.notes == "for the pier"
+    while bench.session.undo_sentence == "change notes":
+        bench.session.undo()
+    assert notes.notes.toPlainText() == ""
+    bench.session.undo()
+    assert notes.title.text() == "Harbour cover"
+
+
 def test_help_is_local_beside_and_at_the_quantity(bench: Bench) -> None:
     """F1 shows the definitions in a pane; the other pages show keys, cautions and versions."""
     help_panel = bench.window.panels.help
@@ -331,13 +348,13 @@ def test_the_layout_is_remembered_and_reset(bench: Bench, make_bench: MakeWindow
     other.trigger("view.reset")
     assert other.window._arrangement.splitters[0].sizes()[0] < moved[0]
     assert not other.window.panels.materials.isVisible()
-    assert {dock.windowTitle() for dock in other.window.findChildren(QDockWidget)} == {MATERIALS, HELP}
+    assert {dock.windowTitle() for dock in other.window.findChildren(QDockWidget)} == {MATERIALS, NOTES, HELP}
 
 
-def test_a_layout_of_another_version_is_forgotten(make_bench: MakeWindow) -> None:
+def test_a_layout_that_makes_no_sense_is_forgotten(make_bench: MakeWindow) -> None:
     """Settings that make no sense give the first layout rather than a broken window."""
     settings = open_settings()
-    settings.setValue("layout/version", 1)
+    settings.setValue("layout/version", VERSION)
     settings.setValue("layout/geometry", "nonsense")
     settings.setValue("layout/state", "nonsense")
     settings.sync()

@@ -25,7 +25,7 @@ def constant_of(medium: Any, name: str) -> float:
         return -medium.permittivity.imag / medium.permittivity.real
     if name.endswith("_loss"):
         return -complex(getattr(medium, name.removesuffix("_loss"))).imag
-    return float(complex(getattr(medium, name)).real)
+    return float(complex(getattr(medium, name) or 0.0).real)
 
 
 def with_constant(medium: Any, name: str, value: float) -> Any:
@@ -40,8 +40,9 @@ def with_constant(medium: Any, name: str, value: float) -> Any:
         items[int(place[2])] = part
         return replace(medium, **{place[1]: tuple(items)})
     if isinstance(medium, ConstantMedium) and medium.loss_as == "tangent" and not name.startswith("permeability"):
-        given = {"permittivity": medium.permittivity.real, "loss_tangent": constant_of(medium, "loss_tangent")}
-        return ConstantMedium.with_loss_tangent(**{**given, name: value}, permeability=medium.permeability)
+        real = value if name == "permittivity" else medium.permittivity.real
+        tangent = value if name == "loss_tangent" else constant_of(medium, "loss_tangent")
+        return ConstantMedium.with_loss_tangent(real, tangent, medium.permeability)
     if name.endswith("_loss"):
         field = name.removesuffix("_loss")
         return replace(medium, **{field: complex(complex(getattr(medium, field)).real, -value)})
@@ -91,11 +92,15 @@ def kramers_kronig(loss: Callable[[float], float], frequency: float, breaks: Seq
 
 
 def loss_of(medium: AbstractMedium, quantity: str, conductivity_loss: float = 0.0) -> Callable[[float], float]:
-    """Return ε″ or μ″ of a frequency in Hz, less `conductivity_loss` over the frequency (σ/(2πε₀))."""
+    """Return ε″ or μ″ of a frequency in Hz, less `conductivity_loss` over the frequency (σ/(2πε₀)).
+
+    What is left of the difference is 0 where only its rounding is left.
+    """
 
     def loss(frequency: float) -> float:
-        values = medium.evaluate(np.array(frequency))
-        return -float(getattr(values, quantity).imag) - conductivity_loss / frequency
+        whole = -float(getattr(medium.evaluate(np.array(frequency)), quantity).imag)
+        rest = whole - conductivity_loss / frequency
+        return rest if abs(rest) > 1e-14 * whole else 0.0
 
     return loss
 

@@ -49,9 +49,7 @@ CAUSAL: dict[str, AbstractMedium] = {
     "plasma": PlasmaMedium(2e17, 5e8),
     "magnetic_debye": MagneticDebyeMedium(1.1, 30.0, NANOSECOND),
     "magnetic_lorentz": MagneticLorentzMedium(1.2, 4.0, 2e9, 1e9),
-    "magnetic": MagneticMedium(
-        DebyeMedium(8.0, 5.0, NANOSECOND, 0.01), MagneticLorentzMedium(1.2, 4.0, 2e9, 1e9)
-    ),
+    "magnetic": MagneticMedium(DebyeMedium(8.0, 5.0, NANOSECOND, 0.01), MagneticLorentzMedium(1.2, 4.0, 2e9, 1e9)),
 }
 """Media whose ε′ and μ′ follow from their loss."""
 
@@ -67,9 +65,7 @@ NOT_CAUSAL: dict[str, AbstractMedium] = {
 """Media fitted over a band, without regard to what must follow outside it."""
 
 OPTICAL: dict[str, AbstractMedium] = {
-    "sellmeier": SellmeierMedium.from_micrometres(
-        [(2.8, 0.12), (0.9, 9.0)], constant=1.1, quadratic=-0.00711
-    ),
+    "sellmeier": SellmeierMedium.from_micrometres([(2.8, 0.12), (0.9, 9.0)], constant=1.1, quadratic=-0.00711),
     "cauchy": CauchyMedium(1.5, (CauchyTerm(-0.003, 2), CauchyTerm(0.004, -2)), 0.01),
     "cauchy of the square": CauchyMedium(2.3, (CauchyTerm(-0.01, 2), CauchyTerm(0.011, -4)), 0.01, squared=True),
 }
