@@ -7,12 +7,33 @@ vacuum wavelengths, so that every frequency meets electrically thin and thick wa
 from dataclasses import dataclass, replace
 
 import numpy as np
+from hypothesis import assume
 from hypothesis import strategies as st
 
 from stackcore.constants import SPEED_OF_LIGHT
 from stackcore.media.base import AbstractMedium
+from stackcore.media.cauchy import CauchyMedium, CauchyTerm
+from stackcore.media.cole_cole import ColeColeMedium
+from stackcore.media.cole_davidson import ColeDavidsonMedium
 from stackcore.media.conductor import ConductorMedium
 from stackcore.media.constant import VACUUM, ConstantMedium
+from stackcore.media.debye import DebyeMedium
+from stackcore.media.drude import DrudeMedium
+from stackcore.media.drude_lorentz import DrudeLorentzMedium
+from stackcore.media.havriliak_negami import HavriliakNegamiMedium
+from stackcore.media.lorentz import LorentzMedium
+from stackcore.media.lossy_dielectric import LossyDielectricMedium
+from stackcore.media.magnetic import MagneticMedium
+from stackcore.media.magnetic_debye import MagneticDebyeMedium
+from stackcore.media.magnetic_lorentz import MagneticLorentzMedium
+from stackcore.media.multi_debye import MultiDebyeMedium, RelaxationTerm
+from stackcore.media.multi_lorentz import MultiLorentzMedium
+from stackcore.media.plasma import PlasmaMedium
+from stackcore.media.power_law import PowerLawMedium
+from stackcore.media.resonance import LorentzTerm
+from stackcore.media.roughness import ROUGHNESS_RULES
+from stackcore.media.sellmeier import SellmeierMedium, SellmeierTerm
+from stackcore.media.wideband import WidebandMedium, WidebandStepMedium
 from stackcore.propagation import Response, solve
 from stackcore.sheets.series import SeriesSheet
 from stackcore.stack import METAL, Element, Layer, PerfectConductor, SheetPlacement, Stack
@@ -152,3 +173,132 @@ def any_back() -> st.SearchStrategy[AbstractMedium | PerfectConductor]:
 def dense_fronts() -> st.SearchStrategy[ConstantMedium]:
     """Return vacuum and lossless half-spaces that are denser than it."""
     return st.one_of(st.just(VACUUM), st.builds(ConstantMedium, decades(1.0, 20.0), decades(1.0, 2.0)))
+
+
+def usual_or_any(lowest: float, highest: float) -> st.SearchStrategy[float]:
+    """Return constants of real matter, from `lowest` to `highest`, and any that a model allows."""
+    return st.one_of(decades(lowest, highest), decades(lowest, highest), decades(1e-40, 1e40))
+
+
+def or_nothing(constants: st.SearchStrategy[float]) -> st.SearchStrategy[float]:
+    """Return `constants`, now and then 0."""
+    return st.one_of(constants, constants, st.just(0.0))
+
+
+_HIGH = usual_or_any(0.5, 20.0)
+_STEP = or_nothing(usual_or_any(1e-3, 1e3))
+_TIME = usual_or_any(1e-15, 1.0)
+_SIGMA = or_nothing(usual_or_any(1e-9, 1e8))
+_PLACE = usual_or_any(1e3, 1e17)
+_WIDTH = usual_or_any(1e3, 1e16)
+_RATE = or_nothing(usual_or_any(1e3, 1e17))
+
+
+def relaxing_media() -> st.SearchStrategy[AbstractMedium]:
+    """Return Debye, multi-Debye, Cole-Cole, Cole-Davidson and Havriliak-Negami media."""
+    terms = st.lists(st.builds(RelaxationTerm, _STEP, _TIME), min_size=1, max_size=4).map(tuple)
+    exponent = st.floats(1e-3, 1.0)
+
+    def broadened(
+        high: float, step: float, time: float, a: float, share: float, sigma: float
+    ) -> HavriliakNegamiMedium:
+        return HavriliakNegamiMedium(high, step, time, a, max(share / a, 1e-3), sigma)
+
+    return st.one_of(
+        st.builds(DebyeMedium, _HIGH, _STEP, _TIME, _SIGMA),
+        st.builds(MultiDebyeMedium, _HIGH, terms, _SIGMA),
+        st.builds(ColeColeMedium, _HIGH, _STEP, _TIME, exponent, _SIGMA),
+        st.builds(ColeDavidsonMedium, _HIGH, _STEP, _TIME, exponent, _SIGMA),
+        st.builds(broadened, _HIGH, _STEP, _TIME, exponent, exponent, _SIGMA),
+    )
+
+
+@st.composite
+def wideband_media(draw: st.DrawFn) -> AbstractMedium:
+    """Return wideband logarithmic media, by a point or by the step."""
+    lower = draw(usual_or_any(1.0, 1e9))
+    upper = lower * draw(decades(1.0 + 1e-9, 1e12))
+    assume(lower < upper < 1e40)
+    if draw(st.booleans()):
+        return WidebandStepMedium(draw(_HIGH), draw(_STEP), lower, upper)
+    tangent = draw(or_nothing(decades(1e-6, 1.0)))
+    try:
+        return WidebandMedium(draw(_HIGH), tangent, draw(usual_or_any(1e3, 1e12)), lower, upper)
+    except ValueError:  # so much loss that ε would fall below 0; no other constant drawn here is refused
+        assume(False)
+        raise
+
+
+def resonant_media() -> st.SearchStrategy[AbstractMedium]:
+    """Return Lorentz, multi-Lorentz, Drude, Drude-Lorentz and plasma media."""
+    terms = st.lists(st.builds(LorentzTerm, _STEP, _PLACE, _WIDTH), min_size=1, max_size=4).map(tuple)
+    return st.one_of(
+        st.builds(LorentzMedium, _HIGH, _STEP, _PLACE, _WIDTH),
+        st.builds(MultiLorentzMedium, _HIGH, terms),
+        st.builds(DrudeMedium, _HIGH, _PLACE, _RATE),
+        st.builds(DrudeLorentzMedium, _HIGH, _PLACE, _RATE, terms),
+        st.builds(PlasmaMedium, usual_or_any(1e6, 1e29), _RATE),
+    )
+
+
+def index_media() -> st.SearchStrategy[AbstractMedium]:
+    """Return Sellmeier and Cauchy media, most of the frequencies far outside their range."""
+    poles = st.builds(SellmeierTerm, _STEP, usual_or_any(1e-8, 1e-3))
+    signed = st.builds(lambda size, sign: size * sign, decades(1e-6, 1e6), st.sampled_from((-1, 1)))
+    powers = st.builds(CauchyTerm, signed, st.integers(-10, 10).filter(bool))
+    return st.one_of(
+        st.builds(SellmeierMedium, st.lists(poles, min_size=1, max_size=4).map(tuple), _HIGH, or_nothing(signed)),
+        st.builds(
+            CauchyMedium,
+            signed,
+            st.lists(powers, max_size=5).map(tuple),
+            or_nothing(decades(1e-9, 10.0)),
+            st.booleans(),
+        ),
+    )
+
+
+def real_conductors() -> st.SearchStrategy[AbstractMedium]:
+    """Return conductors with slow carriers, rough surfaces or both."""
+    return st.builds(
+        ConductorMedium,
+        usual_or_any(1e-3, 6.3e7),
+        usual_or_any(1.0, 1e4),
+        relaxation_time=or_nothing(_TIME),
+        roughness=or_nothing(usual_or_any(1e-9, 1e-4)),
+        roughness_rule=st.sampled_from(ROUGHNESS_RULES),
+    )
+
+
+def band_media() -> st.SearchStrategy[AbstractMedium]:
+    """Return what is fitted over a band: power laws and lossy dielectrics."""
+    power = st.floats(-10.0, 10.0) | st.floats(-1.0, 2.0)
+    loss = or_nothing(usual_or_any(1e-6, 10.0))
+    return st.one_of(
+        st.builds(PowerLawMedium, _HIGH, power, _SIGMA, power),
+        st.builds(LossyDielectricMedium, _HIGH, loss, conductivity=_SIGMA),
+        st.builds(LossyDielectricMedium, _HIGH, loss_part=loss, conductivity=_SIGMA),
+        st.builds(ConstantMedium.with_loss_tangent, decades(0.5, 100.0), or_nothing(decades(1e-6, 10.0))),
+    )
+
+
+def magnetic_media() -> st.SearchStrategy[AbstractMedium]:
+    """Return media whose μ relaxes or resonates, alone and with the ε of a relaxing medium."""
+    alone = st.one_of(
+        st.builds(MagneticDebyeMedium, _HIGH, _STEP, _TIME),
+        st.builds(MagneticLorentzMedium, _HIGH, _STEP, _PLACE, _WIDTH),
+    )
+    return st.one_of(alone, st.builds(MagneticMedium, relaxing_media(), alone))
+
+
+def model_media() -> st.SearchStrategy[AbstractMedium]:
+    """Return media of every model that `media` does not draw, over all constants that they allow."""
+    return st.one_of(
+        relaxing_media(),
+        wideband_media(),
+        resonant_media(),
+        index_media(),
+        real_conductors(),
+        band_media(),
+        magnetic_media(),
+    )

@@ -283,5 +283,5 @@ def _prepare(question: Question, response: Response, at_marker: Response, at_mar
     for part in (response, at_markers):
         if question.quantity and part is not None:
             QUANTITIES[question.quantity].values(part)
-    for name in ("reflectance", "transmittance", "absorptance", "element_absorptance"):
+    for name in ("element_absorptance", "absorptance", "reflectance", "transmittance"):
         getattr(at_marker, name)

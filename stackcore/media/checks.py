@@ -55,7 +55,7 @@ def check_exponents(symmetric: float = 1.0, asymmetric: float = 1.0) -> None:
         check_positive(name, value)
     if symmetric > 1:
         raise ValueError(f"symmetric_exponent {symmetric:g} is above 1, which would be gain")
-    if asymmetric * symmetric > 1:
+    if asymmetric * symmetric > 1 + 1e-12:  # 1/a times a is not always 1 to the last digit
         allowed = "1" if symmetric == 1 else f"1/symmetric_exponent = {1 / symmetric:g}"
         raise ValueError(f"asymmetric_exponent {asymmetric:g} is above {allowed}, which would be gain")
     if min(symmetric, asymmetric) < 1e-3 or asymmetric > 1e3:

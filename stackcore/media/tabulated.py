@@ -21,7 +21,7 @@ from stackcore.media.base import (
 )
 from stackcore.media.checks import LARGEST, SMALLEST, check_positive
 from stackcore.media.monotone import MonotoneCurve, monotone_curve
-from stackcore.media.parts import both_slopes, complex_of
+from stackcore.media.parts import both_slopes, complex_of, never_zero
 from stackcore.units import Dimension, format_value
 
 SAME_FREQUENCY: Final = 1e-9
@@ -155,7 +155,7 @@ class TabulatedMedium(AbstractMedium):
     ) -> tuple[ComplexArray, ComplexArray]:
         (real, real_slope), (loss, loss_slope) = (curve.at(place.x, place.piece) for curve in curves)
         # Rounding may leave the smallest loss a last digit below 0.
-        value = complex_of(real_scale * real, -loss_scale * np.maximum(loss, 0.0))
+        value = never_zero(complex_of(real_scale * real, -loss_scale * np.maximum(loss, 0.0)))
         return value, complex_of(real_scale * real_slope, -loss_scale * loss_slope) * place.by_hertz
 
 
@@ -219,9 +219,8 @@ def _value_faults(name: str, column: Sequence[complex]) -> Iterator[Fault]:
         elif given == 0:
             yield Fault(place, f"a {name} of 0", "a value other than 0")
         elif any(part and not SMALLEST <= abs(part) <= LARGEST for part in (given.real, given.imag)):
-            yield Fault(
-                place, f"{given} is beyond what any matter has", f"parts of 0 or {SMALLEST:g} to {LARGEST:g}"
-            )
+            allowed = f"parts of 0, or of a size from {SMALLEST:g} to {LARGEST:g}"
+            yield Fault(place, f"{given} is beyond what any matter has", allowed)
 
 
 def _range_faults(given: FrequencyRange, frequency: tuple[float, ...]) -> Iterator[Fault]:

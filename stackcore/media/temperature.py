@@ -161,7 +161,7 @@ def liquid_values(frequency: FloatArray, state: LiquidState) -> Constitutive:
 
 
 def liquid_slope(frequency: FloatArray, state: LiquidState, change: LiquidState) -> ComplexArray:
-    """Return the derivative of ε with respect to a condition, which changes the constants of `state` by `change`."""
+    """Return the derivative of ε with respect to a condition that changes the constants of `state` by `change`."""
     slope = everywhere(change.high, frequency)
     for (step, time), (step_change, time_change) in zip(state.terms, change.terms, strict=True):
         part = relaxation(frequency, time)

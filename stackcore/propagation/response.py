@@ -144,6 +144,8 @@ class Response:
 
     @cached_property
     def _absorptance(self) -> FloatArray:
+        if self.knows("element_absorptance"):
+            return np.transpose(self.element_absorptance.sum(axis=-1))
         return dissipation.absorptance(self.stack, self.frequency, self.angle)
 
     @cached_property

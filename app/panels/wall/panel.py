@@ -3,7 +3,7 @@
 from collections.abc import Callable
 from typing import TYPE_CHECKING
 
-from PySide6.QtCore import QEvent, QSize, Qt, Signal
+from PySide6.QtCore import QEvent, QSize, Qt, QTimer, Signal
 from PySide6.QtGui import (
     QFocusEvent,
     QFontMetricsF,
@@ -38,6 +38,9 @@ if TYPE_CHECKING:
     from app.workers.live import Answer
 
 Tell = Callable[[str, Severity], None]
+
+ANSWER_MS = 24
+"""How long the drawing waits for the answer to an edit before it shows the edit alone."""
 
 
 class WallPanel(QWidget):
@@ -78,6 +81,9 @@ class WallPanel(QWidget):
         self.setMinimumSize(360, 150)
         self.setSizePolicy(QSizePolicy.Policy.Expanding, QSizePolicy.Policy.Expanding)
         self.setAttribute(Qt.WidgetAttribute.WA_OpaquePaintEvent)
+        # An edit is mostly followed by its answer within a frame; painting once for both halves the work.
+        self._patience = QTimer(self, singleShot=True, interval=ANSWER_MS)
+        self._patience.timeout.connect(self.update)
         leave_session, leave_view = session.subscribe(self._heard), view.subscribe(self._looked)
         self.destroyed.connect(lambda: (leave_session(), leave_view()))
         self._describe()
@@ -87,6 +93,7 @@ class WallPanel(QWidget):
     def show_answer(self, answer: "Answer") -> None:
         """Draw the rays of an answer, as wide as it says."""
         self._answer = answer
+        self._patience.stop()
         self._describe()
         self.update()
 
@@ -177,8 +184,12 @@ class WallPanel(QWidget):
             self._answer, self._scale = None, None
         self._stack = change.selection.stack
         self._face = None
-        self._describe()
-        self.update()
+        if change.after.job is change.before.job:
+            self._describe()
+            self.update()
+        elif not self._patience.isActive():
+            self._describe()
+            self._patience.start()
 
     def _looked(self, change: ViewChange) -> None:
         self._describe()
