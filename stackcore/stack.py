@@ -1,5 +1,6 @@
 """A stack: layers and sheets between two half-spaces, as frozen values in SI units."""
 
+import math
 from dataclasses import dataclass
 from typing import Final
 
@@ -90,4 +91,4 @@ class Stack:
     @property
     def thickness(self) -> float:
         """Total thickness in m."""
-        return float(sum(element.thickness for element in self.elements if isinstance(element, Layer)))
+        return math.fsum(element.thickness for element in self.elements if isinstance(element, Layer))

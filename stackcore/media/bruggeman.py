@@ -1,34 +1,34 @@
 """The root of Bruggeman's equation that is a medium.
 
-Σ fᵢ (εᵢ − ε)/(εᵢ + 2ε) = 0 has as many roots as there are components. Möbius maps t → (t − ε)/(t + 2ε) take a half
-plane bounded by the line through 0 and ε to a half plane, so the sum can vanish only where that line parts the εᵢ: a
-root lies in the cone that the εᵢ span, or in its negative. For a single component one root is in the cone, all others
-are in its negative, and no root can pass from one to the other through 0 or ∞. So exactly one root lies in the cone
-for all fractions: it is the mixture, passive as its components are, also past the percolation of a metal.
+Σ fᵢ (εᵢ − ε)/(εᵢ + 2ε) = 0 has as many roots as there are components. The map t → (t − ε)/(t + 2ε) takes a half
+plane bounded by the line through 0 and ε to a half plane, so the sum can vanish only where that line parts the εᵢ:
+a root lies in the cone that the εᵢ span, or in its negative. For a single component one root is in the cone, all
+others are in its negative, and no root can pass from one to the other through 0 or ∞. So exactly one root lies in
+the cone for all fractions: it is the mixture, passive as its components are, also past the percolation of a metal.
 """
 
 from collections.abc import Sequence
 from typing import Final
 
 import numpy as np
-from numpy.typing import NDArray
 
 from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.media.parts import complex_of
 
-_MOST_STEPS: Final = 200
-_CLOSE: Final = 4e-15
+_MOST_STEPS: Final = 12
+_CLOSE: Final = 1e-13
 _LEAST_LOSS: Final = 1e-9
 """rad, given to lossless components of opposite sign where there are three or more; see `_normalized`."""
 
 
 def effective_permittivity(components: Sequence[ComplexArray], fractions: Sequence[float]) -> ComplexArray:
-    """Return ε of the mixture of `components`, passive and of one shape, with volume `fractions` that add up to 1."""
+    """Return ε of the mixture of `components`, passive and of one shape, with `fractions` that add up to 1."""
     if len(components) == 1:
         return components[0]
     if len(components) == 2:
         return _of_two(components[0], components[1], fractions[0], fractions[1])
-    return _of_many(components, fractions)
+    shape = np.shape(components[0])
+    return _of_many([np.ravel(component) for component in components], fractions).reshape(shape)
 
 
 def _of_two(first: ComplexArray, second: ComplexArray, first_share: float, second_share: float) -> ComplexArray:
@@ -59,9 +59,10 @@ def _of_two(first: ComplexArray, second: ComplexArray, first_share: float, secon
 
 
 def _of_many(components: Sequence[ComplexArray], fractions: Sequence[float]) -> ComplexArray:
-    """Solve F(ε) = 3ε Σ fᵢ/(εᵢ + 2ε) − 1 = 0 by Newton's steps, and where one leads astray by ε → ε/(1 + F).
+    """Solve F(ε) = 3ε Σ fᵢ/(εᵢ + 2ε) − 1 = 0.
 
-    The latter maps the half plane around the cone into itself, so that it always comes nearer to the root.
+    Newton's steps serve nearly everywhere. Where one leads astray, ε → ε/(1 + F) maps the half plane around the
+    cone into itself and so comes nearer; the few points that this leaves open are solved as an eigenvalue problem.
     """
     parts, unit = _normalized(components)
     root = sum((share * part for share, part in zip(fractions, parts, strict=True)), np.zeros_like(parts[0]))
@@ -73,15 +74,32 @@ def _of_many(components: Sequence[ComplexArray], fractions: Sequence[float]) -> 
         ahead = root - np.where(open_yet, excess / slope, 0.0)
         ahead = np.where(ahead.real > 0, ahead, root)
         ahead_excess, ahead_slope = _excess(ahead, parts, fractions)
-        astray = open_yet & ~(np.abs(ahead_excess) < 0.5 * np.abs(excess))
+        astray = open_yet & (np.abs(ahead_excess) >= 0.5 * np.abs(excess))
         if astray.any():
-            if not (astray & (np.abs(excess) > 1e3 * _CLOSE)).any():
-                break
             ahead = np.where(astray, root / (1 + excess), ahead)
             ahead_excess, ahead_slope = _excess(ahead, parts, fractions)
         root, excess, slope = ahead, ahead_excess, ahead_slope
+    open_yet = np.abs(excess) > _CLOSE
+    if open_yet.any():
+        root[open_yet] = _by_eigenvalues([part[open_yet] for part in parts], fractions)
     product: ComplexArray = root * unit
     return product
+
+
+def _by_eigenvalues(parts: Sequence[ComplexArray], fractions: Sequence[float]) -> ComplexArray:
+    """Return the roots, which are half the eigenvalues of diag(−ε) + 3 uuᵀ with uᵢ = √(fᵢεᵢ), made sharp."""
+    values = np.stack(parts, axis=-1)
+    vector = np.sqrt(np.asarray(fractions) * values)
+    matrix = 3 * vector[..., :, None] * vector[..., None, :]
+    matrix[..., range(len(parts)), range(len(parts))] -= values
+    roots: ComplexArray = np.linalg.eigvals(matrix) / 2
+    inmost = np.argmax(roots.real / np.abs(roots), axis=-1)
+    root: ComplexArray = np.take_along_axis(roots, inmost[..., None], axis=-1)[..., 0]
+    for _ in range(3):
+        excess, slope = _excess(root, parts, fractions)
+        ahead = root - excess / slope
+        root = np.where(np.abs(_excess(ahead, parts, fractions)[0]) < np.abs(excess), ahead, root)
+    return root
 
 
 def _excess(
@@ -99,8 +117,8 @@ def _excess(
 def _normalized(components: Sequence[ComplexArray]) -> tuple[list[ComplexArray], ComplexArray]:
     """Return the components turned so that their cone lies around the positive axis, and the unit that undoes it.
 
-    Where components without loss have opposite signs the cone is a half plane and the root lies on its edge; a trace
-    of loss makes the cone narrower and moves the root inwards.
+    Where components without loss have opposite signs the cone is a half plane and the root lies on its edge; a
+    trace of loss makes the cone narrower and moves the root inwards.
     """
     angles = np.stack([_passive_angle(component) for component in components])
     lowest, highest = angles.min(axis=0), angles.max(axis=0)
@@ -120,7 +138,7 @@ def _turn(angle: FloatArray) -> ComplexArray:
 
 def _passive_angle(value: ComplexArray) -> FloatArray:
     """Return the argument between −π and 0, whatever the sign of a zero loss."""
-    angle: NDArray[np.float64] = -np.arctan2(np.abs(value.imag), value.real)
+    angle: FloatArray = -np.arctan2(np.abs(value.imag), value.real)
     return angle
 
 

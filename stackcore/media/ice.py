@@ -58,8 +58,8 @@ class IceMedium(AbstractMedium):
     Examples
     --------
     >>> import numpy as np
-    >>> complex(np.round(IceMedium(263.15).evaluate(np.array(10e9)).permittivity, 6))
-    (3.179437-0.000776j)
+    >>> complex(np.round(IceMedium(263.15).evaluate(np.array(10e9)).permittivity, 5))
+    (3.17944-0.00078j)
     """
 
     temperature: float

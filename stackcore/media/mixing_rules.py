@@ -4,9 +4,9 @@ A rule takes the permittivities of the components, the host first, and their vol
 grains much smaller than the wavelength inside them, and hold for permeabilities as they do for permittivities.
 
 Sources: A. H. Sihvola, Electromagnetic Mixing Formulas and Applications, IEE (1999); J. C. Maxwell Garnett, Phil.
-Trans. R. Soc. A 203, 385 (1904); D. A. G. Bruggeman, Ann. Phys. 416, 636 (1935); H. Looyenga, Physica 31, 401 (1965);
-K. Lichtenecker, Phys. Z. 27, 115 (1926); O. Wiener, Abh. Sächs. Akad. Wiss. 32, 509 (1912); Z. Hashin, S. Shtrikman,
-J. Appl. Phys. 33, 3125 (1962).
+Trans. R. Soc. A 203, 385 (1904); D. A. G. Bruggeman, Ann. Phys. 416, 636 (1935); H. Looyenga, Physica 31, 401
+(1965); K. Lichtenecker, Phys. Z. 27, 115 (1926); O. Wiener, Abh. Sächs. Akad. Wiss. 32, 509 (1912); Z. Hashin,
+S. Shtrikman, J. Appl. Phys. 33, 3125 (1962).
 """
 
 from collections.abc import Callable, Mapping, Sequence
@@ -147,7 +147,9 @@ RULES: Final[Mapping[str, Rule]] = {
 """Name of the rule in a job file -> the rule."""
 
 
-def wiener_bounds(permittivities: Sequence[FloatArray], fractions: Sequence[float]) -> tuple[FloatArray, FloatArray]:
+def wiener_bounds(
+    permittivities: Sequence[FloatArray], fractions: Sequence[float]
+) -> tuple[FloatArray, FloatArray]:
     """Return the bounds of any mixture of lossless components: series and parallel.
 
     Parameters
@@ -183,8 +185,8 @@ def hashin_shtrikman_bounds(
 
     Notes
     -----
-    ε = (Σ fᵢ/(εᵢ + 2ε₀))⁻¹ − 2ε₀ with ε₀ the least, or the greatest, of the εᵢ. For two components these are Maxwell
-    Garnett's rule and the same with the components exchanged.
+    ε = (Σ fᵢ/(εᵢ + 2ε₀))⁻¹ − 2ε₀ with ε₀ the least, or the greatest, of the εᵢ. For two components these are
+    Maxwell Garnett's rule and the same with the components exchanged.
 
     Examples
     --------
@@ -210,7 +212,7 @@ def _positive(permittivities: Sequence[FloatArray]) -> list[FloatArray]:
 
 
 def _passive_log(value: ComplexArray) -> ComplexArray:
-    """Return ln ε with the argument between −π and 0, where passive media have it, whatever the sign of a zero loss."""
+    """Return ln ε with the argument between −π and 0, as passive media have it, whatever the sign of a zero loss."""
     out = np.empty(np.shape(value), dtype=np.complex128)
     out.real = np.log(np.abs(value))
     out.imag = -np.arctan2(np.abs(value.imag), value.real)
@@ -226,4 +228,5 @@ def _sum(shares: Sequence[float], parts: Sequence[ComplexArray], like: ComplexAr
 
 def _never_zero(divisor: ComplexArray, scale: ComplexArray) -> ComplexArray:
     """Return `divisor` with an exact 0, the resonance of a lossless mixture, off by the last digit of `scale`."""
-    return np.where(divisor == 0, _LAST_DIGIT * np.abs(scale), divisor)
+    zero = divisor == 0
+    return np.where(zero, _LAST_DIGIT * np.abs(scale), divisor) if zero.any() else divisor

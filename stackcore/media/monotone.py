@@ -1,8 +1,8 @@
 """Piecewise cubic interpolation that never overshoots its points, with its exact slope.
 
 Between two neighbours the curve is monotone and so stays between their values; a column without a negative value
-has no negative value anywhere. Slopes at the points are weighted harmonic means of the slopes on both sides, 0 where
-these differ in sign.
+has no negative value anywhere. Slopes at the points are weighted harmonic means of the slopes on both sides, 0
+where these differ in sign.
 
 Source: F. N. Fritsch, R. E. Carlson, SIAM J. Numer. Anal. 17, 238 (1980); the slopes after F. N. Fritsch,
 J. Butland, SIAM J. Sci. Stat. Comput. 5, 300 (1984).

@@ -104,7 +104,7 @@ class TabulatedMedium(AbstractMedium):
 
         Examples
         --------
-        >>> wavelength, index, extinction = np.array([0.5e-6, 0.6e-6]), np.array([1.52, 1.51]), np.array([0.0, 1e-7])
+        >>> wavelength, index, extinction = np.array([0.5e-6, 0.6e-6]), np.array([1.52, 1.51]), 1e-7
         >>> film = TabulatedMedium.from_arrays(299_792_458 / wavelength, (index - 1j * extinction) ** 2)
         >>> film.valid_range.lowest < film.valid_range.highest
         True

@@ -92,9 +92,9 @@ class SceneMaker:
         def layer(index: int, element: Layer) -> LayerWave:
             medium = element.medium
             if medium.dispersive:
-                return layer_wave(wave(medium), element.thickness, incidence, dispersive=True)
+                return layer_wave(wave(medium), element.thickness, incidence)
             if index not in self._kept_layers:
-                made = layer_wave(wave(medium), element.thickness, every, dispersive=False)
+                made = layer_wave(wave(medium), element.thickness, every)
                 self._kept_layers[index] = made
             return self._kept_layers[index].rows(angles)
 

@@ -124,9 +124,10 @@ class Response:
             return _outward(np.zeros(self._log_ratio.shape))
         phase = self._log_transmission.imag
         turns = np.rint((passing.turned_phase(self.stack, self.frequency, self.angle) - phase) / (2 * np.pi))
-        displaced = (2 * np.pi / SPEED_OF_LIGHT) * self.stack.thickness * self.frequency
-        air = np.cos(self.angle)[:, np.newaxis] * displaced
-        return _outward(-np.degrees(phase + 2 * np.pi * turns + air))
+        # In turns and with guard digits: behind a thick wall the delay is the rest of two phases of 10⁸ degrees.
+        air = np.longdouble(self.stack.thickness) / np.longdouble(SPEED_OF_LIGHT) * self.frequency
+        across = np.cos(self.angle.astype(np.longdouble))[:, np.newaxis] * air
+        return _outward(-(np.degrees(phase) + 360 * (turns + across).astype(np.float64)))
 
     @cached_property
     def group_delay_s(self) -> FloatArray:

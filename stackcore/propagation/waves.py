@@ -15,6 +15,7 @@ convention of `stackcore.conventions`.
 """
 
 from dataclasses import dataclass
+from typing import Any
 
 import numpy as np
 from numpy.typing import NDArray
@@ -70,7 +71,8 @@ class Wave:
     """The plane wave of a block in one medium; see the module for the symbols.
 
     `permittivity` and `permeability` are (1,) or (F,); `q2` and `q` are (A, 1 or F); `x` and `b` are
-    (2, A, 1 or F). The branch has Im q ≤ 0, and Re Y ≥ 0 where q is real.
+    (2, A, 1 or F). The branch has Im q ≤ 0, and Re Y ≥ 0 where q is real. `long_q` is Re q with more digits, for
+    media that do not depend on frequency.
     """
 
     permittivity: ComplexArray
@@ -79,6 +81,7 @@ class Wave:
     q: ComplexArray
     x: ComplexArray
     b: ComplexArray
+    long_q: NDArray[np.longdouble] | None
 
     def rows(self, angles: slice) -> "Wave":
         """Return the wave at some of its angles."""
@@ -89,6 +92,7 @@ class Wave:
             self.q[angles],
             self.x[:, angles],
             self.b[:, angles],
+            None if self.long_q is None else self.long_q[angles],
         )
 
 
@@ -97,18 +101,43 @@ def wave_in(medium: AbstractMedium, incidence: Incidence) -> Wave:
     frequency = incidence.frequency if medium.dispersive else incidence.frequency[:1]
     values = medium.evaluate(frequency)
     epsilon, mu = values.permittivity, values.permeability
-    # Never εμ − sin²: near grazing, and near the front's own index, that difference has lost its digits.
-    index2 = incidence.index2
-    q2 = np.asarray((epsilon * mu - index2) + index2 * np.cos(incidence.angle) ** 2, dtype=np.complex128)
-    q = np.sqrt(q2)
+    long_q = None
+    if medium.dispersive:
+        q2 = _q2(epsilon, mu, incidence.index2, incidence.angle)
+        q = np.sqrt(q2)
+    else:
+        # Taken once per angle, so it may cost more: near a critical angle q² is a small rest of large numbers.
+        long_q2 = _q2(
+            epsilon.astype(np.clongdouble),
+            mu.astype(np.clongdouble),
+            incidence.permittivity.astype(np.longdouble) * incidence.permeability,
+            incidence.angle.astype(np.longdouble),
+        )
+        long_q = np.sqrt(long_q2)
+        q2, q = long_q2.astype(np.complex128), long_q.astype(np.complex128)
     q = np.where(q.imag > 0, -q, q)
     q = np.where((q.imag == 0) & ((q / mu).real < 0), -q, q)
     critical = np.abs(q) < _SMALLEST_Q
     q, q2 = np.where(critical, _SMALLEST_Q, q), np.where(critical, _SMALLEST_Q**2, q2)
+    real_q = None if long_q is None else np.where(critical, _SMALLEST_Q, np.copysign(long_q.real, q.real))
     shape = q.shape
     x = np.stack([np.broadcast_to(mu, shape), q2 / epsilon])
     b = np.stack([q2 / mu, np.broadcast_to(epsilon, shape)])
-    return Wave(epsilon, mu, q2, q, x, b)
+    return Wave(epsilon, mu, q2, q, x, b, real_q)
+
+
+def _q2(epsilon: Any, mu: Any, index2: Any, angle: Any) -> Any:
+    """Return q² = εμ − ε₀μ₀ sin²θ by whichever of sin and cos is small; in double or in long double.
+
+    Near grazing, and near the front's own index, 1 − sin² has lost its digits; at steep incidence from a dense
+    front 1 + (εμ/ε₀μ₀ − 1) has.
+    """
+    inside = epsilon * mu
+    steep = angle < np.pi / 4
+    if steep.all():
+        return inside - index2 * np.sin(angle) ** 2
+    flat = (inside - index2) + index2 * np.cos(angle) ** 2
+    return np.where(steep, inside - index2 * np.sin(angle) ** 2, flat) if steep.any() else flat
 
 
 def departure(wave: Wave, reference: Wave) -> ComplexArray:
@@ -118,7 +147,7 @@ def departure(wave: Wave, reference: Wave) -> ComplexArray:
     """
     epsilon, mu, q2 = wave.permittivity, wave.permeability, wave.q2
     near_epsilon, near_mu, near_q2 = reference.permittivity, reference.permeability, reference.q2
-    difference = epsilon * mu - near_epsilon * near_mu
+    difference = (epsilon - near_epsilon) * mu + near_epsilon * (mu - near_mu)
     mu_step = (mu - near_mu) * (mu + near_mu)
     epsilon_step = (epsilon - near_epsilon) * (epsilon + near_epsilon)
     te = _gentler((q2 / mu, mu * (near_q2 / near_mu**2)), (difference / mu, mu_step / mu * (near_q2 / near_mu**2)))
@@ -233,26 +262,17 @@ class LayerWave:
         return tangent, cosine
 
 
-def layer_wave(wave: Wave, thickness: float, incidence: Incidence, *, dispersive: bool) -> LayerWave:
+def layer_wave(wave: Wave, thickness: float, incidence: Incidence) -> LayerWave:
     """Return `wave` in a layer of `thickness` in m."""
     per_hertz = 2 * np.pi * thickness / SPEED_OF_LIGHT
     decay_rate = -wave.q.imag * per_hertz
     half_turns: FloatArray = wave.q.real * (per_hertz / np.pi)
     rest = None
-    if not dispersive and incidence.index2.size == 1:
-        turns = _long_q(wave, incidence) * np.longdouble(2 * thickness) / np.longdouble(SPEED_OF_LIGHT)
+    if wave.long_q is not None and incidence.index2.size == 1:
+        turns = wave.long_q * np.longdouble(2 * thickness) / np.longdouble(SPEED_OF_LIGHT)
         half_turns = turns.astype(np.float64)
         rest = (turns - half_turns).astype(np.float64)
     return LayerWave(wave, thickness, half_turns, rest, decay_rate if decay_rate.any() else None, 1j / wave.q)
-
-
-def _long_q(wave: Wave, incidence: Incidence) -> NDArray[np.longdouble]:
-    """Return Re q as a long double, (A, 1), on the branch of `wave`."""
-    epsilon, mu = wave.permittivity.astype(np.clongdouble), wave.permeability.astype(np.clongdouble)
-    front = incidence.permittivity.astype(np.longdouble) * incidence.permeability.astype(np.longdouble)
-    q = np.sqrt((epsilon * mu - front) + front * np.cos(incidence.angle.astype(np.longdouble)) ** 2)
-    real: NDArray[np.longdouble] = np.copysign(q.real, wave.q.real)
-    return real
 
 
 def _product_error(a: FloatArray, b: FloatArray, product: FloatArray) -> FloatArray:

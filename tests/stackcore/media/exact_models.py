@@ -203,7 +203,7 @@ PERMEABILITY: dict[type, Callable[[Any, Number], Terms]] = {
 
 
 def exact_terms(medium: AbstractMedium, quantity: str, frequency: float) -> Terms:
-    """Return the terms of ``permittivity`` or ``permeability`` of `medium` at `frequency` in Hz; 1 unless stated."""
+    """Return the terms of ``permittivity`` or ``permeability`` of `medium` at `frequency` in Hz."""
     if isinstance(medium, MagneticMedium):
         part = medium.permittivity_from if quantity == "permittivity" else medium.permeability_from
         return exact_terms(part, quantity, frequency)
