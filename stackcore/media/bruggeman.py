@@ -92,7 +92,7 @@ def _by_eigenvalues(parts: Sequence[ComplexArray], fractions: Sequence[float]) -
     vector = np.sqrt(np.asarray(fractions) * values)
     matrix = 3 * vector[..., :, None] * vector[..., None, :]
     matrix[..., range(len(parts)), range(len(parts))] -= values
-    roots: ComplexArray = np.linalg.eigvals(matrix) / 2
+    roots = np.asarray(np.linalg.eigvals(matrix) / 2, dtype=np.complex128)
     inmost = np.argmax(roots.real / np.abs(roots), axis=-1)
     root: ComplexArray = np.take_along_axis(roots, inmost[..., None], axis=-1)[..., 0]
     for _ in range(3):

@@ -212,7 +212,7 @@ def _positive(permittivities: Sequence[FloatArray]) -> list[FloatArray]:
 
 
 def _passive_log(value: ComplexArray) -> ComplexArray:
-    """Return ln ε with the argument between −π and 0, as passive media have it, whatever the sign of a zero loss."""
+    """Return ln ε with the argument between −π and 0, as passive media have it, also for a loss of −0."""
     out = np.empty(np.shape(value), dtype=np.complex128)
     out.real = np.log(np.abs(value))
     out.imag = -np.arctan2(np.abs(value.imag), value.real)

@@ -54,9 +54,9 @@ class MixtureMedium(AbstractMedium):
     Notes
     -----
     Every rule assumes grains, bubbles or layers much thinner than the wavelength inside them, and no current
-    between grains but what the rule says. `series` and `parallel` are layers crossed by the field and along it; a wave at
-    normal incidence on thin layers has both of its fields along them. A mixture of components that are known in
-    ranges without a common frequency has a valid range that holds no frequency: its lowest is above its highest.
+    between grains but what the rule says. `series` and `parallel` are layers crossed by the field and along it; a
+    wave at normal incidence on thin layers has both of its fields along them. A mixture of components that are known
+    in ranges without a common frequency has a valid range that holds none: its lowest is above its highest.
 
     Examples
     --------
@@ -154,11 +154,8 @@ def common_range(media: tuple[AbstractMedium, ...]) -> FrequencyRange | None:
 def _faults(inclusions: tuple[Inclusion, ...], rule: str) -> Iterator[Fault]:
     if rule not in RULES:
         yield Fault("rule", f"unknown mixing rule {rule!r}{nearest(rule, RULES)}", ", ".join(RULES))
-    if not isinstance(inclusions, tuple) or not inclusions:
-        yield Fault(
-            "inclusions", "a mixture without inclusions", "a tuple of one inclusion or more beside the host"
-        )
-        return
+    if not inclusions:
+        yield Fault("inclusions", "a mixture without inclusions", "one inclusion or more beside the host")
     for place, inclusion in enumerate(inclusions):
         if not 0 <= inclusion.fraction <= 1:
             told = f"{inclusion.fraction:g} is no share of the volume"

@@ -27,8 +27,8 @@ from stackcore.media.base import AbstractMedium
 _SMALLEST_Q = 1e-30
 """Stands for q = 0 (a layer exactly at its critical angle): every formula below is even and smooth in q there."""
 
-_MANY_HALF_TURNS = 64.0
-"""Above this a product in doubles would lose digits of the phase worth keeping."""
+_FEW_HALF_TURNS = 0.75
+"""Up to this the sines of a phase taken as it is keep their digits."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -245,21 +245,40 @@ class LayerWave:
     def _sines(self, frequency: FloatArray) -> tuple[FloatArray, FloatArray]:
         """Return sin α and cos α, through tan(α/2), which array libraries find several times faster."""
         half_turns = self.half_turns * frequency
-        if self.half_turns_rest is not None and (
-            float(np.abs(self.half_turns).max()) * float(frequency.max()) > _MANY_HALF_TURNS
-        ):
-            rest = _product_error(self.half_turns, frequency, half_turns) + self.half_turns_rest * frequency
-            half_turns -= 2 * np.rint(0.5 * half_turns)
+        if float(np.abs(self.half_turns).max()) * float(frequency.max()) <= _FEW_HALF_TURNS:
+            half_turns *= 0.5 * np.pi
+            return _sines_of_double(np.tan(half_turns, out=half_turns), None)
+        # Whole half turns are taken off, so that sin α keeps its digits where it is small (a half-wave wall).
+        whole = np.rint(half_turns)
+        rest = None
+        if self.half_turns_rest is not None:
+            rest = _product_error(self.half_turns, frequency, half_turns)
+            rest += self.half_turns_rest * frequency
+        half_turns -= whole
+        if rest is not None:
             half_turns += rest
         half_turns *= 0.5 * np.pi
-        tangent = np.tan(half_turns, out=half_turns)
-        square = tangent * tangent
-        cosine = 1.0 - square
-        square += 1.0
-        cosine /= square
-        tangent *= 2.0
-        tangent /= square
-        return tangent, cosine
+        # 1 after an even number of half turns, -1 after an odd one.
+        odd = np.rint(whole * 0.5)
+        odd *= -2.0
+        odd += whole
+        np.abs(odd, out=odd)
+        odd *= -2.0
+        odd += 1.0
+        return _sines_of_double(np.tan(half_turns, out=half_turns), odd)
+
+
+def _sines_of_double(tangent: FloatArray, sign: FloatArray | None) -> tuple[FloatArray, FloatArray]:
+    """Return sin 2x and cos 2x from tan x, which is overwritten, both times `sign`."""
+    square = tangent * tangent
+    cosine = 1.0 - square
+    square += 1.0
+    if sign is not None:
+        square *= sign
+    cosine /= square
+    tangent *= 2.0
+    tangent /= square
+    return tangent, cosine
 
 
 def layer_wave(wave: Wave, thickness: float, incidence: Incidence) -> LayerWave:

@@ -72,7 +72,8 @@ def test_random_stack_is_a_cascade_of_lines(case: Case) -> None:
     """Random stacks in air equal their cascade; shunts of an ohm about a resonance leave it five digits."""
     response = case.solve()
     scattering = cascade(case.stack, np.array([case.frequency]))
-    np.testing.assert_allclose(response.reflection[0, 0], scattering[0, 0, 0], atol=1e-8)
+    # At two exact half-wave layers the cascade itself is off by 1.7e-8, where 50 digits say 0.
+    np.testing.assert_allclose(response.reflection[0, 0], scattering[0, 0, 0], atol=1e-7)
     np.testing.assert_allclose(response.transmission[0, 0], scattering[0, 1, 0], rtol=1e-4, atol=1e-9)
 
 

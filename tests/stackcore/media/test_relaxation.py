@@ -76,6 +76,16 @@ def test_wings_of_the_broadened_loss() -> None:
         assert np.log10(loss[1] / loss[0]) == pytest.approx(power, rel=1e-5)
 
 
+def test_slope_with_the_second_exponent_far_below_the_peak() -> None:
+    """∂ε/∂b = −Δε h ln w keeps its digits where w is hardly more than 1: there ln w is (jωτ)^a."""
+    x, a = 1e-11, 0.9
+    medium = HavriliakNegamiMedium(2.0, 8.0, TAU, a, 0.6)
+    slope = medium.constant_slopes(np.array(x / (2 * np.pi * TAU)))["asymmetric_exponent"].permittivity
+    expected = -8.0 * x**a * np.exp(0.5j * np.pi * a)
+    assert float(slope.real) == pytest.approx(expected.real, rel=1e-8)
+    assert float(slope.imag) == pytest.approx(expected.imag, rel=1e-8)
+
+
 def test_terms_add() -> None:
     """Two relaxations and a conductivity add up."""
     both = MultiDebyeMedium(2.0, (RelaxationTerm(8.0, TAU), RelaxationTerm(1.5, 1e-12)), 0.3)
