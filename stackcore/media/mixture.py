@@ -55,8 +55,8 @@ class MixtureMedium(AbstractMedium):
     -----
     Every rule assumes grains, bubbles or layers much thinner than the wavelength inside them, and no current
     between grains but what the rule says. `series` and `parallel` are layers crossed by the field and along it; a
-    wave at normal incidence on thin layers has both of its fields along them. A mixture of components that are known
-    in ranges without a common frequency has a valid range that holds none: its lowest is above its highest.
+    wave at normal incidence on thin layers has both of its fields along them. A mixture of components whose ranges
+    have no frequency in common has a valid range that holds none: its lowest is above its highest.
 
     Examples
     --------

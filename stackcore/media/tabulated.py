@@ -81,7 +81,7 @@ class TabulatedMedium(AbstractMedium):
     def __post_init__(self) -> None:
         for name in ("permittivity_scale", "loss_scale", "permeability_scale", "magnetic_loss_scale"):
             check_positive(name, getattr(self, name))
-        faults = [*_row_faults(self.frequency, self.permittivity, self.permeability)]
+        faults = [*table_faults(self.frequency, self.permittivity, self.permeability)]
         if not faults and self.valid_range is not None:
             faults += _range_faults(self.valid_range, self.frequency)
         if faults:
@@ -177,40 +177,53 @@ def _curves(x: FloatArray, values: tuple[complex, ...]) -> tuple[MonotoneCurve, 
     return monotone_curve(x, column.real), monotone_curve(x, 0.0 - column.imag)
 
 
-def _row_faults(
-    frequency: tuple[float, ...], permittivity: tuple[complex, ...], permeability: tuple[complex, ...] | None
+def table_faults(
+    frequency: Sequence[float],
+    permittivity: Sequence[complex],
+    permeability: Sequence[complex] | None = None,
+    names: Sequence[str] = (),
 ) -> Iterator[Fault]:
+    """Yield a fault for everything that keeps columns from being a table, each with its row.
+
+    `names` are what rows are called instead of their numbers, such as ``line 14`` of a file.
+    """
     rows = len(frequency)
     if rows < 2:
         yield Fault("frequency", f"a table of {rows} rows", "two rows or more; one value is a constant medium")
     for name, column in (("permittivity", permittivity), ("permeability", permeability)):
         if column is not None and len(column) != rows:
             yield Fault(name, f"{len(column)} values for {rows} frequencies", "one value for each frequency")
-    yield from _frequency_faults(frequency)
-    yield from _value_faults("permittivity", permittivity)
-    yield from _value_faults("permeability", permeability or ())
+    yield from _frequency_faults(frequency, names)
+    yield from _value_faults("permittivity", permittivity, names)
+    yield from _value_faults("permeability", permeability or (), names)
 
 
-def _frequency_faults(frequency: tuple[float, ...]) -> Iterator[Fault]:
+def _place(column: str, row: int, names: Sequence[str]) -> str:
+    return names[row] if names else f"{column}[{row}]"
+
+
+def _frequency_faults(frequency: Sequence[float], names: Sequence[str]) -> Iterator[Fault]:
     for row, given in enumerate(frequency):
+        place = _place("frequency", row, names)
         if not math.isfinite(given):
-            yield Fault(f"frequency[{row}]", f"{given} is not a finite number", "a frequency in Hz above 0")
+            yield Fault(place, f"{given} is not a finite number", "a frequency in Hz above 0")
         elif not SMALLEST <= given <= LARGEST:
-            yield Fault(f"frequency[{row}]", f"{given:g} Hz is no frequency of a wave", "a frequency in Hz above 0")
+            yield Fault(place, f"{given:g} Hz is no frequency of a wave", "a frequency in Hz above 0")
     for row, (before, given) in enumerate(pairwise(frequency), 1):
         if not (math.isfinite(before) and math.isfinite(given)):
             continue
+        place = _place("frequency", row, names)
         if abs(given - before) <= SAME_FREQUENCY * abs(before):
-            told = f"{_hertz(given)} stands in row {row - 1} already"
-            yield Fault(f"frequency[{row}]", told, "each frequency once; average what was measured twice")
+            told = f"{_hertz(given)} stands in {names[row - 1] if names else f'row {row - 1}'} already"
+            yield Fault(place, told, "each frequency once; average what was measured twice")
         elif given < before:
             told = f"{_hertz(given)} follows {_hertz(before)}"
-            yield Fault(f"frequency[{row}]", told, "frequencies that rise from row to row")
+            yield Fault(place, told, "frequencies that rise from row to row")
 
 
-def _value_faults(name: str, column: Sequence[complex]) -> Iterator[Fault]:
+def _value_faults(name: str, column: Sequence[complex], names: Sequence[str]) -> Iterator[Fault]:
     for row, value in enumerate(column):
-        given, place = complex(value), f"{name}[{row}]"
+        given, place = complex(value), _place(name, row, names)
         if not (math.isfinite(given.real) and math.isfinite(given.imag)):
             yield Fault(place, f"{given} is not finite", "a finite number; leave out rows without a value")
         elif given.imag > 0:
@@ -230,4 +243,4 @@ def _range_faults(given: FrequencyRange, frequency: tuple[float, ...]) -> Iterat
 
 
 def _hertz(frequency: float) -> str:
-    return format_value(frequency, Dimension.FREQUENCY)
+    return format_value(frequency, Dimension.FREQUENCY, digits=9)
