@@ -2,7 +2,7 @@
 
 from collections.abc import Callable
 from dataclasses import dataclass, replace
-from typing import TypedDict, Unpack
+from typing import Final, Literal, TypedDict, Unpack, get_args
 
 import numpy as np
 
@@ -10,6 +10,11 @@ from app.document.listeners import Listeners, Report
 from stackcore.conventions import POLARIZATIONS
 from stackcore.job.records import SweepRecord
 from stackcore.quantities import QUANTITIES
+
+Power = Literal["fraction", "percent", "decibels"]
+"""How a fraction of the incident power is shown: as it is, times 100, or as 10 log10 of it."""
+
+POWERS: Final[tuple[Power, ...]] = get_args(Power)
 
 
 @dataclass(frozen=True, slots=True)
@@ -20,8 +25,8 @@ class ViewState:
     ----------
     quantity
         What the curves show: a key of `stackcore.quantities.QUANTITIES`, which is a CSV column name.
-    decibels
-        Show fractions of power as 10 log10; quantities that are no such fraction ignore it.
+    power
+        How fractions of power are shown; quantities that are no such fraction ignore it.
     log_frequency
         Draw the frequency axis logarithmically.
     polarizations
@@ -40,12 +45,12 @@ class ViewState:
     Raises
     ------
     ValueError
-        For a quantity or a polarization that does not exist, no polarization at all, or a marker that is not
-        a positive frequency.
+        For a quantity, a way to show power or a polarization that does not exist, no polarization at all, or a
+        marker that is not a positive frequency.
     """
 
     quantity: str = "transmittance"
-    decibels: bool = False
+    power: Power = "fraction"
     log_frequency: bool = False
     polarizations: tuple[str, ...] = POLARIZATIONS
     markers: tuple[float, ...] = ()
@@ -57,6 +62,8 @@ class ViewState:
     def __post_init__(self) -> None:
         if self.quantity not in QUANTITIES:
             raise ValueError(f"no quantity {self.quantity!r}; one of {', '.join(QUANTITIES)}")
+        if self.power not in POWERS:
+            raise ValueError(f"no way {self.power!r} to show power; one of {', '.join(POWERS)}")
         if not self.polarizations or not {*self.polarizations, self.active_polarization} <= {*POLARIZATIONS}:
             raise ValueError(f"polarizations {self.polarizations}; one or both of {POLARIZATIONS}")
         if not all(np.isfinite(marker) and marker > 0 for marker in self.markers):
@@ -103,7 +110,7 @@ class ViewChanges(TypedDict, total=False):
     """The fields of `ViewState` that `View.set` takes by name."""
 
     quantity: str
-    decibels: bool
+    power: Power
     log_frequency: bool
     polarizations: tuple[str, ...]
     markers: tuple[float, ...]

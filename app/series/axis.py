@@ -5,6 +5,7 @@ from typing import Final
 
 import numpy as np
 
+from app.document.view import Power
 from app.series.shown import SHOWN, shown_unit
 from stackcore.media.base import FloatArray
 from stackcore.quantities import QUANTITIES
@@ -55,7 +56,7 @@ def frequency_axis(frequency: FloatArray, *, log: bool = False) -> Axis:
     return Axis(f"Frequency, {unit}", unit, _HERTZ[unit])
 
 
-def quantity_axis(quantity: str, frequency: FloatArray, *, decibels: bool = False) -> Axis:
+def quantity_axis(quantity: str, frequency: FloatArray, *, power: Power = "fraction") -> Axis:
     """Return the axis for a quantity over frequencies in Hz; the numbers of `curves_of` are already in its unit.
 
     Examples
@@ -63,11 +64,11 @@ def quantity_axis(quantity: str, frequency: FloatArray, *, decibels: bool = Fals
     >>> quantity_axis("insertion_loss_dB", np.array([1e10])).title
     'Insertion loss, dB'
     """
-    unit, factor = shown_unit(quantity, decibels=decibels, frequency=frequency)
+    unit, factor = shown_unit(quantity, power=power, frequency=frequency)
     label = QUANTITIES[quantity].label
     return Axis(f"{label}, {unit}" if unit else label, unit, factor)
 
 
-def can_show_decibels(quantity: str) -> bool:
-    """Return whether `quantity` is a fraction of power, which the decibel option changes."""
+def is_power(quantity: str) -> bool:
+    """Return whether `quantity` is a fraction of power, which can also be shown in per cent and in decibels."""
     return SHOWN[quantity].fraction

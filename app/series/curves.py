@@ -72,16 +72,14 @@ def curves_of(
 ) -> tuple[Curve, ...]:
     """Return the curves that `view_state` asks for, angle by angle, TE before TM.
 
-    Reflectance, transmittance and absorptance become 10 log10 of themselves when decibels are asked for;
+    Reflectance, transmittance and absorptance come as the view shows fractions of power;
     group delay comes in the unit of `app.series.shown` for the frequencies `unit_from`, by default the
     response's own.
     """
     quantity = view_state.quantity
     frequency = response.frequency if unit_from is None else unit_from
-    unit, factor = shown_unit(quantity, decibels=view_state.decibels, frequency=frequency)
-    values = shown_values(
-        quantity, QUANTITIES[quantity].values(response), decibels=view_state.decibels, factor=factor
-    )
+    unit, factor = shown_unit(quantity, power=view_state.power, frequency=frequency)
+    values = shown_values(quantity, QUANTITIES[quantity].values(response), power=view_state.power, factor=factor)
     ranks = np.argsort(np.argsort(response.angle, kind="stable"), kind="stable")
     return tuple(
         _curve(quantity, polarization, response, values, unit, rank=int(ranks[index]), index=index)

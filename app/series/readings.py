@@ -115,11 +115,10 @@ def _worst(curve: Curve, view_state: ViewState) -> Reading | None:
 
 
 def _reading(curve: Curve, point: Point, view_state: ViewState) -> Reading:
-    decibels = view_state.decibels
     return Reading(
-        number_text(curve.quantity, point.y, decibels=decibels),
+        number_text(curve.quantity, point.y, curve.unit),
         curve.unit,
-        value_text(curve.quantity, point.y, curve.unit, decibels=decibels),
+        value_text(curve.quantity, point.y, curve.unit),
         exact_text(point.y, curve.unit),
         point.y,
         point.x,

@@ -1,10 +1,11 @@
-"""How each quantity is shown: which end is the worst one, its unit on screen, and what decibels mean for it."""
+"""How each quantity is shown: which end is the worst one, its unit on screen, and what a fraction becomes."""
 
 from dataclasses import dataclass
 from typing import Final, Literal
 
 import numpy as np
 
+from app.document.view import Power
 from stackcore.media.base import FloatArray
 from stackcore.quantities import QUANTITIES
 
@@ -18,7 +19,7 @@ class Shown:
     worst
         Which end of a curve is the worst point, or None when neither is.
     fraction
-        Whether it is a fraction of the incident power, which decibels can show.
+        Whether it is a fraction of the incident power, which per cent and decibels can show.
     practical
         Whether a large value stands for more than a real wall keeps (see `app.series.texts`).
     decimals
@@ -45,10 +46,15 @@ SHOWN: Final[dict[str, Shown]] = {
 }
 """Name of the quantity (a CSV column) -> how it is shown."""
 
+_POWER_UNITS: Final[dict[Power, tuple[str, float]]] = {
+    "fraction": ("", 1.0),
+    "percent": ("%", 100.0),
+    "decibels": ("dB", 1.0),
+}
 _DELAY_UNITS: Final = ((1e12, "fs", 1e15), (1e9, "ps", 1e12), (1e6, "ns", 1e9), (0.0, "µs", 1e6))
 
 
-def shown_unit(quantity: str, *, decibels: bool, frequency: FloatArray) -> tuple[str, float]:
+def shown_unit(quantity: str, *, power: Power, frequency: FloatArray) -> tuple[str, float]:
     """Return the unit on screen and the factor from SI to it.
 
     The unit of a delay follows the frequencies of the sweep and not the delays, so that it stays while a face
@@ -56,20 +62,20 @@ def shown_unit(quantity: str, *, decibels: bool, frequency: FloatArray) -> tuple
 
     Examples
     --------
-    >>> shown_unit("group_delay_s", decibels=False, frequency=np.array([8e9, 12e9]))
+    >>> shown_unit("group_delay_s", power="fraction", frequency=np.array([8e9, 12e9]))
     ('ps', 1000000000000.0)
     """
     if SHOWN[quantity].fraction:
-        return ("dB" if decibels else ""), 1.0
+        return _POWER_UNITS[power]
     if QUANTITIES[quantity].unit == "s":
         top = float(np.max(frequency))
         return next((unit, factor) for least, unit, factor in _DELAY_UNITS if top >= least)
     return QUANTITIES[quantity].unit, 1.0
 
 
-def shown_values(quantity: str, values: FloatArray, *, decibels: bool, factor: float) -> FloatArray:
+def shown_values(quantity: str, values: FloatArray, *, power: Power, factor: float) -> FloatArray:
     """Return `values` in the unit on screen; a fraction of 0 in decibels is minus infinity."""
-    if decibels and SHOWN[quantity].fraction:
+    if power == "decibels" and SHOWN[quantity].fraction:
         with np.errstate(divide="ignore"):
             # A fraction is below 0 only by rounding.
             return np.asarray(10 * np.log10(np.maximum(values, 0.0)))

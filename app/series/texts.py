@@ -27,7 +27,7 @@ _SMALLEST_PLAIN: Final = 1e-3
 _LARGEST_PLAIN: Final = 1e5
 
 
-def number_text(quantity: str, value: float, *, decibels: bool = False) -> str:
+def number_text(quantity: str, value: float, unit: str = "") -> str:
     """Return `value`, in the unit on screen, without its unit.
 
     Parameters
@@ -36,8 +36,8 @@ def number_text(quantity: str, value: float, *, decibels: bool = False) -> str:
         CSV column name.
     value
         As `app.series.curves` has it. Infinity reads ``∞``, what is not a number ``–``.
-    decibels
-        Whether a fraction of power is given in decibels.
+    unit
+        The unit on screen; it tells how a fraction of power is shown, and other quantities ignore it.
 
     Examples
     --------
@@ -51,12 +51,12 @@ def number_text(quantity: str, value: float, *, decibels: bool = False) -> str:
     if math.isinf(value):
         return "∞" if value > 0 else f"{MINUS}∞"
     shown = SHOWN[quantity]
-    decimals = 3 if decibels and shown.fraction else shown.decimals
+    decimals = 3 if unit == "dB" else shown.decimals
     text = _significant(value, DIGITS) if decimals is None else _fixed(value, decimals)
     return text.replace("-", MINUS)
 
 
-def value_text(quantity: str, value: float, unit: str, *, decibels: bool = False) -> str:
+def value_text(quantity: str, value: float, unit: str) -> str:
     """Return `value` with its unit, and beyond `PRACTICAL_DECIBELS` what that means.
 
     Examples
@@ -66,7 +66,7 @@ def value_text(quantity: str, value: float, unit: str, *, decibels: bool = False
     >>> value_text("insertion_phase_delay_deg", -12.5, "deg")
     '−12.50°'
     """
-    number = number_text(quantity, value, decibels=decibels)
+    number = number_text(quantity, value, unit)
     return number + unit_suffix(unit) + (f", {BEYOND_PRACTICAL}" if beyond_practical(quantity, value) else "")
 
 

@@ -15,7 +15,7 @@ import numpy as np
 from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.media.parts import complex_of
 
-_MOST_STEPS: Final = 12
+_MOST_STEPS: Final = 15
 _CLOSE: Final = 1e-13
 _LEAST_LOSS: Final = 1e-9
 """rad, given to lossless components of opposite sign where there are three or more; see `_normalized`."""
@@ -51,11 +51,13 @@ def _of_two(first: ComplexArray, second: ComplexArray, first_share: float, secon
         upward = (np.abs(b) > np.abs(a) * size * size) == (first.real < 0)
         edge = complex_of(0.0, np.where(upward, 1.0, -1.0) * np.sqrt(np.abs(square.real)))
         root = np.where(open_sign, edge, root)
-    # Of the two ways to write the root, the one that adds numbers of one sign.
+    return first_root * second_root * _inner_root(middle, root)
+
+
+def _inner_root(middle: ComplexArray, root: ComplexArray) -> ComplexArray:
+    """Return (m + r)/4, r² = m² + 8, of its two forms the one that adds numbers of one sign."""
     turned = (middle * np.conj(root)).real < 0
-    scaled = np.where(turned, 2 / np.where(turned, root - middle, 1.0), (middle + root) / 4)
-    product: ComplexArray = first_root * second_root * scaled
-    return product
+    return np.where(turned, 2 / np.where(turned, root - middle, 1.0), (middle + root) / 4)
 
 
 def _of_many(components: Sequence[ComplexArray], fractions: Sequence[float]) -> ComplexArray:
@@ -65,7 +67,7 @@ def _of_many(components: Sequence[ComplexArray], fractions: Sequence[float]) -> 
     cone into itself and so comes nearer; the few points that this leaves open are solved as an eigenvalue problem.
     """
     parts, unit = _normalized(components)
-    root = sum((share * part for share, part in zip(fractions, parts, strict=True)), np.zeros_like(parts[0]))
+    root = _two_by_two(parts, fractions)
     excess, slope = _excess(root, parts, fractions)
     for _ in range(_MOST_STEPS):
         open_yet = np.abs(excess) > _CLOSE
@@ -80,10 +82,26 @@ def _of_many(components: Sequence[ComplexArray], fractions: Sequence[float]) -> 
             ahead_excess, ahead_slope = _excess(ahead, parts, fractions)
         root, excess, slope = ahead, ahead_excess, ahead_slope
     open_yet = np.abs(excess) > _CLOSE
+    root = root - excess / slope  # the last step is free, and leaves nothing but rounding
     if open_yet.any():
         root[open_yet] = _by_eigenvalues([part[open_yet] for part in parts], fractions)
     product: ComplexArray = root * unit
     return product
+
+
+def _two_by_two(parts: Sequence[ComplexArray], fractions: Sequence[float]) -> ComplexArray:
+    """Return a root to start from, in the cone and mostly close: the components mixed one after the other."""
+    mixed, share = parts[0], fractions[0]
+    for part, more in zip(parts[1:], fractions[1:], strict=True):
+        if (whole := share + more) > 0:
+            first_root: ComplexArray = np.sqrt(mixed)
+            second_root: ComplexArray = np.sqrt(part)
+            ratio = first_root / second_root
+            middle: ComplexArray = (3 * share / whole - 1) * ratio + (3 * more / whole - 1) / ratio
+            root: ComplexArray = np.sqrt(middle * middle + 8)
+            mixed = first_root * second_root * _inner_root(middle, root)
+            share = whole
+    return mixed
 
 
 def _by_eigenvalues(parts: Sequence[ComplexArray], fractions: Sequence[float]) -> ComplexArray:

@@ -96,27 +96,33 @@ class MixtureMedium(AbstractMedium):
     def evaluate(self, frequency: FloatArray) -> Constitutive:
         frequency = np.asarray(frequency, dtype=np.float64)
         parts = [medium.evaluate(frequency) for medium in self.media]
-        electric, magnetic = self._mixed(parts)
-        return Constitutive(
-            _passive(electric.value),
-            _passive(magnetic.value),
-            _chain(electric.by_component, [part.permittivity_slope for part in parts]),
-            _chain(magnetic.by_component, [part.permeability_slope for part in parts]),
-        )
+        electric = RULES[self.rule]([part.permittivity for part in parts], self.fractions)
+        epsilon = _passive(electric.value)
+        epsilon_slope = _chain(electric.by_component, [part.permittivity_slope for part in parts])
+        if not _magnetic(parts):
+            one = np.ones_like(epsilon)
+            return Constitutive(epsilon, one, epsilon_slope, np.zeros_like(one))
+        magnetic = RULES[self.rule]([part.permeability for part in parts], self.fractions)
+        mu_slope = _chain(magnetic.by_component, [part.permeability_slope for part in parts])
+        return Constitutive(epsilon, _passive(magnetic.value), epsilon_slope, mu_slope)
 
     def constant_slopes(self, frequency: FloatArray) -> Mapping[str, ConstantSlope]:
         frequency = np.asarray(frequency, dtype=np.float64)
-        electric, magnetic = self._mixed([medium.evaluate(frequency) for medium in self.media])
+        parts = [medium.evaluate(frequency) for medium in self.media]
+        electric = RULES[self.rule]([part.permittivity for part in parts], self.fractions)
+        magnetic = _unmixed(frequency, self.fractions)
+        if _magnetic(parts):
+            magnetic = RULES[self.rule]([part.permeability for part in parts], self.fractions)
         slopes: dict[str, ConstantSlope] = {}
         for place, medium in enumerate(self.media):
             name = "host" if place == 0 else f"inclusions[{place - 1}].medium"
             if place:
                 by_fraction = electric.by_fraction[place - 1], magnetic.by_fraction[place - 1]
-                slopes[f"inclusions[{place - 1}].fraction"] = ConstantSlope(*by_fraction)
+                slopes[f"inclusions[{place - 1}].fraction"] = ConstantSlope(*map(np.asarray, by_fraction))
             for constant, slope in medium.constant_slopes(frequency).items():
                 slopes[f"{name}.{constant}"] = ConstantSlope(
-                    electric.by_component[place] * slope.permittivity,
-                    magnetic.by_component[place] * slope.permeability,
+                    np.asarray(electric.by_component[place] * slope.permittivity),
+                    np.asarray(magnetic.by_component[place] * slope.permeability),
                 )
         return slopes
 
@@ -125,15 +131,6 @@ class MixtureMedium(AbstractMedium):
         changed = list(self.inclusions)
         changed[inclusion] = replace(changed[inclusion], fraction=fraction)
         return replace(self, inclusions=tuple(changed))
-
-    def _mixed(self, parts: list[Constitutive]) -> tuple[Mixed, Mixed]:
-        """Return ε and μ of the mixture of components with these values."""
-        rule = RULES[self.rule]
-        electric = rule([part.permittivity for part in parts], self.fractions)
-        permeabilities = [part.permeability for part in parts]
-        if all(bool((mu == 1).all()) for mu in permeabilities):
-            return electric, _unmixed(permeabilities[0], self.fractions)
-        return electric, rule(permeabilities, self.fractions)
 
 
 def common_range(media: tuple[AbstractMedium, ...]) -> FrequencyRange | None:
@@ -165,10 +162,14 @@ def _faults(inclusions: tuple[Inclusion, ...], rule: str) -> Iterator[Fault]:
         yield Fault("inclusions", f"the fractions add up to {total:g}", "1 at most; the host takes what they leave")
 
 
-def _unmixed(one: ComplexArray, fractions: tuple[float, ...]) -> Mixed:
+def _magnetic(parts: list[Constitutive]) -> bool:
+    return not all(bool((part.permeability == 1).all()) for part in parts)
+
+
+def _unmixed(frequency: FloatArray, fractions: tuple[float, ...]) -> Mixed:
     """Return μ where no component is magnetic: 1, whatever the rule; the derivatives are those of a small μ − 1."""
-    by_component = tuple(everywhere(share, one.real) for share in fractions)
-    return Mixed(one, by_component, tuple(np.zeros_like(one) for _ in fractions[1:]))
+    one, zero = everywhere(1.0, frequency), everywhere(0.0, frequency)
+    return Mixed(one, tuple(share * one for share in fractions), (zero,) * len(fractions[1:]))
 
 
 def _chain(outer: tuple[ComplexArray, ...], inner: list[ComplexArray]) -> ComplexArray:

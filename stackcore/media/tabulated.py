@@ -156,7 +156,8 @@ class TabulatedMedium(AbstractMedium):
         (real, real_slope), (loss, loss_slope) = (curve.at(place.x, place.piece) for curve in curves)
         # Rounding may leave the smallest loss a last digit below 0.
         value = never_zero(complex_of(real_scale * real, -loss_scale * np.maximum(loss, 0.0)))
-        return value, complex_of(real_scale * real_slope, -loss_scale * loss_slope) * place.by_hertz
+        by_log = complex_of(real_scale * real_slope, -loss_scale * loss_slope)
+        return value, np.asarray(by_log * place.by_hertz)
 
 
 @dataclass(frozen=True, slots=True)

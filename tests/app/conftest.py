@@ -45,6 +45,18 @@ def _refusal(name: str, seen: list[str]) -> Callable[..., NoReturn]:
     return refuse
 
 
+@pytest.fixture(scope="session", autouse=True)
+def _clipboard_emptied() -> Iterator[None]:
+    """Empty the clipboard when the run ends.
+
+    WORKAROUND: the offscreen platform keeps it in a static of Qt's own, which outlives Python; data made in Python
+    then brings the process down after the last test has passed.
+    """
+    yield
+    if isinstance(QApplication.instance(), QApplication):
+        QApplication.clipboard().clear()
+
+
 @pytest.fixture
 def dialogs_may_open() -> list[str]:
     """Let a test show the real, non-blocking dialogs of the program."""

@@ -16,7 +16,7 @@ from app.panels.curves.legend import LegendFacts
 from app.panels.curves.mark_layers import DrawnMarker, Spot
 from app.panels.curves.plot import Extent
 from app.panels.curves.scale import FrequencyScale
-from app.series.axis import can_show_decibels
+from app.series.axis import is_power
 from app.series.curves import Curve
 from app.series.texts import angle_text, frequency_text
 from stackcore.quantities import QUANTITIES
@@ -82,7 +82,7 @@ def end_labels(curves: Sequence[Curve], drawn: Sequence[DrawnCurve]) -> tuple[En
     return tuple(labels)
 
 
-def extent_of(curves: Sequence[Curve], scale: FrequencyScale, *, decibels: bool) -> Extent:
+def extent_of(curves: Sequence[Curve], scale: FrequencyScale) -> Extent:
     """Return the whole of what there is to show."""
     ends = [scale.position(float(end)) for curve in curves[:1] for end in (curve.x.min(), curve.x.max())]
     known = [curve.y[np.isfinite(curve.y)] for curve in curves]
@@ -94,8 +94,8 @@ def extent_of(curves: Sequence[Curve], scale: FrequencyScale, *, decibels: bool)
     quantity, unit = curves[0].quantity, curves[0].unit
     turn = _TURNS.get(quantity)
     floor, top = (-turn, turn) if turn is not None else (None, None)
-    if can_show_decibels(quantity) and not decibels:
-        top = 1.0
+    if is_power(quantity) and unit != "dB":
+        top = 100.0 if unit == "%" else 1.0
     return Extent(left, right, low, high, floor, top, unit == "deg", _GRAINS.get(unit, 1e-30))
 
 

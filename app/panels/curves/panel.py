@@ -168,7 +168,7 @@ class CurvesPanel(QWidget):
         state = self._view.state
         curve = self._curves[drawing.chosen_index(self._curves, state) or 0]
         point = int(np.argmin(np.abs(curve.x - hertz)))
-        return words.value_words(curve, point, decibels=state.decibels)
+        return words.value_words(curve, point)
 
     def type_range(self, axis: str) -> None:
         """Open the line in which the ranges are typed, at the axis ``left`` or ``bottom``."""
@@ -203,7 +203,7 @@ class CurvesPanel(QWidget):
     def _view_changed(self, change: ViewChange) -> None:
         if self._answer is not None and takes_long(self._answer.response, change.after.quantity):
             return  # it is being worked out elsewhere and comes as an answer
-        drawn = ("quantity", "decibels", "log_frequency", "polarizations", "active_angle", "active_polarization")
+        drawn = ("quantity", "power", "log_frequency", "polarizations", "active_angle", "active_polarization")
         if any(getattr(change.before, name) != getattr(change.after, name) for name in drawn):
             self._draw()
         else:
@@ -215,14 +215,14 @@ class CurvesPanel(QWidget):
         curves = self._curves
         self._colours = drawing.colours_of(curves, self._theme, stale=self._stale)
         across = frequency_axis(self.sweep, log=state.log_frequency)
-        upward = quantity_axis(state.quantity, self.sweep, decibels=state.decibels)
+        upward = quantity_axis(state.quantity, self.sweep, power=state.power)
         self._units = (across.unit, upward.unit)
         self.scale = FrequencyScale(across.factor, state.log_frequency)
         wide = state.log_frequency and float(self.sweep.max()) > float(self.sweep.min()) * WIDE
         self.plot.bottom_axis.spell = self._spell if wide else None
         self.plot.bottom_axis.set_title("Frequency" if wide else across.title)
         self.plot.left_axis.set_title(upward.title)
-        shown_as = (state.quantity, state.decibels, across.unit, state.log_frequency)
+        shown_as = (state.quantity, state.power, across.unit, state.log_frequency)
         # Where other numbers stand at an axis, a range of the old ones would show nothing: follow the new.
         self.plot.follows[0] |= shown_as[2:] != self._shown_as[2:]
         self.plot.follows[1] |= shown_as[:2] != self._shown_as[:2]
@@ -231,7 +231,7 @@ class CurvesPanel(QWidget):
         self.plot.show_curves(
             drawn,
             drawing.end_labels(curves, drawn),
-            drawing.extent_of(curves, self.scale, decibels=state.decibels),
+            drawing.extent_of(curves, self.scale),
             logarithmic=state.log_frequency,
         )
         self._draw_marks()
@@ -253,12 +253,12 @@ class CurvesPanel(QWidget):
     def _speak(self) -> None:
         state, curves = self._view.state, self._curves
         label = drawing.quantity_label(state)
-        self.header.set_worst(words.worst_sentence(curves, decibels=state.decibels))
+        self.header.set_worst(words.worst_sentence(curves))
         self.header.set_hidden(words.hidden_sentence(curves))
         self._show_legend()
         empty = words.empty_sentence(state.quantity, curves)
         self.plot.note_layer.set_text(empty)
-        said = words.description(curves, decibels=state.decibels)
+        said = words.description(curves)
         self.plot.setAccessibleName(f"Curves of {label.lower()}")
         self.plot.setAccessibleDescription(f"{'Last good result. ' if self._stale else ''}{empty} {said}".strip())
 
@@ -287,10 +287,10 @@ class CurvesPanel(QWidget):
             self.pointed.emit("")
             return
         index, point, _ = found
-        curve, decibels = self._curves[index], self._view.state.decibels
+        curve = self._curves[index]
         spot = Spot(self.scale.position(float(curve.x[point])), float(curve.y[point]), self._colours[index])
         self.plot.pointer_layer.point(spot)
-        self.pointed.emit(words.point_sentence(curve, point, decibels=decibels))
+        self.pointed.emit(words.point_sentence(curve, point))
         self._hint_worst(at)
 
     def _hint_worst(self, at: QPointF) -> None:
@@ -299,7 +299,7 @@ class CurvesPanel(QWidget):
         for index, spot in self._worst_spots.items():
             gap = QPointF(frame.across(spot.position), frame.down(spot.value)) - at
             if self._view.state.worst_shown and gap.manhattanLength() <= _REACH:
-                text = words.curve_sentence(self._curves[index], decibels=self._view.state.decibels)
+                text = words.curve_sentence(self._curves[index])
                 place = (at + self.plot.area_rect().topLeft()).toPoint()
                 QToolTip.showText(self.plot.mapToGlobal(place), text, self.plot)
                 return
@@ -316,7 +316,7 @@ class CurvesPanel(QWidget):
         shown = len(self._view.state.polarizations)
         curve = self._curves[index]
         self._view.set(self, active_angle=index // shown, active_polarization=curve.polarization)
-        self.pointed.emit(words.curve_sentence(curve, decibels=self._view.state.decibels))
+        self.pointed.emit(words.curve_sentence(curve))
 
     # Menu, keys and ranges
 

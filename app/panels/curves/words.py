@@ -40,7 +40,7 @@ def worst_curve(curves: Sequence[Curve]) -> int | None:
     return best
 
 
-def worst_sentence(curves: Sequence[Curve], *, decibels: bool = False) -> str:
+def worst_sentence(curves: Sequence[Curve]) -> str:
     """Return one line on the worst value, or on both ends of a quantity that has no worse one.
 
     Examples
@@ -49,10 +49,10 @@ def worst_sentence(curves: Sequence[Curve], *, decibels: bool = False) -> str:
     """
     index = worst_curve(curves)
     if index is not None:
-        return f"Worst: {_worst_text(curves[index], decibels)}, {_whose(curves[index])}"
+        return f"Worst: {_worst_text(curves[index])}, {_whose(curves[index])}"
     ends = [_end(curves, low=True), _end(curves, low=False)]
     words = [
-        f"{name} {value_text(curve.quantity, float(curve.y[at]), curve.unit, decibels=decibels)} at "
+        f"{name} {value_text(curve.quantity, float(curve.y[at]), curve.unit)} at "
         f"{frequency_text(float(curve.x[at]))}, {_whose(curve)}"
         for name, end in zip(("Lowest", "highest"), ends, strict=True)
         if end is not None
@@ -61,22 +61,22 @@ def worst_sentence(curves: Sequence[Curve], *, decibels: bool = False) -> str:
     return "; ".join(words)
 
 
-def curve_sentence(curve: Curve, *, decibels: bool = False) -> str:
+def curve_sentence(curve: Curve) -> str:
     """Return the worst point of one curve in words, as its mark says it."""
     if curve.worst is None and curve.worst_infinite is None:
         return curve.label
-    return f"Worst of {curve.label}: {_worst_text(curve, decibels)}"
+    return f"Worst of {curve.label}: {_worst_text(curve)}"
 
 
-def value_words(curve: Curve, index: int, *, decibels: bool = False) -> tuple[str, str]:
+def value_words(curve: Curve, index: int) -> tuple[str, str]:
     """Return the name of a curve and one of its values with what it is a value of."""
-    value = value_text(curve.quantity, float(curve.raw[index]), curve.unit, decibels=decibels)
+    value = value_text(curve.quantity, float(curve.raw[index]), curve.unit)
     return curve.label, f"{QUANTITIES[curve.quantity].label} {value}"
 
 
-def point_sentence(curve: Curve, index: int, *, decibels: bool = False) -> str:
+def point_sentence(curve: Curve, index: int) -> str:
     """Return one point of a curve in words, as the status line says it."""
-    return "   ".join([frequency_text(float(curve.x[index])), *value_words(curve, index, decibels=decibels)])
+    return "   ".join([frequency_text(float(curve.x[index])), *value_words(curve, index)])
 
 
 def hidden_sentence(curves: Sequence[Curve]) -> str:
@@ -99,7 +99,7 @@ def empty_sentence(quantity: str, curves: Sequence[Curve]) -> str:
     return f"{label} has no value here: there is no wave whose {label.lower()} could be told."
 
 
-def description(curves: Sequence[Curve], *, decibels: bool = False) -> str:
+def description(curves: Sequence[Curve]) -> str:
     """Return the plot for those who hear it: band, worst values, and what is not shown."""
     if not curves:
         return "No curves yet."
@@ -108,21 +108,21 @@ def description(curves: Sequence[Curve], *, decibels: bool = False) -> str:
     count = "1 curve" if len(curves) == 1 else f"{len(curves)} curves"
     parts = [
         f"{QUANTITIES[first.quantity].label} from {frequency_text(low)} to {frequency_text(high)}, {count}.",
-        f"{worst_sentence(curves, decibels=decibels)}.",
+        f"{worst_sentence(curves)}.",
     ]
     if len(curves) <= MOST_READ:
-        parts += [f"{curve_sentence(curve, decibels=decibels)}." for curve in curves if curve.worst is not None]
+        parts += [f"{curve_sentence(curve)}." for curve in curves if curve.worst is not None]
     hidden = hidden_sentence(curves)
     return " ".join([*parts, f"{hidden}." if hidden else ""]).strip()
 
 
-def _worst_text(curve: Curve, decibels: bool) -> str:
+def _worst_text(curve: Curve) -> str:
     if curve.worst is not None:
         value, frequency = curve.worst.y, curve.worst.x
     else:
         frequency = curve.worst_infinite if curve.worst_infinite is not None else float(curve.x[0])
         value = float(curve.raw[int(np.argmin(np.abs(curve.x - frequency)))])
-    text = value_text(curve.quantity, value, curve.unit, decibels=decibels)
+    text = value_text(curve.quantity, value, curve.unit)
     return f"{text} at {frequency_text(frequency)}"
 
 

@@ -16,7 +16,7 @@ from app.look.theme import Theme
 from app.panels.sweep.field import QuietChoice, QuietField, QuietSwitch
 from app.panels.sweep.flow import FlowLayout
 from app.panels.sweep.phrases import angles_text
-from app.series.axis import can_show_decibels
+from app.series.axis import is_power
 from stackcore.conventions import CONVENTIONS, POLARIZATIONS
 from stackcore.errors import Severity
 from stackcore.job.records import FrequencyGrid, Spacing
@@ -117,10 +117,12 @@ class SweepPanel(QWidget):
             tip = quantity_tip(quantity)
             self.quantity.setItemData(self.quantity.count() - 1, tip, Qt.ItemDataRole.ToolTipRole)
         self.scale = QuietChoice(
-            self._theme, "Scale of the values", "A fraction of the incident power, or 10 log10 of it in decibels."
+            self._theme,
+            "Scale of the values",
+            "A fraction of the incident power, that in per cent, or 10 log10 of it in decibels.",
         )
-        self.scale.addItem("as a fraction", False)
-        self.scale.addItem("in dB", True)
+        for text, power in (("as a fraction", "fraction"), ("in %", "percent"), ("in dB", "decibels")):
+            self.scale.addItem(text, power)
         self.spacing = QuietChoice(
             self._theme, "Spacing of the frequencies", "Evenly spaced, evenly spaced in log, or a list of your own."
         )
@@ -140,7 +142,7 @@ class SweepPanel(QWidget):
 
     def _connect(self) -> None:
         self.quantity.activated.connect(lambda _: self._view.set(self, quantity=self.quantity.currentData()))
-        self.scale.activated.connect(lambda _: self._view.set(self, decibels=self.scale.currentData()))
+        self.scale.activated.connect(lambda _: self._view.set(self, power=self.scale.currentData()))
         self.axis.activated.connect(lambda _: self._view.set(self, log_frequency=self.axis.currentData()))
         self.spacing.activated.connect(lambda _: self._choose_spacing(self.spacing.currentData()))
         for switch in self.switches.values():
@@ -207,8 +209,8 @@ class SweepPanel(QWidget):
         self.quantity.setToolTip(tip)
         self.quantity.setStatusTip(tip)
         self.quantity.setAccessibleDescription(tip)
-        self.scale.show_choice(state.decibels)
-        self.scale.setVisible(can_show_decibels(state.quantity))
+        self.scale.show_choice(state.power)
+        self.scale.setVisible(is_power(state.quantity))
         self.axis.show_choice(state.log_frequency)
         for name, switch in self.switches.items():
             switch.setChecked(name in state.polarizations)

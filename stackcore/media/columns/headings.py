@@ -198,6 +198,9 @@ UNIT_CHOICES: Final[dict[str, tuple[str, ...]]] = {
 }
 """Kind -> the units a question offers; kinds that are not here are plain ratios."""
 
+_LONGEST: Final = 200
+"""Signs of a heading that are looked at."""
+
 _ONE: Final = frozenset({"", "-", "1", "none", "a.u.", "rel", "rel.", "relative", "–", "eps0", "ε0"})
 
 _WITH_UNIT: Final = (
@@ -227,6 +230,7 @@ def read_heading(text: str) -> Heading:
     >>> read_heading("tan d").kind, read_heading("f_GHz").unit
     ('loss_tangent', 'GHz')
     """
+    text = text[:_LONGEST]
     text = text.strip().strip('"').strip() if text.strip().count('"') == 2 else text.strip()
     whole = _KIND_OF.get(_key(text))
     if whole is not None:

@@ -4,7 +4,7 @@ import csv
 import re
 from collections import Counter
 from collections.abc import Iterator, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Final, Literal
 
 from stackcore.media.columns.headings import read_heading, unit_of_any
@@ -19,6 +19,9 @@ _SIGN_OF: Final[dict[Separator, str]] = {
     "spaces": " ",
     "comma pairs": ",",
 }
+
+_SAMPLE: Final = 2000
+"""Lines that are looked at to find the layout."""
 
 _COMMENT: Final = re.compile(r"\s*(#|%|!|//)\s?")
 
@@ -52,8 +55,8 @@ class Layout:
         What they could be as well, with another result; None when there is no doubt.
     width
         Number of columns.
-    first, last
-        Places among the lines, of the first and the last line of numbers.
+    first
+        Place among the lines of the first one of numbers.
     """
 
     separator: Separator
@@ -62,7 +65,6 @@ class Layout:
     other_decimal: Decimal | None
     width: int
     first: int
-    last: int
 
 
 def lines_of(text: str) -> tuple[Line, ...]:
@@ -91,7 +93,10 @@ def cut(line: str, separator: Separator) -> list[str]:
         rows = csv.reader([line], delimiter=_SIGN_OF[separator], skipinitialspace=True, quoting=csv.QUOTE_NONE)
     else:
         rows = csv.reader([line], delimiter=_SIGN_OF[separator], skipinitialspace=True)
-    cells = [cell.strip() for cell in next(rows, [])]
+    try:
+        cells = [cell.strip() for cell in next(rows, [])]
+    except csv.Error:  # a cell of more than a hundred thousand signs
+        return [line]
     if separator == "comma pairs":
         return [",".join(cells[place : place + 2]) for place in range(0, len(cells), 2)]
     return cells
@@ -104,6 +109,7 @@ def find_layout(
 
     `separator` and `decimal` are taken as given when they are.
     """
+    lines = lines[:_SAMPLE]
     best: tuple[int, int, Separator, Decimal] | None = None
     for candidate in ("tab", "semicolon", "comma", "spaces", "comma pairs"):
         if separator not in (None, candidate) or (separator is None and candidate == "comma pairs"):
@@ -128,7 +134,7 @@ def find_layout(
         other_separator = "comma pairs"
         if any(re.search(r",0\d", text) for text in data):
             chosen, other_separator, mark, width = "comma pairs", "comma", ",", width // 2
-    return Layout(chosen, mark, other_separator, other_decimal, width, numeric[0], numeric[-1])
+    return Layout(chosen, mark, other_separator, other_decimal, width, numeric[0])
 
 
 def find_headings(lines: Sequence[Line], layout: Layout) -> tuple[Line | None, tuple[str, ...]]:
@@ -149,6 +155,22 @@ def find_headings(lines: Sequence[Line], layout: Layout) -> tuple[Line | None, t
     return None, ()
 
 
+def settle_by_headings(lines: Sequence[Line], layout: Layout) -> tuple[Layout, Line | None, tuple[str, ...]]:
+    """Return the layout, the line of headings and the headings; headings settle what was in doubt.
+
+    The headings ``f/GHz, Dk`` over ``8,2,4,31`` say that there are two columns of numbers with decimal commas.
+    """
+    line, headings = find_headings(lines, layout)
+    if line is None and layout.other_separator is not None:
+        pairs = layout.other_separator == "comma pairs"
+        width = layout.width // 2 if pairs else layout.width * 2
+        other = replace(layout, separator=layout.other_separator, decimal="," if pairs else ".", width=width)
+        line, headings = find_headings(lines, other)
+        if line is not None:
+            layout = other
+    return (replace(layout, other_separator=None) if line is not None else layout), line, headings
+
+
 def _with_units(names: Sequence[str], units: Sequence[str]) -> list[str]:
     return [f"{name} [{unit}]" if unit not in ("", "-") else name for name, unit in zip(names, units, strict=True)]
 
@@ -162,8 +184,6 @@ def _ways_to_cut(text: str, layout: Layout) -> Iterator[list[str]]:
 
 
 def _decimals(separator: Separator) -> tuple[Decimal, ...]:
-    if separator == "comma":
-        return (".",)
     return (",",) if separator == "comma pairs" else (".", ",")
 
 

@@ -50,8 +50,8 @@ def quantities(
                 )
             else:
                 by_kind[column.kind] = column
-    if any(column.kind and column.kind not in ("ignored", *by_kind) for column in columns):
-        return None
+    if found.faults and not all(column.kind for column in columns):
+        return None  # a column is not known because of a fault that was told
     frequency = _frequency(by_kind, lines, answers, found)
     if frequency is None:
         return None

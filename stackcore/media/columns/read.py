@@ -5,7 +5,7 @@ from typing import Final, TypeVar, get_args
 
 from stackcore.errors import Fault, nearest
 from stackcore.media.columns.kinds import name_columns
-from stackcore.media.columns.layout import Layout, Line, Separator, cut, find_headings, find_layout, lines_of
+from stackcore.media.columns.layout import Layout, Line, Separator, cut, find_layout, lines_of, settle_by_headings
 from stackcore.media.columns.numbers import Decimal, missing_number, read_number
 from stackcore.media.columns.quantities import Findings, quantities
 from stackcore.media.columns.reading import Alternative, Column, ColumnsReading, Question
@@ -24,7 +24,7 @@ _Answer = TypeVar("_Answer", bound=str)
 def read_columns(content: str | bytes, answers: Mapping[str, str] | None = None) -> ColumnsReading:
     """Read columns of a material's data: separated by commas, semicolons, tabs or spaces.
 
-    Nothing is raised for what stands in the file. Its faults, and questions that it leaves open, are in the reading.
+    Nothing is raised for what stands in the file. Its faults, and the questions it leaves open, are in the reading.
 
     Parameters
     ----------
@@ -59,8 +59,8 @@ def read_columns(content: str | bytes, answers: Mapping[str, str] | None = None)
                 Fault("", "there are no rows of numbers", "two columns of numbers or more, with headings")
             )
         return ColumnsReading(encoding, "spaces", ".", None, (), (), (), tuple(found.faults), ())
+    layout, heading_line, headings = settle_by_headings(lines, layout)
     _ask_layout(layout, found)
-    heading_line, headings = find_headings(lines, layout)
     rows, numbers = _rows(lines, layout, found)
     columns = name_columns(headings, layout.width, rows, answers, found)
     _refuse_unknown(answers, layout.width, found)

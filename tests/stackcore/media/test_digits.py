@@ -1,10 +1,13 @@
 """No model loses digits: all of them against 60-digit arithmetic, over all constants that they allow."""
 
+import math
+
 import numpy as np
 import pytest
 from hypothesis import given, settings
 
 from stackcore.media.base import AbstractMedium
+from stackcore.media.cauchy import CauchyMedium
 from stackcore.media.lorentz import LorentzMedium
 from stackcore.media.magnetic_lorentz import MagneticLorentzMedium
 from stackcore.media.sellmeier import NEAREST_TO_POLE, SellmeierMedium
@@ -60,4 +63,9 @@ def test_digits_of_any_medium(medium: AbstractMedium, frequency: float) -> None:
         u = np.array([frequency * term.pole_wavelength / 299792458 for term in medium.terms])
         if (abs(1 - u) < NEAREST_TO_POLE).any():
             return  # held there on purpose
+    if isinstance(medium, CauchyMedium):
+        micrometres = 299792458e6 / frequency
+        parts = [medium.constant, *(t.coefficient * micrometres**t.exponent for t in medium.terms)]
+        if sum(abs(part) for part in parts) > 1e3 * abs(math.fsum(parts)):
+            return  # a series that cancels far outside any glass has no more digits than its sum
     assert_all_digits(medium, frequency)
