@@ -16,6 +16,18 @@ from stackcore.units import Dimension, Measure
 
 SPACINGS: Final[tuple[Spacing, ...]] = ("linear", "log")
 
+_JOB_WORDS: Final = {
+    "sweep.frequency": "frequencies",
+    "sweep.frequency.start": "first frequency",
+    "sweep.frequency.stop": "last frequency",
+    "sweep.frequency.points": "number of frequencies",
+    "sweep.frequency.spacing": "spacing of frequencies",
+    "sweep.angle": "angles",
+    "sweep.angle.start": "first angle",
+    "sweep.angle.stop": "last angle",
+    "sweep.angle.points": "number of angles",
+}
+
 
 def columns_of(record: JobRecord, cell: Cell) -> tuple[str, ...]:
     """Return the columns there are where `cell` is; refuses a stack or an element that does not exist."""
@@ -49,6 +61,23 @@ def material_and_constant(cell: Cell) -> tuple[str, str]:
     """Return the material's name and the constant in a cell such as ``material:skin.permittivity``."""
     name, _, constant = cell.column.removeprefix("material:").rpartition(".")
     return name, constant
+
+
+def place_words(cell: Cell) -> str:
+    """Return what a cell holds and where, in words for a person.
+
+    Examples
+    --------
+    >>> place_words(Cell(0, 1, "thickness")), place_words(Cell(0, -1, "sweep.frequency.stop"))
+    ('thickness of layer 2', 'last frequency')
+    """
+    if cell.row != WHOLE_ROW:
+        kind = "layer" if cell.column in ("material", "thickness") else "sheet"
+        return f"{cell.column} of {kind} {cell.row + 1}"
+    if cell.column.startswith("material:"):
+        name, constant = material_and_constant(cell)
+        return f"{constant.replace('_', ' ')} of {name}"
+    return "name of stack" if cell.column == "name" else _JOB_WORDS.get(cell.column, cell.column)
 
 
 def value_text(record: JobRecord, cell: Cell) -> str:

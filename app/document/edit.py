@@ -26,12 +26,19 @@ class Edit:
         What is selected afterwards, or how to find it in the new document; None keeps the selection.
     merge_key
         Steps with equal keys become one (see `app.document.history`); None never merges.
+    words
+        Gives the sentence from the new document, where that says more than what was asked for.
     """
 
     sentence: str
     change: Callable[[Document], Document]
     select: Select | None = None
     merge_key: Hashable | None = None
+    words: Callable[[Document], str] | None = None
+
+    def sentence_of(self, after: Document) -> str:
+        """Return the sentence of the edit that led to `after`."""
+        return self.sentence if self.words is None else self.words(after)
 
     def selection(self, after: Document, now: Selection) -> Selection:
         """Return what is selected after the edit led to `after`, inside its stacks and rows."""

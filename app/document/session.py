@@ -143,8 +143,9 @@ class Session:
         if after == before:
             return ()
         selection = edit.selection(after, self.selection)
-        self._history.push(State(after, selection), edit.sentence, edit.merge_key)
-        self._tell(before, edit.sentence, initiator, "edit")
+        sentence = edit.sentence_of(after)
+        self._history.push(State(after, selection), sentence, edit.merge_key)
+        self._tell(before, sentence, initiator, "edit")
         return ()
 
     def select(self, selection: Selection, initiator: object | None = None) -> None:

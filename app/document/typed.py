@@ -3,27 +3,17 @@
 from dataclasses import replace
 from typing import Final
 
-from app.document.cells import check_cell, material_and_constant, with_text
+from app.document.cells import check_cell, material_and_constant, place_words, value_text, with_text
 from app.document.document import WHOLE_ROW, Cell, Document, Draft
 from app.document.edit import Edit, with_record, without_draft
 from app.document.history import Brief
 from app.document.material_edits import rename_material
 from app.document.stack_edits import rename_stack
 from stackcore.errors import Fault, InputError, UnitError
+from stackcore.job.limits import SHEET_PARTS
 
 _LONGEST_QUOTE: Final = 40
-
-_JOB_WORDS: Final = {
-    "sweep.frequency": "frequencies",
-    "sweep.frequency.start": "first frequency",
-    "sweep.frequency.stop": "last frequency",
-    "sweep.frequency.points": "number of frequencies",
-    "sweep.frequency.spacing": "spacing of frequencies",
-    "sweep.angle": "angles",
-    "sweep.angle.start": "first angle",
-    "sweep.angle.stop": "last angle",
-    "sweep.angle.points": "number of angles",
-}
+_MEASURED: Final = (*SHEET_PARTS, "thickness", "sweep.frequency.start", "sweep.frequency.stop")
 
 
 def type_into(cell: Cell, text: str) -> Edit:
@@ -49,7 +39,12 @@ def type_into(cell: Cell, text: str) -> Edit:
         draft = Draft(cell, text, taken)
         return Document(document.job, (*without_draft(document.drafts, cell), draft))
 
-    return Edit(_sentence(cell, text), change, merge_key=Brief(("type into", cell)))
+    def words(after: Document) -> str:
+        # A bare number gets the unit it was read in.
+        measured = cell.column in _MEASURED and after.draft(cell) is None
+        return _sentence(cell, value_text(after.record, cell) if measured else text)
+
+    return Edit(_sentence(cell, text), change, merge_key=Brief(("type into", cell)), words=words)
 
 
 def settle(document: Document) -> Document:
@@ -104,15 +99,5 @@ def _sentence(cell: Cell, text: str) -> str:
     quoted = text if len(text) <= _LONGEST_QUOTE else f"{text[: _LONGEST_QUOTE - 1]}…"
     if cell.column == "notes":
         return "change notes"
-    place = _place(cell)
+    place = place_words(cell)
     return f"set {place} to {quoted}" if quoted else f"clear {place}"
-
-
-def _place(cell: Cell) -> str:
-    if cell.row != WHOLE_ROW:
-        kind = "layer" if cell.column in ("material", "thickness") else "sheet"
-        return f"{cell.column} of {kind} {cell.row + 1}"
-    if cell.column.startswith("material:"):
-        name, constant = material_and_constant(cell)
-        return f"{constant.replace('_', ' ')} of {name}"
-    return "name of stack" if cell.column == "name" else _JOB_WORDS.get(cell.column, cell.column)

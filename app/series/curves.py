@@ -6,6 +6,7 @@ import numpy as np
 
 from app.document.view import ViewState
 from app.series.shown import SHOWN, shown_unit, shown_values
+from app.series.validity import Doubt, Mask, doubts_of, held_by_all
 from stackcore.conventions import POLARIZATIONS
 from stackcore.media.base import FloatArray
 from stackcore.propagation import Response
@@ -50,6 +51,10 @@ class Curve:
         Where the value first is infinite at the worse end, as its frequency in Hz, or None.
     hidden_points
         How many points cannot be drawn because their value is not finite.
+    held
+        For each point, whether every material of the stack is known there.
+    doubts
+        The materials that are not known at all points.
     """
 
     quantity: str
@@ -65,6 +70,8 @@ class Curve:
     worst: Point | None
     worst_infinite: float | None
     hidden_points: int
+    held: Mask
+    doubts: tuple[Doubt, ...] = ()
 
 
 def curves_of(
@@ -81,8 +88,9 @@ def curves_of(
     unit, factor = shown_unit(quantity, power=view_state.power, frequency=frequency)
     values = shown_values(quantity, QUANTITIES[quantity].values(response), power=view_state.power, factor=factor)
     ranks = np.argsort(np.argsort(response.angle, kind="stable"), kind="stable")
+    doubts = doubts_of(response.stack, response.frequency)
     return tuple(
-        _curve(quantity, polarization, response, values, unit, rank=int(ranks[index]), index=index)
+        _curve(quantity, polarization, response, values, unit, doubts, rank=int(ranks[index]), index=index)
         for index in range(len(response.angle))
         for polarization in POLARIZATIONS
         if polarization in view_state.polarizations
@@ -106,6 +114,7 @@ def _curve(
     response: Response,
     values: FloatArray,
     unit: str,
+    doubts: tuple[Doubt, ...],
     *,
     rank: int,
     index: int,
@@ -129,6 +138,8 @@ def _curve(
         worst,
         infinite,
         int(np.count_nonzero(~finite)),
+        held_by_all(doubts, x),
+        doubts,
     )
 
 

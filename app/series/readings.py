@@ -84,11 +84,11 @@ def readings_of(
     else:
         read = curves
     rows = [
-        ReadingRow(frequency_text(marker), index, marker, tuple(_at(curve, marker, view_state) for curve in read))
+        ReadingRow(frequency_text(marker), index, marker, tuple(_at(curve, marker) for curve in read))
         for index, marker in enumerate(view_state.markers)
     ]
     if view_state.worst_shown and any(curve.worst or curve.worst_infinite for curve in curves):
-        rows.append(ReadingRow(WORST, None, None, tuple(_worst(curve, view_state) for curve in curves)))
+        rows.append(ReadingRow(WORST, None, None, tuple(_worst(curve) for curve in curves)))
     return tuple(rows)
 
 
@@ -100,21 +100,21 @@ def table_text(rows: Sequence[ReadingRow], curves: Sequence[Curve], title: str) 
     return "\n".join("\t".join(line) for line in lines) + "\n"
 
 
-def _at(curve: Curve, frequency: float, view_state: ViewState) -> Reading:
+def _at(curve: Curve, frequency: float) -> Reading:
     nearest = int(np.argmin(np.abs(curve.x - frequency)))
-    return _reading(curve, Point(float(curve.x[nearest]), float(curve.raw[nearest])), view_state)
+    return _reading(curve, Point(float(curve.x[nearest]), float(curve.raw[nearest])))
 
 
-def _worst(curve: Curve, view_state: ViewState) -> Reading | None:
+def _worst(curve: Curve) -> Reading | None:
     if curve.worst is not None:
-        return _reading(curve, curve.worst, view_state)
+        return _reading(curve, curve.worst)
     if curve.worst_infinite is None:
         return None
     place = int(np.argmin(np.abs(curve.x - curve.worst_infinite)))
-    return _reading(curve, Point(curve.worst_infinite, float(curve.raw[place])), view_state)
+    return _reading(curve, Point(curve.worst_infinite, float(curve.raw[place])))
 
 
-def _reading(curve: Curve, point: Point, view_state: ViewState) -> Reading:
+def _reading(curve: Curve, point: Point) -> Reading:
     return Reading(
         number_text(curve.quantity, point.y, curve.unit),
         curve.unit,

@@ -1,5 +1,6 @@
 """The main window: makes the parts, connects them, and takes them apart again."""
 
+from dataclasses import replace
 from functools import partial
 from pathlib import Path
 from typing import Final
@@ -9,7 +10,7 @@ from PySide6.QtGui import QCloseEvent, QDragEnterEvent, QDropEvent, QGuiApplicat
 from PySide6.QtWidgets import QApplication, QMainWindow
 
 from app.document.session import Change, Session
-from app.document.view import View
+from app.document.view import POWERS, View, ViewChange
 from app.look.palette import apply_theme, preferred_theme
 from app.look.theme import Theme
 from app.window import help_pages
@@ -40,6 +41,7 @@ from app.workers.live import Answer, LiveLane
 from stackcore.errors import Fault
 
 THEME_KEY: Final = "look/theme"
+POWER_KEY: Final = "look/power"
 UNSOLVED: Final = "This stack cannot be computed; the curves show the last one that could."
 
 
@@ -231,6 +233,7 @@ class MainWindow(QMainWindow):
         self._panels.curves.pointed.connect(self._status.point)
         self._panels.wall.edit_requested.connect(self._panels.edit_element)
         self._exporter.running.connect(self._actions.refresh)
+        self._panels.elements.columns_asked.connect(self._actions.refresh)
         self._status.cautions.clicked.connect(lambda: self.show_help("cautions"))
         for title in (MATERIALS, NOTES):
             self._arrangement.dock(title).visibilityChanged.connect(self._actions.refresh)
@@ -246,7 +249,7 @@ class MainWindow(QMainWindow):
         self.setStatusBar(self._status)
         self._status.add_progress(ProgressLine(self._exporter, self))
         self._arrangement.restore()
-        self._view.replace(first_view(self._session.job))
+        self._begin_view()
         self._show_title()
         self._recompute.ask(fresh=True)
         self._show_cautions()
@@ -254,12 +257,20 @@ class MainWindow(QMainWindow):
 
     def _heard(self, change: Change) -> None:
         if change.kind == "open":
-            self._view.replace(first_view(change.after.job))
+            self._begin_view()
         self._show_title()
         self._show_cautions()
         self._actions.refresh()
 
-    def _looked(self, _: object) -> None:
+    def _begin_view(self) -> None:
+        """Look at the job as is best for it, and at fractions of power as was chosen last."""
+        wanted = self._settings.value(POWER_KEY, POWERS[0], type=str)
+        power = next((one for one in POWERS if one == wanted), POWERS[0])
+        self._view.replace(replace(first_view(self._session.job), power=power))
+
+    def _looked(self, change: ViewChange) -> None:
+        if change.after.power != change.before.power:
+            self._settings.setValue(POWER_KEY, change.after.power)
         self._show_cautions()
         self._actions.refresh()
 

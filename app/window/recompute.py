@@ -5,12 +5,18 @@ from typing import Final, Protocol
 
 from PySide6.QtCore import QObject, QTimer, Signal
 
+from app.document.cells import place_words
+from app.document.document import WHOLE_JOB, Draft
 from app.document.session import Change, Session
 from app.document.view import View, ViewChange
 from app.workers.live import Answer, Failure, LiveLane
 
 PATIENCE: Final = 200
 """Milliseconds a calculation may take before what is shown is said to be old."""
+
+
+LONGEST: Final = 96
+"""Letters of a reason in the status line; where it belongs it stands in full."""
 
 
 class Viewer(Protocol):
@@ -135,19 +141,32 @@ class Recompute(QObject):
         self.busy.emit(late)
         if drafts:
             more = f", and {len(drafts) - 1} more" if len(drafts) > 1 else ""
-            self.told.emit(f"Not up to date: {drafts[0].text!r} is no value ({drafts[0].cell.path}){more}")
+            self.told.emit(f"Not up to date: {self._words(drafts[0])}{more}")
         elif self._fault:
-            self.told.emit(f"Not up to date: {self._fault}")
+            self.told.emit(f"Not up to date: {cut(self._fault)}")
         elif late:
             self.told.emit("Computing …")
         elif self._newest is not None:
             self.told.emit(summary(self._newest))
+
+    def _words(self, draft: Draft) -> str:
+        """Return where a text is that has no value, and why it has none."""
+        stack = draft.cell.stack
+        where = place_words(draft.cell)
+        if stack not in (WHOLE_JOB, self._session.selection.stack):
+            where += f" in stack {self._session.record.stacks[stack].name}"
+        return cut(f"{where}, {draft.fault.message}")
 
     def _mark(self, stale: bool) -> None:
         if stale != self._stale:
             self._stale = stale
             for viewer in self._viewers:
                 viewer.set_stale(stale)
+
+
+def cut(text: str) -> str:
+    """Return a text of at most `LONGEST` letters: the status line must not make the window wider."""
+    return text if len(text) <= LONGEST else f"{text[: LONGEST - 1].rstrip()}…"
 
 
 def summary(answer: Answer) -> str:

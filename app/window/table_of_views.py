@@ -119,6 +119,15 @@ def arrangement_acts(c: Commands) -> Sequence[Act]:
             group=1,
         ),
         Act(
+            "view.rare_columns",
+            menu,
+            "&Inductance and capacitance",
+            lambda: c.elements.show_rare_columns(not c.elements.rare_columns),
+            tip="Show the columns in which a sheet gets an inductance or a capacitance, also where none is used.",
+            checked=lambda: c.elements.rare_columns,
+            group=1,
+        ),
+        Act(
             "view.next_panel",
             menu,
             "&Next panel",

@@ -129,6 +129,9 @@ def with_core(stack: sc.Stack, thickness: float) -> sc.Stack:
 def test_bonds_and_paint_move_the_sandwich_down() -> None:
     """The core that is best on paper is too thick once bonds and paint are there; the losses of the notes hold."""
     names = ("Skins and core only", "Bonded", "Bonded and painted")
+    job = read_job(FOLDER / "sandwich-panel.slabjob")
+    assert [stack.name for stack in job.stacks] == list(reversed(names)), "the panel as it is built comes first"
+    assert (job.sweep.frequencies().min(), job.sweep.frequencies().max()) == (8.5e9, 10e9)
     plain, bonded, painted = (stack_of("sandwich-panel", name) for name in names)
     # Worked out apart with another code.
     assert [worst_loss(stack) for stack in (plain, bonded, painted)] == pytest.approx(

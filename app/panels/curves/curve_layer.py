@@ -2,16 +2,20 @@
 
 from collections.abc import Sequence
 from dataclasses import dataclass, field
+from itertools import pairwise
 from typing import Any, Final
 
 import numpy as np
 import pyqtgraph as pg
+from numpy.typing import NDArray
 from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QColor, QPainter, QPen, QPolygonF
 
 from app.panels.curves.frame import Frame, finite_runs
 from app.panels.curves.layer import Layer
 from stackcore.arrays import FloatArray
+
+Mask = NDArray[np.bool_]
 
 LIVE_WIDTH: Final = 1.0
 FINE_WIDTH: Final = 1.6
@@ -20,6 +24,10 @@ CHOSEN_WIDTH: Final = 2.4
 # it proportional. They overlap by a fraction of a pixel, so that no joint shows.
 _PIECE: Final = 48
 _JOIN: Final = 0.6
+DOTTED: Final[tuple[float, ...]] = (1.6, 3.2)
+"""Dots where a solid curve stands on a guess."""
+DOTTED_DASHES: Final[tuple[float, ...]] = (1.6, 2.4, 1.6, 6.4)
+"""The same of a dashed curve: dots in pairs, so that the line style still tells the polarization."""
 _FEW_POINTS: Final = 40
 _POINT: Final = 2.5
 # Points beyond which the finer drawing would take longer than a person waits without noticing.
@@ -44,6 +52,8 @@ class DrawnCurve:
         Drawn a little wider: the angle and polarization that the wall drawing shows.
     leap
         Neighbouring values that differ by more are not joined.
+    held
+        For each point, whether what it stands on is known there; None for everywhere. Elsewhere it is dotted.
     """
 
     positions: FloatArray
@@ -52,10 +62,21 @@ class DrawnCurve:
     dashes: tuple[float, ...] = ()
     chosen: bool = False
     leap: float = np.inf
+    held: Mask | None = None
     runs: tuple[tuple[int, int], ...] = field(init=False)
+    pieces: tuple[tuple[int, int, bool], ...] = field(init=False)
 
     def __post_init__(self) -> None:
-        object.__setattr__(self, "runs", finite_runs(self.values, self.leap))
+        runs = finite_runs(self.values, self.leap)
+        object.__setattr__(self, "runs", runs)
+        pieces = [piece for run in runs for piece in held_pieces(*run, self.held)]
+        object.__setattr__(self, "pieces", tuple(pieces))
+
+    def pattern(self, held: bool) -> tuple[float, ...]:
+        """Return the dash pattern where the curve stands on data, or where it does not."""
+        if held:
+            return self.dashes
+        return DOTTED_DASHES if self.dashes else DOTTED
 
 
 class CurveLayer(Layer):
@@ -101,15 +122,34 @@ class CurveLayer(Layer):
             # One device pixel, whatever the scale of the screen, is what the raster engine draws fastest.
             pen.setCosmetic(not self._fine)
             pen.setJoinStyle(Qt.PenJoinStyle.BevelJoin)
-            for first, last in curve.runs:
+            for first, last, held in curve.pieces:
                 first, last = _visible(curve.positions, first, last, frame)
                 across = frame.across(curve.positions[first:last])
                 down = frame.down(curve.values[first:last])
                 if last - first > 1:
-                    _draw_run(painter, pen, curve.dashes, across, down)
+                    _draw_run(painter, QPen(pen), curve.pattern(held), across, down)
                 if last - first == 1 or len(curve.values) <= _FEW_POINTS:
                     for x, y in zip(across.tolist(), down.tolist(), strict=True):
                         _draw_dot(painter, curve, QPointF(x, y))
+
+
+def held_pieces(first: int, last: int, held: Mask | None) -> tuple[tuple[int, int, bool], ...]:
+    """Return the stretches ``(first, past last, held)`` of a run; neighbours share the point where they meet.
+
+    A line between two points is drawn as known only when both ends are.
+
+    Examples
+    --------
+    >>> held_pieces(0, 4, np.array([True, True, False, False]))
+    ((0, 2, True), (1, 4, False))
+    """
+    if held is None or held[first:last].all():
+        return ((first, last, True),)
+    if last - first < 2:
+        return ((first, last, bool(held[first])),)
+    known = held[first : last - 1] & held[first + 1 : last]
+    turns = [0, *(np.flatnonzero(known[1:] != known[:-1]) + 1).tolist(), len(known)]
+    return tuple((first + a, first + b + 1, bool(known[a])) for a, b in pairwise(turns))
 
 
 def _visible(positions: FloatArray, first: int, last: int, frame: Frame) -> tuple[int, int]:

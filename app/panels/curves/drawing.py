@@ -57,12 +57,13 @@ def draw_curves(
     """Return the curves as they are drawn, each rising in frequency."""
     drawn = []
     for index, (curve, colour) in enumerate(zip(curves, colours, strict=True)):
-        positions, values = scale.positions(curve.x), curve.y
+        positions, values, held = scale.positions(curve.x), curve.y, curve.held
         if len(positions) > 1 and not bool(np.all(positions[1:] >= positions[:-1])):
             order = np.argsort(positions, kind="stable")
-            positions, values = positions[order], values[order]
+            positions, values, held = positions[order], values[order], held[order]
         leap = _TURNS.get(curve.quantity, np.inf)
-        drawn.append(DrawnCurve(positions, values, colour, dashes(curve.polarization), index == chosen, leap))
+        style = dashes(curve.polarization)
+        drawn.append(DrawnCurve(positions, values, colour, style, index == chosen, leap, held))
     return tuple(drawn)
 
 

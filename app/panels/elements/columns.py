@@ -3,7 +3,8 @@
 from dataclasses import dataclass
 from typing import Final
 
-from stackcore.job.records import SheetRecord, StackRecord
+from app.document.document import Document
+from stackcore.job.records import SheetRecord
 from stackcore.units import Dimension
 
 
@@ -49,7 +50,8 @@ THICKNESS: Final = Column(
 RESISTANCE: Final = Column(
     "resistance",
     "Resistance",
-    "Resistance of a sheet per square, 0 or more, in series with the rest: 377 ohm/sq. Empty when there is none.",
+    "Resistance of a sheet per square, 0 or more, in series with the rest: 377 ohm/sq. Empty when there is none. "
+    "The menus of the table and View show the columns for an inductance and a capacitance.",
     Dimension.RESISTANCE,
 )
 INDUCTANCE: Final = Column(
@@ -67,11 +69,30 @@ CAPACITANCE: Final = Column(
 
 LAYER_COLUMNS: Final = (NUMBER, WHAT, MATERIAL, THICKNESS)
 SHEET_COLUMNS: Final = (RESISTANCE, INDUCTANCE, CAPACITANCE)
+RARE_COLUMNS: Final = (INDUCTANCE, CAPACITANCE)
+"""Shown only where a sheet of the stack uses them, or when they are asked for."""
 LAYER_CELLS: Final = (MATERIAL, THICKNESS)
 ALL_COLUMNS: Final = LAYER_COLUMNS + SHEET_COLUMNS
+_PLACES: Final = {column.name: place for place, column in enumerate(ALL_COLUMNS)}
 
 
-def columns_of(stack: StackRecord) -> tuple[Column, ...]:
-    """Return the columns a stack needs: those of sheets only when it has a sheet."""
-    has_sheet = any(isinstance(element, SheetRecord) for element in stack.elements)
-    return ALL_COLUMNS if has_sheet else LAYER_COLUMNS
+def place_of(column: Column) -> int:
+    """Return the place of a column among `ALL_COLUMNS`."""
+    return _PLACES[column.name]
+
+
+def columns_of(document: Document, stack: int, *, rare: bool = False) -> tuple[Column, ...]:
+    """Return the columns a stack needs, in the order of `ALL_COLUMNS`.
+
+    Those of sheets are there only when it has a sheet, and those of `RARE_COLUMNS` only when a sheet uses them,
+    or holds a text for them that is no value yet, or when `rare` asks for them.
+    """
+    sheets = [one for one in document.record.stacks[stack].elements if isinstance(one, SheetRecord)]
+    if not sheets:
+        return LAYER_COLUMNS
+    drafted = {draft.cell.column for draft in document.drafts if draft.cell.stack == stack}
+    used = {
+        column.name for column in RARE_COLUMNS if any(getattr(sheet, column.name) is not None for sheet in sheets)
+    }
+    wanted = {column.name for column in RARE_COLUMNS} if rare else used | drafted
+    return tuple(column for column in ALL_COLUMNS if column not in RARE_COLUMNS or column.name in wanted)

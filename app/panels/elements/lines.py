@@ -8,7 +8,16 @@ from dataclasses import dataclass
 from typing import Final, Literal
 
 from app.document.document import WHOLE_ROW, Cell, Document
-from app.panels.elements.columns import ALL_COLUMNS, MATERIAL, NUMBER, SHEET_COLUMNS, THICKNESS, WHAT, Column
+from app.panels.elements.columns import (
+    ALL_COLUMNS,
+    MATERIAL,
+    NUMBER,
+    SHEET_COLUMNS,
+    THICKNESS,
+    WHAT,
+    Column,
+    place_of,
+)
 from app.panels.elements.names import MaterialNames
 from app.series.kinds import kind_of
 from stackcore.errors import Fault
@@ -70,6 +79,10 @@ class Line:
     def is_element(self) -> bool:
         """Whether it is a layer or a sheet, which can be moved, and not a half-space."""
         return self.kind in ("layer", "sheet")
+
+    def cell(self, column: Column) -> CellView:
+        """Return what the row shows in `column`."""
+        return self.cells[place_of(column)]
 
 
 def lines_of(document: Document, stack: int) -> tuple[Line, ...]:

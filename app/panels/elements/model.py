@@ -10,7 +10,7 @@ from PySide6.QtCore import QAbstractTableModel, QModelIndex, QObject, QPersisten
 from app.document import edits
 from app.document.document import Document
 from app.document.session import Change, Session
-from app.panels.elements.columns import ALL_COLUMNS, LAYER_COLUMNS, MATERIAL, Column, columns_of
+from app.panels.elements.columns import MATERIAL, Column, columns_of, place_of
 from app.panels.elements.difference import Inserted, Moved, Removed, Step, step_between
 from app.panels.elements.gestures import typed_edit
 from app.panels.elements.lines import CellView, Line, cell_of, lines_of
@@ -56,7 +56,8 @@ class ElementsModel(QAbstractTableModel):
         self._session = session
         self._document = session.document
         self._stack_index = session.selection.stack
-        self._columns = columns_of(self.stack)
+        self._rare_columns = False
+        self._columns = self._wanted_columns()
         self._lines = lines_of(self._document, self._stack_index)
         self._following = False
         self.destroyed.connect(session.subscribe(self._follow))
@@ -87,6 +88,16 @@ class ElementsModel(QAbstractTableModel):
         return self._columns
 
     @property
+    def rare_columns(self) -> bool:
+        """Whether the columns for inductance and capacitance were asked for."""
+        return self._rare_columns
+
+    def show_rare_columns(self, shown: bool) -> None:
+        """Show those columns wherever there is a sheet, or only where a sheet uses them."""
+        self._rare_columns = shown
+        self._set_columns(self._wanted_columns())
+
+    @property
     def lines(self) -> tuple[Line, ...]:
         """What the rows show, in order."""
         return self._lines
@@ -97,7 +108,7 @@ class ElementsModel(QAbstractTableModel):
 
     def view(self, index: Index) -> CellView:
         """Return what the cell at `index` shows."""
-        return self._lines[index.row()].cells[index.column()]
+        return self._lines[index.row()].cell(self._columns[index.column()])
 
     def element_rows(self, rows: Sequence[int]) -> tuple[int, ...]:
         """Return the indices of the elements among table rows, ascending; half-spaces are left out."""
@@ -213,7 +224,7 @@ class ElementsModel(QAbstractTableModel):
         if change.kind == "open" or stack != self._stack_index:
             self.beginResetModel()
             self._document, self._stack_index = change.after, stack
-            self._columns = columns_of(self.stack)
+            self._columns = self._wanted_columns()
             self._lines = lines_of(change.after, stack)
             self.endResetModel()
         elif change.after is not self._document:
@@ -223,7 +234,7 @@ class ElementsModel(QAbstractTableModel):
         old, new = self.stack, after.record.stacks[self._stack_index]
         lines = lines_of(after, self._stack_index)
         self._document = after
-        self._set_columns(columns_of(new))
+        self._set_columns(self._wanted_columns())
         self._take_step(step_between(old.elements, new.elements), lines)
         changed = [row for row, (was, now) in enumerate(zip(self._lines, lines, strict=True)) if was != now]
         self._lines = lines
@@ -231,15 +242,22 @@ class ElementsModel(QAbstractTableModel):
             self.dataChanged.emit(self.index(first, 0), self.index(last, len(self._columns) - 1))
 
     def _set_columns(self, columns: tuple[Column, ...]) -> None:
-        first, last = len(LAYER_COLUMNS), len(ALL_COLUMNS) - 1
-        if len(columns) > len(self._columns):
-            self.beginInsertColumns(_NOWHERE, first, last)
-            self._columns = columns
-            self.endInsertColumns()
-        elif len(columns) < len(self._columns):
-            self.beginRemoveColumns(_NOWHERE, first, last)
-            self._columns = columns
-            self.endRemoveColumns()
+        """Tell Qt of columns that went or came, one by one; what stays keeps its order."""
+        for column in self._columns:
+            if column not in columns:
+                place = self._columns.index(column)
+                self.beginRemoveColumns(_NOWHERE, place, place)
+                self._columns = (*self._columns[:place], *self._columns[place + 1 :])
+                self.endRemoveColumns()
+        for column in columns:
+            if column not in self._columns:
+                place = sum(place_of(other) < place_of(column) for other in self._columns)
+                self.beginInsertColumns(_NOWHERE, place, place)
+                self._columns = (*self._columns[:place], column, *self._columns[place:])
+                self.endInsertColumns()
+
+    def _wanted_columns(self) -> tuple[Column, ...]:
+        return columns_of(self._document, self._stack_index, rare=self._rare_columns)
 
     def _take_step(self, step: Step, lines: tuple[Line, ...]) -> None:
         """Tell Qt of rows that came, went or moved; element `n` is table row `n` + 1."""

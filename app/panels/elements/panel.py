@@ -1,13 +1,14 @@
 """The panel of the element table: the table, the stack it shows, and what can be done with its rows."""
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 
-from PySide6.QtCore import QMimeData, QModelIndex, Qt
+from PySide6.QtCore import QMimeData, QModelIndex, Qt, Signal
 from PySide6.QtGui import QAction, QColor, QGuiApplication, QPalette
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QToolButton, QVBoxLayout, QWidget
 
 from app.document import edits
-from app.document.document import Selection
+from app.document.cells import place_words
+from app.document.document import Draft, Selection
 from app.document.edit import Edit
 from app.document.session import Change, Session
 from app.look.theme import Theme
@@ -34,7 +35,14 @@ class ElementsPanel(QWidget):
         The look.
     tell
         How it says why something was refused.
+
+    Signals
+    -------
+    columns_asked()
+        `rare_columns` is another one now.
     """
+
+    columns_asked = Signal()
 
     def __init__(self, session: Session, theme: Theme, tell: Tell, parent: QWidget | None = None) -> None:
         super().__init__(parent)
@@ -78,6 +86,18 @@ class ElementsPanel(QWidget):
     def set_stale(self, stale: bool) -> None:
         """Take that results are stale: the table shows what was typed, which never is."""
 
+    @property
+    def rare_columns(self) -> bool:
+        """Whether the columns for inductance and capacitance were asked for; they also show where they are used."""
+        return self._model.rare_columns
+
+    def show_rare_columns(self, shown: bool) -> None:
+        """Show the columns for inductance and capacitance for every sheet, or only where they are used."""
+        if shown != self._model.rare_columns:
+            self._model.show_rare_columns(shown)
+            self._rare.setChecked(shown)
+            self.columns_asked.emit()
+
     # What can be done with rows
 
     def add_layer(self) -> None:
@@ -118,8 +138,7 @@ class ElementsPanel(QWidget):
         if not rows:
             return
         columns = self._model.columns
-        lines = [self._model.line(row).cells[: len(columns)] for row in rows]
-        texts = [[cell.text for cell in cells] for cells in lines]
+        texts = [[self._model.line(row).cell(column).text for column in columns] for row in rows]
         data = QMimeData()
         data.setText(write_block(columns, texts))
         data.setHtml(write_html(columns, texts))
@@ -191,6 +210,7 @@ class ElementsPanel(QWidget):
             bar.addWidget(button)
             self._table.addAction(action)
         bar.addStretch(1)
+        self._offer_rare_columns()
         bar.addWidget(self._stacks.menu_button(self))
         self._table.setContextMenuPolicy(Qt.ContextMenuPolicy.ActionsContextMenu)
         column = QVBoxLayout(self)
@@ -200,6 +220,19 @@ class ElementsPanel(QWidget):
         column.addLayout(bar)
         column.addWidget(self._table, 1)
         column.addWidget(self._note)
+
+    def _offer_rare_columns(self) -> None:
+        """Put the switch for the columns of `RARE_COLUMNS` into the menus of the table and its header."""
+        line = QAction(self)
+        line.setSeparator(True)
+        self._rare = QAction("Inductance and capacitance", self)
+        self._rare.setToolTip("Show the columns in which a sheet gets an inductance or a capacitance.")
+        self._rare.setCheckable(True)
+        self._rare.toggled.connect(self.show_rare_columns)
+        header = self._table.horizontalHeader()
+        header.setContextMenuPolicy(Qt.ContextMenuPolicy.ActionsContextMenu)
+        header.addAction(self._rare)
+        self._table.addActions([line, self._rare])
 
     def _run(self, name: str) -> None:
         """Do what a key or a button asks for: the public method of that name."""
@@ -272,8 +305,9 @@ class ElementsPanel(QWidget):
         if fault is not None:
             text = fault_words(fault)
         else:
-            drafts = [d for d in self._model.document.drafts if d.cell.stack == self._model.stack_index]
-            text = _drafts_words(len(drafts))
+            text = _drafts_words(
+                [d for d in self._model.document.drafts if d.cell.stack == self._model.stack_index]
+            )
         palette = QPalette()
         palette.setColor(QPalette.ColorRole.WindowText, QColor(self._theme.fault))
         self._note.setPalette(palette)
@@ -281,8 +315,11 @@ class ElementsPanel(QWidget):
         self._note.setVisible(bool(text))
 
 
-def _drafts_words(count: int) -> str:
-    if count == 0:
+def _drafts_words(drafts: Sequence[Draft]) -> str:
+    """Say where the first of `drafts` is and what is wrong with it, how many more there are, and what is shown."""
+    if not drafts:
         return ""
-    subject = "One text in this table is" if count == 1 else f"{count} texts in this table are"
-    return f"{subject} not a value yet; the curves show the values of before."
+    place = place_words(drafts[0].cell)
+    fault = fault_words(drafts[0].fault)
+    more = f" {len(drafts) - 1} more in this table." if len(drafts) > 1 else ""
+    return f"{place[:1].upper()}{place[1:]}: {fault}{more} The curves show the values of before."

@@ -36,10 +36,7 @@ class Measuring:
 
     def widths(self, columns: Sequence[Column], lines: Sequence[Line]) -> tuple[Widths, ...]:
         """Return the widths of each of `columns`, for all `lines`."""
-        return tuple(
-            _widths(self._text, column, [line.cells[place] for line in lines])
-            for place, column in enumerate(columns)
-        )
+        return tuple(_widths(self._text, column, [line.cell(column) for line in lines]) for column in columns)
 
     def _text(self, text: str) -> int:
         if text not in self._known:

@@ -7,8 +7,8 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass, replace
 from typing import Final, Literal
 
+from stackcore.media.columns.cells import Decimal, read_number
 from stackcore.media.columns.headings import read_heading, unit_of_any
-from stackcore.media.columns.numbers import Decimal, read_number
 
 Separator = Literal["tab", "semicolon", "comma", "spaces", "comma pairs"]
 

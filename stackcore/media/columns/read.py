@@ -4,9 +4,9 @@ from collections.abc import Mapping, Sequence
 from typing import Final, TypeVar, get_args
 
 from stackcore.errors import Fault, nearest
+from stackcore.media.columns.cells import Decimal, missing_number, read_number
 from stackcore.media.columns.kinds import name_columns
 from stackcore.media.columns.layout import Layout, Line, Separator, cut, find_layout, lines_of, settle_by_headings
-from stackcore.media.columns.numbers import Decimal, missing_number, read_number
 from stackcore.media.columns.quantities import Findings, quantities
 from stackcore.media.columns.reading import Alternative, Column, ColumnsReading, Question
 from stackcore.media.tabulated import TabulatedMedium, table_faults

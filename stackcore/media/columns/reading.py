@@ -6,8 +6,8 @@ from typing import Final
 
 from stackcore.errors import Fault, InputError
 from stackcore.media.base import UNSOURCED, Provenance
+from stackcore.media.columns.cells import Decimal
 from stackcore.media.columns.headings import IGNORED, QUANTITY_KINDS
-from stackcore.media.columns.numbers import Decimal
 from stackcore.media.tabulated import TabulatedMedium
 
 _WORDS_OF: Final[Mapping[str, str]] = {

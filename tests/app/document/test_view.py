@@ -2,12 +2,13 @@
 
 from collections.abc import Callable
 from dataclasses import replace
+from typing import cast
 
 import numpy as np
 import pytest
 
 from app.document import edits
-from app.document.view import View, ViewChange, ViewState
+from app.document.view import Power, View, ViewChange, ViewState
 from tests.app.document.jobs import harbour
 
 
@@ -17,11 +18,11 @@ def test_a_view_tells_each_change_once() -> None:
     changes: list[ViewChange] = []
     leave = view.subscribe(changes.append)
     me = object()
-    view.set(me, quantity="return_loss_dB", decibels=True)
+    view.set(me, quantity="return_loss_dB", power="decibels")
     view.set(quantity="return_loss_dB")
     leave()
     view.set(log_frequency=True)
-    assert changes == [ViewChange(ViewState(), ViewState(quantity="return_loss_dB", decibels=True), me)]
+    assert changes == [ViewChange(ViewState(), ViewState(quantity="return_loss_dB", power="decibels"), me)]
     assert view.state.log_frequency
 
 
@@ -29,6 +30,7 @@ def test_a_view_tells_each_change_once() -> None:
     ("make", "field"),
     [
         (lambda: ViewState(quantity="transmission"), "quantity"),
+        (lambda: ViewState(power=cast(Power, "bel")), "power"),
         (lambda: ViewState(polarizations=()), "polarizations"),
         (lambda: ViewState(polarizations=("TE", "TEM")), "polarizations"),
         (lambda: ViewState(active_polarization="H"), "polarizations"),
@@ -38,7 +40,7 @@ def test_a_view_tells_each_change_once() -> None:
     ],
 )
 def test_what_no_view_can_be(make: Callable[[], ViewState], field: str) -> None:
-    """A quantity or a polarization that does not exist and a marker that is no frequency are refused."""
+    """A quantity, a way to show power or a polarization that does not exist and a marker that is no frequency are refused."""
     with pytest.raises(ValueError, match=field):
         make()
 

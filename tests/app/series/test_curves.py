@@ -3,8 +3,8 @@
 import numpy as np
 import pytest
 
-from app.document.view import ViewState
-from app.series.axis import can_show_decibels, frequency_axis, quantity_axis
+from app.document.view import Power, ViewState
+from app.series.axis import frequency_axis, is_power, quantity_axis
 from app.series.curves import curves_of
 from app.series.shown import SHOWN
 from stackcore.media.constant import ConstantMedium
@@ -53,7 +53,7 @@ def test_decibels_of_a_fraction(quantity: str) -> None:
     """A fraction of power in decibels is 10 log10 of it, negative, with the same worst frequency."""
     response = slab()
     plain = curves_of(response, ViewState(quantity=quantity))
-    decibels = curves_of(response, ViewState(quantity=quantity, decibels=True))
+    decibels = curves_of(response, ViewState(quantity=quantity, power="decibels"))
     for one, other in zip(plain, decibels, strict=True):
         assert 10 ** (other.y / 10) == pytest.approx(one.y, rel=1e-12)
         assert (other.unit, one.unit) == ("dB", "")
@@ -62,13 +62,27 @@ def test_decibels_of_a_fraction(quantity: str) -> None:
         assert one.worst.x == other.worst.x
 
 
-def test_decibels_leave_other_quantities_alone() -> None:
-    """What is no fraction of power ignores the decibel option."""
+@pytest.mark.parametrize("quantity", FRACTIONS)
+def test_per_cent_of_a_fraction(quantity: str) -> None:
+    """A fraction of power in per cent is a hundred times as large, also at its worst point."""
+    response = slab()
+    plain = curves_of(response, ViewState(quantity=quantity))
+    for one, other in zip(plain, curves_of(response, ViewState(quantity=quantity, power="percent")), strict=True):
+        assert other.y == pytest.approx(100 * one.y, rel=1e-15)
+        assert other.unit == "%"
+        assert one.worst is not None
+        assert other.worst is not None
+        assert other.worst.x == one.worst.x
+
+
+@pytest.mark.parametrize("power", ["percent", "decibels"])
+def test_other_quantities_are_left_alone(power: Power) -> None:
+    """What is no fraction of power is shown in its own unit, however power is shown."""
     response = slab()
     for quantity in QUANTITIES.keys() - set(FRACTIONS):
-        assert not can_show_decibels(quantity)
+        assert not is_power(quantity)
         one = curves_of(response, ViewState(quantity=quantity))[0]
-        other = curves_of(response, ViewState(quantity=quantity, decibels=True))[0]
+        other = curves_of(response, ViewState(quantity=quantity, power=power))[0]
         assert np.array_equal(one.y, other.y)
         assert one.unit == other.unit
 
@@ -102,7 +116,7 @@ def test_zero_transmittance_in_decibels() -> None:
     plain = curves_of(response, ViewState())[0]
     assert plain.worst is not None
     assert (plain.worst.y, plain.hidden_points) == (0.0, 0)
-    decibels = curves_of(response, ViewState(decibels=True))[0]
+    decibels = curves_of(response, ViewState(power="decibels"))[0]
     assert (decibels.worst, decibels.hidden_points) == (None, 5)
     assert decibels.raw[0] == -np.inf
 
@@ -136,18 +150,19 @@ def test_the_frequency_axis(frequency: list[float], log: bool, title: str, facto
 
 
 @pytest.mark.parametrize(
-    ("quantity", "decibels", "frequency", "title"),
+    ("quantity", "power", "frequency", "title"),
     [
-        ("insertion_loss_dB", False, 1e10, "Insertion loss, dB"),
-        ("transmittance", False, 1e10, "Transmittance"),
-        ("transmittance", True, 1e10, "Transmittance, dB"),
-        ("group_delay_s", False, 1e10, "Group delay, ps"),
-        ("group_delay_s", True, 5e14, "Group delay, fs"),
-        ("group_delay_s", False, 1e7, "Group delay, ns"),
-        ("group_delay_s", False, 1e4, "Group delay, µs"),
-        ("reflection_phase_deg", False, 1e10, "Reflection phase, deg"),
+        ("insertion_loss_dB", "fraction", 1e10, "Insertion loss, dB"),
+        ("transmittance", "fraction", 1e10, "Transmittance"),
+        ("transmittance", "percent", 1e10, "Transmittance, %"),
+        ("transmittance", "decibels", 1e10, "Transmittance, dB"),
+        ("group_delay_s", "fraction", 1e10, "Group delay, ps"),
+        ("group_delay_s", "decibels", 5e14, "Group delay, fs"),
+        ("group_delay_s", "fraction", 1e7, "Group delay, ns"),
+        ("group_delay_s", "fraction", 1e4, "Group delay, µs"),
+        ("reflection_phase_deg", "fraction", 1e10, "Reflection phase, deg"),
     ],
 )
-def test_titles_are_words_with_unit(quantity: str, decibels: bool, frequency: float, title: str) -> None:
+def test_titles_are_words_with_unit(quantity: str, power: Power, frequency: float, title: str) -> None:
     """The axis of a quantity says what it is and in which unit."""
-    assert quantity_axis(quantity, np.array([frequency]), decibels=decibels).title == title
+    assert quantity_axis(quantity, np.array([frequency]), power=power).title == title

@@ -17,30 +17,33 @@ from app.series.texts import (
 
 
 @pytest.mark.parametrize(
-    ("quantity", "value", "decibels", "text"),
+    ("quantity", "value", "unit", "text"),
     [
-        ("transmittance", 1.0, False, "1.000"),
-        ("transmittance", 0.99996, False, "1.000"),
-        ("transmittance", 0.83456, False, "0.8346"),
-        ("transmittance", 0.0012342, False, "0.001234"),
-        ("transmittance", 0.00099996, False, "0.001000"),
-        ("transmittance", 1.2342e-7, False, "1.234×10⁻⁷"),
-        ("transmittance", 0.0, False, "0"),
-        ("transmittance", -0.78512, True, "−0.785"),
-        ("reflectance", -math.inf, True, "−∞"),
-        ("insertion_loss_dB", 0.0004, False, "0.000"),
-        ("insertion_loss_dB", -0.0004, False, "0.000"),
-        ("insertion_loss_dB", 5671.23, False, "5671.2"),
-        ("shielding_effectiveness_dB", math.inf, False, "∞"),
-        ("insertion_phase_delay_deg", -12.346, False, "−12.35"),
-        ("group_delay_s", 35.35534, False, "35.36"),
-        ("group_delay_s", 123460.0, False, "1.235×10⁵"),
-        ("group_delay_s", math.nan, False, "–"),
+        ("transmittance", 1.0, "", "1.000"),
+        ("transmittance", 0.99996, "", "1.000"),
+        ("transmittance", 0.83456, "", "0.8346"),
+        ("transmittance", 0.0012342, "", "0.001234"),
+        ("transmittance", 0.00099996, "", "0.001000"),
+        ("transmittance", 1.2342e-7, "", "1.234×10⁻⁷"),
+        ("transmittance", 0.0, "", "0"),
+        ("transmittance", -0.78512, "dB", "−0.785"),
+        ("transmittance", 91.7371, "%", "91.74"),
+        ("transmittance", 100.0, "%", "100.0"),
+        ("transmittance", 0.0351, "%", "0.03510"),
+        ("reflectance", -math.inf, "dB", "−∞"),
+        ("insertion_loss_dB", 0.0004, "", "0.000"),
+        ("insertion_loss_dB", -0.0004, "", "0.000"),
+        ("insertion_loss_dB", 5671.23, "", "5671.2"),
+        ("shielding_effectiveness_dB", math.inf, "", "∞"),
+        ("insertion_phase_delay_deg", -12.346, "", "−12.35"),
+        ("group_delay_s", 35.35534, "", "35.36"),
+        ("group_delay_s", 123460.0, "", "1.235×10⁵"),
+        ("group_delay_s", math.nan, "", "–"),
     ],
 )
-def test_numbers(quantity: str, value: float, decibels: bool, text: str) -> None:
-    """Fractions have four digits, decibels three decimals, degrees two; infinity is a sign."""
-    assert number_text(quantity, value, decibels=decibels) == text
+def test_numbers(quantity: str, value: float, unit: str, text: str) -> None:
+    """Fractions and per cent have four digits, decibels three decimals, degrees two; infinity is a sign."""
+    assert number_text(quantity, value, unit) == text
 
 
 @pytest.mark.parametrize(

@@ -8,6 +8,7 @@ from PySide6.QtWidgets import QApplication
 from app.document import edits
 from app.document.document import Cell, Selection
 from app.document.edit import Edit
+from app.document.view import POWERS
 from stackcore.job.records import LayerRecord
 from stackcore.units import Dimension, parse_measure
 from tests.app.window.conftest import Bench
@@ -68,7 +69,7 @@ def one_step(dice: random.Random, bench: Bench) -> None:
     elif kind < 0.95 and count:
         bench.session.select(Selection(stack, tuple(sorted(dice.sample(range(count), min(count, 2))))))
     else:
-        bench.view.set(quantity=dice.choice(QUANTITIES), decibels=dice.random() < 0.5)
+        bench.view.set(quantity=dice.choice(QUANTITIES), power=dice.choice(POWERS))
     if len(bench.session.record.stacks) > 4:
         bench.trigger("stack.delete")
 

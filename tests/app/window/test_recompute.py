@@ -116,7 +116,7 @@ def test_moving_the_marker_asks_for_its_point(qtbot: QtBot, bench: Bench) -> Non
     qtbot.waitUntil(bench.settled)
     assert bench.panel.answers[-1].question.marker_angle == pytest.approx(np.pi / 4)
     count = len(bench.panel.answers)
-    bench.view.set(decibels=True)
+    bench.view.set(power="decibels")
     assert bench.settled()
     assert len(bench.panel.answers) == count
 
@@ -133,7 +133,15 @@ def test_a_text_that_is_no_value_makes_the_result_stale(qtbot: QtBot, bench: Ben
     """While a draft stands, panels are stale and the status line says which text; undo makes it good."""
     bench.session.apply(edits.type_into(Cell(0, 1, "thickness"), "two"))
     assert bench.panel.stale
-    assert "'two' is no value (stacks[0].elements[1].thickness)" in bench.told[-1]
+    assert bench.told[-1] == "Not up to date: thickness of layer 2, a number is missing before 'two'"
+    bench.session.apply(edits.type_into(Cell(1, 0, "thickness"), "4 GHz" + 60 * " " + "?"))
+    assert bench.told[-1].endswith(", and 1 more")
+    bench.session.apply(edits.type_into(Cell(0, 1, "thickness"), "1 mm"))
+    assert bench.told[-1].startswith("Not up to date: thickness of layer 1 in stack B, ")
+    assert len(bench.told[-1]) <= len("Not up to date: ") + LONGEST
+    assert bench.told[-1].endswith("…")
+    bench.session.undo()
+    bench.session.undo()
     bench.session.undo()
     qtbot.waitUntil(lambda: not bench.panel.stale)
     assert bench.told[-1].startswith("41 frequencies")

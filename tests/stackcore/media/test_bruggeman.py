@@ -67,7 +67,7 @@ def test_the_root_in_the_cone(components: list[complex], weights: list[float]) -
 
 
 def test_percolation_of_a_metal() -> None:
-    """A metal in plastic conducts through from a third of its volume: below it ε″ is less than 1, above it is huge."""
+    """A metal in plastic conducts through from a third of its volume: below ε″ is less than 1, above it is huge."""
     loss = [-solved([3.0, 1 - 1e8j], [1 - share, share]).imag for share in (0.30, 0.33, 1 / 3, 0.337, 0.40)]
     assert all(after > before for before, after in pairwise(loss))
     assert loss[1] < 1

@@ -9,7 +9,8 @@ from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.media.mixing_rules import RULES, hashin_shtrikman_bounds, wiener_bounds
 
 # εᵢ, εₕ, f, Wiener low, Hashin-Shtrikman low, Lichtenecker, Bruggeman, Looyenga, Hashin-Shtrikman high, Wiener
-# high: A. H. Sihvola, Electromagnetic Mixing Formulas and Applications (1999), formulas recalled, values re-derived.
+# high: A. H. Sihvola, Electromagnetic Mixing Formulas and Applications (1999), formulas recalled, values
+# re-derived.
 ROWS = [
     (10, 1, 0.3, 1.36986, 1.87097, 1.99526, 2.26121, 2.44037, 3.07692, 3.70000),
     (3.78, 1, 0.5, 1.58159, 1.94989, 1.94422, 2.09650, 2.09162, 2.19582, 2.39000),

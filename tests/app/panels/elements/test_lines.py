@@ -3,7 +3,15 @@
 from app.document import edits
 from app.document.document import Cell
 from app.document.session import Session
-from app.panels.elements.columns import ALL_COLUMNS, LAYER_COLUMNS, THICKNESS, columns_of
+from app.panels.elements.columns import (
+    ALL_COLUMNS,
+    CAPACITANCE,
+    INDUCTANCE,
+    LAYER_COLUMNS,
+    RESISTANCE,
+    THICKNESS,
+    columns_of,
+)
 from app.panels.elements.lines import cell_of, lines_of, with_unit
 from stackcore.units import Dimension, parse_measure
 
@@ -29,10 +37,16 @@ def test_cells_that_can_be_typed_into(session: Session) -> None:
 
 
 def test_columns_of_sheets_only_with_a_sheet(session: Session) -> None:
-    """Resistance, inductance and capacitance are there when the stack has a sheet."""
-    assert columns_of(session.record.stacks[0]) == LAYER_COLUMNS
+    """The resistance is there when the stack has a sheet, the rest when it is used, drafted or asked for."""
+    assert columns_of(session.document, 0, rare=True) == LAYER_COLUMNS
     session.apply(edits.add_sheet(0, 0))
-    assert columns_of(session.record.stacks[0]) == ALL_COLUMNS
+    assert columns_of(session.document, 0) == (*LAYER_COLUMNS, RESISTANCE)
+    assert columns_of(session.document, 0, rare=True) == ALL_COLUMNS
+    session.apply(edits.type_into(Cell(0, 0, "capacitance"), "1 pF"))
+    assert columns_of(session.document, 0) == (*LAYER_COLUMNS, RESISTANCE, CAPACITANCE)
+    session.apply(edits.type_into(Cell(0, 0, "capacitance"), ""))
+    session.apply(edits.type_into(Cell(0, 0, "inductance"), "much"))
+    assert columns_of(session.document, 0) == (*LAYER_COLUMNS, RESISTANCE, INDUCTANCE)
 
 
 def test_bare_number_shows_the_unit_it_means() -> None:

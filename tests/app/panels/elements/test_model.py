@@ -13,7 +13,7 @@ from app.document import edits
 from app.document.document import Cell, Selection
 from app.document.edit import Edit
 from app.document.session import Session
-from app.panels.elements.columns import ALL_COLUMNS
+from app.panels.elements.columns import columns_of
 from app.panels.elements.lines import lines_of
 from app.panels.elements.model import ElementsModel
 from app.panels.tables.delegate import Ask
@@ -34,9 +34,8 @@ def shown(model: ElementsModel) -> list[list[object]]:
 def expected(session: Session) -> list[list[object]]:
     """Return all texts as the document has them now."""
     stack = session.selection.stack
-    has_sheet = any(hasattr(element, "kind") for element in session.record.stacks[stack].elements)
-    width = len(ALL_COLUMNS) if has_sheet else 4
-    return [[cell.text for cell in line.cells[:width]] for line in lines_of(session.document, stack)]
+    columns = columns_of(session.document, stack)
+    return [[line.cell(column).text for column in columns] for line in lines_of(session.document, stack)]
 
 
 def edit_of(kind: int, a: int, b: int, session: Session) -> Edit:
@@ -54,6 +53,8 @@ def edit_of(kind: int, a: int, b: int, session: Session) -> Edit:
         lambda: edits.type_into(Cell(stack, row, "thickness"), f"{b % 5} mm"),
         lambda: edits.type_into(Cell(stack, row, "thickness"), "thin"),
         lambda: edits.type_into(Cell(stack, row, "material"), "copper"),
+        lambda: edits.type_into(Cell(stack, row, "capacitance"), f"{b % 3} pF"),
+        lambda: edits.type_into(Cell(stack, row, "inductance"), "" if b % 2 else "20 pH"),
         lambda: edits.type_into(Cell(stack, -1, "back"), "metal" if a % 2 else "air"),
         lambda: edits.add_stack(),
         lambda: edits.duplicate_stack(stack),
@@ -63,7 +64,7 @@ def edit_of(kind: int, a: int, b: int, session: Session) -> Edit:
     return made[kind % len(made)]()
 
 
-steps = st.lists(st.tuples(st.integers(0, 16), st.integers(0, 20), st.integers(0, 20)), max_size=16)
+steps = st.lists(st.tuples(st.integers(0, 18), st.integers(0, 20), st.integers(0, 20)), max_size=16)
 
 
 @given(steps=steps)
@@ -74,11 +75,11 @@ def test_model_tells_the_truth_through_everything(steps: list[tuple[int, int, in
     session = make_session()
     model, tester = checked(session)
     for kind, a, b in steps:
-        if kind == 14:
+        if kind == 16:
             session.undo()
-        elif kind == 15:
+        elif kind == 17:
             session.redo()
-        elif kind == 16:
+        elif kind == 18:
             session.select(Selection(a % 3))
         else:
             session.apply(edit_of(kind, a, b, session))
@@ -90,6 +91,21 @@ def test_model_tells_the_truth_through_everything(steps: list[tuple[int, int, in
         session.redo()
     assert shown(model) == expected(session)
     del tester, model
+
+
+@pytest.mark.usefixtures("qapp")
+def test_rare_columns_come_when_asked_for_and_stay_where_used(session: Session) -> None:
+    """Asked for, both columns show with a sheet; no longer asked for, only the one in use stays."""
+    model, tester = checked(session)
+    model.show_rare_columns(True)
+    assert [column.title for column in model.columns][4:] == []
+    session.apply(edits.add_sheet(0, 0))
+    assert [column.title for column in model.columns][4:] == ["Resistance", "Inductance", "Capacitance"]
+    assert model.setData(model.index(1, 6), "1 pF")
+    model.show_rare_columns(False)
+    assert [column.title for column in model.columns][4:] == ["Resistance", "Capacitance"]
+    assert model.index(1, 5).data() == "1 pF"
+    assert tester is not None
 
 
 @pytest.mark.usefixtures("qapp")

@@ -70,11 +70,11 @@ def test_insert_at_the_front_row_adds_first(shown: Shown) -> None:
 
 
 def test_shift_insert_adds_a_sheet(shown: Shown) -> None:
-    """Shift+Insert puts in a sheet, shows its columns and has its resistance current."""
+    """Shift+Insert puts in a sheet, shows its column and has its resistance current."""
     shown.go(1, 3)
     press(Key.Key_Insert, Shift)
 
-    assert shown.texts()[2] == ["2", "Sheet", "", "", "377 ohm/sq", "", ""]
+    assert shown.texts()[2] == ["2", "Sheet", "", "", "377 ohm/sq"]
     assert shown.at() == (2, 4)
 
 
@@ -165,7 +165,7 @@ def test_cut_and_paste_a_sheet(shown: Shown) -> None:
     shown.session.apply(edits.type_into(Cell(0, 3, "capacitance"), "0,5 pF"))
     shown.session.apply(edits.type_into(Cell(0, 3, "resistance"), ""))
     sheet = shown.session.record.stacks[0].elements[3]
-    shown.go(4, 6)
+    shown.go(4, 5)
     press(Key.Key_X, Control)
     shown.go(0, 2)
     press(Key.Key_V, Control)

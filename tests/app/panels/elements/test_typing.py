@@ -216,6 +216,7 @@ def test_parts_of_a_sheet_come_and_go(shown: Shown) -> None:
     shown.go(3, THICKNESS)
     shown.panel.add_sheet()
     assert shown.at() == (4, 4)
+    shown.panel.show_rare_columns(True)
     shown.go(4, 5)
     shown.keys("20 pH")
     press(Key.Key_Return)

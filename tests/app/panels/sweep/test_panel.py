@@ -218,10 +218,12 @@ def test_every_quantity_can_be_chosen_and_explains_itself(bench: Bench) -> None:
             assert f"In {quantity.unit}." in tip
 
 
-def test_decibels_are_offered_where_they_mean_something(bench: Bench) -> None:
-    """A fraction of power can be shown in dB; a loss is in dB already."""
-    _choose(bench.panel.scale, True)
-    assert bench.view.state.decibels
+def test_power_is_offered_as_fraction_per_cent_and_decibels(bench: Bench) -> None:
+    """A fraction of power can be shown in per cent or in dB; a loss is in dB already."""
+    _choose(bench.panel.scale, "percent")
+    assert bench.view.state.power == "percent"
+    _choose(bench.panel.scale, "decibels")
+    assert bench.view.state.power == "decibels"
     bench.view.set(quantity="insertion_loss_dB")
     assert not bench.panel.scale.isVisible()
     bench.view.set(quantity="reflectance")

@@ -1,0 +1,1 @@
+"""Tests of the health check of media."""
