@@ -5,7 +5,7 @@ from collections.abc import Sequence
 from pathlib import Path
 from typing import Final
 
-from app.window.display import display_missing
+from app.window.display import display_fault
 from stackcore.cli import main as command
 from stackcore.cli.telling import one_line, tell
 from stackcore.cli.window import looks_like_a_file
@@ -14,7 +14,7 @@ from stackcore.errors import Fault
 KNOWN: Final = ("-h", "--help", "--version")
 
 NO_DISPLAY: Final = (
-    "there is no display to open the window on; allowed: slabwright picture JOB --png OUT draws it without one, "
+    "there is no display to open the window on ({}); allowed: slabwright picture JOB --png OUT draws it without one, "
     "slabwright sweep JOB --csv OUT computes without one"
 )
 
@@ -54,8 +54,8 @@ def _unknown(option: str) -> int:
 def _open(job: Path | None) -> int:
     if job is not None and not job.is_file():
         return tell([Fault(str(job), "there is no such file", "a job file")])
-    if display_missing():
-        return one_line(NO_DISPLAY)
+    if fault := display_fault():
+        return one_line(NO_DISPLAY.format(fault))
     from app.window.open import open_window
 
     return open_window(job)

@@ -2,7 +2,8 @@
 #
 #   set_up EXTRAS [GROUP]     afterwards $python is the interpreter of the checkout's own environment
 #
-# Idempotent, and quick when nothing changed: what was installed is remembered by its fingerprint.
+# Idempotent, and quick when nothing changed: what was installed is remembered by its fingerprint. Python runs
+# isolated (-I) throughout, so that neither PYTHONPATH nor a module in the current folder gets in its way.
 
 say() { printf '%s\n' "$*" >&2; }
 
@@ -28,12 +29,12 @@ apt_packages() {
 }
 
 good_python() {
-    "$1" -c 'import sys; raise SystemExit(sys.version_info < (3, 11))' 2>/dev/null &&
-        "$1" -c 'import ensurepip, venv' 2>/dev/null
+    "$1" -I -c 'import sys; raise SystemExit(sys.version_info < (3, 11))' 2>/dev/null &&
+        "$1" -I -c 'import ensurepip, venv' 2>/dev/null
 }
 
 find_python() {
-    for candidate in python3 python3.13 python3.12 python3.11 python3.14; do
+    for candidate in "$root/.venv/bin/python" python3 python3.13 python3.12 python3.11 python3.14; do
         if command -v "$candidate" >/dev/null 2>&1 && good_python "$candidate"; then
             printf '%s\n' "$candidate"
             return 0
@@ -66,8 +67,11 @@ missing_qt_packages() {
 }
 
 fingerprint() {
-    { cat "$root/pyproject.toml" "$root/.constraints.txt"; "$1" -V; printf '%s %s\n' "$root" "$2"; } | cksum
+    { cat "$root/pyproject.toml" "$root/.constraints.txt"; "$1" -V; printf '%s\n' "$root"; } | cksum
 }
+
+# installed PATTERN: whether a set-up that fits was remembered.
+installed() { grep -qx "$1" "$venv/.slabwright" 2>/dev/null; }
 
 set_up() {
     extras=$1
@@ -83,15 +87,16 @@ set_up() {
         apt_packages python3 python3-venv
         base=$(find_python) || { say "Python 3.11 or newer with venv is needed."; exit 1; }
     fi
-    wanted=$(fingerprint "$base" "$extras $group")
-    if [ -x "$python" ] && [ "$(cat "$venv/.slabwright" 2>/dev/null)" = "$wanted" ]; then
+    # What holds the test packages as well is enough for the window alone.
+    wanted="$(fingerprint "$base") $extras"
+    if [ -x "$python" ] && installed "$wanted ${group:-.*}"; then
         return 0
     fi
     say "Setting up the environment in .venv (once, and again when its list changes)"
-    "$python" -c '' 2>/dev/null || { rm -rf "$venv"; "$base" -m venv "$venv"; }
-    "$python" -m pip install -q --disable-pip-version-check --upgrade 'pip>=25.1' >&2
+    good_python "$python" || { rm -rf "$venv"; "$base" -I -m venv "$venv"; }
+    "$python" -I -m pip install -q --disable-pip-version-check --upgrade 'pip>=25.1' >&2
     set -- -c "$root/.constraints.txt" -e "$root[$extras]"
     [ -z "$group" ] || set -- "$@" --group "$root/pyproject.toml:$group"
-    "$python" -m pip install -q --disable-pip-version-check "$@" >&2
-    printf '%s\n' "$wanted" >"$venv/.slabwright"
+    "$python" -I -m pip install -q --disable-pip-version-check "$@" >&2
+    printf '%s\n' "$wanted $group" >"$venv/.slabwright"
 }

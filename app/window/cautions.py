@@ -9,9 +9,12 @@ from dataclasses import dataclass
 from typing import Final
 
 from app.document.view import ViewState
+from app.series.curves import takes_long
+from app.series.shown import SHOWN
 from app.series.texts import BEYOND_PRACTICAL, PRACTICAL_DECIBELS
 from stackcore.job.resolve import Job
 from stackcore.propagation.response import Response
+from stackcore.quantities import QUANTITIES
 
 STANDING: Final = "Infinite flat sheets, plane wave; verify by test."
 """Holds for every result and is always shown."""
@@ -139,7 +142,7 @@ def cautions(job: Job, stack: int, view: ViewState, response: Response | None) -
     shows_shielding = view.quantity == "shielding_effectiveness_dB"
     if record.back == "metal" or shows_shielding:
         found.append(MATERIAL_FIGURE)
-    if shows_shielding and response is not None and _deep(response):
+    if response is not None and _deep(response, view.quantity):
         found.append(BEYOND)
     if _outside_range(job, stack):
         found.append(VALID_RANGE)
@@ -150,9 +153,12 @@ def cautions(job: Job, stack: int, view: ViewState, response: Response | None) -
     return tuple(found)
 
 
-def _deep(response: Response) -> bool:
-    shielding = response.shielding_effectiveness_dB
-    return bool((shielding[shielding < float("inf")] > PRACTICAL_DECIBELS).any())
+def _deep(response: Response, quantity: str) -> bool:
+    """Whether a loss that is shown is somewhere more than a real wall keeps; what is not worked out yet is not."""
+    if not SHOWN[quantity].practical or takes_long(response, quantity):
+        return False
+    loss = QUANTITIES[quantity].values(response)
+    return bool((loss[loss < float("inf")] > PRACTICAL_DECIBELS).any())
 
 
 def _outside_range(job: Job, stack: int) -> bool:

@@ -44,11 +44,14 @@ class HelpPanel(QWidget):
         self.refresh()
 
     def show_page(self, name: str, anchor: str = "") -> None:
-        """Show a page, scrolled to `anchor` when it has one."""
+        """Show a page, scrolled to `anchor` when it has one; another page than before begins at its top."""
+        turned = name != self._shown
         self._shown = name
         self.refresh()
         if anchor:
             self._text.scrollToAnchor(anchor)
+        elif turned:
+            self._text.verticalScrollBar().setValue(0)
 
     def refresh(self) -> None:
         """Make the shown page anew, where the reader is."""

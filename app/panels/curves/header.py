@@ -28,6 +28,8 @@ class Header(QWidget):
         self.worst.setTextInteractionFlags(Qt.TextInteractionFlag.TextSelectableByMouse)
         self.worst.setAccessibleName("Worst value")
         self.hidden = QLabel()
+        self.doubt = QLabel()
+        self.doubt.setAccessibleName("Beyond material data")
         self.state = QLabel()
         self.state.setAccessibleName("State of the curves")
         self.legend = Legend(theme)
@@ -38,9 +40,10 @@ class Header(QWidget):
         self.add.setFocusPolicy(Qt.FocusPolicy.TabFocus)
         self.add.clicked.connect(self.marker_wanted.emit)
         flow = FlowLayout(self, across=16, down=2)
-        for part in (self.worst, self.hidden, self.state, self.legend, self.add):
+        for part in (self.worst, self.hidden, self.doubt, self.state, self.legend, self.add):
             flow.addWidget(part)
         self.hidden.hide()
+        self.doubt.hide()
         self.state.hide()
         self.legend.hide()
         self._stale = self._busy = False
@@ -52,7 +55,8 @@ class Header(QWidget):
 
     def set_theme(self, theme: Theme) -> None:
         """Take the colours of a theme."""
-        for label, ink in ((self.worst, theme.text), (self.hidden, theme.warning), (self.state, theme.warning)):
+        for label in (self.worst, self.hidden, self.doubt, self.state):
+            ink = theme.text if label is self.worst else theme.warning
             palette = label.palette()
             palette.setColor(QPalette.ColorRole.WindowText, QColor(ink))
             label.setPalette(palette)
@@ -67,6 +71,13 @@ class Header(QWidget):
         """Say what the plot cannot show; empty for nothing."""
         self.hidden.setText(sentence)
         self.hidden.setVisible(bool(sentence))
+
+    def set_doubt(self, sentence: str) -> None:
+        """Say why parts of the curves are dotted; empty for nothing."""
+        self.doubt.setText("Dotted parts: beyond material data" if sentence else "")
+        self.doubt.setToolTip(f"{sentence}.")
+        self.doubt.setAccessibleDescription(f"{sentence}.")
+        self.doubt.setVisible(bool(sentence))
 
     def set_stale(self, stale: bool) -> None:
         """Say that the curves are those of an earlier job."""

@@ -24,6 +24,7 @@ from app.panels.curves.scale import FrequencyScale
 from app.series.axis import frequency_axis, quantity_axis
 from app.series.curves import Curve, curves_of, takes_long
 from app.series.texts import frequency_text
+from app.series.validity import doubt_sentence
 from stackcore.arrays import FloatArray
 from stackcore.errors import Severity
 
@@ -255,10 +256,12 @@ class CurvesPanel(QWidget):
         label = drawing.quantity_label(state)
         self.header.set_worst(words.worst_sentence(curves))
         self.header.set_hidden(words.hidden_sentence(curves))
+        doubt = doubt_sentence(self._session.job, curves[0].doubts) if curves else ""
+        self.header.set_doubt(doubt)
         self._show_legend()
         empty = words.empty_sentence(state.quantity, curves)
         self.plot.note_layer.set_text(empty)
-        said = words.description(curves)
+        said = words.description(curves) + (f" Dotted where {doubt}." if doubt else "")
         self.plot.setAccessibleName(f"Curves of {label.lower()}")
         self.plot.setAccessibleDescription(f"{'Last good result. ' if self._stale else ''}{empty} {said}".strip())
 
@@ -290,20 +293,23 @@ class CurvesPanel(QWidget):
         curve = self._curves[index]
         spot = Spot(self.scale.position(float(curve.x[point])), float(curve.y[point]), self._colours[index])
         self.plot.pointer_layer.point(spot)
-        self.pointed.emit(words.point_sentence(curve, point))
-        self._hint_worst(at)
+        guess = doubt_sentence(self._session.job, curve.doubts, point)
+        self.pointed.emit("   ".join(part for part in (words.point_sentence(curve, point), guess) if part))
+        self._hint(at, f"Dotted: {guess}." if guess and found[2] <= _REACH else "")
 
-    def _hint_worst(self, at: QPointF) -> None:
-        """Say the worst point under the mouse in a tooltip."""
+    def _hint(self, at: QPointF, guess: str) -> None:
+        """Say the worst point under the mouse in a tooltip, and why the curve there is dotted."""
         frame = self.plot.frame()
+        told = [guess] if guess else []
         for index, spot in self._worst_spots.items():
             gap = QPointF(frame.across(spot.position), frame.down(spot.value)) - at
             if self._view.state.worst_shown and gap.manhattanLength() <= _REACH:
-                text = words.curve_sentence(self._curves[index])
-                place = (at + self.plot.area_rect().topLeft()).toPoint()
-                QToolTip.showText(self.plot.mapToGlobal(place), text, self.plot)
-                return
-        if QToolTip.isVisible():
+                told.insert(0, words.curve_sentence(self._curves[index]))
+                break
+        if told:
+            place = (at + self.plot.area_rect().topLeft()).toPoint()
+            QToolTip.showText(self.plot.mapToGlobal(place), "\n".join(told), self.plot)
+        elif QToolTip.isVisible():
             QToolTip.hideText()
 
     def _choose_curve(self, at: QPointF) -> None:

@@ -33,7 +33,8 @@ class MaterialNames:
             name: label if counts[label.casefold()] == 1 else f"{label} ({name})" for name, label in labels.items()
         }
         self._shown[PERFECT_METAL] = METAL_SHOWN
-        self._by_text = {shown.casefold(): name for name, shown in self._shown.items()}
+        by_name = {name.casefold(): name for name in (*ALWAYS_DEFINED, PERFECT_METAL, *labels)}
+        self._by_text = by_name | {shown.casefold(): name for name, shown in self._shown.items()}
 
     def shown(self, name: str) -> str:
         """Return the text that stands for the material called `name`; a name the job lacks stands for itself."""
@@ -42,8 +43,8 @@ class MaterialNames:
     def given(self, text: str) -> str:
         """Return the name or the library key that `text` stands for; other text comes back as it is.
 
-        What is shown, also in the wrong case, and ``library: label`` are known here; names, labels and library
-        keys are known to the edit that takes the result.
+        What is shown and names, also in the wrong case, ``library: label`` and, when nothing of the job is called
+        so, the label alone are known here; labels and library keys are known to the edit that takes the result.
         """
         text = text.strip()
         if text in self._shown:
@@ -78,4 +79,6 @@ def library_offers() -> Mapping[str, str]:
 
 @cache
 def _library_texts() -> Mapping[str, str]:
-    return {text.casefold(): key for key, text in library_offers().items()}
+    """Return text in lower case -> library key: the offers, and what of them stands behind the mark."""
+    offers = {text.casefold(): key for key, text in library_offers().items()}
+    return {text.removeprefix(LIBRARY_MARK): key for text, key in offers.items()} | offers

@@ -23,15 +23,15 @@ def share_text(share: float) -> str:
 
     Examples
     --------
-    >>> share_text(0.08259), share_text(2.5e-4), share_text(3e-9)
-    ('8.26 %', '0.025 %', '−85.2 dB')
+    >>> share_text(0.08259), share_text(0.9), share_text(2.5e-4), share_text(3e-9)
+    ('8.26 %', '90.0 %', '0.025 %', '−85.2 dB')
     """
     if share >= 0.9995:
         return f"{100 * share:.4g} %" if share < 0.99995 else "100 %"
     if share >= 1e-2:
-        return f"{100 * share:.3g} %"
+        return f"{100 * share:#.3g} %"
     if share >= 1e-4:
-        return f"{100 * share:.2g} %"
+        return f"{100 * share:#.2g} %"
     if share >= PRACTICAL_LIMIT:
         return f"{MINUS}{-10 * math.log10(share):.1f} dB"
     return f"under {MINUS}400 dB" if share > 0 else "0 %"

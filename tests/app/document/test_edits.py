@@ -173,6 +173,17 @@ def test_a_dragged_thickness_reads_well(metres: float, text: str) -> None:
     assert session.undo_sentence == f"set thickness of layer 1 to {text}"
 
 
+def test_a_bare_number_is_undone_with_its_unit() -> None:
+    """The sentence of a typed number has the unit it was read in; a text without a value stays as it was typed."""
+    session = harbour()
+    session.apply(edits.type_into(Cell(0, 0, "thickness"), "2"))
+    assert session.undo_sentence == "set thickness of layer 1 to 2 mm"
+    session.apply(edits.type_into(job_cell("sweep.frequency.stop"), "13"))
+    assert session.undo_sentence == "set last frequency to 13 GHz"
+    session.apply(edits.type_into(Cell(0, 0, "thickness"), "two"))
+    assert session.undo_sentence == "set thickness of layer 1 to two"
+
+
 def test_materials() -> None:
     """Materials are added, changed, renamed everywhere and removed when nothing is made of them."""
     session = harbour()

@@ -40,7 +40,7 @@ def test_a_view_tells_each_change_once() -> None:
     ],
 )
 def test_what_no_view_can_be(make: Callable[[], ViewState], field: str) -> None:
-    """A quantity, a way to show power or a polarization that does not exist and a marker that is no frequency are refused."""
+    """A quantity, a way to show power or a polarization there is not, and a marker of no frequency, are refused."""
     with pytest.raises(ValueError, match=field):
         make()
 

@@ -53,6 +53,13 @@ def test_shielding_is_a_material_figure_and_deep_shielding_beyond_the_practical(
     assert cautions(small_job(), 2, SHIELDING, None) == (MATERIAL_FIGURE,)
 
 
+def test_an_insertion_loss_beyond_the_practical_is_told() -> None:
+    """A loss of thousands of dB is beyond practice under either name, a return loss never."""
+    assert notes(small_job(), 2, ViewState(quantity="insertion_loss_dB")) == (BEYOND,)
+    assert notes(small_job(), 0, ViewState(quantity="insertion_loss_dB")) == ()
+    assert notes(small_job(), 2, ViewState(quantity="return_loss_dB")) == (CONDUCTIVE_COAT,)
+
+
 def test_a_conductive_layer_and_a_steep_angle_have_their_notes() -> None:
     """A conductor looked at in transmission warns of static and lightning, 85° of finite size."""
     assert notes(small_job(), 2, ViewState()) == (CONDUCTIVE_COAT,)

@@ -7,7 +7,15 @@ from pathlib import Path
 import pytest
 from PySide6.QtCore import QMimeData, QPoint, QPointF, Qt, QUrl
 from PySide6.QtGui import QDragEnterEvent, QDropEvent, QGuiApplication, QKeySequence
-from PySide6.QtWidgets import QAbstractItemView, QAbstractScrollArea, QApplication, QDockWidget, QMenu, QWidget
+from PySide6.QtWidgets import (
+    QAbstractItemView,
+    QAbstractScrollArea,
+    QApplication,
+    QDockWidget,
+    QMenu,
+    QTextBrowser,
+    QWidget,
+)
 
 from app.document import edits
 from app.document.document import Selection
@@ -209,12 +217,30 @@ def test_help_is_local_beside_and_at_the_quantity(bench: Bench) -> None:
     bench.press(Qt.Key.Key_F1)
     assert help_panel.isVisible()
     assert "Conventions and definitions" in help_panel.shown_text()
+    text = help_panel.findChild(QTextBrowser)
+    assert text is not None
+    bar = text.verticalScrollBar()
+    assert bar.value() > 0
     bench.trigger("help.keyboard")
     assert "Ctrl+Shift+S" in help_panel.shown_text()
+    assert bar.value() == 0
     bench.trigger("help.cautions")
     assert "verify by test" in help_panel.shown_text()
     bench.trigger("help.about")
     assert "LGPL" in help_panel.shown_text()
+
+
+def test_how_power_is_shown_stays_for_the_next_job_and_the_next_window(
+    bench: Bench, make_bench: MakeWindow
+) -> None:
+    """Per cent once chosen is chosen for the next job, and in the next window too."""
+    bench.view.set(power="percent")
+    bench.trigger("file.new")
+    bench.settle()
+    assert bench.view.state.power == "percent"
+    assert {curve.unit for curve in bench.window.panels.curves.curves} == {"%"}
+    other = make_bench(small_job())
+    assert other.view.state.power == "percent"
 
 
 def test_diagnostics_go_to_the_clipboard(bench: Bench) -> None:

@@ -53,6 +53,19 @@ def test_every_offer_is_understood() -> None:
     assert all(names.given(text.upper()) == key for key, text in library_offers().items())
 
 
+def test_a_label_of_the_library_alone_is_understood() -> None:
+    """Copper typed as one says it is the library's copper, unless the job has a material of that name."""
+    assert MaterialNames(with_materials()).given("copper") == "metals/copper"
+    assert MaterialNames(with_materials(skin("a", "Copper"))).given("copper") == "a"
+    assert MaterialNames(with_materials(skin("copper", "Foil"))).given("COPPER") == "copper"
+
+
+def test_names_are_known_in_any_case() -> None:
+    """Air, a perfect conductor and the names of the job are meant however they are spelled."""
+    names = MaterialNames(with_materials(skin("skin-a", "Skin")))
+    assert [names.given(text) for text in ("AIR", "Metal", "Skin-A")] == ["air", "metal", "skin-a"]
+
+
 def test_other_text_comes_back() -> None:
     """What is not known here is left to the edit that takes it."""
     assert MaterialNames(with_materials()).given(" metals/copper ") == "metals/copper"

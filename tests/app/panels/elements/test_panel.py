@@ -343,12 +343,16 @@ def test_menu_of_stacks(shown: Shown, text: str, names: list[str]) -> None:
 
 
 def test_fault_of_the_current_cell_is_written_out(shown: Shown) -> None:
-    """The reason stands under the table while the cell is current, and elsewhere how many there are."""
+    """The reason stands under the table, with its place while another cell is current."""
     assert note(shown) == ""
     shown.go(1, 3)
     shown.keys("3 mmm")
     press(Key.Key_Return)
-    assert note(shown) == "One text in this table is not a value yet; the curves show the values of before."
+    assert note(shown).startswith("Thickness of layer 1: Unknown unit 'mmm', did you mean 'mm'? Allowed: a length")
+    assert note(shown).endswith("for example '2 mm'. The curves show the values of before.")
+    shown.session.apply(edits.type_into(Cell(0, 1, "material"), "unobtainium"))
+    assert note(shown).endswith(" 1 more in this table. The curves show the values of before.")
+    shown.session.undo()
     press(Key.Key_Up)
     assert note(shown).startswith("Unknown unit 'mmm', did you mean 'mm'? Allowed: a length")
     shown.session.undo()

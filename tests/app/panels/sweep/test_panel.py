@@ -13,7 +13,7 @@ from pytestqt.qtbot import QtBot
 from app.document import edits
 from app.document.document import job_cell
 from app.document.session import Session
-from app.document.view import View
+from app.document.view import POWERS, View
 from app.look.theme import DARK, LIGHT
 from app.panels.sweep import SweepPanel
 from app.panels.sweep.panel import ANGLES, LIST, POINTS, START, STOP, quantity_tip
@@ -220,10 +220,11 @@ def test_every_quantity_can_be_chosen_and_explains_itself(bench: Bench) -> None:
 
 def test_power_is_offered_as_fraction_per_cent_and_decibels(bench: Bench) -> None:
     """A fraction of power can be shown in per cent or in dB; a loss is in dB already."""
-    _choose(bench.panel.scale, "percent")
-    assert bench.view.state.power == "percent"
-    _choose(bench.panel.scale, "decibels")
-    assert bench.view.state.power == "decibels"
+    chosen = []
+    for power in POWERS:
+        _choose(bench.panel.scale, power)
+        chosen.append((bench.view.state.power, bench.panel.scale.currentText()))
+    assert chosen == [("fraction", "as a fraction"), ("percent", "in %"), ("decibels", "in dB")]
     bench.view.set(quantity="insertion_loss_dB")
     assert not bench.panel.scale.isVisible()
     bench.view.set(quantity="reflectance")

@@ -30,7 +30,9 @@ from tests.app.panels.wall.walls import EvenFont, sandwich, wave_through
         (0.99996, "100 %"),
         (0.9997, "99.97 %"),
         (0.08259, "8.26 %"),
-        (0.5, "50 %"),
+        (0.5, "50.0 %"),
+        (0.8996, "90.0 %"),
+        (0.0003, "0.030 %"),
         (0.00412, "0.41 %"),
         (2.5e-4, "0.025 %"),
         (3e-9, "−85.2 dB"),
@@ -108,7 +110,7 @@ def test_the_wall_in_words() -> None:
     assert text == (
         "Wall: front air, 3 layers and 1 sheet, back air. 1: Glass-fibre skin, 1 mm. 2: Foam core, 6 mm. "
         "3: sheet, 377 ohm/sq, 20 pH. 4: Glass-fibre skin, 0.8 mm. "
-        "At 10 GHz, 30°, TE: reflected 25 %, transmitted 50 %, absorbed 25 %."
+        "At 10 GHz, 30°, TE: reflected 25.0 %, transmitted 50.0 %, absorbed 25.0 %."
     )
     assert words.described(wall_of(document, 2), None) == "Wall: front air, no layers, back air."
 
