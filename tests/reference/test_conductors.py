@@ -16,7 +16,7 @@ from tests.reference.published import (
     wall,
 )
 
-CHEN = f"J. Chen, ECE 3317 lecture notes 16, University of Houston (2019) ({READ})"
+CHEN = f"J. Chen, University of Houston, table of skin depths (2019) ({READ})"
 MATULA = f"public table (2018), copper resistivities after Matula 1979 ({READ})"
 SIMMONS = f"public table (2018), aluminium resistivities after Simmons 1960 ({READ})"
 OTT = f"H. W. Ott, EMC Engineering (2009), chapter 6 ({REDERIVED})"

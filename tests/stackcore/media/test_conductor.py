@@ -10,7 +10,7 @@ COPPER = 5.8e7
 """S/m."""
 
 # Frequency in Hz, skin depth of copper in m to two digits.
-# J. Chen, lecture notes 16 of ECE 3317, University of Houston (2019), conductivity 5.8e7 S/m.
+# J. Chen, University of Houston, table of skin depths (2019), conductivity 5.8e7 S/m.
 COPPER_DEPTHS = [
     (1.0, 6.6e-2),
     (10.0, 2.1e-2),
