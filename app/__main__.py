@@ -2,19 +2,21 @@
 
 import sys
 from collections.abc import Sequence
+from importlib.util import find_spec
 from pathlib import Path
 from typing import Final
 
 from app.window.display import display_fault
 from stackcore.cli import main as command
 from stackcore.cli.telling import one_line, tell
-from stackcore.cli.window import looks_like_a_file
+from stackcore.cli.window import looks_like_a_file, toolkit_missing
 from stackcore.errors import Fault
 
 KNOWN: Final = ("-h", "--help", "--version")
 
 NO_DISPLAY: Final = (
-    "there is no display to open the window on ({}); allowed: slabwright picture JOB --png OUT draws it without one, "
+    "there is no display to open the window on ({}); "
+    "allowed: slabwright picture JOB --png OUT draws it without one, "
     "slabwright sweep JOB --csv OUT computes without one"
 )
 
@@ -34,7 +36,13 @@ def main(argv: Sequence[str] | None = None) -> int:
     int
         The exit status: 0 done, 2 the input is wrong or there is no display.
     """
-    arguments = list(sys.argv[1:] if argv is None else argv)
+    try:
+        return _run(list(sys.argv[1:] if argv is None else argv))
+    except ImportError as error:
+        return toolkit_missing(error)
+
+
+def _run(arguments: list[str]) -> int:
     first = arguments[0] if arguments else ""
     if first == "picture":
         from app.window import picture
@@ -54,7 +62,9 @@ def _unknown(option: str) -> int:
 def _open(job: Path | None) -> int:
     if job is not None and not job.is_file():
         return tell([Fault(str(job), "there is no such file", "a job file")])
-    if fault := display_fault():
+    # Where the toolkit is missing too, the import below says so: that comes first.
+    fault = display_fault()
+    if fault and find_spec("PySide6") is not None:
         return one_line(NO_DISPLAY.format(fault))
     from app.window.open import open_window
 

@@ -1,11 +1,11 @@
 """Plane waves through flat multilayer walls: the physics of Slabwright, usable without its window.
 
-    import numpy as np
-    import stackcore as sc
+import numpy as np
+import stackcore as sc
 
-    job = sc.read_job("cover.slabjob")
-    response = sc.solve(job.stacks[0], frequency=np.linspace(8e9, 12e9, 401), angle=np.radians([0, 30, 45]))
-    response.transmittance  # (401, 3, 2): frequency, angle, polarization (TE, TM)
+job = sc.read_job("cover.slabjob")
+response = sc.solve(job.stacks[0], frequency=np.linspace(8e9, 12e9, 401), angle=np.radians([0, 30, 45]))
+response.transmittance  # (401, 3, 2): frequency, angle, polarization (TE, TM)
 """
 
 from stackcore.conventions import CONVENTIONS

@@ -4,9 +4,10 @@ from dataclasses import replace
 from typing import Final, Literal, cast
 
 from app.document.document import STACK_COLUMNS, WHOLE_ROW, Cell
+from app.document.document import material_and_constant as split_column
 from app.document.edit import element_at, refuse, stack_at, with_element, with_stack
 from app.document.library import with_material
-from app.document.material_cells import MATERIAL_COLUMNS, material_text, with_material_text
+from app.document.material_cells import material_columns, material_text, with_material_text
 from app.document.material_edits import material_of
 from app.document.reading import list_text, read_like, read_list, read_points, read_range
 from stackcore.errors import UnitError, nearest
@@ -39,8 +40,8 @@ def columns_of(record: JobRecord, cell: Cell) -> tuple[str, ...]:
         return STACK_COLUMNS
     if cell.column.startswith("material:"):
         name = material_and_constant(cell)[0]
-        material_of(record, name)
-        return tuple(f"material:{name}.{constant}" for constant in MATERIAL_COLUMNS)
+        places = material_columns(material_of(record, name))
+        return tuple(f"material:{name}.{constant}" for constant in places)
     columns = ["title", "notes", "sweep.frequency", "sweep.angle"]
     if isinstance(record.sweep.frequency, FrequencyGrid):
         columns += [f"sweep.frequency.{part}" for part in ("start", "stop", "points", "spacing")]
@@ -59,8 +60,7 @@ def check_cell(record: JobRecord, cell: Cell) -> None:
 
 def material_and_constant(cell: Cell) -> tuple[str, str]:
     """Return the material's name and the constant in a cell such as ``material:skin.permittivity``."""
-    name, _, constant = cell.column.removeprefix("material:").rpartition(".")
-    return name, constant
+    return split_column(cell.column)
 
 
 def place_words(cell: Cell) -> str:

@@ -1,5 +1,6 @@
 """What is designed, as one frozen value: a job that resolves, and the texts typed that are not values yet."""
 
+import re
 from dataclasses import dataclass, replace
 from typing import Final
 
@@ -18,6 +19,9 @@ ELEMENT_COLUMNS: Final = ("material", "thickness", "resistance", "inductance", "
 STACK_COLUMNS: Final = ("name", "front", "back")
 
 
+_IN_A_LIST: Final = re.compile(r"material:(?P<name>.*)\.(?P<constant>[a-z_]+\[\d+\]\.[a-z_]+)", re.DOTALL)
+
+
 @dataclass(frozen=True, slots=True)
 class Cell:
     """One place a person can type into.
@@ -32,8 +36,8 @@ class Cell:
         Of an element ``material``, ``thickness``, ``resistance``, ``inductance``, ``capacitance``; of a stack
         ``name``, ``front``, ``back``; of the job ``title``, ``notes``, ``sweep.frequency``,
         ``sweep.frequency.start`` (``stop``, ``points``, ``spacing``), ``sweep.angle``, ``sweep.angle.start``
-        (``stop``, ``points``) and ``material:skin.permittivity`` (``name``, ``label``, ``permittivity``,
-        ``permeability``, ``loss_tangent``, ``conductivity``, ``source``).
+        (``stop``, ``points``) and ``material:skin.permittivity`` (``name``, ``label``, ``source``, any constant of
+        its model, and ``terms[0].relaxation_time`` of a list).
 
     Examples
     --------
@@ -65,14 +69,31 @@ class Cell:
         if self.column in STACK_COLUMNS:
             return f"stacks[{self.stack}].{self.column}"
         if self.column.startswith("material:"):
-            name, _, constant = self.column.removeprefix("material:").rpartition(".")
-            return join(join("materials", name), constant)
+            name, constant = material_and_constant(self.column)
+            return f"{join('materials', name)}.{constant}"
         return self.column
 
 
 def job_cell(column: str) -> Cell:
     """Return the cell `column` of the whole job, such as ``title`` or ``sweep.frequency.stop``."""
     return Cell(WHOLE_JOB, WHOLE_ROW, column)
+
+
+def material_and_constant(column: str) -> tuple[str, str]:
+    """Return the material's name and the constant in a column.
+
+    Examples
+    --------
+    >>> material_and_constant("material:skin.permittivity")
+    ('skin', 'permittivity')
+    >>> material_and_constant("material:oil 2.1.terms[0].strength")
+    ('oil 2.1', 'terms[0].strength')
+    """
+    found = _IN_A_LIST.fullmatch(column)
+    if found:
+        return found["name"], found["constant"]
+    name, _, constant = column.removeprefix("material:").rpartition(".")
+    return name, constant
 
 
 def material_cell(name: str, constant: str) -> Cell:

@@ -4,6 +4,7 @@ One named function an edit; each returns an `Edit`. A later capability adds a fi
 names here.
 """
 
+from app.document.constant_edits import add_row, remove_row, set_constant, set_model
 from app.document.edit import Edit
 from app.document.element_edits import (
     add_layer,
@@ -43,6 +44,7 @@ __all__ = [
     "Edit",
     "add_layer",
     "add_material",
+    "add_row",
     "add_sheet",
     "add_stack",
     "change_material",
@@ -52,15 +54,18 @@ __all__ = [
     "duplicate_stack",
     "move",
     "remove_material",
+    "remove_row",
     "rename_material",
     "rename_stack",
     "replace_material",
     "set_angle_grid",
     "set_angles",
     "set_back",
+    "set_constant",
     "set_frequency_grid",
     "set_frequency_list",
     "set_front",
+    "set_model",
     "set_notes",
     "set_thickness",
     "set_title",

@@ -2,12 +2,15 @@
 
 from dataclasses import replace
 
-from app.document.document import Document
+from app.document.document import Document, Draft, material_and_constant
 from app.document.edit import Edit, refuse, with_record
 from app.document.library import ALWAYS_DEFINED, PERFECT_METAL, with_material
 from stackcore.errors import Fault, JobError, nearest
+from stackcore.job.inspector import join
+from stackcore.job.materials import library_model, references_of
 from stackcore.job.records import ElementRecord, JobRecord, LayerRecord, MaterialRecord, StackRecord
 from stackcore.media.library import library_entry
+from stackcore.media.models import MODELS
 
 
 def add_material(material: MaterialRecord) -> Edit:
@@ -52,8 +55,7 @@ def remove_material(name: str) -> Edit:
                 [Fault(place, f"{name!r} is used here and cannot be removed", allowed) for place in places]
             )
         rest = tuple(material for material in document.record.materials if material.name != name)
-        cells = f"material:{name}."
-        drafts = (draft for draft in document.drafts if not draft.cell.column.startswith(cells))
+        drafts = without_drafts_of(document, name)
         return with_record(document, replace(document.record, materials=rest), drafts)
 
     return Edit(f"remove material {name}", change)
@@ -90,7 +92,21 @@ def uses_of(record: JobRecord, name: str) -> tuple[str, ...]:
             for row, element in enumerate(stack.elements)
             if isinstance(element, LayerRecord) and element.material == name
         ]
+    for material in record.materials:
+        places += [
+            f"{join('materials', material.name)}.{place}" for place, used in references_of(material) if used == name
+        ]
     return tuple(places)
+
+
+def without_drafts_of(document: Document, name: str) -> tuple[Draft, ...]:
+    """Return the drafts of `document` but for those in the cells of the material called `name`."""
+    return tuple(draft for draft in document.drafts if _material_name(draft) != name)
+
+
+def _material_name(draft: Draft) -> str | None:
+    column = draft.cell.column
+    return material_and_constant(column)[0] if column.startswith("material:") else None
 
 
 def _renamed(document: Document, name: str, material: MaterialRecord) -> Document:
@@ -111,15 +127,25 @@ def _renamed(document: Document, name: str, material: MaterialRecord) -> Documen
         elements = tuple(element(one) for one in old.elements)
         return replace(old, front=follow(old.front), back=follow(old.back), elements=elements)
 
-    changed = replace(_with_materials(record, name, material), stacks=tuple(stack(one) for one in record.stacks))
+    materials = tuple(
+        _following(material if old.name == name else old, name, material.name) for old in record.materials
+    )
+    changed = replace(record, materials=materials, stacks=tuple(stack(one) for one in record.stacks))
     drafts = []
     for draft in document.drafts:
-        head, dot, constant = draft.cell.column.rpartition(".")
-        if head == f"material:{name}":
-            column = f"material:{material.name}{dot}{constant}"
-            draft = draft.at(replace(draft.cell, column=column))
+        if _material_name(draft) == name:
+            constant = material_and_constant(draft.cell.column)[1]
+            draft = draft.at(replace(draft.cell, column=f"material:{material.name}.{constant}"))
         drafts.append(draft)
     return with_record(document, changed, drafts)
+
+
+def _following(material: MaterialRecord, name: str, new_name: str) -> MaterialRecord:
+    """Return a material that is made of `new_name` where it was made of `name`."""
+    if not any(used == name for _, used in references_of(material)):
+        return material
+    model = MODELS[material.model or library_model(material.library)]
+    return replace(material, constants=model.renamed(material.given, name, new_name))
 
 
 def _with_materials(record: JobRecord, name: str, material: MaterialRecord) -> JobRecord:

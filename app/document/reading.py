@@ -9,6 +9,7 @@ import re
 from typing import Final
 
 from stackcore.errors import UnitError
+from stackcore.media.models import relative_text as relative_text
 from stackcore.units import Dimension, Measure, parse_measure
 
 _ALLOWED_RELATIVE: Final = "a number, or real - j loss; for example 4.2 or 4.2 - 0.06j"
@@ -65,20 +66,6 @@ def read_relative(text: str) -> complex:
         return complex(_number(plain))
     except UnitError as error:
         raise UnitError(error.message, _ALLOWED_RELATIVE) from None
-
-
-def relative_text(value: complex) -> str:
-    """Return the text of a relative constant that `read_relative` reads back to the last bit.
-
-    Examples
-    --------
-    >>> relative_text(12 - 0.5j), relative_text(4.2 + 0j)
-    ('12 - 0.5j', '4.2')
-    """
-    real = _plain(value.real)
-    if value.imag == 0:
-        return real
-    return f"{real} {'-' if value.imag < 0 else '+'} {_plain(abs(value.imag))}j"
 
 
 def read_list(text: str, dimension: Dimension) -> tuple[Measure, ...]:
@@ -206,7 +193,3 @@ def _number(text: str) -> float:
 
 def _lossy(real: float, loss: float) -> complex:
     return complex(real, -loss if loss else 0.0)
-
-
-def _plain(number: float) -> str:
-    return repr(int(number)) if number == int(number) and abs(number) < 1e15 else repr(number)

@@ -2,6 +2,7 @@
 
 import string
 from dataclasses import replace
+from itertools import count
 from typing import Literal
 
 from app.document.document import Cell, Document, Selection
@@ -50,10 +51,14 @@ def add_stack(name: str | None = None) -> Edit:
 
 
 def duplicate_stack(stack: int) -> Edit:
-    """Return the edit that puts a copy of a stack behind it, under the next free letter, and selects it."""
+    """Return the edit that puts a copy of a stack behind it, and selects it.
+
+    The copy of a stack called by a letter has the next free letter, that of another the same name with a number.
+    """
 
     def change(document: Document) -> Document:
-        copy = replace(stack_at(document.record, stack), name=_next_letter(document.record))
+        origin = stack_at(document.record, stack)
+        copy = replace(origin, name=_name_of_copy(document.record, origin.name))
         stacks = document.record.stacks
         record = replace(document.record, stacks=(*stacks[: stack + 1], copy, *stacks[stack + 1 :]))
         origins = [*range(stack + 1), *range(stack, len(stacks))]
@@ -86,6 +91,15 @@ def _set_half_space(stack: int, side: Literal["front", "back"], name: str) -> Ed
         return with_record(document, with_stack(record, stack, changed), drafts)
 
     return Edit(f"set {side} to {name}", change)
+
+
+def _name_of_copy(record: JobRecord, name: str) -> str:
+    if len(name) == 1 and name in string.ascii_uppercase:
+        return _next_letter(record)
+    taken = [stack.name for stack in record.stacks]
+    words, _, number = name.rpartition(" ")
+    stem = words if words and number.isdecimal() else name
+    return next(copy for number in count(2) if (copy := f"{stem} {number}") not in taken)
 
 
 def _next_letter(record: JobRecord) -> str:

@@ -1,10 +1,13 @@
 """What kind of thing a material is, for the drawing's tints and hatches and the mark in the table."""
 
+import math
 from typing import Final, Literal
+
+import numpy as np
 
 from app.document.library import PERFECT_METAL, pinned
 from stackcore.job import Job
-from stackcore.job.records import MaterialRecord
+from stackcore.job.records import FrequencyGrid
 
 Kind = Literal["dielectric", "foam", "metal", "magnetic", "glass", "liquid", "coating"]
 
@@ -32,6 +35,20 @@ NAME_KINDS: Final[dict[str, Kind]] = {
     "film": "coating",
 }
 """Word in the name of a library entry -> kind, for families of several kinds."""
+
+MODEL_KINDS: Final[dict[str, Kind]] = {
+    "drude": "metal",
+    "drude-lorentz": "metal",
+    "magnetic": "magnetic",
+    "magnetic-debye": "magnetic",
+    "magnetic-lorentz": "magnetic",
+    "sellmeier": "glass",
+    "cauchy": "glass",
+    "sea-water": "liquid",
+    "water-ellison": "liquid",
+    "water-liebe": "liquid",
+}
+"""Model -> kind, for models that stand for one."""
 
 LIGHTEST_SOLID: Final = 1.3
 """ε′ below which there is more gas than matter in a material: foams and honeycombs."""
@@ -63,15 +80,24 @@ def kind_of(job: Job, material_name: str) -> Kind:
         known = FAMILY_KINDS.get(family) or next((NAME_KINDS[word] for word in words if word in NAME_KINDS), None)
         if known is not None:
             return known
-    return _kind_of_constants(pinned(record))
+    shown = pinned(record)
+    if shown.conductivity is not None and shown.model == "conductor":
+        return "metal" if shown.conductivity.value >= LEAST_METAL else "dielectric"
+    return MODEL_KINDS.get(shown.model) or _kind_of_values(job, material_name)
 
 
-def _kind_of_constants(record: MaterialRecord) -> Kind:
-    if record.conductivity is not None:
-        return "metal" if record.conductivity.value >= LEAST_METAL else "dielectric"
-    permittivity = 1 + 0j if record.permittivity is None else record.permittivity
-    if record.permeability is not None and record.permeability != 1:
+def _kind_of_values(job: Job, name: str) -> Kind:
+    """Return the kind that ε and μ at the middle of the sweep speak for."""
+    values = job.media[name].evaluate(np.array([_middle(job)]))
+    permittivity, permeability = complex(values.permittivity[0]), complex(values.permeability[0])
+    if permeability != 1:
         return "magnetic"
     if permittivity.real < 0:
         return "metal"
     return "foam" if permittivity.real < LIGHTEST_SOLID else "dielectric"
+
+
+def _middle(job: Job) -> float:
+    swept = job.sweep.frequency
+    ends = (swept.start, swept.stop) if isinstance(swept, FrequencyGrid) else (swept[0], swept[-1])
+    return math.sqrt(ends[0].value * ends[1].value)

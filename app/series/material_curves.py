@@ -5,7 +5,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from app.series.material_quantities import MATERIAL_QUANTITIES, unit_for, words_of
+from app.series.material_quantities import CURRENT_RATIO, MATERIAL_QUANTITIES, unit_for, words_of
 from app.series.texts import frequency_text
 from app.series.validity import Mask, held_at, known_text
 from stackcore.media.base import AbstractMedium, FloatArray
@@ -70,7 +70,7 @@ def material_curves(
     """
     x = np.unique(frequency)
     row = MATERIAL_QUANTITIES[quantity]
-    columns = [np.asarray(row.values(x, each.medium.evaluate(x)), dtype=np.float64) for each in specimens]
+    columns = [row.values(x, each.medium.evaluate(x)) for each in specimens]
     unit, factor = unit_for(quantity, np.concatenate(columns) if columns else x[:0])
     curves = []
     for specimen, raw in zip(specimens, columns, strict=True):
@@ -85,7 +85,7 @@ def material_curves(
                 unit,
                 held_at(specimen.medium, x),
                 int(np.count_nonzero(~shown)),
-                crossovers(specimen.medium, x) if quantity == "current_ratio" else (),
+                crossovers(specimen.medium, x) if quantity == CURRENT_RATIO else (),
             )
         )
     return tuple(curves)
@@ -128,9 +128,8 @@ def readings_at(medium: AbstractMedium, frequency: float) -> tuple[tuple[str, st
     """
     at = np.array([frequency])
     values = medium.evaluate(at)
-    return tuple(
-        (row.symbol, words_of(name, float(row.values(at, values)[0]))) for name, row in MATERIAL_QUANTITIES.items()
-    )
+    rows = MATERIAL_QUANTITIES.items()
+    return tuple((row.figure.symbol, words_of(name, float(row.values(at, values)[0]))) for name, row in rows)
 
 
 def reading_sentence(specimen: Specimen, frequency: float) -> str:
@@ -165,7 +164,7 @@ def data_table(curves: Sequence[MaterialCurve]) -> str:
     titles, columns = ["Frequency, Hz"], [list(map(repr, curves[0].x.tolist()))]
     for curve in curves:
         unit = row.dimension.si_unit
-        titles.append(f"{row.label} of {curve.specimen.label}{f', {unit}' if unit else ''}")
+        titles.append(f"{row.figure.label} of {curve.specimen.label}{f', {unit}' if unit else ''}")
         columns.append(list(map(repr, curve.raw.tolist())))
         if not curve.held.all():
             titles.append(f"{curve.specimen.label} is known here")

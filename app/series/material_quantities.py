@@ -1,13 +1,12 @@
-"""The one table of what can be drawn of a material over frequency: name, unit, definition, function."""
+"""How each figure of a material is shown: its unit on screen, its scale, and its values in words."""
 
-from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Final
 
 import numpy as np
 
-from stackcore.constants import SPEED_OF_LIGHT, VACUUM_PERMITTIVITY
-from stackcore.media.base import ComplexArray, Constitutive, FloatArray
+from stackcore.media.base import Constitutive, FloatArray
+from stackcore.media.figures import FIGURES, Figure
 from stackcore.units import Dimension, format_value, parse_measure
 
 DIGITS: Final = 4
@@ -20,136 +19,61 @@ _LARGEST_PLAIN: Final = 1e6
 
 
 @dataclass(frozen=True, slots=True)
-class MaterialQuantity:
+class ShownFigure:
     """One row of `MATERIAL_QUANTITIES`.
 
     Parameters
     ----------
-    label, symbol
-        Words for the axis, and the symbol before a value.
-    definition
-        One sentence or two.
-    values
-        Function of frequencies in Hz and what the medium is there, to values in the SI unit of `dimension`;
-        infinite or nan where there is none.
+    figure
+        What it is; see `stackcore.media.figures`.
     dimension
-        Kind of the values.
+        Kind of the values, which are in its SI unit.
     by_ratio
         Whether equal ratios are drawn equally far apart unless told otherwise.
     """
 
-    label: str
-    symbol: str
-    definition: str
-    values: Callable[[FloatArray, Constitutive], FloatArray]
+    figure: Figure
     dimension: Dimension = Dimension.NUMBER
     by_ratio: bool = False
 
+    @property
+    def label(self) -> str:
+        """Words for axis and menu, with the symbol."""
+        return f"{self.figure.label} {self.figure.symbol}"
 
-def refractive_index(values: Constitutive) -> ComplexArray:
-    """Return n − jk = √(εμ), the root whose wave decays.
-
-    Examples
-    --------
-    >>> from stackcore.media.constant import ConstantMedium
-    >>> complex(refractive_index(ConstantMedium(-9.0).evaluate(np.array(1e15))))
-    -3j
-    """
-    root = np.sqrt(values.permittivity) * np.sqrt(values.permeability)
-    # A lossless negative ε or μ may come with either sign of a zero loss, and the root with it.
-    index: ComplexArray = np.where(root.imag > 0, -root, root) + 0.0
-    return index
+    def values(self, frequency: FloatArray, constitutive: Constitutive) -> FloatArray:
+        """Return values in SI units at frequencies in Hz; infinite or nan where there is none."""
+        values: FloatArray = self.figure.values(constitutive, frequency)
+        return values
 
 
-def loss_over(value: ComplexArray, *, whole: bool = False) -> FloatArray:
-    """Return loss over real part; nan where the real part is not above 0, unless its size is wanted (`whole`)."""
-    real = np.abs(value.real) if whole else np.where(value.real > 0, value.real, np.nan)
-    with np.errstate(divide="ignore", invalid="ignore"):
-        return np.asarray((0.0 - value.imag) / real)
+def _current_ratio(values: Constitutive, frequency: FloatArray) -> FloatArray:
+    real = np.abs(values.permittivity.real)
+    endless = np.full(real.shape, np.inf)
+    ratio: FloatArray = np.divide(0.0 - values.permittivity.imag, real, out=endless, where=real > 0)
+    return ratio
 
 
-def _depth(frequency: FloatArray, values: Constitutive) -> FloatArray:
-    decay = 2 * np.pi * frequency / SPEED_OF_LIGHT * (0.0 - refractive_index(values).imag)
-    with np.errstate(divide="ignore"):
-        return np.asarray(1 / decay)
+CURRENT_RATIO: Final = "current_ratio"
 
+_RATIO: Final = Figure(
+    CURRENT_RATIO,
+    "Conduction / displacement",
+    "ε″/|ε′|",
+    "",
+    "Conduction over displacement current, all loss taken as conduction: above 1 a conductor, below a dielectric.",
+    _current_ratio,
+)
 
-def _conductivity(frequency: FloatArray, values: Constitutive) -> FloatArray:
-    return np.asarray(2 * np.pi * frequency * VACUUM_PERMITTIVITY * (0.0 - values.permittivity.imag))
+_BY_RATIO: Final = ("dielectric_loss", "loss_tangent", "magnetic_loss", "extinction")
 
-
-MATERIAL_QUANTITIES: Final[dict[str, MaterialQuantity]] = {
-    "permittivity": MaterialQuantity(
-        "Permittivity ε′",
-        "ε′",
-        "Real part of the relative permittivity ε = ε′ − jε″.",
-        lambda _, v: v.permittivity.real,
-    ),
-    "loss_part": MaterialQuantity(
-        "Loss ε″",
-        "ε″",
-        "Loss part of the relative permittivity ε = ε′ − jε″, 0 or more; conduction is in it.",
-        lambda _, v: np.asarray(0.0 - v.permittivity.imag),
-        by_ratio=True,
-    ),
-    "loss_tangent": MaterialQuantity(
-        "Loss tangent",
-        "tan δ",
-        "ε″/ε′ with all loss in it; there is none where ε′ is not above 0.",
-        lambda _, v: loss_over(v.permittivity),
-        by_ratio=True,
-    ),
-    "permeability": MaterialQuantity(
-        "Permeability μ′",
-        "μ′",
-        "Real part of the relative permeability μ = μ′ − jμ″.",
-        lambda _, v: v.permeability.real,
-    ),
-    "magnetic_loss": MaterialQuantity(
-        "Magnetic loss μ″",
-        "μ″",
-        "Loss part of the relative permeability μ = μ′ − jμ″, 0 or more.",
-        lambda _, v: np.asarray(0.0 - v.permeability.imag),
-        by_ratio=True,
-    ),
-    "index": MaterialQuantity(
-        "Refractive index n",
-        "n",
-        "Real part of √(εμ) = n − jk: vacuum wavelength over wavelength in the material.",
-        lambda _, v: refractive_index(v).real,
-    ),
-    "extinction": MaterialQuantity(
-        "Extinction k",
-        "k",
-        "Loss part of √(εμ) = n − jk, 0 or more: how fast a wave decays.",
-        lambda _, v: np.asarray(0.0 - refractive_index(v).imag),
-        by_ratio=True,
-    ),
-    "conductivity": MaterialQuantity(
-        "Conductivity",
-        "σ",
-        "ωε₀ε″: the conductivity that makes all of the electric loss at that frequency.",
-        _conductivity,
-        Dimension.CONDUCTIVITY,
-        by_ratio=True,
-    ),
-    "skin_depth": MaterialQuantity(
-        "Skin depth",
-        "depth",
-        "Depth at which the field of a wave has fallen to 1/e (37 %) and its power to 14 %: λ₀/(2πk).",
-        _depth,
-        Dimension.LENGTH,
-        by_ratio=True,
-    ),
-    "current_ratio": MaterialQuantity(
-        "Conduction over displacement current",
-        "ratio",
-        "ε″/|ε′|, all loss counted as conduction. Above 1 the material is a conductor, below 1 a dielectric.",
-        lambda _, v: loss_over(v.permittivity, whole=True),
-        by_ratio=True,
-    ),
+MATERIAL_QUANTITIES: Final[dict[str, ShownFigure]] = {
+    **{name: ShownFigure(figure, by_ratio=name in _BY_RATIO) for name, figure in FIGURES.items()},
+    "conductivity_S_per_m": ShownFigure(FIGURES["conductivity_S_per_m"], Dimension.CONDUCTIVITY, by_ratio=True),
+    "skin_depth_m": ShownFigure(FIGURES["skin_depth_m"], Dimension.LENGTH, by_ratio=True),
+    CURRENT_RATIO: ShownFigure(_RATIO, by_ratio=True),
 }
-"""Name -> what it is, in the order of menus and tables."""
+"""Name of the figure -> how it is shown, in the order of menus and tables."""
 
 
 def words_of(quantity: str, value: float) -> str:
@@ -157,7 +81,7 @@ def words_of(quantity: str, value: float) -> str:
 
     Examples
     --------
-    >>> words_of("skin_depth", 6.609e-7), words_of("loss_tangent", 1.5e-5), words_of("permittivity", -10.0)
+    >>> words_of("skin_depth_m", 6.609e-7), words_of("loss_tangent", 1.5e-5), words_of("permittivity", -10.0)
     ('660.9 nm', '1.5×10⁻⁵', '−10')
     """
     row = MATERIAL_QUANTITIES[quantity]
@@ -186,7 +110,7 @@ def unit_for(quantity: str, values: FloatArray) -> tuple[str, float]:
 
     Examples
     --------
-    >>> unit_for("skin_depth", np.array([2e-6, 7e-6]))
+    >>> unit_for("skin_depth_m", np.array([2e-6, 7e-6]))
     ('µm', 1000000.0)
     """
     dimension = MATERIAL_QUANTITIES[quantity].dimension

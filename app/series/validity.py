@@ -1,4 +1,4 @@
-"""Where what is computed stands on material data, and where on a guess: masks over the sweep, each with its reason."""
+"""Where results stand on material data, and where on a guess: masks over the sweep, each with its reason."""
 
 from collections.abc import Iterator
 from dataclasses import dataclass

@@ -21,6 +21,8 @@ from PySide6.QtCore import (
     qInstallMessageHandler,
 )
 
+from stackcore.cli.telling import one_line
+
 LOGGER: Final = logging.getLogger("slabwright")
 LOG_NAME: Final = "slabwright.log"
 LOG_BYTES: Final = 500_000
@@ -98,7 +100,10 @@ class CrashNet(QObject):
         # Frames that end in an error are kept with it. A painter in one of them would outlive the surface it
         # paints on, and that ends the process.
         traceback.clear_frames(trace)
-        self.caught.emit(f"Something went wrong inside Slabwright ({kind.__name__}: {error}). Your job is kept.")
+        what = f"Something went wrong inside Slabwright ({kind.__name__}: {error})."
+        # Before the window is there, and when the process ends by it, nobody hears the signal.
+        one_line(f"{what} The log tells where: {self.log_file}")
+        self.caught.emit(f"{what} Your job is kept.")
 
     def _thread_exception(self, args: threading.ExceptHookArgs) -> None:
         if args.exc_type is not SystemExit and args.exc_value is not None:

@@ -15,7 +15,7 @@ PATIENCE: Final = 5.0
 """Seconds to wait for a display on another machine."""
 
 _X11_PORT: Final = 6000
-_X11_NAME: Final = re.compile(r"(?:(?P<protocol>[a-z0-9]+)/)?(?P<host>.*?):(?P<number>\d{1,4})(?:\.\d+)?")
+_X11_NAME: Final = re.compile(r"(?:(?P<protocol>[a-z0-9]+)/)?(?P<host>.*?):(?P<number>\d{1,5})(?:\.\d+)?")
 
 _Address = tuple[socket.AddressFamily, str | tuple[str, int]]
 

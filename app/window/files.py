@@ -4,6 +4,8 @@ from collections.abc import Callable
 from pathlib import Path
 from typing import Final
 
+from app.document.cells import place_words
+from app.document.document import Cell
 from app.document.session import Change, Session
 from app.window.dialogs import Dialogs, OverwriteAnswer, SaveAnswer
 from app.window.messages import Choice, Message, Messages
@@ -135,12 +137,18 @@ class Files:
         self._recent.add(path)
         drafts = self._session.document.drafts
         if drafts:
-            lines = tuple(f"{draft.cell.path}: {draft.text!r}" for draft in drafts)
+            lines = tuple(f"{self._place(draft.cell)}: {draft.text!r}" for draft in drafts)
             text = f"Saved {path.name}, but for what is typed and not a value yet."
             self._messages.show(Message("warning", text, details=lines))
         else:
             self._messages.tell(f"Saved {path.name}.")
         then()
+
+    def _place(self, cell: Cell) -> str:
+        """Return where a text is, with its stack where there are several."""
+        stacks = self._session.record.stacks
+        stack = f" in stack {stacks[cell.stack].name}" if len(stacks) > 1 and not cell.of_job else ""
+        return place_words(cell) + stack
 
     def _heard(self, change: Change) -> None:
         if change.kind in ("open", "save"):

@@ -22,10 +22,11 @@ from PySide6.QtWidgets import (
 from app.look.palette import heading_font
 from app.look.theme import Theme
 
-VERSION: Final = 2
+VERSION: Final = 3
 """Of the arrangement; raised when panels come or go, and an older one is then forgotten."""
 
 MATERIALS: Final = "Materials"
+MATERIAL_DATA: Final = "Constants and curves"
 NOTES: Final = "Title and notes"
 HELP: Final = "Help"
 
@@ -39,6 +40,8 @@ READINGS_TALLEST: Final = 190
 BESIDE_SHARE: Final = 0.25
 BESIDE_WIDEST: Final = 400
 """Share and width of a panel that is opened beside for the first time."""
+MATERIALS_SHARE: Final = 0.34
+"""Of the height for the panel of materials, when their constants and curves open below it."""
 HANDLE: Final = 9
 """Width of the gap between panels, which is where they are resized."""
 
@@ -168,6 +171,10 @@ class Arrangement:
             width = min(round(self._window.width() * BESIDE_SHARE), BESIDE_WIDEST)
             self._window.resizeDocks([dock], [width], Qt.Orientation.Horizontal)
         self._placed.add(title)
+        if title == MATERIAL_DATA:
+            shares = (MATERIALS_SHARE, 1 - MATERIALS_SHARE)
+            heights = [round(self._window.height() * share) for share in shares]
+            self._window.resizeDocks([self._docks[MATERIALS], dock], heights, Qt.Orientation.Vertical)
         # Qt makes the row of tabs when two panels share a place.
         for tabs in self._window.findChildren(QTabBar, options=Qt.FindChildOption.FindDirectChildrenOnly):
             tabs.setAccessibleName("Panels beside")
@@ -190,13 +197,19 @@ class Arrangement:
         _divide(self._results, (height - wall - readings, readings), (1, 0))
 
     def _put_beside(self) -> None:
-        """Put every panel of the side to the right, closed, in one place: those open together become tabs."""
+        """Put every panel of the side to the right, closed, in one place: those open together become tabs.
+
+        Constants and curves go below that place, since materials are chosen above to be seen there.
+        """
         first, *others = self._docks.values()
         for dock in (first, *others):
             dock.setFloating(False)
             self._window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
-        for dock in others:
-            self._window.tabifyDockWidget(first, dock)
+        for title, dock in self._docks.items():
+            if title == MATERIAL_DATA:
+                self._window.splitDockWidget(first, dock, Qt.Orientation.Vertical)
+            elif dock is not first:
+                self._window.tabifyDockWidget(first, dock)
         for dock in (first, *others):
             dock.hide()
 

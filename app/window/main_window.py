@@ -27,7 +27,7 @@ from app.window.first_view import first_view
 from app.window.help_pages import KeyGroup
 from app.window.help_panel import HelpPanel
 from app.window.keys import key_groups
-from app.window.layout import HELP, MATERIALS, NOTES, Arrangement
+from app.window.layout import HELP, MATERIAL_DATA, MATERIALS, NOTES, Arrangement
 from app.window.marking import MarkerCommands
 from app.window.messages import Choice, Message, Messages, MessageStrip
 from app.window.panels import Panels, focus_into, make_panels
@@ -84,7 +84,12 @@ class MainWindow(QMainWindow):
         self._arrangement = Arrangement(
             self,
             self._panels.places(self._strip),
-            ((MATERIALS, self._panels.materials), (NOTES, self._panels.notes), (HELP, self._panels.help)),
+            (
+                (MATERIALS, self._panels.materials),
+                (MATERIAL_DATA, self._panels.material_data),
+                (NOTES, self._panels.notes),
+                (HELP, self._panels.help),
+            ),
             self._theme,
             settings,
         )
@@ -231,11 +236,13 @@ class MainWindow(QMainWindow):
         self._recompute.failed.connect(self._failed)
         self._recompute.busy.connect(self._panels.curves.set_busy)
         self._panels.curves.pointed.connect(self._status.point)
+        self._panels.material_data.pointed.connect(self._status.point)
+        self._panels.materials.detail_wanted.connect(lambda: self._arrangement.open_beside(MATERIAL_DATA))
         self._panels.wall.edit_requested.connect(self._panels.edit_element)
         self._exporter.running.connect(self._actions.refresh)
         self._panels.elements.columns_asked.connect(self._actions.refresh)
         self._status.cautions.clicked.connect(lambda: self.show_help("cautions"))
-        for title in (MATERIALS, NOTES):
+        for title in (MATERIALS, MATERIAL_DATA, NOTES):
             self._arrangement.dock(title).visibilityChanged.connect(self._actions.refresh)
         QGuiApplication.styleHints().colorSchemeChanged.connect(self._take_theme)
         if self._net is not None:

@@ -11,6 +11,7 @@ from app.look.theme import Theme
 from app.panels.curves.panel import CurvesPanel
 from app.panels.elements.panel import ElementsPanel
 from app.panels.elements.stacks import StackBar
+from app.panels.material_data.panel import MaterialData
 from app.panels.materials.panel import MaterialsPanel
 from app.panels.readings.panel import ReadingsPanel
 from app.panels.sweep.panel import SweepPanel
@@ -21,6 +22,7 @@ from app.window.layout import Places
 from app.window.notes_panel import NotesPanel
 from app.window.recompute import Viewer
 from stackcore.job.records import LayerRecord
+from stackcore.media.library import read_library
 
 
 @dataclass(frozen=True, slots=True, weakref_slot=True)
@@ -33,6 +35,7 @@ class Panels:
     curves: CurvesPanel
     readings: ReadingsPanel
     materials: MaterialsPanel
+    material_data: MaterialData
     notes: NotesPanel
     help: HelpPanel
 
@@ -51,6 +54,7 @@ class Panels:
             self.curves,
             self.readings,
             self.materials,
+            self.material_data,
             self.notes,
             self.help,
         )
@@ -67,6 +71,7 @@ class Panels:
         self.curves.set_theme(theme)
         self.readings.set_theme(theme)
         self.materials.set_theme(theme)
+        self.material_data.set_theme(theme)
         self.notes.set_theme(theme)
         self.help.set_theme(theme)
 
@@ -97,13 +102,19 @@ class Panels:
 
 def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_panel: HelpPanel) -> Panels:
     """Return the panels, each with what it needs and nothing more."""
+    materials = MaterialsPanel(session, view, theme, tell)
+    material_data = MaterialData(session, view, theme, tell)
+    materials.picked.connect(material_data.show_picks)
+    material_data.editor.page.kept.connect(lambda: materials.library.reload(read_library()))
+    material_data.show_picks(materials.picks, materials.current_pick)
     return Panels(
         wall=WallPanel(session, view, theme, tell),
         elements=ElementsPanel(session, theme, tell),
         sweep=SweepPanel(session, view, theme, tell),
         curves=CurvesPanel(session, view, theme, tell),
         readings=ReadingsPanel(session, view, theme, tell),
-        materials=MaterialsPanel(session, view, theme, tell),
+        materials=materials,
+        material_data=material_data,
         notes=NotesPanel(session, tell),
         help=help_panel,
     )

@@ -3,7 +3,7 @@
 from collections.abc import Iterable
 from typing import Final
 
-from PySide6.QtCore import QSize, Qt
+from PySide6.QtCore import QRect, QSize, Qt
 from PySide6.QtGui import QColor, QPainter, QPaintEvent, QPalette, QPen
 from PySide6.QtWidgets import QAbstractButton, QLabel, QSizePolicy, QStatusBar, QWidget
 
@@ -52,12 +52,17 @@ class CautionLine(QAbstractButton):
         font.setUnderline(self.underMouse())
         painter.setFont(font)
         painter.setPen(self.palette().color(QPalette.ColorRole.WindowText))
-        text = painter.fontMetrics().elidedText(self._words, Qt.TextElideMode.ElideRight, room.width())
-        painter.drawText(room, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, text)
+        draw_words(painter, room, self._words)
         if self.hasFocus():
             painter.setPen(QPen(self.palette().color(QPalette.ColorRole.Highlight), 2))
             painter.drawRoundedRect(self.rect().adjusted(1, 1, -1, -1), 4, 4)
         painter.end()
+
+
+def draw_words(painter: QPainter, room: QRect, words: str) -> None:
+    """Write `words` into `room` from the left, cut short where there is no room."""
+    text = painter.fontMetrics().elidedText(words, Qt.TextElideMode.ElideRight, room.width())
+    painter.drawText(room, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, text)
 
 
 class StatusLine(QStatusBar):
@@ -95,6 +100,14 @@ class StatusLine(QStatusBar):
     def tell(self, text: str) -> None:
         """Say on the right what is computed, or why it is old."""
         self._told.setText(text)
+
+    def paintEvent(self, event: QPaintEvent) -> None:
+        """Write the passing note exactly where the cautions stand; Qt would put it a little beside."""
+        painter = QPainter(self)
+        if self.currentMessage():
+            painter.setPen(self.palette().color(QPalette.ColorRole.WindowText))
+            draw_words(painter, self.cautions.geometry().adjusted(PAD, 0, -PAD, 0), self.currentMessage())
+        painter.end()
 
     def point(self, text: str) -> None:
         """Show what the mouse or the keys point at in the plot, for as long as they do."""

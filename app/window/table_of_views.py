@@ -4,7 +4,7 @@ from collections.abc import Sequence
 
 from app.window.actions import Act
 from app.window.commands import Commands
-from app.window.layout import MATERIALS, NOTES
+from app.window.layout import MATERIAL_DATA, MATERIALS, NOTES
 
 
 def markers_acts(c: Commands) -> Sequence[Act]:
@@ -106,6 +106,16 @@ def arrangement_acts(c: Commands) -> Sequence[Act]:
             ("Ctrl+Shift+M",),
             "Show or hide the materials of the job and the library, beside the work.",
             checked=lambda: view.shown(MATERIALS),
+            group=1,
+        ),
+        Act(
+            "view.material_data",
+            menu,
+            MATERIAL_DATA.replace("C", "&C", 1),
+            lambda: view.toggle(MATERIAL_DATA),
+            ("Ctrl+M",),
+            "Show or hide constants and curves of the materials that are chosen.",
+            checked=lambda: view.shown(MATERIAL_DATA),
             group=1,
         ),
         Act(

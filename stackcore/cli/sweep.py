@@ -1,15 +1,13 @@
 """``slabwright sweep``: every stack of a job over its sweep, to CSV."""
 
-import argparse
-import contextlib
-import io
 import os
 import sys
-from collections.abc import Iterator, Sequence
-from pathlib import Path
-from typing import TYPE_CHECKING, BinaryIO, NoReturn, TextIO
+from collections.abc import Sequence
+from typing import TYPE_CHECKING, TextIO
 
-from stackcore.cli.telling import DONE, let_go_of_standard_output, one_line, tell
+from stackcore.cli.arguments import Parser
+from stackcore.cli.output import standard_output_fault, unreadable, unwritable, utf8
+from stackcore.cli.telling import DONE, one_line, tell
 from stackcore.errors import Fault, InputError, nearest
 
 if TYPE_CHECKING:
@@ -17,15 +15,8 @@ if TYPE_CHECKING:
     from stackcore.stack import Stack
 
 
-class _Parser(argparse.ArgumentParser):
-    """A parser whose complaint is a fault like any other."""
-
-    def error(self, message: str) -> NoReturn:
-        raise InputError([Fault("", message, f"see {self.prog} --help")])
-
-
-def _parser() -> argparse.ArgumentParser:
-    parser = _Parser(
+def _parser() -> Parser:
+    parser = Parser(
         prog="slabwright sweep",
         description="Compute every stack of a job over its sweep and write one row per stack, frequency, angle "
         "and polarization. The file appears only when it is complete.",
@@ -55,7 +46,7 @@ def main(argv: Sequence[str]) -> int:
     try:
         job = read_job(arguments.job)
     except OSError as error:
-        return tell([_unreadable(arguments.job, error)])
+        return tell([unreadable(arguments.job, error, ".slabjob", "a job file")])
     stacks = _chosen(job, arguments.stack)
     if arguments.csv == "-":
         return _to_standard_output(job, stacks)
@@ -63,15 +54,6 @@ def main(argv: Sequence[str]) -> int:
         allowed = "another file for the table"
         return tell([Fault(arguments.csv, "the table would take the place of the job", allowed)])
     return _to_file(job, stacks, arguments.csv)
-
-
-def _unreadable(path: str, error: OSError) -> Fault:
-    if isinstance(error, FileNotFoundError):
-        with contextlib.suppress(OSError):
-            name, folder = Path(path).name, Path(path).parent
-            others = [other.name for other in folder.iterdir() if other.suffix == ".slabjob"]
-            return Fault(path, f"there is no such file{nearest(name, others)}", "a job file")
-    return Fault(path, f"cannot be read: {error.strerror or error}", "a job file")
 
 
 def _same_file(one: str, other: str) -> bool:
@@ -96,11 +78,10 @@ def _to_file(job: "Job", stacks: tuple["Stack", ...], path: str) -> int:
     from stackcore.job.replacing import replacing
 
     try:
-        with replacing(path) as file, _utf8(file) as stream:
+        with replacing(path) as file, utf8(file) as stream:
             _write(job, stacks, stream)
     except OSError as error:
-        message = f"cannot be written: {error.strerror or error}"
-        return tell([Fault(path, message, "a file in a folder that exists and can be written")])
+        return tell([unwritable(path, error)])
     return DONE
 
 
@@ -108,28 +89,12 @@ def _to_standard_output(job: "Job", stacks: tuple["Stack", ...]) -> int:
     if sys.stdout is None:
         return one_line("standard output is closed; allowed: --csv with the name of a file")
     try:
-        with _utf8(sys.stdout.buffer) as stream:
+        with utf8(sys.stdout.buffer) as stream:
             _write(job, stacks, stream)
         sys.stdout.flush()
     except OSError as error:
-        let_go_of_standard_output()
-        if isinstance(error, BrokenPipeError):
-            return one_line("standard output was closed before all rows were written")
-        return one_line(f"standard output cannot be written: {error.strerror or error}")
+        return standard_output_fault(error)
     return DONE
-
-
-@contextlib.contextmanager
-def _utf8(binary: BinaryIO) -> Iterator[TextIO]:
-    """Write UTF-8 text with its own line ends into a binary stream, and leave that open."""
-    stream = io.TextIOWrapper(binary, encoding="utf-8", newline="", write_through=True)
-    try:
-        yield stream
-        stream.flush()
-    finally:
-        # Detached also after an error: else the binary stream would be closed, and flushed, once more.
-        with contextlib.suppress(OSError):
-            stream.detach()
 
 
 def _write(job: "Job", stacks: tuple["Stack", ...], stream: TextIO) -> None:

@@ -9,6 +9,9 @@ from typing import Final
 from stackcore.errors import Fault, InputError, SlabwrightError
 
 DONE: Final = 0
+NO: Final = 1
+"""The answer is no."""
+
 WRONG: Final = 2
 GIVEN_UP: Final = 130
 """What shells expect of a program that Ctrl+C has ended."""

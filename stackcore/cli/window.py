@@ -30,10 +30,10 @@ def open_window(arguments: Sequence[str]) -> int:
         window: Callable[[Sequence[str]], int | None] = found[0].load()
         return int(window(arguments) or 0)
     except ImportError as error:
-        return _toolkit_missing(error)
+        return toolkit_missing(error)
 
 
-def _toolkit_missing(error: ImportError) -> int:
+def toolkit_missing(error: ImportError) -> int:
     """Say what to install when the toolkit or a library under it is missing; raise any other error again."""
     package = (error.name or "").partition(".")[0]
     if isinstance(error, ModuleNotFoundError) and package in _TOOLKIT:

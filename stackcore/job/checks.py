@@ -3,8 +3,8 @@
 A record made by an edit is checked as one read from a file is. What needs media is in `resolve`.
 """
 
-import cmath
 import math
+import re
 from collections.abc import Collection, Iterator, Mapping
 from typing import Final
 
@@ -12,6 +12,7 @@ from stackcore.errors import Fault
 from stackcore.job import limits
 from stackcore.job.inspector import has_lone_surrogate, join, near, one_of, shown
 from stackcore.job.limits import Limits
+from stackcore.job.materials import library_model
 from stackcore.job.records import (
     AngleGrid,
     ElementRecord,
@@ -23,20 +24,16 @@ from stackcore.job.records import (
     StackRecord,
     SweepRecord,
 )
+from stackcore.job.references import ALWAYS_DEFINED as ALWAYS_DEFINED
+from stackcore.job.references import reference_faults
 from stackcore.media.models import MODELS
 from stackcore.units import Measure
-
-ALWAYS_DEFINED: Final = ("air", "vacuum")
-"""Materials of every job."""
 
 METAL_NAME: Final = "metal"
 """Name of the perfect conductor as a back."""
 
-CONSTANTS: Final = ("permittivity", "loss_tangent", "permeability", "conductivity")
-"""The constants a material of a job may have, whatever its model, in the order of the file."""
-
-JOB_MODELS: Final = {name: model for name, model in MODELS.items() if set(model.readers) <= set(CONSTANTS)}
-"""The models a job file can spell out; those of the library that need other constants can only be referred to."""
+RANGE: Final = 'the lower and the upper end, for example ["8 GHz", "12.4 GHz"]'
+SHARE: Final = "one standard deviation as a fraction, 0 or more and below 1"
 
 _RIGHT_ANGLE: Final = math.pi / 2
 
@@ -46,6 +43,7 @@ def faults_of(record: JobRecord) -> Iterator[Fault]:
     yield from _text_faults({"title": record.title, "notes": record.notes})
     for material in record.materials:
         yield from material_faults(material, join("materials", material.name))
+    yield from reference_faults(record.materials)
     yield from _doubled((material.name for material in record.materials), "materials", "")
     known = dict.fromkeys((*(material.name for material in record.materials), *ALWAYS_DEFINED))
     if not record.stacks:
@@ -79,8 +77,8 @@ def _doubled(names: Iterator[str], path: str, member: str) -> Iterator[Fault]:
 
 
 def material_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
-    """Yield what is wrong with one material, apart from its library reference."""
-    texts = {"label": material.label, "library": material.library, "source": material.source}
+    """Yield what is wrong with one material, apart from those it refers to."""
+    texts = {key: getattr(material, key) for key in ("label", "library", "source", "certainty", "note")}
     yield from _text_faults({path: material.name, **{join(path, key): text for key, text in texts.items()}})
     if not material.name.strip():
         yield Fault(path, "the name of the material is empty", "a name")
@@ -90,81 +88,54 @@ def material_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
         )
         yield Fault(path, f"{material.name!r} {what}", "another name for this material")
     if not material.model and not material.library:
-        yield Fault(join(path, "model"), "is missing", f"{one_of(JOB_MODELS)}, or a library reference")
-    if material.model and material.model not in JOB_MODELS:
-        given = f"{shown(material.model)} is not known{near(material.model, JOB_MODELS)}"
-        yield Fault(join(path, "model"), given, one_of(JOB_MODELS))
-    elif material.model:
-        yield from _model_faults(material, path)
-    yield from _constant_faults(material, path)
+        yield Fault(join(path, "model"), "is missing", f"{one_of(MODELS)}, or a library reference")
+    if material.model and material.model not in MODELS:
+        given = f"{shown(material.model)} is not known{near(material.model, MODELS)}"
+        yield Fault(join(path, "model"), given, one_of(MODELS))
+    yield from _constants_faults(material, path)
+    if material.valid_range is not None:
+        yield from _range_faults(material, join(path, "range"))
+    yield from _spread_faults(material, join(path, "spread"))
 
 
-def _model_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
-    """Yield constants that the model does not take, and those it needs."""
-    model = JOB_MODELS[material.model]
-    for name in given_constants(material):
-        if name not in model.readers:
-            message = f"the model {material.model!r} has no {name}"
-            yield Fault(join(path, name), message, f"for this model {one_of(model.readers)}")
-    if material.library and not given_constants(material):
+def _constants_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
+    """Yield what is wrong with the constants, or what is missing of them.
+
+    Beside a library reference without a model those that the library has may be left out.
+    """
+    model = MODELS.get(material.model or library_model(material.library))
+    if model is None or (material.library and not material.constants):
         return
-    for name in model.required:
-        if getattr(material, name) is None:
-            yield Fault(join(path, name), "is missing", f"the model {material.model!r} needs it")
+    for fault in model.faults(material.given, path):
+        if material.model or fault.message != "is missing" or "[" in fault.path.removeprefix(path):
+            yield fault
 
 
-def given_constants(material: MaterialRecord) -> tuple[str, ...]:
-    """Return the names of the constants a material has."""
-    return tuple(name for name in CONSTANTS if getattr(material, name) is not None)
-
-
-def _constant_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
-    for name in ("permittivity", "permeability"):
-        value: complex | None = getattr(material, name)
-        if value is None:
-            continue
-        if not cmath.isfinite(value) or abs(value) > limits.LARGEST_RELATIVE:
-            yield Fault(join(path, name), f"{shown_relative(value)} is too large", "at most 1e12 in magnitude")
-        elif value == 0:
-            yield Fault(join(path, name), "must not be 0", "for example 4.2 or [4.2, 0.06]")
-        elif value.imag > 0:
-            message = f"the loss {-value.imag:g} is negative, which would be gain"
-            yield Fault(join(path, name), message, "[real, loss] with loss 0 or more")
-    if material.loss_tangent is not None:
-        yield from _loss_faults(material.loss_tangent, material.permittivity, path)
-    if material.conductivity is not None:
-        yield from _within(material.conductivity, limits.CONDUCTIVITY, join(path, "conductivity"))
-
-
-def _loss_faults(tangent: float, permittivity: complex | None, path: str) -> Iterator[Fault]:
-    place = join(path, "loss_tangent")
-    if not limits.LOSS_TANGENT.contains(tangent):
-        yield Fault(place, f"{tangent!r} is out of range", limits.LOSS_TANGENT.allowed)
-    if permittivity is None:
+def _range_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
+    assert material.valid_range is not None
+    lowest, highest = material.valid_range
+    if material.model in MODELS and not MODELS[material.model].ranged:
+        yield Fault(path, f"the model {material.model!r} takes its range from its parts", "no range here")
         return
-    if permittivity.imag:
-        allowed = "permittivity as a number with loss_tangent, or [real, loss] alone"
-        yield Fault(place, "the loss is given twice, permittivity has it as well", allowed)
-    elif permittivity.real < 0 < tangent:
-        allowed = "permittivity as [real, loss] where its real part is negative"
-        yield Fault(place, f"{tangent!r} with a permittivity of {permittivity.real:g} would be gain", allowed)
+    told = [*_within(lowest, limits.FREQUENCY, join(path, 0)), *_within(highest, limits.FREQUENCY, join(path, 1))]
+    yield from told
+    if not told and lowest.value > highest.value:
+        yield Fault(path, f"{shown(lowest.text)} to {shown(highest.text)} is reversed", RANGE)
 
 
-def shown_relative(value: complex) -> str:
-    """Return ε or μ as a file has it: ``4.2`` or ``[4.2, 0.06]``."""
-    return repr(value.real) if value.imag == 0 else f"[{value.real!r}, {-value.imag!r}]"
+def _spread_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
+    model = MODELS.get(material.model or library_model(material.library))
+    known = model.names if model else ()
+    for name, share in material.spread:
+        base = re.split(r"[.\[]", name)[0]
+        if known and base not in known:
+            yield Fault(join(path, name), f"is no constant of this material{near(name, known)}", one_of(known))
+        elif not 0 <= share < 1:
+            yield Fault(join(path, name), f"{share!r} is not a relative spread", SHARE)
 
 
 def _within(measure: Measure, allowed: Limits, path: str) -> Iterator[Fault]:
-    if allowed.contains(measure.value):
-        return
-    if measure.value < 0:
-        what = "is negative"
-    elif measure.value == 0:
-        what = "is 0"
-    else:
-        what = "is too small" if measure.value < allowed.lowest else "is too large"
-    yield Fault(path, f"{shown(measure.text)} {what}", allowed.allowed)
+    return limits.limit_faults(measure.value, measure.text, allowed, path)
 
 
 def _stack_faults(stack: StackRecord, path: str, known: Collection[str]) -> Iterator[Fault]:

@@ -1,11 +1,12 @@
 """JSON tree -> records. What a value must be is said here; what values must be to each other, in `checks`."""
 
-from collections.abc import Callable, Mapping
-from typing import Final, Literal, TypeVar
+from collections.abc import Mapping
+from typing import Final, Literal
 
 from stackcore.job import checks, limits
-from stackcore.job.inspector import Inspector, join, one_of, shown
+from stackcore.job.inspector import Inspector, join, near, one_of, shown
 from stackcore.job.limits import SHEET_PARTS
+from stackcore.job.materials import library_model
 from stackcore.job.records import (
     AngleGrid,
     ElementRecord,
@@ -17,7 +18,8 @@ from stackcore.job.records import (
     StackRecord,
     SweepRecord,
 )
-from stackcore.media.models import read_conductivity, read_loss_tangent, read_relative
+from stackcore.media.models import CONSTANT_NAMES, MODELS, Model
+from stackcore.media.models.kinds import number_of
 from stackcore.units import Dimension, Measure, measure
 
 FORMAT: Final = "slabwright-job"
@@ -29,9 +31,8 @@ FREQUENCY_KEYS: Final = ("start", "stop", "points", "spacing")
 ANGLE_KEYS: Final = ("start", "stop", "points")
 SHEET_KINDS: Final = ("series",)
 
-MATERIAL_KEYS: Final = ("label", "library", "model", *checks.CONSTANTS, "source")
-
-T = TypeVar("T")
+MATERIAL_KEYS: Final = ("label", "library", "model", "range", "spread", "certainty", "source", "note")
+"""Keys of a material beside the constants of its model."""
 
 _REQUIRED: Final = {
     "stacks": '"stacks": [{"name": "A", "elements": []}]',
@@ -78,39 +79,73 @@ def _materials(inspector: Inspector, value: object) -> tuple[MaterialRecord, ...
 
 def _material(inspector: Inspector, name: str, value: object, path: str) -> MaterialRecord:
     inspector.text(name, path)
-    given = inspector.mapping(value, path, MATERIAL_KEYS)
-    if given is None:
-        return MaterialRecord(name, model="constant", permittivity=1.0 + 0.0j)
-    _loss_twice(inspector, given, path)
-    if not isinstance(given.get("library", ""), str):
+    if not isinstance(value, dict):
+        inspector.fault(path, f"{shown(value)} is not an object", "an object {...}")
+        return MaterialRecord(name, model="constant", constants={"permittivity": 1.0 + 0.0j})
+    if not isinstance(value.get("library", ""), str):
         inspector.faulted.add(join(path, "model"))  # that the model is missing is no second fault
-    known = {key: (item, join(path, key)) for key, item in given.items() if key in MATERIAL_KEYS}
 
     def text(key: str) -> str:
-        return inspector.text(*known[key]) if key in known else ""
+        return inspector.text(value[key], join(path, key)) if key in value else ""
 
-    def constant(key: str, reader: Callable[[object], T]) -> T | None:
-        if key not in known:
-            return None
-        return inspector.constant(*known[key], reader)
-
+    library, model = text("library"), ""
+    if "model" in value:
+        model = inspector.choice(value["model"], join(path, "model"), MODELS, "")
+    known = MODELS.get(model or ("" if "model" in value else library_model(library)))
+    _material_keys(inspector, value, path, known)
     return MaterialRecord(
         name,
         label=text("label"),
-        model=inspector.choice(*known["model"], checks.JOB_MODELS, "") if "model" in known else "",
-        library=text("library"),
-        permittivity=constant("permittivity", read_relative),
-        permeability=constant("permeability", read_relative),
-        loss_tangent=constant("loss_tangent", read_loss_tangent),
-        conductivity=constant("conductivity", read_conductivity),
+        model=model,
+        library=library,
+        constants=known.read(value, path, inspector.fault) if known else {},
         source=text("source"),
+        valid_range=_range(inspector, value["range"], join(path, "range")) if "range" in value else None,
+        certainty=text("certainty"),
+        spread=_spread(inspector, value["spread"], join(path, "spread")) if "spread" in value else (),
+        note=text("note"),
     )
 
 
-def _loss_twice(inspector: Inspector, given: dict[str, object], path: str) -> None:
-    if "loss_tangent" in given and isinstance(given.get("permittivity"), list):
-        allowed = "permittivity as a number with loss_tangent, or [real, loss] alone"
-        inspector.fault(join(path, "loss_tangent"), "the loss is given twice, permittivity has it as well", allowed)
+def _material_keys(inspector: Inspector, value: dict[str, object], path: str, model: Model | None) -> None:
+    """Note keys that no material has, and constants that the model does not have."""
+    inspector.repeated(value, path)
+    # Where it is not known which model counts, the constants of any may stand there.
+    known = (*MATERIAL_KEYS, *(model.names if model else CONSTANT_NAMES))
+    for key in value:
+        if key not in known and model is not None and key in CONSTANT_NAMES:
+            message = f"the model {model.name!r} has no {key}"
+            inspector.fault(join(path, key), message, f"for this model {one_of(model.names)}")
+        elif key not in known:
+            inspector.fault(join(path, key), f"unknown key {shown(key)}{near(key, known)}", one_of(known))
+        if inspector.untold:  # an object of a million wrong keys
+            break
+
+
+def _range(inspector: Inspector, value: object, path: str) -> tuple[Measure, Measure] | None:
+    if not (isinstance(value, list) and len(value) == 2):
+        inspector.fault(path, f"{shown(value)} is not a range of frequencies", checks.RANGE)
+        return None
+    lowest, highest = (
+        inspector.measure(end, join(path, place), Dimension.FREQUENCY, _LOW) for place, end in enumerate(value)
+    )
+    # A stand-in for one end would only make a range that is reversed.
+    return None if {join(path, 0), join(path, 1)} & inspector.faulted else (lowest, highest)
+
+
+def _spread(inspector: Inspector, value: object, path: str) -> tuple[tuple[str, float], ...]:
+    if not isinstance(value, dict):
+        inspector.fault(path, f"{shown(value)} is not an object", 'for example {"permittivity": 0.02}')
+        return ()
+    inspector.repeated(value, path)
+    found = []
+    for name, given in value.items():
+        share = number_of(given)
+        if share is None:
+            inspector.fault(join(path, name), f"{shown(given)} is not a number", checks.SHARE)
+        else:
+            found.append((name, share))
+    return tuple(found)
 
 
 def _stack(inspector: Inspector, value: object, path: str) -> StackRecord:

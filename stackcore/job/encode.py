@@ -3,9 +3,9 @@
 import json
 from typing import Final
 
-from stackcore.errors import UnitError
 from stackcore.job.decode import FORMAT
 from stackcore.job.limits import SHEET_PARTS
+from stackcore.job.materials import library_model
 from stackcore.job.migrations import VERSION
 from stackcore.job.records import (
     AngleGrid,
@@ -17,7 +17,10 @@ from stackcore.job.records import (
     StackRecord,
     SweepRecord,
 )
-from stackcore.units import Dimension, Measure, format_value, parse_measure
+from stackcore.media.models import MODELS
+from stackcore.media.models.values import plain_number
+from stackcore.units import Dimension, Measure
+from stackcore.units.written import written_measure
 
 _WIDTH: Final = 110
 """Columns; a list of values that is longer is broken."""
@@ -54,47 +57,29 @@ def _material(material: MaterialRecord) -> str:
     for key in ("label", "library", "model"):
         if value := getattr(material, key):
             members[key] = value
-    if material.permittivity is not None:
-        members["permittivity"] = _relative(material.permittivity)
-    if material.loss_tangent is not None:
-        members["loss_tangent"] = _number(material.loss_tangent)
-    if material.permeability is not None:
-        members["permeability"] = _relative(material.permeability)
-    if material.conductivity is not None:
-        members["conductivity"] = _measure(material.conductivity, Dimension.CONDUCTIVITY)
-    if material.source:
-        members["source"] = material.source
-    return f"{_json(material.name)}: {_json(members)}"
+    if model := MODELS.get(material.model or library_model(material.library)):
+        members |= model.written(material.constants)
+    if material.valid_range is not None:
+        members["range"] = [written_measure(end, Dimension.FREQUENCY) for end in material.valid_range]
+    if material.spread:
+        members["spread"] = {name: plain_number(share) for name, share in material.spread}
+    for key in ("certainty", "source", "note"):
+        if value := getattr(material, key):
+            members[key] = value
+    return f"{_json(material.name)}: {_members(members)}"
 
 
-def _relative(value: complex) -> object:
-    value = complex(value)
-    return _number(value.real) if value.imag == 0 else [_number(value.real), _number(-value.imag)]
+def _members(members: dict[str, object]) -> str:
+    """Return an object on one line; a list of rows that is long has a line for each of them."""
+    parts = [f"{_json(key)}: {_rows(value)}" for key, value in members.items()]
+    return f"{{{', '.join(parts)}}}"
 
 
-def _number(value: float) -> int | float:
-    """Return whole numbers without the ``.0`` that nobody types."""
-    value = float(value)
-    return int(value) if value.is_integer() and abs(value) < 1e15 else value
-
-
-def _measure(measure: Measure, dimension: Dimension) -> str | int | float:
-    """Return the text as typed, or the number that was given instead of a text.
-
-    A text that does not give the value again, which only a record built by hand can hold, is replaced.
-    """
-    try:
-        number = json.loads(measure.text)
-    except ValueError:
-        number = None
-    if type(number) in (int, float) and repr(number) == measure.text and float(number) == measure.value:
-        return float(number) if type(number) is float else int(number)
-    try:
-        if parse_measure(measure.text, dimension).value == measure.value:
-            return measure.text
-    except UnitError:
-        pass
-    return format_value(measure.value, dimension)
+def _rows(value: object) -> str:
+    flat = _json(value)
+    if not (isinstance(value, list) and len(flat) > _WIDTH and all(isinstance(row, dict) for row in value)):
+        return flat
+    return "[\n      " + ",\n      ".join(_json(row) for row in value) + "\n    ]"
 
 
 def _stack(stack: StackRecord) -> str:
@@ -109,11 +94,11 @@ def _stack(stack: StackRecord) -> str:
 
 def _element(element: ElementRecord) -> dict[str, object]:
     if isinstance(element, LayerRecord):
-        return {"layer": element.material, "thickness": _measure(element.thickness, Dimension.LENGTH)}
+        return {"layer": element.material, "thickness": written_measure(element.thickness, Dimension.LENGTH)}
     members: dict[str, object] = {"sheet": element.kind}
     for name, limits in SHEET_PARTS.items():
         if (part := getattr(element, name)) is not None:
-            members[name] = _measure(part, limits.dimension)
+            members[name] = written_measure(part, limits.dimension)
     return members
 
 
@@ -125,10 +110,10 @@ def _sweep(sweep: SweepRecord) -> str:
 
 def _axis(axis: FrequencyGrid | AngleGrid | tuple[Measure, ...], dimension: Dimension, name: str) -> str:
     if isinstance(axis, tuple):
-        return f'"{name}": {_wrapped([_json(_measure(measure, dimension)) for measure in axis])}'
+        return f'"{name}": {_wrapped([_json(written_measure(measure, dimension)) for measure in axis])}'
     members: dict[str, object] = {
-        "start": _measure(axis.start, dimension),
-        "stop": _measure(axis.stop, dimension),
+        "start": written_measure(axis.start, dimension),
+        "stop": written_measure(axis.stop, dimension),
         "points": axis.points,
     }
     if isinstance(axis, FrequencyGrid):

@@ -4,78 +4,28 @@ Each method returns a value that can be worked with: the one that was given, or 
 one fault never hides the next. What stands in for what is known by `Inspector.faulted`.
 """
 
-import json
 import math
-import re
-from collections.abc import Callable, Collection, Iterable, Mapping
+from collections.abc import Iterable, Mapping
 from dataclasses import dataclass, field
-from typing import Final, TypeVar
+from typing import Final
 
-from stackcore.errors import Fault, UnitError, nearest
+from stackcore.errors import Fault, UnitError
+from stackcore.media.models.wording import join as join
+from stackcore.media.models.wording import near as near
+from stackcore.media.models.wording import one_of as one_of
+from stackcore.media.models.wording import shortened as shortened
+from stackcore.media.models.wording import shown as shown
 from stackcore.units import Dimension, Measure, parse_measure
 
 MOST_FAULTS: Final = 500
 """Beyond this many, faults are counted but no longer told."""
 
-T = TypeVar("T")
-
-_PLAIN_KEY: Final = re.compile(r"[\w-]+")
-_LONGEST_SHOWN: Final = 60
 _LONGEST_MESSAGE: Final = 300
-_MOST_COMPARED: Final = 1000
-
-
-def join(path: str, key: str | int) -> str:
-    """Return the path of a member: ``stacks`` and 0 -> ``stacks[0]``, ``sweep`` and ``angle`` -> ``sweep.angle``.
-
-    A key that is not one word is written as in JSON: ``materials["E glass"]``.
-    """
-    if isinstance(key, int):
-        return f"{path}[{key}]"
-    if not _PLAIN_KEY.fullmatch(key):
-        return f"{path}[{json.dumps(shortened(key), ensure_ascii=True)}]"
-    return f"{path}.{key}" if path else key
 
 
 def has_lone_surrogate(text: str) -> bool:
     """Return whether `text` holds what JSON can escape but UTF-8 cannot write."""
     return any("\ud800" <= letter <= "\udfff" for letter in text)
-
-
-def shortened(text: str) -> str:
-    """Return `text`, cut in the middle when it is long."""
-    half = _LONGEST_SHOWN // 2
-    return text if len(text) <= _LONGEST_SHOWN else f"{text[:half]}…{text[-half:]}"
-
-
-def shown(value: object) -> str:
-    """Return a JSON value on one line for a message; of lists and objects only what they are."""
-    match value:
-        case dict():
-            return "an object {...}"
-        case list():
-            return f"a list of {len(value)}"
-        case str():
-            return repr(shortened(value))
-        case bool() | None:
-            return json.dumps(value)
-        case int() | float():
-            return shortened(repr(value))
-    return f"a {type(value).__name__}"
-
-
-def near(given: str, known: Collection[str]) -> str:
-    """Return what `nearest` does, or nothing where the search would take long."""
-    return nearest(given, known) if len(given) <= _LONGEST_SHOWN and len(known) <= _MOST_COMPARED else ""
-
-
-def one_of(names: Iterable[str]) -> str:
-    """Return ``one of a, b, c`` for an error, with the names in quotation marks."""
-    listed = [repr(shortened(name)) for name in dict.fromkeys(names)]
-    if len(listed) == 1:
-        return listed[0]
-    rest = f" and {len(listed) - 20} more" if len(listed) > 20 else ""
-    return f"one of {', '.join(listed[:20])}{rest}"
 
 
 @dataclass(slots=True)
@@ -171,12 +121,3 @@ class Inspector:
         except UnitError as error:
             self.fault(path, error.message, error.allowed)
             return stand_in
-
-    def constant(self, value: object, path: str, reader: Callable[[object], T]) -> T | None:
-        """Return what the reader of a material's constant makes of `value`, None where it refuses."""
-        try:
-            return reader(value)
-        except UnitError as error:
-            plain = isinstance(value, str | int | float | list) and not isinstance(value, bool)
-            self.fault(path, error.message if plain else f"{shown(value)} is not a number", error.allowed)
-            return None

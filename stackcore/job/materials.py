@@ -6,38 +6,92 @@ and the library is not asked. Without a model the library supplies what is not g
 
 from collections.abc import Mapping
 from dataclasses import replace
-from typing import Any
-
-import numpy as np
 
 from stackcore.errors import Fault, LibraryError
-from stackcore.job.checks import JOB_MODELS, given_constants
 from stackcore.job.records import JobRecord, MaterialRecord
-from stackcore.media.base import AbstractMedium, Provenance
+from stackcore.media.base import AbstractMedium, FrequencyRange, Provenance
+from stackcore.media.constant import VACUUM
 from stackcore.media.library import LibraryEntry, library_entry
-from stackcore.media.models import MODELS, Constant
+from stackcore.media.library_entry import EVERYWHERE
+from stackcore.media.models import MODELS, Constants
+from stackcore.units import Dimension, measure
 
 
-def medium_of(material: MaterialRecord) -> AbstractMedium:
+def library_model(key: str) -> str:
+    """Return the model of a library entry, empty when there is no such entry."""
+    if not key:
+        return ""
+    try:
+        return library_entry(key).model
+    except LibraryError:
+        return ""
+
+
+def references_of(material: MaterialRecord) -> tuple[tuple[str, str], ...]:
+    """Return place and name of each material that the constants of `material` refer to."""
+    if not material.constants:
+        return ()
+    model = MODELS.get(material.model or library_model(material.library))
+    return model.references(material.constants) if model is not None else ()
+
+
+def medium_of(material: MaterialRecord, media: Mapping[str, AbstractMedium] | None = None) -> AbstractMedium:
     """Return the medium a material stands for.
+
+    Parameters
+    ----------
+    material
+        Without faults of its own.
+    media
+        The other materials of the job by name, for one that is made of them.
 
     Raises
     ------
     LibraryError
         When it needs a library entry that does not exist, with the nearest match.
-    ValueError
-        When its constants do not make a passive medium.
+    InputError, ValueError
+        When its constants do not make a passive medium; `stackcore.media.models.Model.located` says where.
     """
     entry = _entry(material)
-    constants, model = _constants(material), material.model
-    if entry is not None and not constants:
+    told = (material.valid_range, material.certainty, material.spread, material.note, material.source)
+    if entry is not None and not material.constants and not any(told):
         return entry.medium
-    if not model and entry is not None:
-        constants, model = _completed(constants, entry), entry.model
-    medium = MODELS[model].build(constants, None, Provenance(material.source))
-    if entry is not None and _same_constants(medium, entry.medium):
-        return entry.medium  # which also knows its range, spread and source
-    return medium
+    constants, name = material.given, material.model
+    if entry is not None and (not name or not constants):
+        constants, name = _completed(constants, entry), entry.model
+    model = MODELS[name]
+    used = {other: _referred(other, media or {}) for _, other in model.references(constants)} or None
+    valid_range, provenance = _known_range(material), material.about_values
+    if entry is not None and name == entry.model:
+        same = model.build(constants, entry.valid_range, entry.provenance, used) == entry.medium
+        if same:  # the library's range, spread and source hold for its own values only
+            valid_range, provenance = valid_range or entry.valid_range, _filled(provenance, entry.provenance)
+    medium = model.build(constants, valid_range, provenance, used)
+    return entry.medium if entry is not None and medium == entry.medium else medium
+
+
+def _known_range(material: MaterialRecord) -> FrequencyRange | None:
+    if material.valid_range is None:
+        return None
+    lowest, highest = material.valid_range
+    return FrequencyRange(lowest.value, highest.value)
+
+
+def _filled(own: Provenance, other: Provenance) -> Provenance:
+    """Return `own` with what it leaves open taken from `other`."""
+    return Provenance(
+        own.source or other.source,
+        own.certainty or other.certainty,
+        own.spread or other.spread,
+        own.note or other.note,
+    )
+
+
+def _referred(name: str, media: Mapping[str, AbstractMedium]) -> AbstractMedium:
+    """Return the medium that a reference names: one of the job, else of the library."""
+    if name in media:
+        return media[name]
+    return VACUUM if name in ("air", "vacuum") else library_entry(name).medium
 
 
 def _entry(material: MaterialRecord) -> LibraryEntry | None:
@@ -47,63 +101,67 @@ def _entry(material: MaterialRecord) -> LibraryEntry | None:
     try:
         entry = library_entry(material.library)
     except LibraryError:
-        if material.model and _constants(material):
+        if material.model and material.constants:
             return None
         raise
-    if material.model and not _constants(material) and material.model != entry.model:
+    if material.model and not material.constants and material.model != entry.model:
         message = f"{material.library!r} has the model {entry.model!r}, not {material.model!r}"
         raise LibraryError([Fault("", message, "a reference without a model, or with that one")])
     return entry
 
 
-def _constants(material: MaterialRecord) -> dict[str, Constant]:
-    return {name: getattr(material, name) for name in given_constants(material)}
-
-
-def _completed(given: Mapping[str, Constant], entry: LibraryEntry) -> dict[str, Constant]:
+def _completed(given: Constants, entry: LibraryEntry) -> Constants:
     """Return the constants of `entry` with those `given` in their place, the loss of ε counted once."""
-    constants = dict(entry.constants)
-    for name in given:
-        if name not in MODELS[entry.model].readers:
-            raise ValueError(f"{entry.key!r} has the model {entry.model!r}, which has no {name}")
+    constants = entry.constants
     permittivity = given.get("permittivity")
     if isinstance(permittivity, complex) and permittivity.imag:
-        constants.pop("loss_tangent", None)
+        constants = constants.with_value("loss_tangent", None)
     stored = constants.get("permittivity")
     if "loss_tangent" in given and isinstance(stored, complex):
-        constants["permittivity"] = complex(stored.real)
-    return {**constants, **given}
-
-
-def _same_constants(medium: AbstractMedium, other: AbstractMedium) -> bool:
-    """Return whether two media have the same values at every frequency."""
-    probe = np.array([1e9])
-    if type(medium) is not type(other):
-        return False
-    one, two = medium.evaluate(probe), other.evaluate(probe)
-    return bool((one.permittivity == two.permittivity).all() and (one.permeability == two.permeability).all())
+        constants = constants.with_value("permittivity", complex(stored.real))
+    return Constants({**constants, **given})
 
 
 def with_resolved_library(record: JobRecord) -> JobRecord:
-    """Return `record` with model, constants and source written beside every library reference.
+    """Return `record` with model, constants, range and source written beside every library reference.
 
-    So a job means the same where the library has moved on. Constants that stand there already stay; a model that
-    a job file cannot spell out stays a reference.
+    So a job means the same where the library has moved on. Constants that stand there already stay. Entries that
+    a material is made of become materials of the job, called by their key.
 
     Raises
     ------
     LibraryError
         For a reference to an entry that does not exist and whose values are needed.
     """
-    return replace(record, materials=tuple(_with_library_values(material) for material in record.materials))
+    materials = [_with_library_values(material) for material in record.materials]
+    names = {material.name for material in materials}
+    for material in materials:  # which grows while it is walked
+        for _, used in references_of(material):
+            if "/" in used and used not in names:
+                names.add(used)
+                materials.append(_with_library_values(MaterialRecord(used, library=used)))
+    return replace(record, materials=tuple(materials))
 
 
 def _with_library_values(material: MaterialRecord) -> MaterialRecord:
     entry = _entry(material)
-    if entry is None or entry.model not in JOB_MODELS or (material.model and _constants(material)):
+    if entry is None or (material.model and material.constants):
         return material
-    given = _constants(material)
-    constants: dict[str, Any] = dict(_completed(given, entry))
-    # The library's source vouches for its own values only.
-    source = material.source or ("" if given else entry.provenance.source)
-    return replace(material, model=entry.model, source=source, **constants)
+    constants = _completed(material.given, entry)
+    if material.constants:  # the library's source and range vouch for its own values only
+        return replace(material, model=entry.model, constants=constants)
+    provenance = _filled(material.about_values, entry.provenance)
+    ends = material.valid_range
+    if ends is None and MODELS[entry.model].ranged and entry.valid_range != EVERYWHERE:
+        known = entry.valid_range
+        ends = measure(known.lowest, Dimension.FREQUENCY), measure(known.highest, Dimension.FREQUENCY)
+    return replace(
+        material,
+        model=entry.model,
+        constants=constants,
+        valid_range=ends,
+        source=provenance.source,
+        certainty=provenance.certainty,
+        spread=provenance.spread,
+        note=provenance.note,
+    )

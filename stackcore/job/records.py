@@ -4,12 +4,14 @@ A record is what a person edits and a file stores. `stackcore.job.resolve` turns
 stacks that the solver takes; nothing else knows both sides.
 """
 
+from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import Literal
 
 import numpy as np
 
-from stackcore.media.base import FloatArray
+from stackcore.media.base import FloatArray, Provenance
+from stackcore.media.models import Constants, Value
 from stackcore.units import Measure, degrees_of
 
 Spacing = Literal["linear", "log"]
@@ -26,28 +28,72 @@ class MaterialRecord:
     label
         Name for people; empty means `name`.
     model
-        ``constant`` or ``conductor``; empty only when `library` gives everything.
+        A name of `stackcore.media.models.MODELS`; empty only when `library` gives everything.
     library
         ``family/name`` of a library entry, or empty. When constants stand beside it, they count.
-    permittivity, permeability
-        ε′ − jε″ and μ′ − jμ″ with the loss part as given (a loss tangent is kept apart), or None.
-    loss_tangent
-        ε″/ε′, or None when the loss is part of `permittivity`.
-    conductivity
-        Of a conductor, or None.
+    constants
+        Those of the model, by name, as given; any mapping is taken.
     source
         Where the numbers come from.
+    valid_range
+        Lowest and highest frequency at which they hold, or None.
+    certainty
+        How they are known: see `stackcore.media.base.Provenance`.
+    spread
+        Relative spread in production by name of the constant.
+    note
+        Anything else a user must know.
     """
 
     name: str
     label: str = ""
     model: str = ""
     library: str = ""
-    permittivity: complex | None = None
-    permeability: complex | None = None
-    loss_tangent: float | None = None
-    conductivity: Measure | None = None
+    constants: Mapping[str, Value] = Constants()
     source: str = ""
+    valid_range: tuple[Measure, Measure] | None = None
+    certainty: str = ""
+    spread: tuple[tuple[str, float], ...] = ()
+    note: str = ""
+
+    def __post_init__(self) -> None:
+        if not isinstance(self.constants, Constants):
+            object.__setattr__(self, "constants", Constants(self.constants))
+
+    @property
+    def given(self) -> Constants:
+        """The constants as the frozen mapping they are kept in."""
+        assert isinstance(self.constants, Constants)
+        return self.constants
+
+    @property
+    def permittivity(self) -> complex | None:
+        """ε′ − jε″ with the loss part as given, or None; of some models a real number."""
+        value = self.constants.get("permittivity")
+        return complex(value) if isinstance(value, complex | float | int) else None
+
+    @property
+    def permeability(self) -> complex | None:
+        """μ′ − jμ″, or None."""
+        value = self.constants.get("permeability")
+        return complex(value) if isinstance(value, complex | float | int) else None
+
+    @property
+    def loss_tangent(self) -> float | None:
+        """ε″/ε′, or None when the loss is part of `permittivity`."""
+        value = self.constants.get("loss_tangent")
+        return float(value) if isinstance(value, float | int) else None
+
+    @property
+    def conductivity(self) -> Measure | None:
+        """σ, or None."""
+        value = self.constants.get("conductivity")
+        return value if isinstance(value, Measure) else None
+
+    @property
+    def about_values(self) -> Provenance:
+        """Source, certainty, spread and note together."""
+        return Provenance(self.source, self.certainty, self.spread, self.note)
 
 
 @dataclass(frozen=True, slots=True)

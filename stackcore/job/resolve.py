@@ -5,10 +5,13 @@ from dataclasses import dataclass, field
 from types import MappingProxyType
 from typing import Final
 
+import numpy as np
+
+from stackcore.arrays import FloatArray
 from stackcore.errors import Fault, JobError, LibraryError
 from stackcore.job import checks, limits
 from stackcore.job.inspector import join
-from stackcore.job.materials import medium_of
+from stackcore.job.materials import library_model, medium_of, references_of
 from stackcore.job.records import (
     ElementRecord,
     JobRecord,
@@ -18,8 +21,10 @@ from stackcore.job.records import (
     StackRecord,
     SweepRecord,
 )
+from stackcore.job.references import building_order
 from stackcore.media.base import AbstractMedium
-from stackcore.media.constant import VACUUM, ConstantMedium
+from stackcore.media.constant import VACUUM
+from stackcore.media.models import MODELS, Model
 from stackcore.sheets.series import SeriesSheet
 from stackcore.stack import METAL, Element, Layer, PerfectConductor, SheetPlacement, Stack
 
@@ -103,36 +108,45 @@ def resolve(record: JobRecord) -> Resolution:
     """Return the media and stacks of `record`, and all its faults; raises nothing."""
     faults = list(checks.faults_of(record))
     media: dict[str, AbstractMedium] = dict(_AIR)
-    for material in record.materials:
+    for material in building_order(record.materials):
         path = join("materials", material.name)
         if any(fault.path == path or fault.path.startswith((f"{path}.", f"{path}[")) for fault in faults):
             continue
+        if any("/" not in used and used not in media for _, used in references_of(material)):
+            continue  # what it is made of has a fault of its own
         try:
-            media[material.name] = medium_of(material)
+            media[material.name] = medium_of(material, media)
         except LibraryError as error:
             faults += [Fault(join(path, "library"), fault.message, fault.allowed) for fault in error.faults]
         except ValueError as error:
-            faults.append(Fault(path, str(error), "the constants of a passive material"))
+            faults += _model_of(material).located(error, path)
+    swept = not any(fault.path.startswith("sweep") for fault in faults)
+    frequencies = record.sweep.frequencies() if swept else np.array([1e10])
     for place, stack in enumerate(record.stacks):
-        faults += _front_faults(stack.front, media, join(join("stacks", place), "front"))
+        faults += _front_faults(stack.front, media, frequencies, join(join("stacks", place), "front"))
     if faults:
         return Resolution(media, (), tuple(faults))
+    # In the order of the job, whatever the order of building was.
+    media = {name: media[name] for name in (*_AIR, *(material.name for material in record.materials))}
     return Resolution(media, tuple(_stack(stack, media) for stack in record.stacks), ())
 
 
-def _front_faults(name: str, media: Mapping[str, AbstractMedium], path: str) -> Iterator[Fault]:
-    """Yield a fault when no wave can come from the medium called `name`."""
+def _model_of(material: MaterialRecord) -> Model:
+    return MODELS[material.model or library_model(material.library)]
+
+
+def _front_faults(
+    name: str, media: Mapping[str, AbstractMedium], frequencies: FloatArray, path: str
+) -> Iterator[Fault]:
+    """Yield a fault when no wave of the sweep can come from the medium called `name`."""
     medium = media.get(name)
     if medium is None or medium is VACUUM:
         return
-    allowed = "a material without loss, such as 'air'"
-    if not isinstance(medium, ConstantMedium):
-        yield Fault(path, f"the front half-space {name!r} absorbs", allowed)
-        return
-    constants = (complex(medium.permittivity), complex(medium.permeability))
-    if any(value.imag for value in constants):
-        yield Fault(path, f"the front half-space {name!r} absorbs", allowed)
-    elif any(value.real < 0 for value in constants):
+    values = medium.evaluate(frequencies if medium.dispersive else frequencies[:1])
+    constants = np.stack([values.permittivity, values.permeability])
+    if constants.imag.any():
+        yield Fault(path, f"the front half-space {name!r} absorbs", "a material without loss, such as 'air'")
+    elif not (constants.real > 0).all():
         yield Fault(
             path, f"no wave travels in the front half-space {name!r}", "positive permittivity and permeability"
         )

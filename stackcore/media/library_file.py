@@ -7,15 +7,16 @@ table ``[[material]]``:
     name = "copper"                    # lower case, digits and hyphens; the entry is metals/copper
     label = "Copper"
     also = ["Cu"]                      # further words to find it by; may be left out
-    model = "conductor"                # a row of stackcore.media.models.MODELS, which names the constants
+    model = "conductor"                # a name of stackcore.media.models.MODELS, which has the constants
     conductivity = "59.6 MS/m"
-    range = ["1 Hz", "300 GHz"]        # where the constants hold
+    range = ["1 Hz", "300 GHz"]        # where the constants hold; left out where it follows from other entries
     source = "..."                     # publication with edition; common practice says that it is
     certainty = "read"                 # read, recalled or common practice
-    spread = { conductivity = 0.01 }   # relative, one standard deviation, for every constant given
+    spread = { conductivity = 0.01 }   # relative, one standard deviation, for ε, μ, tan δ and σ where given
     note = "20 °C; ..."                # temperature, form, cautions; may be left out
 
-An entry with a fault is left out; the others of the file stay.
+An entry may be made of others: ``host = "plastics/ptfe"``. An entry with a fault is left out; the others of the
+file stay.
 """
 
 import math
@@ -24,9 +25,10 @@ import tomllib
 from dataclasses import dataclass, field
 from typing import Final
 
-from stackcore.errors import Fault, UnitError, nearest
-from stackcore.media.base import AbstractMedium, FrequencyRange, Provenance
-from stackcore.media.models import MODELS, Constant, Model
+from stackcore.errors import Fault, LibraryError, UnitError, nearest
+from stackcore.media.base import FrequencyRange, Provenance
+from stackcore.media.library_entry import Draft, Family, FamilyFile, media_of
+from stackcore.media.models import CONSTANT_NAMES, MODELS, Constants, Model
 from stackcore.units import Dimension, parse_measure
 
 CERTAINTIES: Final = ("read", "recalled", "common practice")
@@ -39,92 +41,59 @@ _FAMILY_KEYS: Final = ("label", "note")
 _Table = dict[str, object]
 
 
-@dataclass(frozen=True, slots=True)
-class LibraryEntry:
-    """One material of the library.
+def parse_family(key: str, content: bytes, place: str = "") -> FamilyFile:
+    """Return what stands in the file of the family `key`; faults are collected, none is raised.
 
-    Parameters
-    ----------
-    key
-        ``family/name``, what a job file refers to.
-    label
-        Name for people.
-    family
-        Key of the family, the part of `key` before the slash.
-    model
-        Key of `stackcore.media.models.MODELS`.
-    constants
-        Name and value of each constant as given, named as in a job file: relative constants complex, a loss
-        tangent as a number, quantities with a unit as `Measure`.
-    valid_range, provenance
-        See `stackcore.media.base`; `medium` carries the same.
-    medium
-        Ready for a layer.
-    also
-        Further words it can be found by.
+    `place` is what faults call the file; ``key.toml`` when empty.
     """
-
-    key: str
-    label: str
-    family: str
-    model: str
-    constants: tuple[tuple[str, Constant], ...]
-    valid_range: FrequencyRange
-    provenance: Provenance
-    medium: AbstractMedium
-    also: tuple[str, ...] = ()
-
-    @property
-    def name(self) -> str:
-        """Part of `key` after the slash."""
-        return self.key.partition("/")[2]
-
-
-@dataclass(frozen=True, slots=True)
-class Family:
-    """The entries of one file, in its order, and what is wrong with the others."""
-
-    key: str
-    label: str
-    note: str
-    entries: tuple[LibraryEntry, ...]
-    faults: tuple[Fault, ...]
+    place = place or f"{key}.toml"
+    try:
+        # A byte order mark is what some editors put in front of UTF-8; TOML itself does not take it.
+        tables = tomllib.loads(content.decode("utf-8-sig"))
+    except UnicodeDecodeError as error:
+        return FamilyFile(key, key, "", (), (Fault(place, f"is not UTF-8: {error}", "a TOML file in UTF-8"),))
+    except (tomllib.TOMLDecodeError, RecursionError, ValueError) as error:  # brackets too deep, numbers too long
+        return FamilyFile(key, key, "", (), (Fault(place, f"is not TOML: {error}", "a TOML file"),))
+    reading = _Reading(key, place)
+    label, note = reading.head(tables)
+    for position, table in enumerate(reading.materials(tables)):
+        reading.entry(position, table)
+    return FamilyFile(key, label, note, tuple(reading.drafts), tuple(reading.faults))
 
 
 def read_family(key: str, content: bytes) -> Family:
     """Return the family `key` from the bytes of its file; faults are collected, none is raised.
+
+    An entry may be made of others of the same file.
 
     Examples
     --------
     >>> read_family("metals", b"[family").faults[0].path
     'metals.toml'
     """
-    place = f"{key}.toml"
-    try:
-        # A byte order mark is what some editors put in front of UTF-8; TOML itself does not take it.
-        tables = tomllib.loads(content.decode("utf-8-sig"))
-    except UnicodeDecodeError as error:
-        return Family(key, key, "", (), (Fault(place, f"is not UTF-8: {error}", "a TOML file in UTF-8"),))
-    except (tomllib.TOMLDecodeError, RecursionError) as error:  # the latter for brackets nested too deep
-        return Family(key, key, "", (), (Fault(place, f"is not TOML: {error}", "a TOML file"),))
-    reading = _Reading(key)
-    label, note = reading.head(tables)
-    for position, table in enumerate(reading.materials(tables)):
-        reading.entry(position, table)
-    return Family(key, label, note, tuple(reading.entries), tuple(reading.faults))
+    parsed = parse_family(key, content)
+    drafts = {draft.key: draft for draft in parsed.drafts}
+    entries, faults = [], list(parsed.faults)
+    for draft in parsed.drafts:
+        try:
+            entries.append(draft.entry(media_of(draft, drafts.get)))
+        except LibraryError as error:
+            faults += error.faults
+    return Family(key, parsed.label, parsed.note, tuple(entries), tuple(faults))
 
 
 @dataclass(slots=True)
 class _Reading:
-    """The reading of one file: entries and faults as they come."""
+    """The reading of one file: drafts and faults as they come."""
 
     family: str
-    entries: list[LibraryEntry] = field(default_factory=list)
+    file: str
+    drafts: list[Draft] = field(default_factory=list)
     faults: list[Fault] = field(default_factory=list)
     taken: set[tuple[str, str]] = field(default_factory=set)
 
     def fault(self, place: str, message: str, allowed: str = "") -> None:
-        self.faults.append(Fault(f"{self.family}.toml: {place}", message, allowed))
+        self.faults.append(Fault(f"{self.file}: {place}", message, allowed))
 
     def head(self, tables: _Table) -> tuple[str, str]:
         """Return label and note of the family."""
@@ -144,32 +113,23 @@ class _Reading:
         return []
 
     def entry(self, position: int, table: _Table) -> None:
-        """Read one entry into `entries`; with a fault anywhere in it, only its faults are kept."""
+        """Read one entry into `drafts`; with a fault anywhere in it, only its faults are kept."""
         before = len(self.faults)
         name = self.name(position, table)
         place = f"{name or f'material[{position}]'}."
         label = self.own(place, "label", self.text(place, table, "label"))
         also = self.words(place, table)
-        valid_range = self.valid_range(place, table)
+        model = self.model(place, table)
+        valid_range = self.valid_range(place, table, model)
         source, certainty = self.text(place, table, "source"), self.certainty(place, table)
         note = self.text(place, table, "note", "")
-        model = self.model(place, table)
-        constants = self.constants(place, table, model) if model else {}
-        spread = self.spread(place, table, constants)
-        if model is None or valid_range is None or len(self.faults) > before:
+        constants = self.constants(place, table, model) if model else Constants()
+        spread = self.spread(place, table, model)
+        if model is None or len(self.faults) > before:
             return
-        provenance = Provenance(source, certainty, spread, note)
-        try:
-            medium = model.build(constants, valid_range, provenance)
-        except ValueError as error:
-            self.fault(name, str(error), "values of a passive material")
-            return
-        key, values = f"{self.family}/{name}", tuple(constants.items())
-        self.entries.append(
-            LibraryEntry(
-                key, label, self.family, str(table["model"]), values, valid_range, provenance, medium, also
-            )
-        )
+        provenance, key = Provenance(source, certainty, spread, note), f"{self.family}/{name}"
+        where = f"{self.file}: {name}"
+        self.drafts.append(Draft(where, key, label, model, constants, valid_range, provenance, also))
 
     def check_keys(self, place: str, table: _Table, known: tuple[str, ...]) -> None:
         for key in table:
@@ -214,7 +174,12 @@ class _Reading:
             self.fault(f"{place}certainty", f"{value!r} is not known{nearest(value, CERTAINTIES)}", known)
         return value
 
-    def valid_range(self, place: str, table: _Table) -> FrequencyRange | None:
+    def valid_range(self, place: str, table: _Table, model: Model | None) -> FrequencyRange | None:
+        if "range" not in table and model is not None and model.nested:
+            return None
+        if "range" in table and model is not None and not model.ranged:
+            self.fault(f"{place}range", f"the model {model.name!r} takes its range from its parts", "no range here")
+            return None
         allowed = 'the lower and the upper end; for example ["8 GHz", "12.4 GHz"]'
         value = table.get("range")
         if not (isinstance(value, list) and len(value) == 2 and all(isinstance(end, str) for end in value)):
@@ -240,44 +205,46 @@ class _Reading:
                 known = f"one of {', '.join(MODELS)}"
                 self.fault(f"{place}model", f"{name!r} is not known{nearest(name, MODELS)}", known)
             return None
-        self.check_keys(place, table, (*_ENTRY_KEYS, *model.readers))
-        for constant in model.required:
-            if constant not in table:
-                self.fault(f"{place}{constant}", "is missing", f"the model {name!r} needs it")
+        self.check_keys(place, table, (*_ENTRY_KEYS, *model.names))
         return model
 
-    def constants(self, place: str, table: _Table, model: Model) -> dict[str, Constant]:
-        constants: dict[str, Constant] = {}
-        for name, read in model.readers.items():
-            if name in table:
-                try:
-                    constants[name] = read(table[name])
-                except UnitError as error:
-                    self.fault(f"{place}{name}", error.message, error.allowed)
-        if "loss_tangent" in constants and isinstance(table.get("permittivity"), list):
-            allowed = "permittivity as a number with loss_tangent, or [real, loss] alone"
-            self.fault(f"{place}loss_tangent", "the loss is given twice, permittivity has it as well", allowed)
+    def constants(self, place: str, table: _Table, model: Model) -> Constants:
+        """Return the constants; each one's first fault is told, and none that follows from it."""
+        told: set[str] = set()
+
+        def tell(path: str, message: str, allowed: str) -> None:
+            told.add(path)
+            self.fault(f"{place}{path.removeprefix('.')}", message, allowed)
+
+        constants = model.read(table, "", tell)
+        for fault in model.faults(constants, ""):
+            if not any(
+                fault.path == path or fault.path.startswith(f"{path}.") or path.startswith(f"{fault.path}[")
+                for path in told
+            ):
+                tell(fault.path, fault.message, fault.allowed)
         return constants
 
-    def spread(self, place: str, table: _Table, constants: dict[str, Constant]) -> tuple[tuple[str, float], ...]:
-        """Return the relative spread of every constant given."""
-        value = table.get("spread")
+    def spread(self, place: str, table: _Table, model: Model | None) -> tuple[tuple[str, float], ...]:
+        """Return the relative spreads given; of what varies in production none may be missing."""
+        given = [name for name in (model.names if model else CONSTANT_NAMES) if name in table]
+        wanted = [constant.name for constant in model.constants if constant.varies] if model else []
+        wanted = [name for name in wanted if name in given]
+        value = table.get("spread", None if wanted else {})
         if not isinstance(value, dict):
-            given = f"{value!r} is not a table" if "spread" in table else "is missing"
-            self.fault(f"{place}spread", given, "for example { permittivity = 0.02 }")
+            told = f"{value!r} is not a table" if "spread" in table else "is missing"
+            self.fault(f"{place}spread", told, "for example { permittivity = 0.02 }")
             return ()
         spread = []
         for name, share in value.items():
-            if name not in table or name in _ENTRY_KEYS:
-                known = f"one of {', '.join(constants)}"
-                self.fault(
-                    f"{place}spread.{name}", f"is no constant of this entry{nearest(name, constants)}", known
-                )
+            if re.split(r"[.\[]", name)[0] not in given:
+                known = f"one of {', '.join(given)}"
+                self.fault(f"{place}spread.{name}", f"is no constant of this entry{nearest(name, given)}", known)
             elif isinstance(share, bool) or not isinstance(share, int | float) or not 0 <= share < 1:
                 allowed = "one standard deviation as a fraction, 0 or more and below 1"
                 self.fault(f"{place}spread.{name}", f"{share!r} is not a relative spread", allowed)
             else:
                 spread.append((name, float(share)))
-        for name in [name for name in constants if name not in value]:
+        for name in [name for name in wanted if name not in value]:
             self.fault(f"{place}spread.{name}", "is missing", "a fraction; 0 when the value does not vary")
         return tuple(spread)

@@ -5,7 +5,7 @@ Scales are exact fractions of the SI base unit, so that a decimal text becomes t
 
 Sources: BIPM, The International System of Units, 9th edition (2019), for prefixes and for the degree; the inch of
 25.4 mm exactly and the mil of a thousandth of it (ISO 80000-3); IEC 60028 (1925) for the conductivity of annealed
-copper, 58 MS/m at 20 °C, which is 100 %IACS.
+copper, 58 MS/m at 20 °C, which is 100 %IACS. An electronvolt of photon energy is the frequency e/h, both exact.
 """
 
 import math
@@ -13,6 +13,8 @@ from dataclasses import dataclass
 from enum import Enum
 from fractions import Fraction
 from typing import Final
+
+from stackcore.constants import ELEMENTARY_CHARGE, PLANCK_CONSTANT
 
 PREFIXES: Final[dict[str, Fraction]] = {
     "a": Fraction(1, 10**18),
@@ -53,6 +55,10 @@ class Dimension(Enum):
     INDUCTANCE = "inductance"
     CAPACITANCE = "capacitance"
     CONDUCTIVITY = "conductivity"
+    TIME = "time"
+    RATE = "rate"
+    TEMPERATURE = "temperature"
+    DENSITY = "number density"
     NUMBER = "number"
 
     @property
@@ -113,12 +119,15 @@ class Unit:
         What it measures.
     prefix
         The SI prefix in `symbol` as typed (``u`` for micro), empty when there is none.
+    zero
+        What 0 of it is in the SI base unit; not 0 for a scale of temperature only.
     """
 
     symbol: str
     scale: Fraction
     dimension: Dimension
     prefix: str = ""
+    zero: Fraction = Fraction(0)
 
 
 @dataclass(frozen=True, slots=True)
@@ -160,6 +169,11 @@ _FACTS: Final[dict[Dimension, _Facts]] = {
     Dimension.CONDUCTIVITY: _Facts(
         "S/m", ("S/m", "kS/m", "MS/m", "S/cm", "%IACS"), "58 MS/m", "S/m", _ladder("S/m", "GMk-mun")
     ),
+    Dimension.TIME: _Facts("s", ("fs", "ps", "ns", "us", "ms", "s"), "8 ps", "ps", _ladder("s", "-munpf")),
+    Dimension.RATE: _Facts("1/s", ("1/s",), "5e13 1/s", "1/s", (("1/s", Fraction(0)),)),
+    # `stackcore.units.measure` shows in K what lies far from room temperature.
+    Dimension.TEMPERATURE: _Facts("K", ("°C", "K"), "20 °C", "°C", (("°C", Fraction(0)),)),
+    Dimension.DENSITY: _Facts("1/m3", ("1/m3", "1/cm3"), "1e18 1/m3", "1/m3", (("1/m3", Fraction(0)),)),
     Dimension.NUMBER: _Facts("", (), "4.2", "", (("", Fraction(0)),)),
 }
 
@@ -179,6 +193,19 @@ def _named(dimension: Dimension, symbol: str, scale: Fraction, *spellings: str) 
     return dict.fromkeys((symbol, *spellings), unit)
 
 
+def _scaled(names: dict[str, Unit], factor: Fraction) -> dict[str, Unit]:
+    """Return units that are `factor` times as large."""
+    return {
+        name: Unit(unit.symbol, unit.scale * factor, unit.dimension, unit.prefix) for name, unit in names.items()
+    }
+
+
+def _degrees(symbol: str, scale: Fraction, zero: Fraction, *spellings: str) -> dict[str, Unit]:
+    unit = Unit(symbol, scale, Dimension.TEMPERATURE, zero=zero)
+    return dict.fromkeys((symbol, *spellings), unit)
+
+
+_HERTZ_PER_ELECTRONVOLT: Final = Fraction(repr(ELEMENTARY_CHARGE)) / Fraction(repr(PLANCK_CONSTANT))
 _INCH: Final = Fraction(254, 10**4)
 _SQUARES: Final = ("ohm/sq", "ohm", "ohms", "ohms/sq", "ohm/square", "ohms/square")
 
@@ -189,17 +216,22 @@ UNITS: Final[dict[str, Unit]] = {
     **_named(Dimension.LENGTH, "µm", PREFIXES["u"], "micron", "microns"),
     **_named(Dimension.LENGTH, "Å", Fraction(1, 10**10), "angstrom", "angstroms"),
     **_with_prefixes(Dimension.FREQUENCY, "Hz", ("Hz",), "m-kMGTP"),
+    **_scaled(_with_prefixes(Dimension.FREQUENCY, "eV", ("eV",), "m-k"), _HERTZ_PER_ELECTRONVOLT),
     **_named(Dimension.ANGLE, "deg", _DEGREE, "°", "degree", "degrees"),
     **_with_prefixes(Dimension.ANGLE, "rad", ("rad",), "m-"),
     **_with_prefixes(Dimension.RESISTANCE, "Ω/sq", _SQUARES, "um-kMG"),
     **_with_prefixes(Dimension.INDUCTANCE, "H", ("H",), "afpnum-"),
     **_with_prefixes(Dimension.CAPACITANCE, "F", ("F",), "afpnum-"),
     **_with_prefixes(Dimension.CONDUCTIVITY, "S/m", ("S/m",), "pnum-kMG"),
-    **{
-        name: Unit(unit.symbol, unit.scale * 100, unit.dimension, unit.prefix)
-        for name, unit in _with_prefixes(Dimension.CONDUCTIVITY, "S/cm", ("S/cm",), "um-kM").items()
-    },
+    **_scaled(_with_prefixes(Dimension.CONDUCTIVITY, "S/cm", ("S/cm",), "um-kM"), Fraction(100)),
     **_named(Dimension.CONDUCTIVITY, "%IACS", Fraction(580_000)),
+    **_with_prefixes(Dimension.TIME, "s", ("s",), "afpnum-"),
+    **_named(Dimension.RATE, "1/s", Fraction(1), "/s", "s^-1"),
+    **_degrees("K", Fraction(1), Fraction(0), "kelvin"),
+    **_degrees("°C", Fraction(1), Fraction(27315, 100), "C", "degC", "celsius"),
+    **_degrees("°F", Fraction(5, 9), Fraction(45967, 180), "degF", "fahrenheit"),
+    **_named(Dimension.DENSITY, "1/m3", Fraction(1), "/m3", "1/m^3", "/m^3", "1/m³", "/m³", "m^-3"),
+    **_named(Dimension.DENSITY, "1/cm3", Fraction(10**6), "/cm3", "1/cm^3", "/cm^3", "1/cm³", "/cm³", "cm^-3"),
     **_named(Dimension.NUMBER, "%", Fraction(1, 100)),
 }
 """Name as typed, after `stackcore.units.spelling.plain` -> unit."""

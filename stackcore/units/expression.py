@@ -19,7 +19,8 @@ LONGEST_TEXT: Final = 100
 """Characters; long enough for any value, short enough that nothing nests deep."""
 
 _NUMBER: Final = r"(?:[0-9][0-9.,]*|[.,][0-9][0-9.,]*)(?:[eE][+-]?[0-9]+)?"
-_UNIT: Final = r"[^\W\d_]\w*(?: */ *[^\W\d_]\w*)?|% *[A-Za-z]*|[\"°]"
+_INVERSE: Final = r"(?:1 *)?/ *(?:c?m\^?3|c?m³|s)(?!\w)|(?:s\^-1|c?m\^-3)(?!\w)"
+_UNIT: Final = rf"{_INVERSE}|[^\W\d_]\w*(?: */ *[^\W\d_]\w*)?|% *[A-Za-z]*|° *[CcFf]?|\""
 _TOKEN: Final = re.compile(rf" *(?:(?P<number>{_NUMBER})|(?P<unit>{_UNIT})|(?P<sign>[-+*/()]))")
 _SIMPLE: Final = re.compile(rf"(?P<number>[-+]?{_NUMBER}) *(?P<unit>{_UNIT})?")
 
@@ -47,8 +48,8 @@ def read_amount(text: str, dimension: Dimension) -> Amount:
     if not text:
         raise UnitError("nothing is written", dimension.allowed)
     if simple := _SIMPLE.fullmatch(text):
-        number = Amount(read_number(simple["number"]), None)
-        return number if simple["unit"] is None else _times(number, _unit_amount(simple["unit"], dimension))
+        number = read_number(simple["number"])
+        return Amount(number, None) if simple["unit"] is None else _of_unit(number, simple["unit"], dimension)
     return _evaluate(text, dimension)
 
 
@@ -88,8 +89,18 @@ def _with_decimal_point(text: str) -> str:
     return text.replace(",", ".")
 
 
+def _of_unit(number: Fraction, name: str, dimension: Dimension) -> Amount:
+    unit = find_unit(name, dimension)
+    kind = None if unit.dimension is Dimension.NUMBER else unit.dimension
+    return Amount(number * unit.scale + unit.zero, kind)
+
+
 def _unit_amount(name: str, dimension: Dimension) -> Amount:
     unit = find_unit(name, dimension)
+    if unit.zero:
+        raise UnitError(
+            f"{unit.symbol} is a scale of its own zero and cannot be reckoned with", "one number in it, or K"
+        )
     return Amount(unit.scale, None if unit.dimension is Dimension.NUMBER else unit.dimension)
 
 

@@ -8,11 +8,14 @@ from functools import lru_cache
 from typing import Final
 
 from stackcore.errors import UnitError
-from stackcore.units.dimensions import UNITS, Dimension
+from stackcore.units.dimensions import UNITS, Dimension, Unit
 from stackcore.units.expression import read_amount
 from stackcore.units.spelling import find_unit, plain
 
 _LARGE: Final = 1e300
+_COLD: Final = 150
+_HOT: Final = 3000
+"""K, between which temperatures are shown in °C."""
 _EXACT: Final = Context(prec=60, rounding=ROUND_HALF_EVEN)
 
 
@@ -88,7 +91,8 @@ def _parse_text(text: str, dimension: Dimension, default_unit: str | None) -> Me
         if "%" in text:
             raise UnitError(f"{text!r} is a fraction, not {dimension.phrase}", dimension.allowed)
         if default_unit is not None:
-            value *= _scale(default_unit, dimension)
+            unit = _unit(default_unit, dimension)
+            value = value * unit.scale + unit.zero
             bare = text if not any(sign in plain(text)[1:] for sign in "+-") or _is_number(text) else f"({text})"
             text = f"{bare} {default_unit}"
     elif amount.dimension is not None and amount.dimension is not dimension:
@@ -104,14 +108,14 @@ def _is_number(text: str) -> bool:
     return True
 
 
-def _scale(unit: str, dimension: Dimension) -> Fraction:
-    """Return the exact size of `unit` in SI, or raise UnitError when it is no unit of `dimension`."""
+def _unit(unit: str, dimension: Dimension) -> Unit:
+    """Return the unit called `unit`, or raise UnitError when it is no unit of `dimension`."""
     if not unit and dimension is Dimension.NUMBER:
-        return Fraction(1)
+        return Unit("", Fraction(1), dimension)
     found = find_unit(plain(unit), dimension)
     if found.dimension is not dimension:
         raise UnitError(f"{unit!r} is a unit of {found.dimension.word}, not of {dimension.word}", dimension.allowed)
-    return found.scale
+    return found
 
 
 def _nearest_double(value: Fraction, text: str) -> float:
@@ -165,8 +169,9 @@ def format_value(value: float, dimension: Dimension, *, unit: str | None = None,
         # The decimal a person sees, not the double a hair below it, decides: 1e-12 F is 1 pF.
         seen = Decimal(repr(value)) if digits is None else _rounded(Fraction(value), digits)
         unit = _readable_unit(abs(Fraction(seen)), dimension)
-    scale = Fraction(1) if not unit else _scale(unit, dimension)
-    number = _shortest(value, scale) if digits is None else _rounded(Fraction(value) / scale, digits)
+    written = _unit(unit, dimension) if unit else _unit(dimension.si_unit, dimension)
+    exact = (Fraction(value) - written.zero) / written.scale
+    number = _shortest(value, written) if digits is None else _rounded(exact, digits)
     return f"{_plain_number(number)} {unit}".strip()
 
 
@@ -191,7 +196,7 @@ def degrees_of(angle: float) -> float:
     >>> degrees_of(math.radians(57.0)), math.degrees(math.radians(57.0))
     (57.0, 57.00000000000001)
     """
-    scale = _scale("deg", Dimension.ANGLE)
+    scale = _unit("deg", Dimension.ANGLE).scale
     for digits in range(1, 18):
         degrees = float(f"{math.degrees(angle):.{digits}g}")
         exact = Fraction(repr(degrees)) * scale
@@ -201,6 +206,8 @@ def degrees_of(angle: float) -> float:
 
 
 def _readable_unit(magnitude: Fraction, dimension: Dimension) -> str:
+    if dimension is Dimension.TEMPERATURE:
+        return dimension.usual_unit if _COLD <= magnitude <= _HOT else dimension.si_unit
     if magnitude == 0:
         return dimension.usual_unit
     ladder = dimension.ladder
@@ -215,13 +222,15 @@ def _rounded(value: Fraction, digits: int) -> Decimal:
     return Context(prec=max(digits, 1), rounding=ROUND_HALF_EVEN).plus(_decimal(value))
 
 
-def _shortest(value: float, scale: Fraction) -> Decimal:
-    """Return the decimal with the fewest digits whose exact multiple of `scale` has `value` as nearest double."""
-    wanted = _decimal(Fraction(value) / scale)
-    for digits in range(1, 18):
+def _shortest(value: float, unit: Unit) -> Decimal:
+    """Return the decimal with the fewest digits that has `value` as nearest double when it is in `unit`."""
+    wanted = _decimal((Fraction(value) - unit.zero) / unit.scale)
+    # A double near absolute zero needs the digits of 273.15 in front of its own.
+    most = _EXACT.prec if unit.zero else 18
+    for digits in range(1, most):
         candidate = Context(prec=digits, rounding=ROUND_HALF_EVEN).plus(wanted)
         try:
-            found = Fraction(candidate) * scale
+            found = Fraction(candidate) * unit.scale + unit.zero
             if found.numerator / found.denominator == value:
                 return candidate
         except OverflowError:  # rounded up beyond the largest double

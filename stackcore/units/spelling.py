@@ -31,6 +31,8 @@ _LOOK_ALIKE: Final = str.maketrans(
         "\u212b": "Å",  # angstrom sign
         "\u00ba": "°",  # masculine ordinal, typed for a degree
         "\u02da": "°",  # ring above
+        "℃": "°C",
+        "℉": "°F",
         "″": '"',
         "”": '"',
         "“": '"',

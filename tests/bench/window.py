@@ -33,7 +33,9 @@ LIMIT_MS = 5000
 def job() -> Job:
     """Return the bench's wall as a job: 20 layers, 2001 frequencies, 3 angles."""
     parts = [(f"m{index}", epsilon, thickness) for index, (epsilon, thickness) in enumerate(layers())]
-    materials = tuple(MaterialRecord(name, model="constant", permittivity=epsilon) for name, epsilon, _ in parts)
+    materials = tuple(
+        MaterialRecord(name, model="constant", constants={"permittivity": epsilon}) for name, epsilon, _ in parts
+    )
     elements = tuple(LayerRecord(name, measure(thickness, Dimension.LENGTH)) for name, _, thickness in parts)
     grid = FrequencyGrid(measure(8e9, Dimension.FREQUENCY), measure(12e9, Dimension.FREQUENCY), POINTS)
     angles = tuple(measure(value, Dimension.ANGLE) for value in (0.0, 0.5, 1.0))

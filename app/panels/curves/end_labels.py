@@ -17,6 +17,7 @@ from app.panels.curves.spacing import spread
 _LEADER: Final = 16.0
 _GAP: Final = 4.0
 _EDGE: Final = 6.0
+_OVER: Final = 24.0
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -85,6 +86,11 @@ class EndLabels(pg.GraphicsWidget):
         """Name these curves from now on."""
         self._labels = tuple(labels)
         self._fit()
+
+    def boundingRect(self) -> QRectF:
+        """Return the column, with room for a name that stands at the upper or lower edge of the plot area."""
+        column: QRectF = super().boundingRect()
+        return column.adjusted(0.0, -_OVER, 0.0, _OVER)
 
     def paint(self, painter: QPainter, option: QStyleOptionGraphicsItem, widget: QWidget | None = None) -> None:
         """Write the names."""

@@ -26,7 +26,7 @@ class Header(QWidget):
         super().__init__(parent)
         self.worst = QLabel()
         self.worst.setTextInteractionFlags(Qt.TextInteractionFlag.TextSelectableByMouse)
-        self.worst.setAccessibleName("Worst value")
+        self.worst.setAccessibleName("Worst point")
         self.hidden = QLabel()
         self.doubt = QLabel()
         self.doubt.setAccessibleName("Beyond material data")

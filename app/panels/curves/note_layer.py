@@ -33,4 +33,9 @@ class NoteLayer(Layer):
         painter.setPen(QColor(self.theme.muted))
         margin = min(48.0, frame.width * 0.08)
         room = QRectF(margin, 8.0, frame.width - 2 * margin, frame.height - 16.0)
-        painter.drawText(room, int(Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextWordWrap), self.text)
+        flags = int(Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextWordWrap)
+        # On a ground of its own, so that neither the grid nor a marker runs through the words.
+        painter.fillRect(
+            painter.boundingRect(room, flags, self.text).adjusted(-6, -2, 6, 2), QColor(self.theme.base)
+        )
+        painter.drawText(room, flags, self.text)

@@ -255,11 +255,11 @@ class CurvesPanel(QWidget):
         state, curves = self._view.state, self._curves
         label = drawing.quantity_label(state)
         self.header.set_worst(words.worst_sentence(curves))
-        self.header.set_hidden(words.hidden_sentence(curves))
+        empty = words.empty_sentence(state.quantity, curves)
+        self.header.set_hidden("" if empty else words.hidden_sentence(curves))
         doubt = doubt_sentence(self._session.job, curves[0].doubts) if curves else ""
         self.header.set_doubt(doubt)
         self._show_legend()
-        empty = words.empty_sentence(state.quantity, curves)
         self.plot.note_layer.set_text(empty)
         said = words.description(curves) + (f" Dotted where {doubt}." if doubt else "")
         self.plot.setAccessibleName(f"Curves of {label.lower()}")

@@ -189,10 +189,10 @@ class PlotCommands:
                 group=1,
             ),
             Command(
-                "Marker to the worst value",
+                "Marker to the worst point",
                 self.to_worst,
                 ("W",),
-                "Move the active marker to the worst value of all curves.",
+                "Move the active marker to the worst point of all curves.",
                 enabled=lambda: words.worst_curve(self._panel.curves) is not None,
                 group=1,
             ),
@@ -219,9 +219,9 @@ class PlotCommands:
 
         return (
             Command(
-                "Mark worst values",
+                "Mark worst points",
                 lambda: view.set(panel, worst_shown=not view.state.worst_shown),
-                tip="Mark the worst value of each curve.",
+                tip="Mark the worst point of each curve.",
                 checked=lambda: view.state.worst_shown,
                 group=2,
             ),

@@ -99,7 +99,9 @@ def logarithmic_ticks(low: float, high: float, most: float, spell: Callable[[flo
     """
     if high - low < 0.5:
         near = linear_ticks(10.0**low, 10.0**high, most)
-        return Ticks(tuple(math.log10(value) for value in near.major if value > 0), near.texts)
+        shown = [(value, text) for value, text in zip(near.major, near.texts, strict=True) if value > 0]
+        texts = tuple(spell(value) if spell else text for value, text in shown)
+        return Ticks(tuple(math.log10(value) for value, _ in shown), texts)
     decades = range(math.floor(low), math.ceil(high) + 1)
     every = max(1, math.ceil(len(decades) / max(most, 1.0)))
     digits: tuple[int, ...] = (1,)

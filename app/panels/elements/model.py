@@ -95,7 +95,11 @@ class ElementsModel(QAbstractTableModel):
     def show_rare_columns(self, shown: bool) -> None:
         """Show those columns wherever there is a sheet, or only where a sheet uses them."""
         self._rare_columns = shown
-        self._set_columns(self._wanted_columns())
+        self._following = True
+        try:
+            self._set_columns(self._wanted_columns())
+        finally:
+            self._following = False
 
     @property
     def lines(self) -> tuple[Line, ...]:

@@ -95,6 +95,8 @@ class ElementsPanel(QWidget):
         """Show the columns for inductance and capacitance for every sheet, or only where they are used."""
         if shown != self._model.rare_columns:
             self._model.show_rare_columns(shown)
+            # A row is selected when all its cells are, also those that have just come.
+            self._show_selection(self._session.selection)
             self._rare.setChecked(shown)
             self.columns_asked.emit()
 

@@ -1,15 +1,31 @@
 """The choice of the stack that is shown, and what can be done with stacks as a whole."""
 
 from collections.abc import Callable
+from typing import Final
 
-from PySide6.QtCore import QEvent, QObject, QSignalBlocker, Qt
-from PySide6.QtGui import QKeyEvent, QWheelEvent
-from PySide6.QtWidgets import QComboBox, QHBoxLayout, QLabel, QLineEdit, QMenu, QSizePolicy, QToolButton, QWidget
+from PySide6.QtCore import QEvent, QObject, QPointF, QSignalBlocker, QSize, Qt
+from PySide6.QtGui import QKeyEvent, QPainter, QPaintEvent, QPalette, QPen, QWheelEvent
+from PySide6.QtWidgets import (
+    QComboBox,
+    QHBoxLayout,
+    QLabel,
+    QLineEdit,
+    QMenu,
+    QSizePolicy,
+    QStyle,
+    QStyleOptionToolButton,
+    QStylePainter,
+    QToolButton,
+    QWidget,
+)
 
 from app.document import edits
 from app.document.document import Selection
 from app.document.edit import Edit
 from app.document.session import Session
+
+_ARROW: Final = 12
+"""Pixels for the arrow of a button with a menu."""
 
 
 class StillBox(QComboBox):
@@ -17,6 +33,30 @@ class StillBox(QComboBox):
 
     def wheelEvent(self, event: QWheelEvent) -> None:
         event.ignore()
+
+
+class MenuButton(QToolButton):
+    """A quiet word that opens a menu, with an arrow beside it; Qt's own would lie on the word's last letter."""
+
+    def sizeHint(self) -> QSize:
+        return super().sizeHint() + QSize(_ARROW, 0)
+
+    def paintEvent(self, event: QPaintEvent) -> None:
+        option = QStyleOptionToolButton()
+        self.initStyleOption(option)
+        option.features &= ~QStyleOptionToolButton.ToolButtonFeature.HasMenu
+        option.text = ""
+        painter = QStylePainter(self)
+        painter.drawComplexControl(QStyle.ComplexControl.CC_ToolButton, option)
+        ink = option.palette.color(QPalette.ColorRole.ButtonText)
+        painter.setPen(ink)
+        word = self.rect().adjusted(0, 0, -_ARROW, 0)
+        painter.drawText(word, Qt.AlignmentFlag.AlignCenter, self.text())
+        painter.setRenderHint(QPainter.RenderHint.Antialiasing)
+        painter.setPen(QPen(ink, 1.4))
+        x, y = self.width() - _ARROW + 1.0, self.height() / 2 - 1
+        painter.drawPolyline([QPointF(x - 3, y), QPointF(x, y + 3), QPointF(x + 3, y)])
+        painter.end()
 
 
 class StackBar(QWidget):
@@ -58,7 +98,7 @@ class StackBar(QWidget):
 
     def menu_button(self, parent: QWidget) -> QToolButton:
         """Return a button whose menu adds, duplicates, renames and deletes stacks."""
-        button = QToolButton(parent)
+        button = MenuButton(parent)
         button.setText("Stacks")
         button.setToolTip("Add, duplicate, rename or delete a stack.")
         button.setAutoRaise(True)

@@ -14,6 +14,8 @@ from app.panels.tables.delegate import MARK, MARK_GAP, PADDING
 
 _PARTS: Final = re.compile(r"(?P<whole>.*?)(?P<fraction>[.,]\d*(?:[eE][-+]?\d+)?)?\s*(?P<unit>[^\d.,()]*)")
 _MOST_TEXTS: Final = 4096
+_WIDEST: Final = 26
+"""Digits a column has room for; a longer text is cut in the table and whole when it is typed into."""
 
 Ruler = Callable[[str], int]
 
@@ -68,8 +70,9 @@ def _widths(ruler: Ruler, column: Column, cells: Sequence[CellView]) -> Widths:
     unit = max((ruler(f" {part[2]}") for part in parts), default=0)
     numbers = max((ruler(part[0]) for part in parts), default=0)
     marks = [ruler(cell.text) + (MARK + MARK_GAP if cell.fault else 0) for cell in words]
-    widest = max([numbers + fraction + unit, ruler(column.title), *marks])
-    return Widths(widest + 2 * PADDING + 2, fraction, unit)
+    widest = max(numbers + fraction + unit, *marks) if marks else numbers + fraction + unit
+    room = max(ruler(column.title), min(widest, _WIDEST * ruler("0")))
+    return Widths(room + 2 * PADDING + 2, fraction, unit)
 
 
 def is_quantity(cell: CellView) -> bool:

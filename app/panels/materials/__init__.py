@@ -1,1 +1,1 @@
-"""The job's materials, and the library they can be taken from."""
+"""The job's materials, the library they can be taken from, and what speaks against them."""

@@ -9,9 +9,12 @@ from PySide6.QtGui import QColor, QPainter, QPen
 from PySide6.QtWidgets import QStyle, QStyledItemDelegate, QStyleOptionViewItem
 
 from app.look.theme import Theme
-from app.panels.materials.words import range_text, spread_text, values_text
+from app.panels.materials.narrowing import Values, Wanted, narrowed
+from app.panels.materials.words import glance, range_text, spread_text, values_text
 from app.panels.tables.delegate import PADDING
+from app.series.texts import frequency_text
 from stackcore.media.library import Library, LibraryEntry
+from stackcore.media.models import MODELS
 
 Index = QModelIndex | QPersistentModelIndex
 Role = Qt.ItemDataRole
@@ -29,21 +32,64 @@ class AskedOfEntry(IntEnum):
 
 
 class LibraryModel(QAbstractListModel):
-    """The entries of the library that hold all the words searched for, in the order of the library's search."""
+    """The entries of the library that fit what is wanted, in the order of the library's search.
 
-    def __init__(self, library: Library, parent: QObject | None = None) -> None:
+    An entry is evaluated when its row is drawn, or when what is wanted is bounded by values.
+    """
+
+    def __init__(self, library: Library, frequency: float, parent: QObject | None = None) -> None:
         super().__init__(parent)
         self._library = library
-        self._entries: Sequence[LibraryEntry] = library.search("")
+        self._frequency = frequency
+        self._wanted = Wanted()
+        self._values = Values()
+        self._used: frozenset[str] = frozenset()
+        # Nothing is read before it is wanted: a file of the library costs time at the start of the program.
+        self._entries: Sequence[LibraryEntry] = ()
 
-    def search(self, words: str) -> None:
-        """Show the entries that hold every one of `words`."""
-        found = self._library.search(words)
-        if found == self._entries:
+    def set_library(self, library: Library) -> None:
+        """Show the entries of another library from now on."""
+        self.beginResetModel()
+        self._library = library
+        self._values = Values()
+        self._entries = narrowed(library, self._wanted, self.permittivity)
+        self.endResetModel()
+
+    def want(self, wanted: Wanted) -> None:
+        """Show the entries that fit from now on."""
+        self._wanted = wanted
+        self._find()
+
+    def set_frequency(self, frequency: float) -> None:
+        """Give values at `frequency` in Hz from now on."""
+        if frequency == self._frequency:
+            return
+        self._frequency = frequency
+        if self._wanted.by_values:
+            self._find()
+        self._tell_all()
+
+    def set_used(self, keys: frozenset[str]) -> None:
+        """Mark the entries that the job uses."""
+        if keys != self._used:
+            self._used = keys
+            self._tell_all()
+
+    def permittivity(self, entry: LibraryEntry) -> complex:
+        """Return the relative permittivity of an entry at the frequency of the values."""
+        return self._values.permittivity(entry, self._frequency)
+
+    def _find(self) -> None:
+        found = narrowed(self._library, self._wanted, self.permittivity)
+        if tuple(found) == tuple(self._entries):
             return
         self.beginResetModel()
         self._entries = found
         self.endResetModel()
+
+    def _tell_all(self) -> None:
+        if self._entries:
+            self.dataChanged.emit(self.index(0), self.index(len(self._entries) - 1))
 
     def entry(self, index: Index) -> LibraryEntry:
         """Return the entry at `index`."""
@@ -62,19 +108,26 @@ class LibraryModel(QAbstractListModel):
             case Role.ToolTipRole | Role.AccessibleDescriptionRole:
                 return entry_words(entry)
             case Role.AccessibleTextRole:
-                return f"{entry.label}: {values_text(entry)}"
+                return f"{entry.label}: {self._glance(entry)}, {', '.join(self._facts(entry))}"
             case AskedOfEntry.VALUES:
-                return values_text(entry)
+                return self._glance(entry)
             case AskedOfEntry.FACTS:
                 return " · ".join(self._facts(entry))
             case AskedOfEntry.SOURCE:
                 return entry.provenance.source
         return None
 
+    def _glance(self, entry: LibraryEntry) -> str:
+        return glance(self.permittivity(entry), self._frequency)
+
     def _facts(self, entry: LibraryEntry) -> list[str]:
         # What matters most first: where there is little room, the line is cut short at its end.
         spread = spread_text(entry)
+        known = entry.valid_range.lowest <= self._frequency <= entry.valid_range.highest
         facts = [
+            _own_words(entry),
+            "in this job" if entry.key in self._used else "",
+            "" if known else f"a guess at {frequency_text(self._frequency)}",
             range_text(entry.valid_range),
             entry.provenance.certainty,
             f"spread {spread}" if spread else "",
@@ -83,11 +136,18 @@ class LibraryModel(QAbstractListModel):
         return [fact for fact in facts if fact]
 
 
+def _own_words(entry: LibraryEntry) -> str:
+    if not entry.own:
+        return ""
+    return "your own, in place of the program's" if entry.shadows else "your own"
+
+
 def entry_words(entry: LibraryEntry) -> str:
     """Return everything known about an entry as sentences: values, range, spread, certainty, source, note."""
     spread = spread_text(entry)
     sentences = [
-        f"{entry.label}: {values_text(entry)}",
+        f"{entry.label}: {MODELS[entry.model].label}, {values_text(entry)}",
+        _own_words(entry).capitalize(),
         f"Holds from {range_text(entry.valid_range)}",
         f"Typical spread in production, one standard deviation: {spread}" if spread else "",
         f"Certainty: {entry.provenance.certainty}",

@@ -50,7 +50,7 @@ COLUMNS: Final = (
     MaterialColumn(
         "model",
         "Model",
-        "constant: ε and μ are the same at every frequency. conductor: ε follows from the conductivity.",
+        "How ε and μ follow from the constants: the same at every frequency, by a relaxation, by a table, ...",
     ),
     MaterialColumn("source", "Source", "Where the numbers come from: publication, test report or data sheet."),
 )
@@ -84,7 +84,7 @@ def lines_of(document: Document, frequency: float) -> tuple[MaterialLine, ...]:
 
 def _line(document: Document, material: MaterialRecord, frequency: float) -> MaterialLine:
     model = pinned(material).model
-    takes = MODELS[model].readers if model in MODELS else {}
+    takes = MODELS[model].names if model in MODELS else ()
     cells = []
     for column in COLUMNS:
         if column is READING:

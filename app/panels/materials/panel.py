@@ -1,23 +1,26 @@
-"""The panel of materials: those of the job above, the library to take more from below."""
+"""The panel of materials: those of the job, the library to take more from, and what speaks against any."""
 
 from collections.abc import Callable
 
-from PySide6.QtCore import Qt
-from PySide6.QtWidgets import QSplitter, QWidget
+from PySide6.QtCore import Qt, Signal
+from PySide6.QtWidgets import QMenu, QTabWidget, QToolButton, QWidget
 
 from app.document import edits
 from app.document.document import Document
 from app.document.edit import Edit
 from app.document.library import free_name
+from app.document.material_cells import model_table
 from app.document.session import Session
 from app.document.view import View
 from app.look.theme import Theme
+from app.panels.materials.checks import Checks
 from app.panels.materials.library_view import LibraryView
 from app.panels.materials.lines import NAME
 from app.panels.materials.model import MaterialsModel
-from app.panels.materials.pieces import buttons, column, heading, ink, words
+from app.panels.materials.picks import Pick
+from app.panels.materials.pieces import buttons, column, ink, words
 from app.panels.materials.table import MaterialsTable
-from app.panels.materials.words import LOSS_ONCE, uses_text
+from app.panels.materials.words import LOSS_ONCE, cautions_text, uses_text
 from app.panels.tables.words import fault_words
 from stackcore.errors import Severity
 from stackcore.job.records import MaterialRecord
@@ -26,9 +29,12 @@ from stackcore.units import Dimension, parse_measure
 
 Tell = Callable[[str, Severity], None]
 
+OWN, LIBRARY, CHECKS = range(3)
+"""Places of the pages."""
+
 
 class MaterialsPanel(QWidget):
-    """The materials of the job, edited in place, and the library.
+    """The materials of the job, edited in place; the library; the findings of the health check.
 
     Parameters
     ----------
@@ -43,6 +49,11 @@ class MaterialsPanel(QWidget):
     library
         Where entries come from; the one of the program when it is not given.
     """
+
+    picked = Signal(object, object)
+    """What is chosen to be looked at, a tuple of `Pick`, and the current one of it."""
+    detail_wanted = Signal()
+    """Constants and curves of what is chosen are wanted."""
 
     def __init__(
         self,
@@ -60,16 +71,33 @@ class MaterialsPanel(QWidget):
         self._tell = tell
         self._model = MaterialsModel(session, view, self)
         self._table = MaterialsTable(self._model, theme, self)
-        self._library = LibraryView(library if library is not None else read_library(), theme, self.use, self)
+        found = library if library is not None else read_library()
+        self._library = LibraryView(found, theme, self._model.frequency, self.use, self)
+        self._checks = Checks(session, theme, self)
+        self.pages = QTabWidget(self)
         self._note = words("", self)
         self._cautions = words("", self)
         self._caption = words(LOSS_ONCE, self)
+        self._picks: tuple[Pick, ...] = ()
+        self._current = Pick()
         self._arrange()
-        self.setFocusProxy(self._table)
-        self._table.wanted.connect(lambda _command: self.remove())
-        self._table.selectionModel().currentChanged.connect(lambda *_indexes: self._show_note())
-        self.destroyed.connect(session.subscribe(lambda _change: self._show_note()))
+        self._connect(view)
         self.set_theme(theme)
+        self._follow()
+
+    def _connect(self, view: View) -> None:
+        self._table.wanted.connect(lambda _command: self.remove())
+        choice = self._table.selectionModel()
+        choice.currentChanged.connect(lambda *_indexes: self._show_note())
+        choice.selectionChanged.connect(lambda *_ranges: self._pick_own())
+        self._library.picked.connect(self._pick)
+        self._checks.wanted.connect(self.show_material)
+        self._checks.counted.connect(self._count)
+        ends = (
+            self._session.subscribe(lambda _change: self._follow()),
+            view.subscribe(lambda _change: self._library.set_frequency(self._model.frequency)),
+        )
+        self.destroyed.connect(lambda: [end() for end in ends])
 
     @property
     def table(self) -> MaterialsTable:
@@ -78,25 +106,51 @@ class MaterialsPanel(QWidget):
 
     @property
     def library(self) -> LibraryView:
-        """The lower half."""
+        """The page of the library."""
         return self._library
+
+    @property
+    def checks(self) -> Checks:
+        """The page of findings."""
+        return self._checks
+
+    @property
+    def picks(self) -> tuple[Pick, ...]:
+        """What is chosen to be looked at."""
+        return self._picks
+
+    @property
+    def current_pick(self) -> Pick:
+        """The one of it that is current."""
+        return self._current
+
+    def show_material(self, name: str) -> None:
+        """Show a material of the job in the table."""
+        self.pages.setCurrentIndex(OWN)
+        self._table.go_to(name, NAME.name)
+        self._table.setFocus(Qt.FocusReason.OtherFocusReason)
 
     def set_theme(self, theme: Theme) -> None:
         """Draw in the colours of `theme` from now on."""
         self._theme = theme
         self._table.set_theme(theme)
         self._library.set_theme(theme)
+        self._checks.set_theme(theme)
         ink(self._caption, theme.muted)
         self._show_note()
 
     def add_constant(self) -> None:
         """Add a material of constant ε and μ, as yet those of vacuum, and make its name the current cell."""
-        self._add(MaterialRecord(self._free_name(), model="constant", permittivity=1 + 0j))
+        self._add(MaterialRecord(self._free_name(), model="constant", constants={"permittivity": 1 + 0j}))
 
     def add_conductor(self) -> None:
         """Add a conductor of 1 MS/m and make its name the current cell."""
         conductivity = parse_measure("1 MS/m", Dimension.CONDUCTIVITY)
-        self._add(MaterialRecord(self._free_name(), model="conductor", conductivity=conductivity))
+        self._add(MaterialRecord(self._free_name(), model="conductor", constants={"conductivity": conductivity}))
+
+    def add_model(self, model: str) -> None:
+        """Add a material of any model, with constants to begin from, and make its name the current cell."""
+        self._add(MaterialRecord(self._free_name(), model=model, constants=model_table()[model].start()))
 
     def remove(self) -> None:
         """Remove the current material; while it is used, say where."""
@@ -113,15 +167,14 @@ class MaterialsPanel(QWidget):
         before = self._session.document
         if not self._apply(edits.use_library_entry(entry.key)):
             return
-        if self._session.document is before:
-            self._tell(f"{entry.label} is in this job already.", "note")
         name = next(one.name for one in self._session.record.materials if one.library == entry.key)
+        there = "already" if self._session.document is before else "now"
+        self._tell(f"{entry.label} is in this job {there}, as {name!r}.", "note")
         self._table.go_to(name, NAME.name)
 
     def _add(self, material: MaterialRecord) -> None:
         if self._apply(edits.add_material(material)):
-            self._table.go_to(material.name, NAME.name)
-            self._table.setFocus()
+            self.show_material(material.name)
 
     def _free_name(self) -> str:
         return free_name("material", (material.name for material in self._session.record.materials))
@@ -141,26 +194,67 @@ class MaterialsPanel(QWidget):
             ("Remove", remove_tip, self.remove),
         )
         row.addStretch(1)
+        row.insertWidget(2, self._other_models())
+        detail_tip = "Show constants and curves of what is chosen, beside."
+        row.addLayout(buttons(self, ("Constants and curves", detail_tip, self.detail_wanted.emit)))
         own = QWidget(self)
         upper = column(own)
-        upper.addWidget(heading("Materials of this job", self))
+        upper.setContentsMargins(0, 4, 0, 0)
         upper.addLayout(row)
         upper.addWidget(self._table, 1)
-        upper.addWidget(self._note)
-        upper.addWidget(self._cautions)
-        upper.addWidget(self._caption)
-        split = QSplitter(Qt.Orientation.Vertical, self)
-        split.setChildrenCollapsible(False)
-        split.addWidget(own)
-        split.addWidget(self._library)
-        column(self).addWidget(split)
+        for label in (self._note, self._cautions, self._caption):
+            upper.addWidget(label)
+        self.pages.setDocumentMode(True)
+        self.pages.tabBar().setAccessibleName("Pages of materials")
+        for page, title in ((own, "In this job"), (self._library, "Library"), (self._checks, "Checks")):
+            self.pages.addTab(page, title)
+        column(self).addWidget(self.pages)
+        self.setFocusProxy(self.pages)
+
+    def _other_models(self) -> QToolButton:
+        """Return the button with the menu of every other model."""
+        button = QToolButton(self)
+        button.setText("Add other")
+        button.setToolTip("Add a material by another model: a relaxation, a table of data, a mixture, …")
+        button.setAutoRaise(True)
+        button.setPopupMode(QToolButton.ToolButtonPopupMode.InstantPopup)
+        menu = QMenu(button)
+        menu.setToolTipsVisible(True)
+        for name, model in model_table().items():
+            if name not in ("constant", "conductor"):
+                action = menu.addAction(model.label)
+                action.setToolTip(model.about)
+                action.triggered.connect(lambda _on=False, name=name: self.add_model(name))
+        button.setMenu(menu)
+        return button
+
+    def _follow(self) -> None:
+        """Say of the job as it is now what concerns this panel."""
+        self._library.set_used(frozenset(one.library for one in self._session.record.materials if one.library))
+        self._show_note()
+        if any(pick.name for pick in self._picks) or not self._picks:
+            self._pick_own()
+
+    def _pick_own(self) -> None:
+        names = self._table.chosen_names() or tuple(line.name for line in self._model.lines[:1])
+        current = self._table.current_name()
+        self._pick(tuple(Pick(name) for name in names), Pick(current) if current in names else None)
+
+    def _pick(self, picks: tuple[Pick, ...], current: Pick | None = None) -> None:
+        current = current or (picks[0] if picks else Pick())
+        if (picks, current) != (self._picks, self._current):
+            self._picks, self._current = picks, current
+            self.picked.emit(picks, current)
+
+    def _count(self, findings: int) -> None:
+        self.pages.setTabText(CHECKS, f"Checks ({findings})" if findings else "Checks")
 
     def _show_note(self) -> None:
         """Say what is wrong in the current cell, and which materials are not known over all of the sweep."""
         index = self._table.currentIndex()
         fault = self._model.view(index).fault if index.isValid() else None
         note = fault_words(fault) if fault is not None else _drafts_words(self._session.document)
-        cautions = "\n".join(line.caution for line in self._model.lines if line.caution)
+        cautions = cautions_text([line.caution for line in self._model.lines if line.caution])
         for label, text in ((self._note, note), (self._cautions, cautions)):
             label.setText(text)
             label.setVisible(bool(text))

@@ -55,18 +55,19 @@ class MaterialDelegate(QuietDelegate):
 
 
 class MaterialsTable(QuietTable):
-    """The job's materials; Delete asks to remove the current one (`wanted`)."""
+    """The job's materials; several can be chosen to compare, Delete asks to remove the current one (`wanted`)."""
 
     def __init__(self, model: MaterialsModel, theme: Theme, parent: QWidget | None = None) -> None:
         delegate = MaterialDelegate(theme)
         super().__init__(delegate, theme, parent)
         delegate.setParent(self)
         self.setModel(model)
-        self.setSelectionMode(self.SelectionMode.SingleSelection)
         for signal in (model.dataChanged, model.rowsInserted, model.rowsRemoved, model.modelReset):
             signal.connect(self._fit_columns)
         self.setAccessibleName("Materials of this job")
-        self.setAccessibleDescription("One row a material. F6 leaves the table.")
+        self.setAccessibleDescription(
+            "One row a material; Shift and Ctrl choose several to compare. F6 leaves the table."
+        )
         self._fit_columns()
 
     def command_of(self, event: QKeyEvent) -> str:
@@ -84,6 +85,12 @@ class MaterialsTable(QuietTable):
         row = self.currentIndex().row()
         lines = self.materials_model().lines
         return lines[row].name if 0 <= row < len(lines) else ""
+
+    def chosen_names(self) -> tuple[str, ...]:
+        """Return the names of the materials chosen, in their order."""
+        rows = sorted({index.row() for index in self.selectionModel().selectedRows()})
+        lines = self.materials_model().lines
+        return tuple(lines[row].name for row in rows if row < len(lines))
 
     def go_to(self, name: str, column: str) -> None:
         """Make a cell of the material called `name` the current one."""

@@ -1,25 +1,24 @@
 """What the panel says of a material: values at a frequency, where they hold, how sure they are. No toolkit."""
 
+import math
+from collections.abc import Sequence
 from typing import Final
 
 import numpy as np
 
 from app.series.texts import frequency_text
+from stackcore.constants import VACUUM_PERMITTIVITY
 from stackcore.job import Job
 from stackcore.job.records import JobRecord, LayerRecord
 from stackcore.media.base import AbstractMedium, FrequencyRange
 from stackcore.media.conductor import ConductorMedium
 from stackcore.media.library import LibraryEntry
-from stackcore.units import Dimension, Measure, format_value
+from stackcore.media.models import MODELS, Value, value_text
+from stackcore.units import Dimension, format_value
 
 DIGITS: Final = 4
-SYMBOLS: Final = {
-    "permittivity": "ε",
-    "loss_tangent": "tan δ",
-    "permeability": "μ",
-    "conductivity": "σ",
-}
-"""Name of a constant -> symbol."""
+CONDUCTOR: Final = 100.0
+"""Conduction over displacement current from which a material is told by its conductivity."""
 
 LOSS_ONCE: Final = (
     "Loss is given once: as a loss tangent, or as the loss in ε′ − jε″. Both together are refused, so that it is "
@@ -42,7 +41,24 @@ def reading_at(medium: AbstractMedium, frequency: float) -> str:
         return f"skin depth {format_value(depth, Dimension.LENGTH, digits=DIGITS)}"
     values = medium.evaluate(at)
     permittivity, permeability = complex(values.permittivity[0]), complex(values.permeability[0])
-    return _pair("ε", permittivity) + (f", {_pair('μ', permeability)}" if permeability != 1 else "")
+    return pair_text("ε", permittivity) + (f", {pair_text('μ', permeability)}" if permeability != 1 else "")
+
+
+def glance(permittivity: complex, frequency: float) -> str:
+    """Return what a material of this relative permittivity at `frequency` in Hz is, in a few letters.
+
+    A good conductor is known by its conductivity, a dielectric by ε′ and tan δ, and what is between by ε′ and ε″.
+
+    Examples
+    --------
+    >>> glance(4.2 - 0.063j, 1e10), glance(1 - 1.0425e8j, 1e10)
+    ('ε′ 4.2, tan δ 0.015', 'σ 58 MS/m')
+    """
+    loss = -permittivity.imag
+    if loss > CONDUCTOR * abs(permittivity.real):
+        conductivity = 2 * math.pi * frequency * VACUUM_PERMITTIVITY * loss
+        return f"σ {format_value(conductivity, Dimension.CONDUCTIVITY, digits=DIGITS)}"
+    return pair_text("ε", permittivity)
 
 
 def range_caution(job: Job, name: str) -> str:
@@ -64,6 +80,13 @@ def range_caution(job: Job, name: str) -> str:
     return f"{known_words}; the sweep goes {' and '.join(beyond)}, where its constants are a guess."
 
 
+def cautions_text(cautions: Sequence[str]) -> str:
+    """Return the cautions in as many words as there is room for: one by one, or how many there are."""
+    if len(cautions) < 3:
+        return "\n".join(cautions)
+    return f"{len(cautions)} materials are not known over all of the sweep; the page Checks says where."
+
+
 def range_text(known: FrequencyRange) -> str:
     """Return a range of frequencies for reading: ``8 GHz to 12.4 GHz``."""
     return f"{frequency_text(known.lowest)} to {frequency_text(known.highest)}"
@@ -71,12 +94,19 @@ def range_text(known: FrequencyRange) -> str:
 
 def values_text(entry: LibraryEntry) -> str:
     """Return the constants of a library entry, each with its symbol."""
-    return ", ".join(f"{SYMBOLS[name]} {_constant_text(value)}" for name, value in entry.constants)
+    model = MODELS[entry.model]
+    told = []
+    for constant in model.constants:
+        if constant.name in entry.constants:
+            value = entry.constants[constant.name]
+            told.append(f"{constant.symbol or constant.label.lower()} {_constant_text(value)}")
+    return ", ".join(told)
 
 
 def spread_text(entry: LibraryEntry) -> str:
     """Return the typical relative spreads in production: ``ε ±2 %, tan δ ±20 %``; empty when there is none."""
-    spread = [(SYMBOLS[name], share) for name, share in entry.provenance.spread if share]
+    symbols = {constant.name: constant.symbol or constant.label for constant in MODELS[entry.model].constants}
+    spread = [(symbols.get(name, name), share) for name, share in entry.provenance.spread if share]
     return ", ".join(f"{symbol} ±{share * 100:.3g} %" for symbol, share in spread)
 
 
@@ -98,7 +128,7 @@ def _uses(record: JobRecord, name: str) -> list[tuple[str, list[str]]]:
     return uses
 
 
-def _pair(symbol: str, value: complex) -> str:
+def pair_text(symbol: str, value: complex) -> str:
     """Return real part and loss tangent of a relative constant; a real part of 0 or less has no tangent to read."""
     if value.real <= 0:
         return f"{symbol}′ {value.real:.{DIGITS}g}, {symbol}″ {-value.imag:.{DIGITS}g}".replace("-", "−")
@@ -107,9 +137,9 @@ def _pair(symbol: str, value: complex) -> str:
     return f"{symbol}′ {value.real:.{DIGITS}g}" + (f", {name} {tangent:.{DIGITS}g}" if tangent else "")
 
 
-def _constant_text(value: complex | float | Measure) -> str:
-    if isinstance(value, Measure):
-        return value.text
+def _constant_text(value: Value) -> str:
+    if isinstance(value, bool) or not isinstance(value, complex | float | int):
+        return value_text(value)
     number = complex(value)
     if number.imag == 0:
         return f"{number.real:g}"

@@ -33,6 +33,7 @@ Index = QModelIndex | QPersistentModelIndex
 
 SIDE: Final = 8
 _SAMPLE: Final = 18
+_GAP: Final = 6
 
 
 def row_height(metrics: QFontMetricsF, noted: bool) -> int:
@@ -125,7 +126,8 @@ class CurveHeader(QHeaderView):
         """Return the room of sample and name."""
         metrics = QFontMetricsF(self.font())
         text = str(self._model.headerData(section, Qt.Orientation.Horizontal))
-        return QSize(round(metrics.horizontalAdvance(text)) + _SAMPLE + 3 * SIDE, round(metrics.height()) + 8)
+        width = SIDE + _SAMPLE + _GAP + round(metrics.horizontalAdvance(text)) + SIDE
+        return QSize(width, round(metrics.height()) + 8)
 
     def paintSection(self, painter: QPainter, rect: QRect, section: int) -> None:
         """Draw sample and name, right aligned like the numbers."""
@@ -142,7 +144,7 @@ class CurveHeader(QHeaderView):
             pen.setDashPattern([length / 1.6 for length in dashes(curve.polarization)])
         painter.setPen(pen)
         middle = rect.center().y() + 0.5
-        painter.drawLine(QPointF(left - 6 - _SAMPLE, middle), QPointF(left - 6, middle))
+        painter.drawLine(QPointF(left - _GAP - _SAMPLE, middle), QPointF(left - _GAP, middle))
         painter.setPen(colour)
         painter.drawText(QRectF(left, rect.top(), 400, rect.height()), Qt.AlignmentFlag.AlignVCenter, curve.label)
         painter.setPen(QColor(self.theme.line))
@@ -188,7 +190,7 @@ class MarkerHeader(QHeaderView):
             painter.drawRoundedRect(flag, 4, 4)
             painter.setPen(QColor(self.theme.on_accent if active else self.theme.text))
             painter.drawText(flag, Qt.AlignmentFlag.AlignCenter, number)
-            left = flag.right() + 6.0
+            left = flag.right() + _GAP
         painter.setPen(QColor(self.theme.text))
         room = QRectF(left, rect.top(), rect.right() - left, line)
         painter.drawText(room, Qt.AlignmentFlag.AlignVCenter, row.label)

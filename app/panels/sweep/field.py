@@ -23,6 +23,7 @@ from stackcore.errors import Fault
 
 _MARK: Final = 16
 _SIDE: Final = 4
+_LONGEST: Final = 40
 
 
 def fault_sentence(fault: Fault) -> str:
@@ -80,9 +81,10 @@ class QuietField(QLineEdit):
         self._set_fault(fault)
 
     def sizeHint(self) -> QSize:
-        """Return the room of the text."""
+        """Return the room of the text; what is longer than a line of words scrolls and widens no window."""
         metrics = QFontMetrics(self.font())
-        width = max(metrics.horizontalAdvance(self.text()), metrics.horizontalAdvance(self._sample))
+        longest = metrics.horizontalAdvance("0" * _LONGEST)
+        width = max(min(metrics.horizontalAdvance(self.text()), longest), metrics.horizontalAdvance(self._sample))
         mark = _MARK if self._fault else 0
         return QSize(width + 2 * _SIDE + 6 + mark, metrics.height() + 8)
 

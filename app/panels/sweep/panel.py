@@ -153,16 +153,17 @@ class SweepPanel(QWidget):
         fields = self._fields
         self._group(flow, self.quantity, self.scale)
         self._group(flow, *self.switches.values())
+        self._group(flow, self.axis)
         self._band = self._group(flow, "from", fields[START], "to", fields[STOP])
         self._count = self._group(flow, fields[POINTS], "points,", self.spacing)
         self._listed = self._group(flow, "at", fields[LIST])
         self._group(flow, "angles", fields[ANGLES])
-        self._group(flow, self.axis)
 
     def _group(self, flow: FlowLayout, *parts: QWidget | str) -> QWidget:
         group = QWidget(self)
         line = QHBoxLayout(group)
-        line.setContentsMargins(0, 0, 0, 0)
+        # A group that begins with a word starts where the words of the controls do.
+        line.setContentsMargins(4 if isinstance(parts[0], str) else 0, 0, 0, 0)
         line.setSpacing(4)
         for part in parts:
             if isinstance(part, str):

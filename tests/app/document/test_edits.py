@@ -128,11 +128,15 @@ def test_add_layer_and_sheet() -> None:
         edits.set_frequency_list([]),
         edits.set_angles(["0 deg", "90 deg"]),
         edits.set_angle_grid("0 deg", "abc", 3),
-        edits.add_material(MaterialRecord("skin", model="constant", permittivity=2 + 0j)),
-        edits.add_material(MaterialRecord("air", model="constant", permittivity=2 + 0j)),
+        edits.add_material(MaterialRecord("skin", model="constant", constants={"permittivity": 2 + 0j})),
+        edits.add_material(MaterialRecord("air", model="constant", constants={"permittivity": 2 + 0j})),
         edits.add_material(MaterialRecord("new", model="constant")),
-        edits.replace_material("skin", MaterialRecord("skin", model="constant", permittivity=2 + 1j)),
-        edits.replace_material("gone", MaterialRecord("gone", model="constant", permittivity=2 + 0j)),
+        edits.replace_material(
+            "skin", MaterialRecord("skin", model="constant", constants={"permittivity": 2 + 1j})
+        ),
+        edits.replace_material(
+            "gone", MaterialRecord("gone", model="constant", constants={"permittivity": 2 + 0j})
+        ),
         edits.rename_material("skin", "core"),
         edits.rename_material("skin", ""),
         edits.remove_material("gone"),
@@ -187,9 +191,9 @@ def test_a_bare_number_is_undone_with_its_unit() -> None:
 def test_materials() -> None:
     """Materials are added, changed, renamed everywhere and removed when nothing is made of them."""
     session = harbour()
-    glue = MaterialRecord("glue", model="constant", permittivity=3 + 0j)
+    glue = MaterialRecord("glue", model="constant", constants={"permittivity": 3 + 0j})
     assert session.apply(edits.add_material(glue)) == ()
-    assert session.apply(edits.replace_material("glue", replace(glue, permittivity=2.9 + 0j))) == ()
+    assert session.apply(edits.replace_material("glue", replace(glue, constants={"permittivity": 2.9 + 0j}))) == ()
     assert session.apply(edits.rename_material("skin", "laminate")) == ()
     assert rows(session)[0] == "laminate 0.9 mm"
     assert session.apply(edits.set_back(1, "laminate")) == ()
@@ -208,7 +212,7 @@ def test_materials() -> None:
 def test_the_library_entry_brings_its_values() -> None:
     """An entry comes once, with its values beside the reference, under a name that is free."""
     session = harbour()
-    session.apply(edits.add_material(MaterialRecord("ptfe", model="constant", permittivity=2 + 0j)))
+    session.apply(edits.add_material(MaterialRecord("ptfe", model="constant", constants={"permittivity": 2 + 0j})))
     session.apply(edits.use_library_entry("plastics/ptfe"))
     session.apply(edits.use_library_entry("plastics/ptfe"))
     names = [material.name for material in session.record.materials]
@@ -217,6 +221,17 @@ def test_the_library_entry_brings_its_values() -> None:
     assert (material.library, material.model) == ("plastics/ptfe", "constant")
     assert material.permittivity is not None
     assert material.source
+
+
+def test_a_copy_of_a_named_stack_is_known_by_its_name() -> None:
+    """The copy of a stack with words for a name has these words and the next free number."""
+    session = harbour()
+    session.apply(edits.rename_stack(0, "As built"))
+    for _ in range(2):
+        session.apply(edits.duplicate_stack(0))
+    session.apply(edits.duplicate_stack(1))
+    names = [stack.name for stack in session.record.stacks]
+    assert names == ["As built", "As built 3", "As built 4", "As built 2", "B"]
 
 
 def test_stacks() -> None:

@@ -233,7 +233,9 @@ class Work(RuleBasedStateMachine):
     @rule(name=NAMES, permittivity=st.sampled_from([2 + 0j, 3 - 0.1j, 0j, 2 + 1j]))
     def add_material(self, name: str, permittivity: complex) -> None:
         """Add a material, possible or not."""
-        self.make(edits.add_material(MaterialRecord(name, model="constant", permittivity=permittivity)))
+        self.make(
+            edits.add_material(MaterialRecord(name, model="constant", constants={"permittivity": permittivity}))
+        )
 
     @rule(name=NAMES, new=NAMES)
     def rename_material(self, name: str, new: str) -> None:

@@ -13,18 +13,31 @@ from tests.app.document.jobs import harbour
 @pytest.mark.parametrize(
     ("material", "kind"),
     [
-        (MaterialRecord("m", model="constant", permittivity=4 - 0.1j), "dielectric"),
-        (MaterialRecord("m", model="constant", permittivity=1.1 + 0j), "foam"),
-        (MaterialRecord("m", model="constant", permittivity=12 - 1j, permeability=2 - 1j), "magnetic"),
-        (MaterialRecord("m", model="constant", permittivity=1.1 + 0j, permeability=2 + 0j), "magnetic"),
-        (MaterialRecord("m", model="constant", permittivity=4 + 0j, permeability=1 + 0j), "dielectric"),
-        (MaterialRecord("m", model="constant", permittivity=-10 - 1j), "metal"),
+        (MaterialRecord("m", model="constant", constants={"permittivity": 4 - 0.1j}), "dielectric"),
+        (MaterialRecord("m", model="constant", constants={"permittivity": 1.1 + 0j}), "foam"),
         (
-            MaterialRecord("m", model="conductor", conductivity=parse_measure("6 MS/m", Dimension.CONDUCTIVITY)),
+            MaterialRecord("m", model="constant", constants={"permittivity": 12 - 1j, "permeability": 2 - 1j}),
+            "magnetic",
+        ),
+        (
+            MaterialRecord("m", model="constant", constants={"permittivity": 1.1 + 0j, "permeability": 2 + 0j}),
+            "magnetic",
+        ),
+        (
+            MaterialRecord("m", model="constant", constants={"permittivity": 4 + 0j, "permeability": 1 + 0j}),
+            "dielectric",
+        ),
+        (MaterialRecord("m", model="constant", constants={"permittivity": -10 - 1j}), "metal"),
+        (
+            MaterialRecord(
+                "m", model="conductor", constants={"conductivity": parse_measure("6 MS/m", Dimension.CONDUCTIVITY)}
+            ),
             "metal",
         ),
         (
-            MaterialRecord("m", model="conductor", conductivity=parse_measure("4 S/m", Dimension.CONDUCTIVITY)),
+            MaterialRecord(
+                "m", model="conductor", constants={"conductivity": parse_measure("4 S/m", Dimension.CONDUCTIVITY)}
+            ),
             "dielectric",
         ),
         (MaterialRecord("m", library="metals/copper"), "metal"),

@@ -42,13 +42,18 @@ def test_an_exception_in_a_slot_is_told_and_logged(qtbot: QtBot, net: CrashNet, 
     assert "in slot" in net.tail()
 
 
-def test_the_hook_of_python_is_the_net(qtbot: QtBot, net: CrashNet) -> None:
-    """What reaches the interpreter's hook reaches the net."""
+def test_the_hook_of_python_is_the_net(
+    qtbot: QtBot, net: CrashNet, tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    """What reaches the interpreter's hook reaches the net, and the terminal, where it may be all that is left."""
     error = _raised(lambda: int("x"))
     with qtbot.waitSignal(net.caught) as caught:
         sys.excepthook(type(error), error, error.__traceback__)
     assert caught.args is not None
     assert "ValueError" in caught.args[0]
+    (line,) = capsys.readouterr().err.splitlines()
+    assert line.startswith("slabwright: Something went wrong inside Slabwright (ValueError: ")
+    assert line.endswith(str(tmp_path / LOG_NAME))
 
 
 def test_an_exception_in_a_thread_is_told_in_the_thread_of_the_window(

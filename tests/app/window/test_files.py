@@ -188,7 +188,7 @@ def test_saving_tells_of_texts_that_are_no_values(desk: Desk, tmp_path: Path) ->
     desk.dialogs.save_paths = [tmp_path / "x.slabjob"]
     desk.files.save()
     assert desk.messages.shown is not None
-    assert any("two millimetres" in line for line in desk.messages.shown.details)
+    assert desk.messages.shown.details == ("thickness of layer 1 in stack A: 'two millimetres'",)
 
 
 def test_every_sample_opens(desk: Desk) -> None:

@@ -441,6 +441,15 @@ def test_what_is_pointed_at_is_said_in_the_status_line(bench: Bench) -> None:
     assert bench.window.status.currentMessage() == ""
 
 
+def test_a_passing_note_stands_where_the_cautions_do(bench: Bench) -> None:
+    """The same words look the same, whether they are a caution or a note that passes."""
+    status = bench.window.status
+    standing = status.grab().toImage()
+    status.note(status.cautions.words)
+    assert not status.cautions.isVisible()
+    assert status.grab().toImage() == standing
+
+
 def test_every_control_has_a_name(bench: Bench) -> None:
     """Whatever takes the keyboard focus says what it is to a screen reader."""
     bench.trigger("view.materials")

@@ -10,7 +10,6 @@ import pytest
 from pytestqt.qtbot import QtBot
 
 from app.__main__ import main
-from app.window.display import display_missing
 from app.window.picture import LARGEST, draw, read_scale, read_size
 from stackcore.errors import InputError, JobError
 from tests.app.window.scripted import JOB, job_file
@@ -180,8 +179,25 @@ def test_without_a_display_the_way_out_is_told(
         (line,) = capsys.readouterr().err.splitlines()
         assert "slabwright picture" in line
         assert "slabwright sweep" in line
-    monkeypatch.setenv("DISPLAY", ":0")
-    assert not display_missing()
+        assert "neither DISPLAY nor WAYLAND_DISPLAY is set" in line
+
+
+@pytest.mark.parametrize("arguments", [[], ["picture", "cover.slabjob", "--png", "cover.png"]])
+@pytest.mark.parametrize("display", ["", ":4711"])
+def test_without_the_toolkit_what_to_install_is_told(arguments: list[str], display: str) -> None:
+    """One line and no traceback where PySide6 is missing, with a display or without."""
+    code = (
+        "import runpy, sys\n"
+        "sys.modules['PySide6'] = None\n"
+        f"sys.argv[1:] = {arguments!r}\n"
+        "runpy.run_module('app', run_name='__main__')\n"
+    )
+    done = run(["-c", code], DISPLAY=display, WAYLAND_DISPLAY="", QT_QPA_PLATFORM="")
+    assert done.returncode == 2
+    (line,) = done.stderr.splitlines()
+    assert line == (
+        "slabwright: the window needs PySide6, which is missing; install it with: pip install 'slabwright[gui]'"
+    )
 
 
 def test_commands_of_the_core_are_handed_on(tmp_path: Path, capsys: pytest.CaptureFixture[str]) -> None:

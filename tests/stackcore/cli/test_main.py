@@ -42,6 +42,7 @@ def test_help_names_every_command(run: Run) -> None:
     assert (outcome.status, outcome.lines) == (0, [])
     for word in (
         "sweep JOB --csv OUT [--stack NAME]",
+        "materials [WORD ...] [--at F,F] [--csv OUT] [--check FILE]",
         "picture JOB --png OUT [--size WxH]",
         "[JOB]",
         "exit status",
@@ -97,8 +98,9 @@ def test_a_mistyped_command_is_told(run: Run, install: Callable[..., None]) -> N
     install()
     outcome = run("swep", "cover.slabjob")
     assert outcome.status == 2
-    told = "there is no command and no file 'swep', did you mean 'sweep'?; allowed: sweep, picture, or a job file"
-    assert outcome.lines == [f"slabwright: {told}"]
+    told = "there is no command and no file 'swep', did you mean 'sweep'?"
+    allowed = "allowed: sweep, materials, picture, or a job file"
+    assert outcome.lines == [f"slabwright: {told}; {allowed}"]
 
 
 def test_a_window_that_is_not_installed_is_one_line(run: Run, install: Callable[..., None]) -> None:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from typing import Final
 
 from hypothesis import strategies as st
@@ -19,7 +20,9 @@ from stackcore.job.records import (
     StackRecord,
     SweepRecord,
 )
-from stackcore.units import Dimension, Measure, format_value, parse_measure
+from stackcore.media.models import MODELS
+from stackcore.units import Dimension
+from tests.stackcore.media.model_strategies import measures, model_constants
 
 SPACINGS: Final[tuple[Spacing, ...]] = ("linear", "log")
 _RESERVED: Final = ("air", "vacuum", "metal")
@@ -28,38 +31,24 @@ texts: Final = st.text(st.characters(codec="utf-8"), max_size=20)
 names: Final = texts.filter(lambda name: bool(name.strip()) and name not in _RESERVED)
 
 
-def measures(dimension: Dimension, lowest: float, highest: float) -> st.SearchStrategy[Measure]:
-    """Return quantities as a person types them, in various units, or as bare numbers."""
-    values = st.floats(lowest, highest)
-    units = st.sampled_from(dimension.units)
-    typed = st.builds(lambda value, unit: format_value(value, dimension, unit=unit, digits=5), values, units)
-    given = st.one_of(typed, values.map(lambda value: format_value(value, dimension)), values)
-    return given.map(lambda text: parse_measure(text, dimension)).filter(lambda m: lowest <= m.value <= highest)
-
-
-def relative_constants() -> st.SearchStrategy[complex]:
-    """Return ε or μ with loss or without."""
-    return st.builds(lambda real, loss: complex(real, -loss or 0.0), st.floats(1e-3, 1e3), st.floats(0, 1e3))
-
-
 @st.composite
-def materials(draw: st.DrawFn, name: str) -> MaterialRecord:
-    """Return a material with its constants, or a reference into the library."""
-    label, source = draw(texts), draw(texts)
-    permeability = draw(st.none() | relative_constants())
-    match draw(st.sampled_from(("constant", "loss tangent", "conductor", "library"))):
-        case "constant":
-            permittivity = draw(relative_constants())
-            return MaterialRecord(name, label, "constant", "", permittivity, permeability, None, None, source)
-        case "loss tangent":
-            real = complex(draw(st.floats(1, 100)))
-            tangent = draw(st.floats(0, 10))
-            return MaterialRecord(name, label, "constant", "", real, permeability, tangent, None, source)
-        case "conductor":
-            conductivity = draw(measures(Dimension.CONDUCTIVITY, 1e-3, 1e8))
-            return MaterialRecord(name, label, "conductor", "", None, permeability, None, conductivity, source)
-    library = draw(st.sampled_from(("metals/copper", "plastics/ptfe")))
-    return MaterialRecord(name, label, library=library, source=source)
+def materials(draw: st.DrawFn, name: str, others: Sequence[str]) -> MaterialRecord:
+    """Return a material of any model, or a reference into the library; `others` are what it may be made of."""
+    label, source, certainty, note = (draw(texts) for _ in range(4))
+    if draw(st.integers(0, 5)) == 0:
+        library = draw(st.sampled_from(("metals/copper", "plastics/ptfe")))
+        return MaterialRecord(name, label, library=library, source=source)
+    model = MODELS[draw(st.sampled_from(tuple(MODELS)))]
+    constants = draw(model_constants(model.name, ("air", "plastics/ptfe", *others)))
+    ends = None
+    if model.ranged and model.name != "tabulated" and draw(st.booleans()):
+        two = st.tuples(*[measures(Dimension.FREQUENCY, 1.0, 1e16)] * 2)
+        low, high = sorted(draw(two), key=lambda end: end.value)
+        ends = low, high
+    spread = tuple(
+        (one.name, draw(st.floats(0, 0.5))) for one in model.constants if one.varies and draw(st.booleans())
+    )
+    return MaterialRecord(name, label, model.name, "", constants, source, ends, certainty, spread, note)
 
 
 @st.composite
@@ -104,5 +93,6 @@ def records(draw: st.DrawFn) -> JobRecord:
         )
         for name in stack_names
     ]
-    made = tuple(draw(materials(key)) for key in keys)
+    # Each may be made of those before it; a chain of any length would be refused as too deep.
+    made = tuple(draw(materials(key, keys[:place])) for place, key in enumerate(keys))
     return JobRecord(draw(texts), tuple(stacks), draw(sweeps()), made, draw(texts))

@@ -4,7 +4,8 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from stackcore.media.library_file import Family, read_family
+from stackcore.media.library_entry import Family
+from stackcore.media.library_file import read_family
 
 HEAD = '[family]\nlabel = "Trial"\n'
 GOOD = {
@@ -59,15 +60,16 @@ FAULTY: list[tuple[dict[str, str | None], str, str]] = [
     ({"model": None}, "pane.model", "is missing"),
     ({"model": '"constent"'}, "pane.model", "did you mean 'constant'?"),
     ({"permittivity": None}, "pane.permittivity", "is missing"),
-    ({"permittivity": '"6.31"'}, "pane.permittivity", "is not a relative constant"),
-    ({"permittivity": "nan"}, "pane.permittivity", "is not a relative constant"),
-    ({"permittivity": "0"}, "pane", "must not be 0"),
+    ({"permittivity": '"6.31"'}, "pane.permittivity", "is not a number"),
+    ({"permittivity": "nan"}, "pane.permittivity", "is not a number"),
+    ({"permittivity": "0"}, "pane.permittivity", "must not be 0"),
     ({"permittivity": "[6.31, -0.1]", "loss_tangent": None}, "pane.permittivity", "gain"),
     ({"permittivity": "[6.31, 0.1]"}, "pane.loss_tangent", "given twice"),
     ({"permittivity": "[6.31, 0]"}, "pane.loss_tangent", "given twice"),
     ({"loss_tangent": "-0.01"}, "pane.loss_tangent", "gain"),
     ({"permitivity": "6.31"}, "pane.permitivity", "unknown key, did you mean 'permittivity'?"),
     ({"conductivity": '"1 S/m"'}, "pane.conductivity", "unknown key"),
+    ({"permittivity": "1e13"}, "pane.permittivity", "too large"),
     ({"range": None}, "pane.range", "is missing"),
     ({"range": '["2 GHz", "1 GHz"]'}, "pane.range", "2 GHz to 1 GHz is reversed"),
     ({"range": '["0 Hz", "1 GHz"]'}, "pane.range", "does not lie above 0"),

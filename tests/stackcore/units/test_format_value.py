@@ -30,6 +30,11 @@ READABLE = [
     (2e-11, Dimension.INDUCTANCE, "20 pH"),
     (1e-12, Dimension.CAPACITANCE, "1 pF"),
     (5.8e7, Dimension.CONDUCTIVITY, "58 MS/m"),
+    (293.15, Dimension.TEMPERATURE, "20 °C"),
+    (77.0, Dimension.TEMPERATURE, "77 K"),
+    (8e-12, Dimension.TIME, "8 ps"),
+    (2.5e-14, Dimension.TIME, "25 fs"),
+    (1e18, Dimension.DENSITY, "1e18 1/m3"),
     (0.015, Dimension.NUMBER, "0.015"),
     (200.0, Dimension.NUMBER, "200"),
 ]

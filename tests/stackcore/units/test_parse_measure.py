@@ -284,3 +284,41 @@ def test_any_text_is_a_quantity_or_a_unit_error(text: str, dimension: Dimension)
     assert refused.message
     assert refused.allowed
     assert str(refused).isprintable()
+
+
+@pytest.mark.parametrize(
+    ("text", "dimension", "value"),
+    [
+        ("20 °C", Dimension.TEMPERATURE, 293.15),
+        ("-10°C", Dimension.TEMPERATURE, 263.15),
+        ("20,5 degC", Dimension.TEMPERATURE, 293.65),
+        ("20 ℃", Dimension.TEMPERATURE, 293.15),
+        ("68 °F", Dimension.TEMPERATURE, 293.15),
+        ("293.15 K", Dimension.TEMPERATURE, 293.15),
+        ("300", Dimension.TEMPERATURE, 300.0),
+        ("8 ps", Dimension.TIME, 8e-12),
+        ("25 fs", Dimension.TIME, 25e-15),
+        ("5e13 1/s", Dimension.RATE, 5e13),
+        ("5e13 s^-1", Dimension.RATE, 5e13),
+        ("5e13/s", Dimension.RATE, 5e13),
+        ("1e12 1/cm3", Dimension.DENSITY, 1e18),
+        ("1e12 cm^-3", Dimension.DENSITY, 1e18),
+        ("1e18 1/m³", Dimension.DENSITY, 1e18),
+        ("2.1 eV", Dimension.FREQUENCY, 2.1 * 1.602176634e-19 / 6.62607015e-34),
+    ],
+)
+def test_quantities_of_materials(text: str, dimension: Dimension, value: float) -> None:
+    """Temperatures with their zero, times, rates, densities and photon energies are read as they are written."""
+    assert parse_measure(text, dimension).value == pytest.approx(value, rel=3e-16)
+
+
+@pytest.mark.parametrize("text", ["2 * 20 °C", "20 °C + 1 °C", "20 °C / 2"])
+def test_a_scale_with_its_own_zero_is_not_reckoned_with(text: str) -> None:
+    """Twice 20 °C is no temperature anyone means."""
+    with pytest.raises(UnitError, match="scale of its own zero"):
+        parse_measure(text, Dimension.TEMPERATURE)
+
+
+def test_a_default_unit_with_its_own_zero_counts() -> None:
+    """A bare number typed where °C is usual is in °C."""
+    assert parse_measure("20", Dimension.TEMPERATURE, default_unit="°C").value == 293.15

@@ -20,6 +20,8 @@ UNITS: Final = [
     *((Dimension.RESISTANCE, unit, unit, "ohm") for unit in ("uohm", "mohm", "ohm", "kohm", "Mohm", "Gohm")),
     *((Dimension.INDUCTANCE, unit, unit, "H") for unit in ("fH", "pH", "nH", "uH", "mH", "H")),
     *((Dimension.CAPACITANCE, unit, unit, "F") for unit in ("aF", "fF", "pF", "nF", "uF", "mF", "F")),
+    *((Dimension.TIME, unit, unit, "s") for unit in ("fs", "ps", "ns", "us", "ms", "s")),
+    (Dimension.DENSITY, "1/cm3", "1/cm**3", "1/m**3"),
     *((Dimension.CONDUCTIVITY, unit, unit, "S/m") for unit in ("S/m", "kS/m", "MS/m", "GS/m", "S/cm", "mS/cm")),
 ]
 """Dimension, name here, name in pint, SI unit in pint."""

@@ -6,7 +6,7 @@ import time
 import numpy as np
 import pytest
 from PySide6.QtCore import QEvent, Qt
-from PySide6.QtGui import QFocusEvent
+from PySide6.QtGui import QFocusEvent, QFontMetricsF
 from pytestqt.qtbot import QtBot
 
 from app.document import edits
@@ -67,6 +67,15 @@ def test_curves_are_named_at_their_ends_in_their_colours(bench: Bench) -> None:
     assert not bench.panel.header.legend.isVisible()
 
 
+def test_a_name_at_the_edge_is_drawn_whole(bench: Bench) -> None:
+    """A curve that leaves at the top is named there, over the edge of the plot, and the name is not cut."""
+    bench.plot.set_ranges(values=(0.0, 0.2))
+    labels = bench.plot.end_labels
+    assert labels.places is not None
+    assert min(labels.places) < QFontMetricsF(bench.plot.font()).height() / 2
+    assert labels.boundingRect().top() <= min(labels.places) - QFontMetricsF(bench.plot.font()).height() / 2
+
+
 def test_te_is_solid_and_tm_dashed(bench: Bench) -> None:
     """The line style tells the polarization."""
     solid, dashed = bench.plot.curve_layer.curves[:2]
@@ -125,11 +134,16 @@ def test_a_phase_that_turns_over_is_not_joined_across_the_plot(bench: Bench) -> 
 
 
 def test_infinite_values_are_counted_and_said(bench: Bench) -> None:
-    """Behind a metal back nothing passes: the plot says so in words instead of showing nothing."""
+    """Beyond the critical angle nothing passes, which is counted; behind a metal back the plot says it in words."""
+    bench.view.set(quantity="transmittance", power="decibels")
+    assert bench.session.apply(edits.set_front(0, "resin")) == ()
+    assert bench.session.apply(edits.set_angle_grid("0 deg", "60 deg", 2)) == ()
+    bench.answer()
+    assert bench.panel.header.hidden.text() == "82 points not shown (beyond the scale)"
+    assert bench.panel.header.hidden.isVisible()
     bench.view.set(quantity="insertion_loss_dB")
     bench.answer(stack=1)
-    assert bench.panel.header.hidden.text() == "246 points not shown (beyond the scale)"
-    assert bench.panel.header.hidden.isVisible()
+    assert not bench.panel.header.hidden.isVisible()
     assert bench.plot.note_layer.text == "Insertion loss is infinite at every frequency: nothing passes."
     assert "∞" in bench.panel.header.worst.text()
     assert not bench.panel.grab().isNull()

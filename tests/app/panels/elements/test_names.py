@@ -15,7 +15,7 @@ def with_materials(*materials: MaterialRecord) -> JobRecord:
 
 def skin(name: str, label: str = "") -> MaterialRecord:
     """Return a material."""
-    return MaterialRecord(name, label=label, model="constant", permittivity=4 + 0j)
+    return MaterialRecord(name, label=label, model="constant", constants={"permittivity": 4 + 0j})
 
 
 def test_labels_that_agree_are_told_apart() -> None:

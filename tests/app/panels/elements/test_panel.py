@@ -78,6 +78,21 @@ def test_shift_insert_adds_a_sheet(shown: Shown) -> None:
     assert shown.at() == (2, 4)
 
 
+def test_rare_columns_are_shown_from_the_menus_and_leave_the_selection(shown: Shown) -> None:
+    """The switch stands in the menu of the table and of its header; what is selected stays selected, whole rows."""
+    shown.session.apply(edits.add_sheet(0, 0))
+    shown.go(2, 3)
+    (action,) = shown.panel.table.horizontalHeader().actions()
+    assert action in shown.panel.table.actions()
+    for columns in (7, 5):
+        action.trigger()
+        assert shown.panel.table.elements_model().columnCount() == columns
+        assert shown.panel.rare_columns == action.isChecked() == (columns == 7)
+        assert shown.panel.table.selected_elements() == shown.session.selection.rows == (1,)
+    shown.panel.delete()
+    assert [line[1] for line in shown.texts()[1:-1]] == ["Sheet", "Layer", "Layer"]
+
+
 def test_delete_takes_all_selected_rows_at_once(shown: Shown) -> None:
     """Delete removes the selected elements in one step; half-spaces stay though selected."""
     shown.panel.table.selectAll()

@@ -6,6 +6,8 @@ import pytest
 from PySide6.QtGui import QFontMetrics
 from PySide6.QtWidgets import QApplication
 
+from app.document import edits
+from app.document.document import Cell
 from app.document.session import Session
 from app.look.palette import tabular_font
 from app.panels.elements.columns import LAYER_COLUMNS, THICKNESS
@@ -43,6 +45,15 @@ def test_widths_hold_every_text(qapp: QApplication, session: Session) -> None:
     assert thickness.unit == max(metrics.horizontalAdvance(f" {unit}") for unit in ("mm", "um", "in"))
     assert thickness.cell >= metrics.horizontalAdvance("half-space")
     assert thickness.cell >= metrics.horizontalAdvance("1/8") + thickness.fraction + thickness.unit
+
+
+def test_a_text_without_end_does_not_widen_its_column(qapp: QApplication, session: Session) -> None:
+    """Neither a text that is no value nor a long sum pushes the other columns out of the table."""
+    metrics = QFontMetrics(tabular_font(qapp.font()))
+    for text in (90 * "9" + " mm", "0.25 mm" + 11 * " + 0.25 mm"):
+        session.apply(edits.type_into(Cell(0, 0, "thickness"), text))
+        widths = Measuring(qapp.font()).widths(LAYER_COLUMNS, lines_of(session.document, 0))
+        assert widths[LAYER_COLUMNS.index(THICKNESS)].cell < metrics.horizontalAdvance(30 * "0")
 
 
 def test_points_stand_below_each_other(shown: Shown) -> None:

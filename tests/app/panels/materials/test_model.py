@@ -29,7 +29,7 @@ def edit_of(kind: int, a: int, session: Session) -> Edit:
     name = materials[a % len(materials)].name if materials else "none"
     match kind:
         case 0:
-            return edits.add_material(MaterialRecord(f"m{a}", model="constant", permittivity=2 + 0j))
+            return edits.add_material(MaterialRecord(f"m{a}", model="constant", constants={"permittivity": 2 + 0j}))
         case 1:
             return edits.remove_material(name)
         case 2:

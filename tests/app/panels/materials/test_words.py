@@ -50,7 +50,7 @@ def test_range_left_at_either_end(session: Session) -> None:
 
 def test_no_caution_without_a_known_range(session: Session) -> None:
     """A material of one's own, of which no range is known, has no caution."""
-    material = replace(session.record.materials[0], name="own", library="")
+    material = replace(session.record.materials[0], name="own", library="", valid_range=None)
     session.apply(edits.add_material(material))
     session.apply(edits.type_into(job_cell("sweep.frequency.stop"), "400 GHz"))
 

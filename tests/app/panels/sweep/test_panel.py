@@ -306,3 +306,12 @@ def _choose(choice: QComboBox, data: object) -> None:
     assert place >= 0
     choice.setCurrentIndex(place)
     choice.activated.emit(place)
+
+
+def test_a_long_text_does_not_widen_the_window(bench: Bench) -> None:
+    """A list of many angles scrolls inside its field; the line needs no more room for it."""
+    before = bench.panel.minimumSizeHint().width()
+    bench.type(ANGLES, "; ".join(["0"] * 60))
+    assert len(bench.session.record.sweep.angles()) == 60
+    assert bench.panel.minimumSizeHint().width() < max(before, 400)
+    assert bench.panel.field(ANGLES).text().count("0") == 60

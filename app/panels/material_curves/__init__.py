@@ -1,0 +1,1 @@
+"""What the chosen materials are over frequency, drawn together."""

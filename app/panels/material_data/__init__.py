@@ -1,0 +1,1 @@
+"""Constants and curves of the materials that are chosen, side by side."""
