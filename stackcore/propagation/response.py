@@ -141,7 +141,8 @@ class Response:
 
     @cached_property
     def _transmittance(self) -> FloatArray:
-        return np.asarray(self._bare_transmittance * np.exp(-2 * self._log_ratio))
+        # + 0.0: no minus zero where the wave behind is evanescent
+        return np.asarray(self._bare_transmittance * np.exp(-2 * self._log_ratio) + 0.0)
 
     @cached_property
     def _absorptance(self) -> FloatArray:

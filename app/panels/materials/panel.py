@@ -205,6 +205,7 @@ class MaterialsPanel(QWidget):
         for label in (self._note, self._cautions, self._caption):
             upper.addWidget(label)
         self.pages.setDocumentMode(True)
+        self.pages.setAccessibleName("Pages of materials")
         self.pages.tabBar().setAccessibleName("Pages of materials")
         for page, title in ((own, "In this job"), (self._library, "Library"), (self._checks, "Checks")):
             self.pages.addTab(page, title)

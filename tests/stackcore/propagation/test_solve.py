@@ -154,3 +154,11 @@ def test_a_front_may_depend_on_frequency(monkeypatch: pytest.MonkeyPatch) -> Non
         assert response.insertion_phase_delay_deg[index] == pytest.approx(
             fixed.insertion_phase_delay_deg[0], rel=1e-10
         )
+
+
+def test_nothing_passes_beyond_the_critical_angle() -> None:
+    """Behind total reflection T is 0, and not minus 0, which a table would print."""
+    response = solve(Stack((), front=ConstantMedium(4.0 + 0j)), 10e9, [0.6, 1.2])
+
+    assert (response.transmittance == 0).all()
+    assert not np.signbit(response.transmittance).any()

@@ -11,9 +11,11 @@ from app.document.session import Session
 from app.document.view import View
 from app.look.theme import LIGHT, THEMES
 from app.panels.materials.library import entry_words
-from app.panels.materials.panel import MaterialsPanel
+from app.panels.materials.panel import LIBRARY, MaterialsPanel
+from app.panels.materials.picks import Pick, specimens_of
 from stackcore.job.records import LayerRecord
 from stackcore.media.library import read_library
+from stackcore.media.models import MODELS
 from tests.app.conftest import flush_deferred_deletes
 from tests.app.panels.materials.conftest import Shown, press
 
@@ -102,6 +104,7 @@ def test_removal_is_refused_while_it_is_used(shown: Shown) -> None:
 
 def test_library_by_the_keyboard(shown: Shown) -> None:
     """Words narrow the list; Down and Enter in it take an entry; taking it again shows where it is."""
+    shown.panel.pages.setCurrentIndex(LIBRARY)
     search, found = shown.panel.library.search, shown.panel.library.list
     everything = found.model().rowCount()
     assert everything == len(read_library().entries)
@@ -117,16 +120,20 @@ def test_library_by_the_keyboard(shown: Shown) -> None:
     assert shown.panel.table.current_name() == "silver"
     shown.panel.table.go_to("ptfe", "name")
     shown.panel.library.use_current()
-    assert shown.said == [("Silver is in this job already.", "note")]
+    assert [text for text, _ in shown.said] == [
+        "Silver is in this job now, as 'silver'.",
+        "Silver is in this job already, as 'silver'.",
+    ]
     assert shown.panel.table.current_name() == "silver"
 
 
 def test_nothing_found_says_what_to_do(shown: Shown) -> None:
     """Words that no entry holds leave an empty list and a next step; Enter then does nothing."""
+    shown.panel.pages.setCurrentIndex(LIBRARY)
     shown.panel.library.search.setText("unobtainium")
 
     assert shown.panel.library.list.model().rowCount() == 0
-    assert "Search for less, or add a constant above." in shown.sentences()
+    assert "Search for fewer words" in shown.sentences()
     shown.panel.library.use_current()
     assert shown.names() == ["ptfe", "copper"]
 
@@ -165,6 +172,7 @@ def test_colours_follow_the_theme(shown: Shown, name: str) -> None:
 
     assert theme.warning in {image.pixelColor(x, cell.center().y()).name() for x in range(cell.left(), 30)}
     assert image.pixelColor(cell.left() + 2, cell.top() + 3).name() == theme.base
+    shown.panel.pages.setCurrentIndex(LIBRARY)
     entry = found.visualRect(found.model().index(1, 0))
     assert found.viewport().grab().toImage().pixelColor(entry.left() + 2, entry.top() + 2).name() == theme.base
 
@@ -179,3 +187,53 @@ def test_panel_stops_listening_when_it_is_gone(qapp: QApplication, session: Sess
     assert session.apply(edits.remove_material("copper")) == ()
     view.set(markers=(2e9,))
     assert qapp.activeModalWidget() is None
+
+
+def test_any_model_can_be_added_by_the_menu(shown: Shown) -> None:
+    """Every model but the two that have buttons is in the menu, and gives a material that computes."""
+    button = next(b for b in shown.panel.findChildren(QToolButton) if b.text() == "Add other")
+    menu = button.menu()
+    assert menu is not None
+    actions = menu.actions()
+    assert len(actions) == len(MODELS) - 2
+    for action in actions:
+        action.trigger()
+
+    materials = shown.session.record.materials[2:]
+    assert [MODELS[material.model].label for material in materials] == [action.text() for action in actions]
+    assert shown.panel.table.current_name() == materials[-1].name
+    assert not [text for text, severity in shown.said if severity == "error"]
+
+
+def test_rows_chosen_are_picked_and_renamed_with_the_material(shown: Shown) -> None:
+    """What is selected in the table is told with the current one, and a new name is followed."""
+    told: list[tuple[tuple[Pick, ...], Pick]] = []
+    shown.panel.picked.connect(lambda picks, current: told.append((picks, current)))
+    shown.panel.table.go_to("copper", "name")
+    shown.panel.table.selectAll()
+    shown.type("copper", "name", "foil")
+
+    assert ((Pick("ptfe"), Pick("copper")), Pick("copper")) in told
+    assert told[-1] == ((Pick("foil"),), Pick("foil"))
+    assert specimens_of(shown.session.job, told[-1][0])[0].medium is shown.session.job.media["foil"]
+
+
+def test_entry_of_the_library_is_picked_by_hand_only(shown: Shown) -> None:
+    """An entry gone to in the list is told; one that becomes the current one by opening the page is not."""
+    told: list[Pick] = []
+    shown.panel.picked.connect(lambda _picks, current: told.append(current))
+    shown.panel.pages.setCurrentIndex(LIBRARY)
+    assert told == []
+    shown.panel.library.list.setFocus()
+    press(Key.Key_Down)
+
+    assert told[-1].entry is not None
+    assert specimens_of(shown.session.job, (told[-1],))[0].medium is told[-1].entry.medium
+
+
+def test_many_cautions_are_counted(shown: Shown) -> None:
+    """Three materials beyond their range share one sentence that says where each is told."""
+    shown.panel.use(read_library().entry("metals/silver"))
+    shown.session.apply(edits.type_into(job_cell("sweep.frequency.stop"), "400 GHz"))
+
+    assert "3 materials are not known over all of the sweep" in shown.sentences()
