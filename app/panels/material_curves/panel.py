@@ -188,7 +188,8 @@ class MaterialCurves(QWidget):
         """Put the curves on the clipboard as a table."""
         if self._curves:
             QGuiApplication.clipboard().setText(data_table(self._curves))
-            self.pointed.emit(f"Copied {len(self._curves)} curves of {self._curves[0].x.size} points.")
+            count = "1 curve" if len(self._curves) == 1 else f"{len(self._curves)} curves"
+            self.pointed.emit(f"Copied {count} of {self._curves[0].x.size} points.")
 
     # Following
 

@@ -471,3 +471,21 @@ def _name(widget: QWidget) -> str:
         return widget.accessibleName()
     text = getattr(widget, "text", None)
     return str(text()) if callable(text) and not hasattr(widget, "setReadOnly") else ""
+
+
+def test_constants_and_curves_open_below_the_materials(bench: Bench) -> None:
+    """Both panels are seen at once; the one below shows what is chosen above, and F6 reaches it."""
+    bench.trigger("view.materials")
+    bench.window.panels.materials.detail_wanted.emit()
+    materials, data = bench.window.panels.materials, bench.window.panels.material_data
+    bench.qtbot.waitUntil(lambda: data.isVisible() and materials.isVisible())
+    assert bench.window.actions_table["view.material_data"].isChecked()
+    above = materials.mapTo(bench.window, materials.rect().bottomLeft())
+    assert data.mapTo(bench.window, data.rect().topLeft()).y() > above.y()
+    name = bench.window.panels.materials.table.materials_model().lines[-1].name
+    materials.table.go_to(name, "name")
+
+    assert data.editor.page.name == name
+    assert len(data.curves.curves) == 1
+    bench.trigger("view.material_data")
+    assert not data.isVisible()

@@ -7,7 +7,7 @@ import pytest
 from PySide6.QtCore import QPoint, QPointF, Qt
 from PySide6.QtGui import QWheelEvent
 from PySide6.QtTest import QTest
-from PySide6.QtWidgets import QApplication
+from PySide6.QtWidgets import QApplication, QToolTip
 from pytestqt.qtbot import QtBot
 
 from app.document import edits
@@ -171,11 +171,13 @@ def test_data_is_copied(bench: Bench) -> None:
 
     assert lines[0] == "Frequency, Hz\tSkin depth of Copper, m"
     assert len(lines) == 42
-    assert bench.pointed[-1] == "Copied 1 curves of 41 points."
+    assert bench.pointed[-1] == "Copied 1 curve of 41 points."
 
 
-def test_pointing_says_the_value_and_why_it_is_a_guess(bench: Bench) -> None:
-    """At 11.9 GHz the status line says ε′ 4 and that resin is known to 10 GHz."""
+def test_pointing_says_the_value_and_why_it_is_a_guess(bench: Bench, monkeypatch: pytest.MonkeyPatch) -> None:
+    """At 11.9 GHz the status line says ε′ 4 and that resin is known to 10 GHz, and so does the tip."""
+    tips: list[str] = []
+    monkeypatch.setattr(QToolTip, "showText", lambda _place, text, _owner: tips.append(text))
     bench.panel.show_specimens((RESIN,))
     frame = bench.frame()
     inside = QPoint(round(frame.across(11.9)), round(frame.down(4.0)))
@@ -183,6 +185,7 @@ def test_pointing_says_the_value_and_why_it_is_a_guess(bench: Bench) -> None:
     bench.qtbot.waitUntil(lambda: any("Resin" in text for text in bench.pointed))
 
     assert "ε′ 4   a guess: known from 8 GHz to 10 GHz" in bench.pointed[-1]
+    assert "a guess: known from 8 GHz to 10 GHz" in tips[-1]
 
 
 def test_sweep_and_theme_are_followed(bench: Bench) -> None:
