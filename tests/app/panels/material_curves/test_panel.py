@@ -201,6 +201,6 @@ def test_hidden_plot_waits(bench: Bench) -> None:
     """What changes while nobody looks is drawn when the plot is shown again."""
     bench.panel.hide()
     bench.panel.show_specimens((COPPER,))
-    assert bench.panel.curves == ()
+    assert [curve.specimen for curve in bench.panel.curves] == []
     bench.panel.show()
     assert [curve.specimen for curve in bench.panel.curves] == [COPPER]
