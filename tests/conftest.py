@@ -14,7 +14,14 @@ import pytest
 # Before anything imports Qt.
 os.environ["QT_QPA_PLATFORM"] = os.environ.get("SLABWRIGHT_TEST_PLATFORM", "offscreen")
 
-hypothesis.settings.register_profile("house", deadline=None, derandomize=True, print_blob=True)
+# Slow or choosy generation is no fault of the code under test, least of all on a shared machine.
+hypothesis.settings.register_profile(
+    "house",
+    deadline=None,
+    derandomize=True,
+    print_blob=True,
+    suppress_health_check=[hypothesis.HealthCheck.filter_too_much, hypothesis.HealthCheck.too_slow],
+)
 hypothesis.settings.load_profile("house")
 
 QT_OPTIONS = ("qt_api", "qt_log_level_fail", "qt_log_ignore")

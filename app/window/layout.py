@@ -42,6 +42,8 @@ BESIDE_WIDEST: Final = 400
 """Share and width of a panel that is opened beside for the first time."""
 MATERIALS_SHARE: Final = 0.34
 """Of the height for the panel of materials, when their constants and curves open below it."""
+TALL: Final = 900
+"""Pixels of the window from which there is room for both, one below the other."""
 HANDLE: Final = 9
 """Width of the gap between panels, which is where they are resized."""
 
@@ -170,14 +172,23 @@ class Arrangement:
         if title not in self._placed:
             width = min(round(self._window.width() * BESIDE_SHARE), BESIDE_WIDEST)
             self._window.resizeDocks([dock], [width], Qt.Orientation.Horizontal)
+            if title == MATERIAL_DATA:
+                self._place_material_data(dock)
         self._placed.add(title)
-        if title == MATERIAL_DATA:
-            shares = (MATERIALS_SHARE, 1 - MATERIALS_SHARE)
-            heights = [round(self._window.height() * share) for share in shares]
-            self._window.resizeDocks([self._docks[MATERIALS], dock], heights, Qt.Orientation.Vertical)
         # Qt makes the row of tabs when two panels share a place.
         for tabs in self._window.findChildren(QTabBar, options=Qt.FindChildOption.FindDirectChildrenOnly):
             tabs.setAccessibleName("Panels beside")
+
+    def _place_material_data(self, dock: QDockWidget) -> None:
+        """Put constants and curves below the materials chosen there; in a low window behind them, as a tab."""
+        materials = self._docks[MATERIALS]
+        if self._window.height() < TALL:
+            self._window.tabifyDockWidget(materials, dock)
+            dock.raise_()
+            return
+        shares = (MATERIALS_SHARE, 1 - MATERIALS_SHARE)
+        heights = [round(self._window.height() * share) for share in shares]
+        self._window.resizeDocks([materials, dock], heights, Qt.Orientation.Vertical)
 
     def set_theme(self, theme: Theme) -> None:
         """Take the colours of `theme`."""

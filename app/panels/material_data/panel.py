@@ -3,6 +3,7 @@
 from typing import Final
 
 from PySide6.QtCore import Qt, Signal
+from PySide6.QtGui import QShowEvent
 from PySide6.QtWidgets import QSplitter, QWidget
 
 from app.document.session import Session
@@ -14,7 +15,7 @@ from app.panels.materials.picks import Pick, specimens_of
 from app.panels.materials.pieces import column
 from app.panels.sweep.field import QuietSwitch
 
-EDITOR_SHARE: Final = 42
+EDITOR_SHARE: Final = 46
 """Per cent of the height for the constants at first."""
 KEEP_TIP: Final = "Keep what is shown, and draw what is chosen next beside it, to compare."
 
@@ -40,6 +41,7 @@ class MaterialData(QWidget):
         self._session = session
         self._picks: tuple[Pick, ...] = ()
         self._kept: tuple[Pick, ...] = ()
+        self._shared = False
         self.editor = Editor(session, view, theme, tell, self)
         self.curves = MaterialCurves(session, view, theme, self)
         self.curves.pointed.connect(self.pointed)
@@ -50,13 +52,19 @@ class MaterialData(QWidget):
         self.split.setChildrenCollapsible(False)
         self.split.addWidget(self.editor)
         self.split.addWidget(self.curves)
-        self.split.setSizes([EDITOR_SHARE, 100 - EDITOR_SHARE])
         self.split.setStretchFactor(0, EDITOR_SHARE)
         self.split.setStretchFactor(1, 100 - EDITOR_SHARE)
         column(self).addWidget(self.split)
         self.setFocusProxy(self.curves)
         self.destroyed.connect(session.subscribe(lambda _change: self._show()))
         self.set_theme(theme)
+
+    def showEvent(self, event: QShowEvent) -> None:
+        """Share the room at the first time; later it is as it was left."""
+        super().showEvent(event)
+        if not self._shared:
+            self._shared = True
+            self.split.setSizes([EDITOR_SHARE * self.height() // 100, (100 - EDITOR_SHARE) * self.height() // 100])
 
     def show_picks(self, picks: tuple[Pick, ...], current: Pick) -> None:
         """Draw what is chosen, and show the constants of the current one of it."""

@@ -1,6 +1,7 @@
 """The panel of materials: those of the job, the library to take more from, and what speaks against any."""
 
 from collections.abc import Callable
+from typing import Final
 
 from PySide6.QtCore import Qt, Signal
 from PySide6.QtWidgets import QMenu, QTabWidget, QToolButton, QWidget
@@ -15,12 +16,13 @@ from app.document.view import View
 from app.look.theme import Theme
 from app.panels.materials.checks import Checks
 from app.panels.materials.library_view import LibraryView
-from app.panels.materials.lines import NAME
+from app.panels.materials.lines import COLUMNS, NAME
 from app.panels.materials.model import MaterialsModel
 from app.panels.materials.picks import Pick
-from app.panels.materials.pieces import buttons, column, ink, words
+from app.panels.materials.pieces import button, column, ink, words
 from app.panels.materials.table import MaterialsTable
 from app.panels.materials.words import LOSS_ONCE, cautions_text, uses_text
+from app.panels.sweep.flow import FlowLayout
 from app.panels.tables.words import fault_words
 from stackcore.errors import Severity
 from stackcore.job.records import MaterialRecord
@@ -28,6 +30,9 @@ from stackcore.media.library import Library, LibraryEntry, read_library
 from stackcore.units import Dimension, parse_measure
 
 Tell = Callable[[str, Severity], None]
+
+LEAST_ROWS: Final = 2
+"""Materials that are seen in however little room."""
 
 OWN, LIBRARY, CHECKS = range(3)
 """Places of the pages."""
@@ -187,20 +192,21 @@ class MaterialsPanel(QWidget):
 
     def _arrange(self) -> None:
         remove_tip = "Remove the current material, unless something is made of it (Delete)."
-        row = buttons(
-            self,
-            ("Add constant", "Add a material of constant ε and μ.", self.add_constant),
-            ("Add conductor", "Add a conductor, known by its conductivity.", self.add_conductor),
-            ("Remove", remove_tip, self.remove),
-        )
-        row.addStretch(1)
-        row.insertWidget(2, self._other_models())
         detail_tip = "Show constants and curves of what is chosen, beside."
-        row.addLayout(buttons(self, ("Constants and curves", detail_tip, self.detail_wanted.emit)))
         own = QWidget(self)
+        line = QWidget(own)
+        flow = FlowLayout(line, across=0, down=0)
+        flow.addWidget(button(line, "Add constant", "Add a material of constant ε and μ.", self.add_constant))
+        conductor_tip = "Add a conductor, known by its conductivity."
+        flow.addWidget(button(line, "Add conductor", conductor_tip, self.add_conductor))
+        flow.addWidget(self._other_models())
+        flow.addWidget(button(line, "Remove", remove_tip, self.remove))
+        flow.addWidget(button(line, "Constants and curves", detail_tip, self.detail_wanted.emit))
         upper = column(own)
         upper.setContentsMargins(0, 4, 0, 0)
-        upper.addLayout(row)
+        upper.addWidget(line)
+        rows = self._table.verticalHeader().defaultSectionSize()
+        self._table.setMinimumHeight(LEAST_ROWS * rows + self._table.horizontalHeader().height())
         upper.addWidget(self._table, 1)
         for label in (self._note, self._cautions, self._caption):
             upper.addWidget(label)
@@ -256,7 +262,10 @@ class MaterialsPanel(QWidget):
         fault = self._model.view(index).fault if index.isValid() else None
         note = fault_words(fault) if fault is not None else _drafts_words(self._session.document)
         cautions = cautions_text([line.caution for line in self._model.lines if line.caution])
-        for label, text in ((self._note, note), (self._cautions, cautions)):
+        # Said where loss is typed, and nowhere else: the room belongs to the table.
+        at_loss = index.isValid() and COLUMNS[index.column()].name in ("permittivity", "loss_tangent")
+        caption = LOSS_ONCE if at_loss else ""
+        for label, text in ((self._note, note), (self._cautions, cautions), (self._caption, caption)):
             label.setText(text)
             label.setVisible(bool(text))
         ink(self._note, self._theme.fault)

@@ -47,10 +47,15 @@ def buttons(owner: QWidget, *wanted: tuple[str, str, Callable[[], None]]) -> QHB
     row.setContentsMargins(4, 0, 4, 0)
     row.setSpacing(0)
     for text, tip, run in wanted:
-        button = QToolButton(owner)
-        button.setText(text)
-        button.setToolTip(tip)
-        button.setAutoRaise(True)
-        button.clicked.connect(lambda _checked=False, run=run: run())
-        row.addWidget(button)
+        row.addWidget(button(owner, text, tip, run))
     return row
+
+
+def button(owner: QWidget, text: str, tip: str, run: Callable[[], None]) -> QToolButton:
+    """Return a plain button of its words, its tip and what it does."""
+    plain = QToolButton(owner)
+    plain.setText(text)
+    plain.setToolTip(tip)
+    plain.setAutoRaise(True)
+    plain.clicked.connect(lambda _checked=False: run())
+    return plain

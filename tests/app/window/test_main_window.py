@@ -475,6 +475,7 @@ def _name(widget: QWidget) -> str:
 
 def test_constants_and_curves_open_below_the_materials(bench: Bench) -> None:
     """Both panels are seen at once; the one below shows what is chosen above, and F6 reaches it."""
+    bench.window.resize(1600, 1000)
     bench.trigger("view.materials")
     bench.window.panels.materials.detail_wanted.emit()
     materials, data = bench.window.panels.materials, bench.window.panels.material_data
@@ -489,3 +490,15 @@ def test_constants_and_curves_open_below_the_materials(bench: Bench) -> None:
     assert len(data.curves.curves) == 1
     bench.trigger("view.material_data")
     assert not data.isVisible()
+
+
+def test_constants_and_curves_are_a_tab_in_a_low_window(bench: Bench) -> None:
+    """With little height they share the place of the materials, in front when asked for."""
+    bench.window.resize(1200, 750)
+    bench.trigger("view.materials")
+    bench.trigger("view.material_data")
+    materials, data = bench.window.panels.materials, bench.window.panels.material_data
+    bench.qtbot.waitUntil(lambda: not data.visibleRegion().isEmpty())
+
+    assert materials.visibleRegion().isEmpty()
+    bench.qtbot.waitUntil(lambda: data.height() > 400)
