@@ -76,7 +76,7 @@ def add_layer(stack: int, row: int, material: str, thickness: Measure) -> Edit:
 
     def change(document: Document) -> Document:
         record, found = with_material(document.record, material)
-        return _with_new(document, record, stack, row, LayerRecord(found, thickness))
+        return with_inserted(document, record, stack, row, (LayerRecord(found, thickness),))
 
     return Edit(f"add layer of {material}", change, Selection(stack, (row,)))
 
@@ -85,7 +85,7 @@ def add_sheet(stack: int, row: int, sheet: SheetRecord = NEW_SHEET) -> Edit:
     """Return the edit that puts a new sheet before `row` (the number of elements: at the end)."""
 
     def change(document: Document) -> Document:
-        return _with_new(document, document.record, stack, row, sheet)
+        return with_inserted(document, document.record, stack, row, (sheet,))
 
     return Edit("add sheet", change, Selection(stack, (row,)))
 
@@ -133,13 +133,16 @@ def move(stack: int, rows: Iterable[int], before_row: int) -> Edit:
     return Edit(f"move {_words(moved)}", change, Selection(stack, selected))
 
 
-def _with_new(document: Document, record: JobRecord, stack: int, row: int, element: ElementRecord) -> Document:
+def with_inserted(
+    document: Document, record: JobRecord, stack: int, row: int, new: tuple[ElementRecord, ...]
+) -> Document:
+    """Return the document of `record` with new elements before `row` of a stack; drafts follow their rows."""
     old = stack_at(record, stack)
     count = len(old.elements)
     if not 0 <= row <= count:
         raise refuse(f"stacks[{stack}]", f"no place before element {row}", f"0 to {count}")
-    elements = (*old.elements[:row], element, *old.elements[row:])
-    origins = [*range(row), None, *range(row, count)]
+    elements = (*old.elements[:row], *new, *old.elements[row:])
+    origins = [*range(row), *(None for _ in new), *range(row, count)]
     record = with_stack(record, stack, replace(old, elements=elements))
     return with_record(document, record, follow_rows(document.drafts, stack, origins))
 

@@ -5,6 +5,7 @@ from dataclasses import dataclass
 
 from app.document.session import Session
 from app.panels.elements.panel import ElementsPanel
+from app.window.beside import Beside
 from app.window.editing import ElementQuestions, StackCommands
 from app.window.exporting import Exporter
 from app.window.files import Files
@@ -17,12 +18,12 @@ Do = Callable[[], None]
 
 @dataclass(frozen=True, slots=True)
 class ViewCommands:
-    """What the menu View needs from the window; panels opened beside go by their title."""
+    """What the menu View needs from the window; panels opened beside go by their row."""
 
     theme: Callable[[], str]
     set_theme: Callable[[str], None]
-    shown: Callable[[str], bool]
-    toggle: Callable[[str], None]
+    shown: Callable[[Beside], bool]
+    toggle: Callable[[Beside], None]
     reset_layout: Do
     next_panel: Do
     previous_panel: Do

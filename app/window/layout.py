@@ -21,14 +21,10 @@ from PySide6.QtWidgets import (
 
 from app.look.palette import heading_font
 from app.look.theme import Theme
+from app.window.beside import Beside
 
-VERSION: Final = 3
+VERSION: Final = 4
 """Of the arrangement; raised when panels come or go, and an older one is then forgotten."""
-
-MATERIALS: Final = "Materials"
-MATERIAL_DATA: Final = "Constants and curves"
-NOTES: Final = "Title and notes"
-HELP: Final = "Help"
 
 FIRST_SIZE: Final = QSize(1280, 840)
 WALL_SHARE: Final = 0.34
@@ -40,8 +36,8 @@ READINGS_TALLEST: Final = 190
 BESIDE_SHARE: Final = 0.25
 BESIDE_WIDEST: Final = 400
 """Share and width of a panel that is opened beside for the first time."""
-MATERIALS_SHARE: Final = 0.34
-"""Of the height for the panel of materials, when their constants and curves open below it."""
+UPPER_SHARE: Final = 0.34
+"""Of the height for a panel, such as that of materials, below which another opens."""
 TALL: Final = 900
 """Pixels of the window from which there is room for both, one below the other."""
 HANDLE: Final = 9
@@ -110,14 +106,14 @@ class Arrangement:
     window
         Whose central widget and docks are arranged.
     beside
-        Panels opened beside, by title: each becomes a dock on the right, closed at first.
+        Panels opened beside: each becomes a dock on the right, closed at first.
     """
 
     def __init__(
         self,
         window: QMainWindow,
         places: Places,
-        beside: Sequence[tuple[str, QWidget]],
+        beside: Sequence[tuple[Beside, QWidget]],
         theme: Theme,
         settings: QSettings,
     ) -> None:
@@ -140,8 +136,8 @@ class Arrangement:
         column.addWidget(places.strip)
         column.addWidget(self._whole, 1)
         window.setCentralWidget(centre)
-        self._docks = {title: _dock(window, title, widget) for title, widget in beside}
-        self._placed: set[str] = set()
+        self._docks = {one: _dock(window, one.title, widget) for one, widget in beside}
+        self._placed: set[Beside] = set()
         self._put_beside()
 
     @property
@@ -149,46 +145,48 @@ class Arrangement:
         """The splitters, for tests and for the theme."""
         return self._whole, self._lower, self._results
 
-    def dock(self, title: str) -> QDockWidget:
-        """Return the dock of the panel with this title."""
-        return self._docks[title]
+    def dock(self, beside: Beside) -> QDockWidget:
+        """Return the dock of a panel."""
+        return self._docks[beside]
 
-    def shown(self, title: str) -> bool:
-        """Whether the panel with this title is shown."""
-        return not self._docks[title].isHidden()
+    def shown(self, beside: Beside) -> bool:
+        """Whether a panel is shown."""
+        return not self._docks[beside].isHidden()
 
-    def toggle(self, title: str) -> None:
-        """Show the panel with this title, or hide it."""
-        if self.shown(title):
-            self._docks[title].hide()
+    def toggle(self, beside: Beside) -> None:
+        """Show a panel, or hide it."""
+        if self.shown(beside):
+            self._docks[beside].hide()
         else:
-            self.open_beside(title)
+            self.open_beside(beside)
 
-    def open_beside(self, title: str) -> None:
-        """Show the panel with this title; the first time in a good width."""
-        dock = self._docks[title]
+    def open_beside(self, beside: Beside) -> None:
+        """Show a panel; the first time in a good width."""
+        dock = self._docks[beside]
         dock.show()
         dock.raise_()
-        if title not in self._placed:
+        if beside not in self._placed:
             width = min(round(self._window.width() * BESIDE_SHARE), BESIDE_WIDEST)
             self._window.resizeDocks([dock], [width], Qt.Orientation.Horizontal)
-            if title == MATERIAL_DATA:
-                self._place_material_data(dock)
-        self._placed.add(title)
+            if beside.below:
+                self._place_below(dock, self._named(beside.below))
+        self._placed.add(beside)
         # Qt makes the row of tabs when two panels share a place.
         for tabs in self._window.findChildren(QTabBar, options=Qt.FindChildOption.FindDirectChildrenOnly):
             tabs.setAccessibleName("Panels beside")
 
-    def _place_material_data(self, dock: QDockWidget) -> None:
-        """Put constants and curves below the materials chosen there; in a low window behind them, as a tab."""
-        materials = self._docks[MATERIALS]
+    def _named(self, name: str) -> QDockWidget:
+        return next(dock for one, dock in self._docks.items() if one.name == name)
+
+    def _place_below(self, dock: QDockWidget, upper: QDockWidget) -> None:
+        """Put a panel below the one it belongs to; in a low window behind it, as a tab."""
         if self._window.height() < TALL:
-            self._window.tabifyDockWidget(materials, dock)
+            self._window.tabifyDockWidget(upper, dock)
             dock.raise_()
             return
-        shares = (MATERIALS_SHARE, 1 - MATERIALS_SHARE)
+        shares = (UPPER_SHARE, 1 - UPPER_SHARE)
         heights = [round(self._window.height() * share) for share in shares]
-        self._window.resizeDocks([materials, dock], heights, Qt.Orientation.Vertical)
+        self._window.resizeDocks([upper, dock], heights, Qt.Orientation.Vertical)
 
     def set_theme(self, theme: Theme) -> None:
         """Take the colours of `theme`."""
@@ -210,15 +208,15 @@ class Arrangement:
     def _put_beside(self) -> None:
         """Put every panel of the side to the right, closed, in one place: those open together become tabs.
 
-        Constants and curves go below that place, since materials are chosen above to be seen there.
+        One that belongs below another goes there, since what is chosen above is seen in it.
         """
         first, *others = self._docks.values()
         for dock in (first, *others):
             dock.setFloating(False)
             self._window.addDockWidget(Qt.DockWidgetArea.RightDockWidgetArea, dock)
-        for title, dock in self._docks.items():
-            if title == MATERIAL_DATA:
-                self._window.splitDockWidget(first, dock, Qt.Orientation.Vertical)
+        for beside, dock in self._docks.items():
+            if beside.below:
+                self._window.splitDockWidget(self._named(beside.below), dock, Qt.Orientation.Vertical)
             elif dock is not first:
                 self._window.tabifyDockWidget(first, dock)
         for dock in (first, *others):

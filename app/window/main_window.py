@@ -15,6 +15,7 @@ from app.look.palette import apply_theme, preferred_theme
 from app.look.theme import Theme
 from app.window import help_pages
 from app.window.actions import Actions
+from app.window.beside import BESIDE, HELP, MATERIAL_DATA
 from app.window.cautions import Caution, cautions
 from app.window.commands import Commands, HelpCommands, ViewCommands
 from app.window.crash_net import CrashNet
@@ -27,7 +28,7 @@ from app.window.first_view import first_view
 from app.window.help_pages import KeyGroup
 from app.window.help_panel import HelpPanel
 from app.window.keys import key_groups
-from app.window.layout import HELP, MATERIAL_DATA, MATERIALS, NOTES, Arrangement
+from app.window.layout import Arrangement
 from app.window.marking import MarkerCommands
 from app.window.messages import Choice, Message, Messages, MessageStrip
 from app.window.panels import Panels, focus_into, make_panels
@@ -84,12 +85,7 @@ class MainWindow(QMainWindow):
         self._arrangement = Arrangement(
             self,
             self._panels.places(self._strip),
-            (
-                (MATERIALS, self._panels.materials),
-                (MATERIAL_DATA, self._panels.material_data),
-                (NOTES, self._panels.notes),
-                (HELP, self._panels.help),
-            ),
+            self._panels.beside,
             self._theme,
             settings,
         )
@@ -242,8 +238,8 @@ class MainWindow(QMainWindow):
         self._exporter.running.connect(self._actions.refresh)
         self._panels.elements.columns_asked.connect(self._actions.refresh)
         self._status.cautions.clicked.connect(lambda: self.show_help("cautions"))
-        for title in (MATERIALS, MATERIAL_DATA, NOTES):
-            self._arrangement.dock(title).visibilityChanged.connect(self._actions.refresh)
+        for beside in BESIDE:
+            self._arrangement.dock(beside).visibilityChanged.connect(self._actions.refresh)
         QGuiApplication.styleHints().colorSchemeChanged.connect(self._take_theme)
         if self._net is not None:
             self._net.caught.connect(self._caught)

@@ -1,6 +1,7 @@
 """The panels of the main window, made and addressed together."""
 
-from dataclasses import dataclass
+from dataclasses import dataclass, fields
+from typing import Protocol
 
 from PySide6.QtCore import Qt
 from PySide6.QtWidgets import QApplication, QWidget
@@ -8,6 +9,7 @@ from PySide6.QtWidgets import QApplication, QWidget
 from app.document.session import Session
 from app.document.view import View
 from app.look.theme import Theme
+from app.panels.constructions.panel import ConstructionsPanel
 from app.panels.curves.panel import CurvesPanel
 from app.panels.elements.panel import ElementsPanel
 from app.panels.elements.stacks import StackBar
@@ -16,6 +18,7 @@ from app.panels.materials.panel import MaterialsPanel
 from app.panels.readings.panel import ReadingsPanel
 from app.panels.sweep.panel import SweepPanel
 from app.panels.wall.panel import WallPanel
+from app.window.beside import BESIDE, Beside
 from app.window.exporting import Tell
 from app.window.help_panel import HelpPanel
 from app.window.layout import Places
@@ -23,6 +26,13 @@ from app.window.notes_panel import NotesPanel
 from app.window.recompute import Viewer
 from stackcore.job.records import LayerRecord
 from stackcore.media.library import read_library
+
+
+class Themed(Protocol):
+    """What takes the colours of a look."""
+
+    def set_theme(self, theme: Theme) -> None:
+        """Take the colours of `theme`."""
 
 
 @dataclass(frozen=True, slots=True, weakref_slot=True)
@@ -36,6 +46,7 @@ class Panels:
     readings: ReadingsPanel
     materials: MaterialsPanel
     material_data: MaterialData
+    constructions: ConstructionsPanel
     notes: NotesPanel
     help: HelpPanel
 
@@ -45,19 +56,15 @@ class Panels:
         return self.wall, self.elements, self.curves, self.readings
 
     @property
+    def beside(self) -> tuple[tuple[Beside, QWidget], ...]:
+        """Those that open beside the work."""
+        return tuple((one, getattr(self, one.name)) for one in BESIDE)
+
+    @property
     def in_order(self) -> tuple[QWidget, ...]:
         """All of them, in the order F6 goes through."""
-        return (
-            self.wall,
-            self.elements,
-            self.sweep,
-            self.curves,
-            self.readings,
-            self.materials,
-            self.material_data,
-            self.notes,
-            self.help,
-        )
+        work = (self.wall, self.elements, self.sweep, self.curves, self.readings)
+        return (*work, *(widget for _, widget in self.beside))
 
     def places(self, strip: QWidget) -> Places:
         """Return who goes where."""
@@ -65,15 +72,9 @@ class Panels:
 
     def set_theme(self, theme: Theme) -> None:
         """Give every panel the colours of `theme`."""
-        self.wall.set_theme(theme)
-        self.elements.set_theme(theme)
-        self.sweep.set_theme(theme)
-        self.curves.set_theme(theme)
-        self.readings.set_theme(theme)
-        self.materials.set_theme(theme)
-        self.material_data.set_theme(theme)
-        self.notes.set_theme(theme)
-        self.help.set_theme(theme)
+        themed: tuple[Themed, ...] = tuple(getattr(self, one.name) for one in fields(self))
+        for panel in themed:
+            panel.set_theme(theme)
 
     def rename_stack(self) -> None:
         """Open the line for a new name of the stack, in its place."""
@@ -115,6 +116,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
         readings=ReadingsPanel(session, view, theme, tell),
         materials=materials,
         material_data=material_data,
+        constructions=ConstructionsPanel(session, theme, tell),
         notes=NotesPanel(session, tell),
         help=help_panel,
     )

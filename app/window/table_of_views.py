@@ -3,8 +3,8 @@
 from collections.abc import Sequence
 
 from app.window.actions import Act
+from app.window.beside import BESIDE, Beside
 from app.window.commands import Commands
-from app.window.layout import MATERIAL_DATA, MATERIALS, NOTES
 
 
 def markers_acts(c: Commands) -> Sequence[Act]:
@@ -98,36 +98,7 @@ def arrangement_acts(c: Commands) -> Sequence[Act]:
     menu = "&View"
     view = c.view
     return (
-        Act(
-            "view.materials",
-            menu,
-            MATERIALS.replace("M", "&M", 1),
-            lambda: view.toggle(MATERIALS),
-            ("Ctrl+Shift+M",),
-            "Show or hide the materials of the job and the library, beside the work.",
-            checked=lambda: view.shown(MATERIALS),
-            group=1,
-        ),
-        Act(
-            "view.material_data",
-            menu,
-            MATERIAL_DATA.replace("C", "&C", 1),
-            lambda: view.toggle(MATERIAL_DATA),
-            ("Ctrl+M",),
-            "Show or hide constants and curves of the materials that are chosen.",
-            checked=lambda: view.shown(MATERIAL_DATA),
-            group=1,
-        ),
-        Act(
-            "view.notes",
-            menu,
-            NOTES.replace("T", "&T", 1),
-            lambda: view.toggle(NOTES),
-            ("Ctrl+I",),
-            "Show or hide title and notes of the job, beside the work.",
-            checked=lambda: view.shown(NOTES),
-            group=1,
-        ),
+        *(_panel_act(c, beside) for beside in BESIDE if beside.in_menu),
         Act(
             "view.rare_columns",
             menu,
@@ -156,6 +127,19 @@ def arrangement_acts(c: Commands) -> Sequence[Act]:
             group=2,
         ),
         Act("view.reset", menu, "&Reset layout", view.reset_layout, tip="Arrange everything as at first.", group=3),
+    )
+
+
+def _panel_act(c: Commands, beside: Beside) -> Act:
+    return Act(
+        f"view.{beside.name}",
+        "&View",
+        beside.text,
+        lambda: c.view.toggle(beside),
+        (beside.shortcut,) if beside.shortcut else (),
+        beside.tip,
+        checked=lambda: c.view.shown(beside),
+        group=1,
     )
 
 

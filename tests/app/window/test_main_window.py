@@ -21,7 +21,8 @@ from app.document import edits
 from app.document.document import Selection
 from app.look.settings import open_settings
 from app.look.theme import DARK, LIGHT
-from app.window.layout import HELP, MATERIAL_DATA, MATERIALS, NOTES, VERSION
+from app.window.beside import BESIDE
+from app.window.layout import VERSION
 from app.window.panels import has_focus
 from stackcore.errors import Fault
 from tests.app.window.conftest import Bench, MakeWindow
@@ -375,7 +376,7 @@ def test_the_layout_is_remembered_and_reset(bench: Bench, make_bench: MakeWindow
     assert other.window._arrangement.splitters[0].sizes()[0] < moved[0]
     assert not other.window.panels.materials.isVisible()
     docks = {dock.windowTitle() for dock in other.window.findChildren(QDockWidget)}
-    assert docks == {MATERIALS, MATERIAL_DATA, NOTES, HELP}
+    assert docks == {beside.title for beside in BESIDE}
 
 
 def test_a_layout_that_makes_no_sense_is_forgotten(make_bench: MakeWindow) -> None:
