@@ -1,13 +1,11 @@
-"""What leaves the plot by the clipboard: the numbers as a table, and the plot as a picture."""
+"""What leaves the plot by the clipboard as text: the numbers as a table."""
 
 from collections.abc import Sequence
 
 import numpy as np
-from PySide6.QtCore import QBuffer, QByteArray, QIODevice, QMimeData
-from PySide6.QtGui import QImage, QImageWriter
 
 from app.series.curves import Curve
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import quantity_named
 
 
 def data_table(curves: Sequence[Curve]) -> str:
@@ -19,23 +17,10 @@ def data_table(curves: Sequence[Curve]) -> str:
     if not curves:
         return ""
     titles = [
-        f"{QUANTITIES[curve.quantity].label} {curve.label}{f', {curve.unit}' if curve.unit else ''}"
+        f"{quantity_named(curve.quantity).label} {curve.label}{f', {curve.unit}' if curve.unit else ''}"
         for curve in curves
     ]
     lines = ["\t".join(["Frequency, Hz", *titles])]
     table = np.column_stack([curves[0].x, *(curve.raw for curve in curves)])
     lines += ["\t".join(map(repr, row)) for row in table.tolist()]
     return "\n".join(lines) + "\n"
-
-
-def picture_data(image: QImage, svg: QByteArray) -> QMimeData:
-    """Return a picture for the clipboard, in pixels and as a drawing."""
-    data = QMimeData()
-    data.setImageData(image)
-    if not svg.isEmpty():
-        data.setData("image/svg+xml", svg)
-    png = QBuffer()
-    png.open(QIODevice.OpenModeFlag.WriteOnly)
-    QImageWriter(png, QByteArray(b"png")).write(image)
-    data.setData("image/png", png.data())
-    return data

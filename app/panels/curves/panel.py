@@ -10,13 +10,14 @@ from PySide6.QtWidgets import QToolTip, QVBoxLayout, QWidget
 
 from app.document.session import Session
 from app.document.view import View, ViewChange
-from app.look.theme import LIGHT, Theme
+from app.look.pictures import Picture, clipboard_data
+from app.look.theme import Theme
 from app.panels.curves import drawing, words
 from app.panels.curves.commands import open_menu, take_key
-from app.panels.curves.copying import data_table, picture_data
+from app.panels.curves.copying import data_table
 from app.panels.curves.header import Header
 from app.panels.curves.mark_layers import Spot
-from app.panels.curves.picture import paint_picture, paint_svg
+from app.panels.curves.picture import plot_picture
 from app.panels.curves.plot import CurvePlot
 from app.panels.curves.plot_commands import PlotCommands
 from app.panels.curves.range_strip import RangeStrip
@@ -182,17 +183,15 @@ class CurvesPanel(QWidget):
             QGuiApplication.clipboard().setText(data_table(self._curves))
             self.pointed.emit(f"Copied {len(self._curves)} curves of {len(self._curves[0].x)} points.")
 
+    def picture(self) -> Picture:
+        """Return the plot as it stands, in the light look, with the stack's name and the worst point above."""
+        stack = self._session.record.stacks[self._session.selection.stack].name
+        heading = f"{stack}: {drawing.quantity_label(self._view.state)}"
+        return plot_picture(self.plot, heading, words.worst_sentence(self._curves), self.set_theme, self._theme)
+
     def copy_picture(self) -> None:
         """Put the plot on the clipboard as a picture in pixels and as a drawing, in the light look."""
-        theme = self._theme
-        self.set_theme(LIGHT)
-        self.header.add.hide()
-        try:
-            data = picture_data(paint_picture(self, self.plot), paint_svg(self, self.plot))
-        finally:
-            self.header.add.show()
-            self.set_theme(theme)
-        QGuiApplication.clipboard().setMimeData(data)
+        QGuiApplication.clipboard().setMimeData(clipboard_data(self.picture()))
         self.pointed.emit("Copied the plot as a picture.")
 
     def say(self, text: str) -> None:

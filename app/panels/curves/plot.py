@@ -134,7 +134,7 @@ class CurvePlot(pg.GraphicsView):
         for layer in (self.worst_layer, self.marker_layer, self.pointer_layer, self.note_layer):
             layer.theme = theme
             layer.update()
-        self._show_focus(False)
+        self.show_focus(False)
 
     # What is shown
 
@@ -313,14 +313,15 @@ class CurvePlot(pg.GraphicsView):
         """Outline the plot when the keyboard brought the focus here."""
         super().focusInEvent(event)
         reasons = event.reason()
-        self._show_focus(reasons.name in {"TabFocusReason", "BacktabFocusReason", "ShortcutFocusReason"})
+        self.show_focus(reasons.name in {"TabFocusReason", "BacktabFocusReason", "ShortcutFocusReason"})
 
     def focusOutEvent(self, event: QFocusEvent) -> None:
         """Take the outline away."""
         super().focusOutEvent(event)
-        self._show_focus(False)
+        self.show_focus(False)
 
-    def _show_focus(self, shown: bool) -> None:
+    def show_focus(self, shown: bool) -> None:
+        """Show the frame of the keyboard focus, or take it away."""
         self.focus_shown = shown
         colour = QColor(self._theme.accent) if shown else QColor(0, 0, 0, 0)
         self.area.setBorder(QPen(colour, 2.0))

@@ -7,6 +7,7 @@ from PySide6.QtCore import QEvent, QSize, Qt, QTimer, Signal
 from PySide6.QtGui import (
     QFocusEvent,
     QFontMetricsF,
+    QGuiApplication,
     QHelpEvent,
     QKeyEvent,
     QMouseEvent,
@@ -20,7 +21,8 @@ from app.document.document import Document, Selection
 from app.document.edit import Edit
 from app.document.session import Change, Session
 from app.document.view import View, ViewChange, ViewState
-from app.look.theme import Theme
+from app.look.pictures import Picture, clipboard_data
+from app.look.theme import LIGHT, Theme
 from app.panels.wall import keys, tips, words
 from app.panels.wall.captions import captions, rays_in
 from app.panels.wall.drag import FaceDrag
@@ -110,6 +112,22 @@ class WallPanel(QWidget):
 
     def sizeHint(self) -> QSize:
         return QSize(1000, 250)
+
+    def picture(self) -> Picture:
+        """Return the drawing as it stands, in the light look, without selection and handles."""
+        layout, wave = self.layout_now, self.wave
+        name = self._session.record.stacks[self._stack].name
+
+        def paint(painter: QPainter) -> None:
+            painter.setFont(self.font())
+            paint_layout(painter, layout, LIGHT, wave, Touch())
+
+        return Picture(f"{name}: wall", self.size(), self.logicalDpiX(), LIGHT.base, paint)
+
+    def copy_picture(self) -> None:
+        """Put the drawing on the clipboard, in pixels and as a drawing."""
+        QGuiApplication.clipboard().setMimeData(clipboard_data(self.picture()))
+        self._tell("Copied the wall as a picture.", "note")
 
     # What is drawn
 

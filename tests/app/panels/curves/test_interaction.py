@@ -388,7 +388,7 @@ def test_the_copied_picture_is_light_sharp_and_a_drawing(bench: Bench) -> None:
     bench.press(Qt.Key.Key_C, CTRL)
     data = QGuiApplication.clipboard().mimeData()
     image = data.imageData()
-    assert image.width() == bench.panel.width() * 2
+    assert image.width() == bench.plot.width() * 2
     assert image.pixelColor(3, 3).name() == LIGHT.base
     assert bytes(data.data("image/png").data()).startswith(b"\x89PNG")
     drawing = bytes(data.data("image/svg+xml").data()).decode()
