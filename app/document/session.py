@@ -148,6 +148,14 @@ class Session:
         self._tell(before, sentence, initiator, "edit")
         return ()
 
+    def reread(self, edit: Edit, initiator: object | None = None) -> tuple[Fault, ...]:
+        """Make `edit`, which brings what the file holds now: afterwards the job is that of the file."""
+        faults = self.apply(edit, initiator)
+        if not faults:
+            self._history.mark_saved()
+            self._tell(self.document, "", initiator, "save")
+        return faults
+
     def select(self, selection: Selection, initiator: object | None = None) -> None:
         """Select what exists of `selection`; no step to undo."""
         wanted = selection.within(self.record)

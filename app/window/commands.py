@@ -12,6 +12,7 @@ from app.window.files import Files
 from app.window.marking import MarkerCommands
 from app.window.recent import RecentFiles
 from app.window.samples import Sample
+from app.window.windows import Others
 
 Do = Callable[[], None]
 
@@ -53,4 +54,6 @@ class Commands:
     markers: MarkerCommands
     view: ViewCommands
     help: HelpCommands
+    others: Others
+    close: Do
     quit: Do

@@ -16,6 +16,7 @@ from stackcore.job.store import read_job
 
 SUFFIX: Final = ".slabjob"
 Then = Callable[[], None]
+Elsewhere = Callable[[Path], bool]
 
 
 def nothing() -> None:
@@ -27,14 +28,28 @@ class Files:
 
     Nothing here loses a job: what would replace it first asks about unsaved changes, and a file that cannot be
     read leaves everything as it was.
+
+    Parameters
+    ----------
+    elsewhere
+        Shows the window that holds a file already and tells whether there is one: two windows on one file would
+        overwrite each other's work.
     """
 
-    def __init__(self, session: Session, dialogs: Dialogs, messages: Messages, recent: RecentFiles) -> None:
+    def __init__(
+        self,
+        session: Session,
+        dialogs: Dialogs,
+        messages: Messages,
+        recent: RecentFiles,
+        elsewhere: Elsewhere = lambda path: False,
+    ) -> None:
         self._session = session
+        self._elsewhere = elsewhere
         self._dialogs = dialogs
         self._messages = messages
         self._recent = recent
-        self._stamp = _stamp(session.path)
+        self._stamp = stamp_of(session.path)
         self._unsubscribe = session.subscribe(self._heard)
 
     def close(self) -> None:
@@ -47,11 +62,12 @@ class Files:
 
     def open(self) -> None:
         """Ask for a job file and open it."""
-        self.leave(lambda: self._dialogs.pick_open(self._recent.folder, self.read))
+        self.leave(lambda: self._dialogs.pick_open(self._recent.folder, self._read_here))
 
     def open_path(self, path: Path) -> None:
         """Open a file that was named or dropped."""
-        self.leave(lambda: self.read(path))
+        if not self._open_elsewhere(path):
+            self.leave(lambda: self.read(path))
 
     def open_sample(self, sample: Sample) -> None:
         """Open a copy of a sample: a job without a file, so that the sample stays as it is."""
@@ -66,7 +82,7 @@ class Files:
         path = self._session.path
         if path is None:
             self.save_as(then)
-        elif path.exists() and _stamp(path) != self._stamp:
+        elif path.exists() and stamp_of(path) != self._stamp:
             self._dialogs.ask_overwrite(path.name, lambda answer: self._overwrite(answer, path, then))
         else:
             self._write(path, then)
@@ -111,6 +127,15 @@ class Files:
             self._recent.add(path)
             self._messages.tell(f"Opened {path.name}.")
 
+    def _read_here(self, path: Path) -> None:
+        if not self._open_elsewhere(path):
+            self.read(path)
+
+    def _open_elsewhere(self, path: Path) -> bool:
+        """Show the window that holds a file, when it is another one."""
+        own = self._session.path
+        return (own is None or own.resolve() != path.resolve()) and self._elsewhere(path)
+
     def _refuse(self, path: Path, error: JobError) -> None:
         count = len(error.faults)
         faults = "one fault" if count == 1 else f"{count} faults"
@@ -152,16 +177,17 @@ class Files:
 
     def _heard(self, change: Change) -> None:
         if change.kind in ("open", "save"):
-            self._stamp = _stamp(self._session.path)
+            self._stamp = stamp_of(self._session.path)
 
 
 def _with_suffix(path: Path) -> Path:
     return path if path.suffix else path.with_suffix(SUFFIX)
 
 
-def _stamp(path: Path | None) -> tuple[int, int] | None:
-    """Return what tells one state of a file from another."""
-    if path is None or not path.exists():
+def stamp_of(path: Path | None) -> tuple[int, int] | None:
+    """Return what tells one state of a file from another, None while it is not there."""
+    try:
+        found = path.stat() if path is not None else None
+    except OSError:
         return None
-    found = path.stat()
-    return found.st_mtime_ns, found.st_size
+    return (found.st_mtime_ns, found.st_size) if found is not None else None

@@ -7,7 +7,7 @@ from typing import Final
 
 from PySide6.QtCore import QSettings, Qt
 from PySide6.QtGui import QCloseEvent, QDragEnterEvent, QDropEvent, QGuiApplication, QKeyEvent
-from PySide6.QtWidgets import QApplication, QMainWindow
+from PySide6.QtWidgets import QApplication
 
 from app.document.session import Change, Session
 from app.document.view import POWERS, View, ViewChange
@@ -38,6 +38,8 @@ from app.window.recovery import Leftover, Recovery
 from app.window.samples import samples
 from app.window.status import StatusLine
 from app.window.table import action_table
+from app.window.watching import DiskWatch
+from app.window.windows import Alone, JobWindow, Others
 from app.workers.live import Answer, LiveLane
 from stackcore.errors import Fault
 
@@ -46,7 +48,7 @@ POWER_KEY: Final = "look/power"
 UNSOLVED: Final = "This stack cannot be computed; the curves show the last one that could."
 
 
-class MainWindow(QMainWindow):
+class MainWindow(JobWindow):
     """One job, drawn, tabled, computed.
 
     Parameters
@@ -61,6 +63,8 @@ class MainWindow(QMainWindow):
         Asks questions; without it the real dialogs.
     crash_net
         Tells of faults nobody caught; without it nobody does.
+    others
+        Opens other windows; without it this one is the only one.
     """
 
     def __init__(
@@ -72,8 +76,10 @@ class MainWindow(QMainWindow):
         *,
         dialogs: Dialogs | None = None,
         crash_net: CrashNet | None = None,
+        others: Others | None = None,
     ) -> None:
         super().__init__()
+        self._others: Others = others if others is not None else Alone()
         self._session, self._view, self._settings = session, view, settings
         self._net = crash_net
         self._closing = self._may_close = self._closed = False
@@ -92,14 +98,20 @@ class MainWindow(QMainWindow):
         self._recompute = Recompute(session, view, LiveLane(parent=self), self._panels.viewers, self)
         self._recent = RecentFiles(settings)
         self._dialogs: Dialogs = dialogs if dialogs is not None else QtDialogs(self)
-        self._files = Files(session, self._dialogs, self.messages, self._recent)
+        self._files = Files(session, self._dialogs, self.messages, self._recent, self._others.bring_forward)
         self._exporter = Exporter(
             lambda: session.job, self._files.suggestion, self._dialogs, self.messages.tell, csv_steps, self
         )
         self._recovery = Recovery(session, state_folder / "recovery", parent=self)
+        self._disk = DiskWatch(session, self.messages, self)
         self._actions = self._make_actions()
         self._connect()
         self._begin()
+
+    @property
+    def path(self) -> Path | None:
+        """The file of the job, or None."""
+        return self._session.path
 
     @property
     def panels(self) -> Panels:
@@ -164,16 +176,19 @@ class MainWindow(QMainWindow):
             event.ignore()
 
     def dragEnterEvent(self, event: QDragEnterEvent) -> None:
-        """Welcome one local file."""
-        if self._dropped(event) is not None:
+        """Welcome local files."""
+        if self._dropped(event):
             event.acceptProposedAction()
 
     def dropEvent(self, event: QDropEvent) -> None:
-        """Open the file that was dropped."""
-        path = self._dropped(event)
-        if path is not None:
-            event.acceptProposedAction()
-            self._files.open_path(path)
+        """Open the first file that was dropped, and every other one in a window of its own."""
+        first, *rest = self._dropped(event) or (None,)
+        if first is None:
+            return
+        event.acceptProposedAction()
+        self._files.open_path(first)
+        for path in rest:
+            self._others.open_beside(path)
 
     def keyPressEvent(self, event: QKeyEvent) -> None:
         """Dismiss the message with Esc, when nothing else wanted the key."""
@@ -220,6 +235,8 @@ class MainWindow(QMainWindow):
             markers=MarkerCommands(session, self._view, self._panels.curves.commands),
             view=view,
             help=HelpCommands(self.show_help, self._copy_diagnostics),
+            others=self._others,
+            close=self._close_window,
             quit=self._quit,
         )
         return Actions(action_table(commands), self, (self._panels.elements, self._panels.wall))
@@ -333,12 +350,18 @@ class MainWindow(QMainWindow):
         QGuiApplication.clipboard().setText(diagnostics(self._theme, log))
         self.messages.tell("Copied the diagnostics.")
 
-    def _dropped(self, event: QDropEvent) -> Path | None:
-        urls = event.mimeData().urls()
-        return Path(urls[0].toLocalFile()) if len(urls) == 1 and urls[0].isLocalFile() else None
+    @staticmethod
+    def _dropped(event: QDropEvent) -> tuple[Path, ...]:
+        return tuple(Path(url.toLocalFile()) for url in event.mimeData().urls() if url.isLocalFile())
+
+    def _close_window(self) -> None:
+        self.close()
 
     def _quit(self) -> None:
-        self.close()
+        if isinstance(self._others, Alone):
+            self.close()
+        else:
+            self._others.quit()
 
     def _permit_closing(self) -> None:
         self._may_close = True
@@ -357,4 +380,5 @@ class MainWindow(QMainWindow):
         self._recompute.close()
         self._exporter.close()
         self._files.close()
+        self._disk.close()
         self._recovery.close()

@@ -16,6 +16,7 @@ from app.look.icon import program_icon
 from app.look.settings import open_settings, state_folder
 from app.window.crash_net import CrashNet
 from app.window.main_window import MainWindow
+from app.window.windows import Windows
 
 DESKTOP_NAME: Final = "slabwright"
 SWITCH_INTERVAL: Final = 0.0005
@@ -44,13 +45,18 @@ def open_window(job: Path | None) -> int:
     state = state_folder()
     net = CrashNet(state)
     net.install()
-    window = MainWindow(Session(report=net.report), View(report=net.report), open_settings(), state, crash_net=net)
-    window.show()
-    window.offer_leftovers()
+
+    def make(windows: Windows) -> MainWindow:
+        session, view = Session(report=net.report), View(report=net.report)
+        return MainWindow(session, view, open_settings(), state, crash_net=net, others=windows)
+
+    windows = Windows(make)
+    first = windows.add()
+    assert isinstance(first, MainWindow)
+    first.offer_leftovers()
     if job is not None:
-        window.open_path(job)
+        first.open_path(job)
     status = application.exec()
     net.remove()
-    window.deleteLater()
     QCoreApplication.sendPostedEvents(None, QEvent.Type.DeferredDelete.value)
     return status

@@ -25,6 +25,14 @@ def _file(c: Commands) -> Sequence[Act]:
     menu = "&File"
     return (
         Act("file.new", menu, "&New job", c.files.new, ("Ctrl+N",), "Begin an untitled job."),
+        Act(
+            "file.window",
+            menu,
+            "New &window",
+            c.others.open_beside,
+            ("Ctrl+Shift+N",),
+            "Open another window, for a second job beside this one.",
+        ),
         Act("file.open", menu, "&Open…", c.files.open, ("Ctrl+O",), "Open a job file."),
         Act(
             "file.sample",
@@ -68,7 +76,8 @@ def _save(c: Commands) -> Sequence[Act]:
             enabled=c.exporter.idle,
             group=2,
         ),
-        Act("file.quit", menu, "&Quit", c.quit, ("Ctrl+Q",), "Close the window.", group=3),
+        Act("file.close", menu, "&Close window", c.close, ("Ctrl+W",), "Close this window.", group=3),
+        Act("file.quit", menu, "&Quit", c.quit, ("Ctrl+Q",), "Close every window.", group=3),
     )
 
 

@@ -283,7 +283,7 @@ def test_a_dropped_file_opens(bench: Bench, tmp_path: Path) -> None:
 
     url = QUrl.fromLocalFile(str(path))
     assert not enter(data())
-    assert not enter(data(url, url))
+    assert enter(data(url, url))
     assert not enter(data(QUrl("https://example.org/cover.slabjob")))
     mime = data(url)
     assert enter(mime)
