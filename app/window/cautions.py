@@ -10,11 +10,11 @@ from typing import Final
 
 from app.document.view import ViewState
 from app.series.curves import takes_long
-from app.series.shown import SHOWN
+from app.series.shown import shown
 from app.series.texts import BEYOND_PRACTICAL, PRACTICAL_DECIBELS
 from stackcore.job.resolve import Job
 from stackcore.propagation.response import Response
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import quantity_named
 
 STANDING: Final = "Infinite flat sheets, plane wave; verify by test."
 """Holds for every result and is always shown."""
@@ -155,9 +155,9 @@ def cautions(job: Job, stack: int, view: ViewState, response: Response | None) -
 
 def _deep(response: Response, quantity: str) -> bool:
     """Whether a loss that is shown is somewhere more than a real wall keeps; what is not worked out yet is not."""
-    if not SHOWN[quantity].practical or takes_long(response, quantity):
+    if not shown(quantity).practical or takes_long(response, quantity):
         return False
-    loss = QUANTITIES[quantity].values(response)
+    loss = quantity_named(quantity).values(response)
     return bool((loss[loss < float("inf")] > PRACTICAL_DECIBELS).any())
 
 

@@ -45,6 +45,8 @@ class Commands:
     session: Session
     files: Files
     exporter: Exporter
+    export_plot: Do
+    export_wall: Do
     recent: RecentFiles
     samples: tuple[Sample, ...]
     elements: ElementsPanel

@@ -3,7 +3,8 @@
 Nothing here waits: each question is given what to do with the answer, and the window lives on meanwhile.
 """
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass
 from pathlib import Path
 from typing import Final, Literal, Protocol
 
@@ -13,9 +14,30 @@ from PySide6.QtWidgets import QDialog, QFileDialog, QMessageBox, QWidget
 SaveAnswer = Literal["save", "discard", "cancel"]
 OverwriteAnswer = Literal["overwrite", "save as", "cancel"]
 
-JOBS: Final = "Slabwright jobs (*.slabjob)"
 ALL_FILES: Final = "All files (*)"
-TABLES: Final = "Comma-separated values (*.csv)"
+
+
+@dataclass(frozen=True, slots=True)
+class FileKind:
+    """A kind of file: words for people, and the suffix without its dot."""
+
+    words: str
+    suffix: str
+
+    @property
+    def filter(self) -> str:
+        """The line of a file dialog."""
+        return f"{self.words} (*.{self.suffix})"
+
+
+JOBS: Final = FileKind("Slabwright jobs", "slabjob")
+TABLES: Final = FileKind("Comma-separated values", "csv")
+PICTURES: Final = (
+    FileKind("Picture in pixels", "png"),
+    FileKind("Drawing", "svg"),
+    FileKind("Page", "pdf"),
+)
+"""What a plot or the wall can be written as."""
 
 
 class Dialogs(Protocol):
@@ -33,8 +55,13 @@ class Dialogs(Protocol):
     def pick_save(self, suggestion: Path, then: Callable[[Path], None]) -> None:
         """Ask where to save a job; overwriting is confirmed by the dialog itself."""
 
-    def pick_csv(self, suggestion: Path, then: Callable[[Path], None]) -> None:
-        """Ask where to write a CSV table; overwriting is confirmed by the dialog itself."""
+    def pick_target(
+        self, title: str, suggestion: Path, kinds: Sequence[FileKind], then: Callable[[Path], None]
+    ) -> None:
+        """Ask where to write a file of one of `kinds`; overwriting is confirmed by the dialog itself.
+
+        The path that is picked has a suffix: that of the kind chosen, unless another was typed.
+        """
 
 
 class QtDialogs:
@@ -80,26 +107,34 @@ class QtDialogs:
         """Ask for a job file to open."""
         dialog = self._files("Open a job", folder)
         dialog.setFileMode(QFileDialog.FileMode.ExistingFile)
-        dialog.setNameFilters([JOBS, ALL_FILES])
+        dialog.setNameFilters([JOBS.filter, ALL_FILES])
         dialog.fileSelected.connect(lambda name: then(Path(name)))
         dialog.open()
 
     def pick_save(self, suggestion: Path, then: Callable[[Path], None]) -> None:
         """Ask where to save a job."""
-        self._pick_target("Save the job as", suggestion, JOBS, "slabjob", then)
+        self.pick_target("Save the job as", suggestion, (JOBS,), then)
 
-    def pick_csv(self, suggestion: Path, then: Callable[[Path], None]) -> None:
-        """Ask where to write a CSV table."""
-        self._pick_target("Export CSV", suggestion, TABLES, "csv", then)
-
-    def _pick_target(
-        self, title: str, suggestion: Path, kind: str, suffix: str, then: Callable[[Path], None]
+    def pick_target(
+        self, title: str, suggestion: Path, kinds: Sequence[FileKind], then: Callable[[Path], None]
     ) -> None:
+        """Ask where to write a file; another kind chosen changes the suffix of the name."""
         dialog = self._files(title, suggestion.parent)
         dialog.setAcceptMode(QFileDialog.AcceptMode.AcceptSave)
-        dialog.setNameFilters([kind, ALL_FILES])
-        dialog.setDefaultSuffix(suffix)
+        suffixes = {kind.filter: kind.suffix for kind in kinds}
+        dialog.setNameFilters([*suffixes, ALL_FILES])
+        dialog.setDefaultSuffix(kinds[0].suffix)
         dialog.selectFile(suggestion.name)
+
+        def follow(chosen: str) -> None:
+            suffix = suffixes.get(chosen)
+            names = dialog.selectedFiles()
+            if suffix is not None:
+                dialog.setDefaultSuffix(suffix)
+                if names:
+                    dialog.selectFile(Path(names[0]).with_suffix(f".{suffix}").name)
+
+        dialog.filterSelected.connect(follow)
         dialog.fileSelected.connect(lambda name: then(Path(name)))
         dialog.open()
 

@@ -11,7 +11,7 @@ from PySide6.QtCore import QObject, Qt, QTimer, Signal, Slot
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QProgressBar, QPushButton, QWidget
 
 from app.window.crash_net import LOGGER
-from app.window.dialogs import Dialogs
+from app.window.dialogs import TABLES, Dialogs
 from stackcore.errors import Severity, SlabwrightError
 from stackcore.export import write_csv
 from stackcore.job.replacing import replacing
@@ -82,7 +82,7 @@ class Exporter(QObject):
 
     def export(self) -> None:
         """Ask for a file and begin."""
-        self._dialogs.pick_csv(self._suggestion(".csv"), self.start)
+        self._dialogs.pick_target("Export CSV", self._suggestion(".csv"), (TABLES,), self.start)
 
     def start(self, path: Path) -> None:
         """Begin to write the job as it is now; later edits do not touch it."""

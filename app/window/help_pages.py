@@ -7,7 +7,7 @@ from typing import Final
 from app.look.theme import Theme
 from app.window.cautions import ALWAYS, STANDING, Caution
 from stackcore.conventions import CONVENTIONS
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import GROUPS, QUANTITIES, ElementAbsorptance, Quantity
 
 PAGES: Final = {
     "conventions": "Conventions and definitions",
@@ -17,25 +17,38 @@ PAGES: Final = {
 }
 """Page name -> heading, in the order of the panel."""
 
-UNIT_WORDS: Final = {"dB": "decibels", "deg": "degrees", "s": "seconds"}
+UNIT_WORDS: Final = {"dB": "decibels", "deg": "degrees", "s": "seconds", "ohm": "ohm"}
 
 KeyGroup = tuple[str, Sequence[tuple[str, str]]]
 
 
 def conventions_page(theme: Theme) -> str:
-    """Return the conventions and the definition of every quantity."""
-    rows = [f"<p>{escape(text)}</p>" for text in CONVENTIONS.values()]
-    quantities = []
-    for quantity in QUANTITIES.values():
-        unit = f"In {UNIT_WORDS.get(quantity.unit, quantity.unit)}. " if quantity.unit else ""
-        symbol = f" <i>{escape(quantity.symbol)}</i>" if quantity.symbol else ""
-        quantities.append(
-            f'<p class="term"><a name="{quantity.name}"></a>{escape(quantity.label)}{symbol}</p>'
-            f"<p>{escape(quantity.definition)}<br>"
-            f'<span style="color:{theme.muted}">{escape(unit + quantity.sign)}<br>'
-            f"In tables and files: <code>{quantity.name}</code></span></p>"
-        )
-    return _page("conventions", [*rows, "<p class='heading'>Quantities</p>", *quantities])
+    """Return the conventions and the definition of every quantity, group by group."""
+    parts = [f"<p>{escape(text)}</p>" for text in CONVENTIONS.values()]
+    for group in GROUPS:
+        parts.append(f"<p class='heading'>{escape(group)}</p>")
+        members = [quantity for quantity in QUANTITIES.values() if quantity.group == group]
+        of_one = ElementAbsorptance(0).quantity("one element")
+        if of_one.group == group:
+            members.append(of_one)
+        parts += [_definition(theme, quantity) for quantity in members]
+    return _page("conventions", parts)
+
+
+def _definition(theme: Theme, quantity: Quantity) -> str:
+    unit = f"In {UNIT_WORDS.get(quantity.unit, quantity.unit)}. " if quantity.unit else ""
+    symbol = f" <i>{escape(quantity.symbol)}</i>" if quantity.symbol else ""
+    lines = [escape(unit + quantity.sign)]
+    if quantity.source:
+        lines.append(f"Defined as in {escape(quantity.source)}")
+    if quantity.exported:
+        lines.append(f"In tables and files: <code>{quantity.name}</code>")
+    name = quantity.name.partition(":")[0]
+    return (
+        f'<p class="term"><a name="{name}"></a>{escape(quantity.label)}{symbol}</p>'
+        f"<p>{escape(quantity.definition)}<br>"
+        f'<span style="color:{theme.muted}">{"<br>".join(lines)}</span></p>'
+    )
 
 
 def keyboard_page(theme: Theme, groups: Iterable[KeyGroup]) -> str:

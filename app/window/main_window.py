@@ -32,6 +32,7 @@ from app.window.layout import Arrangement
 from app.window.marking import MarkerCommands
 from app.window.messages import Choice, Message, Messages, MessageStrip
 from app.window.panels import Panels, focus_into, make_panels
+from app.window.picture_files import PictureFiles
 from app.window.recent import RecentFiles
 from app.window.recompute import Recompute
 from app.window.recovery import Leftover, Recovery
@@ -102,6 +103,7 @@ class MainWindow(JobWindow):
         self._exporter = Exporter(
             lambda: session.job, self._files.suggestion, self._dialogs, self.messages.tell, csv_steps, self
         )
+        self._pictures = PictureFiles(self._files.suggestion, self._dialogs, self.messages.tell)
         self._recovery = Recovery(session, state_folder / "recovery", parent=self)
         self._disk = DiskWatch(session, self.messages, self)
         self._actions = self._make_actions()
@@ -160,7 +162,8 @@ class MainWindow(JobWindow):
     def show_help(self, page: str) -> None:
         """Show a page of the help panel, the definitions at the quantity that is shown."""
         self._arrangement.open_beside(HELP)
-        self._panels.help.show_page(page, self._view.state.quantity if page == "conventions" else "")
+        quantity = self._view.state.quantity.partition(":")[0]  # those of single elements share a definition
+        self._panels.help.show_page(page, quantity if page == "conventions" else "")
         focus_into(self._panels.help)
 
     def closeEvent(self, event: QCloseEvent) -> None:
@@ -226,6 +229,8 @@ class MainWindow(JobWindow):
             session=session,
             files=self._files,
             exporter=self._exporter,
+            export_plot=self._export_plot,
+            export_wall=lambda: self._pictures.export("wall", self._panels.wall.picture),
             recent=self._recent,
             samples=samples(),
             elements=self._panels.elements,
@@ -353,6 +358,9 @@ class MainWindow(JobWindow):
     @staticmethod
     def _dropped(event: QDropEvent) -> tuple[Path, ...]:
         return tuple(Path(url.toLocalFile()) for url in event.mimeData().urls() if url.isLocalFile())
+
+    def _export_plot(self) -> None:
+        self._pictures.export("plot", self._panels.plot_in_hand().picture)
 
     def _close_window(self) -> None:
         self.close()

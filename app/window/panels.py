@@ -66,6 +66,15 @@ class Panels:
         work = (self.wall, self.elements, self.sweep, self.curves, self.readings)
         return (*work, *(widget for _, widget in self.beside))
 
+    def plot_in_hand(self) -> CurvesPanel:
+        """Return the plot that has the focus, else the curves."""
+        return next((plot for plot in self.plots if has_focus(plot)), self.curves)
+
+    @property
+    def plots(self) -> tuple[CurvesPanel, ...]:
+        """Every panel that can be exported as a plot."""
+        return (self.curves,)
+
     def places(self, strip: QWidget) -> Places:
         """Return who goes where."""
         return Places(strip, self.wall, self.elements, self.sweep, self.curves, self.readings)

@@ -1,10 +1,10 @@
 """Dialogs that answer by script, and small jobs to work on."""
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
 from pathlib import Path
 
-from app.window.dialogs import OverwriteAnswer, SaveAnswer
+from app.window.dialogs import FileKind, OverwriteAnswer, SaveAnswer
 from stackcore.job import Job, job_from_json
 
 
@@ -17,6 +17,7 @@ class ScriptedDialogs:
     open_paths: list[Path] = field(default_factory=list)
     save_paths: list[Path] = field(default_factory=list)
     csv_paths: list[Path] = field(default_factory=list)
+    picture_paths: list[Path] = field(default_factory=list)
     asked: list[str] = field(default_factory=list)
 
     def ask_save(self, name: str, then: Callable[[SaveAnswer], None]) -> None:
@@ -41,11 +42,14 @@ class ScriptedDialogs:
         if self.save_paths:
             then(self.save_paths.pop(0))
 
-    def pick_csv(self, suggestion: Path, then: Callable[[Path], None]) -> None:
-        """Pick the next of `csv_paths`."""
-        self.asked.append(f"csv {suggestion.name}")
-        if self.csv_paths:
-            then(self.csv_paths.pop(0))
+    def pick_target(
+        self, title: str, suggestion: Path, kinds: Sequence[FileKind], then: Callable[[Path], None]
+    ) -> None:
+        """Pick the next of `csv_paths` or `picture_paths`, as the kinds are."""
+        self.asked.append(f"{title} {suggestion.name}")
+        paths = self.csv_paths if kinds[0].suffix == "csv" else self.picture_paths
+        if paths:
+            then(paths.pop(0))
 
 
 JOB = """{

@@ -24,7 +24,7 @@ from app.window.keys import key_groups
 from stackcore import solve
 from stackcore.conventions import CONVENTIONS
 from stackcore.job import Job, job_from_json
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import GROUPS, QUANTITIES
 from tests.app.window.scripted import JOB, small_job
 
 SHIELDING = ViewState(quantity="shielding_effectiveness_dB")
@@ -97,6 +97,11 @@ def test_the_definitions_page_has_every_convention_and_quantity() -> None:
     for quantity in QUANTITIES.values():
         assert f'name="{quantity.name}"' in page
         assert quantity.label in page
+        assert quantity.source in page
+        assert (f"<code>{quantity.name}</code>" in page) == quantity.exported
+    places = [page.index(f"<p class='heading'>{group}</p>") for group in GROUPS]
+    assert places == sorted(places)
+    assert page.index('name="element_absorptance"') < places[1]
 
 
 def test_the_cautions_page_begins_with_what_is_shown_now() -> None:

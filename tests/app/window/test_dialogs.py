@@ -8,7 +8,7 @@ from PySide6.QtTest import QTest
 from PySide6.QtWidgets import QApplication, QFileDialog, QMessageBox, QWidget
 from pytestqt.qtbot import QtBot
 
-from app.window.dialogs import OverwriteAnswer, QtDialogs, SaveAnswer
+from app.window.dialogs import PICTURES, TABLES, OverwriteAnswer, QtDialogs, SaveAnswer
 
 
 @pytest.fixture
@@ -79,8 +79,25 @@ def test_a_picked_file_is_handed_on(qtbot: QtBot, parent: QWidget, tmp_path: Pat
     answer("there.slabjob")
     dialogs.pick_save(tmp_path / "new", picked.append)
     answer("new")
-    dialogs.pick_csv(tmp_path / "table.csv", picked.append)
+    dialogs.pick_target("Export CSV", tmp_path / "table.csv", (TABLES,), picked.append)
     answer("table")
     dialogs.pick_open(tmp_path, picked.append)
     answer(None)
     assert picked == [there, tmp_path / "new.slabjob", tmp_path / "table.csv"]
+
+
+def test_another_kind_of_file_changes_the_suffix(qtbot: QtBot, tmp_path: Path) -> None:
+    """Choosing a drawing instead of pixels names the file so; a name typed without a suffix gets it."""
+    parent = QWidget()
+    qtbot.addWidget(parent)
+    parent.show()
+    picked: list[Path] = []
+    QtDialogs(parent).pick_target("Export plot", tmp_path / "loss.png", PICTURES, picked.append)
+    (dialog,) = parent.findChildren(QFileDialog)
+    dialog.selectNameFilter(PICTURES[1].filter)
+    dialog.filterSelected.emit(PICTURES[1].filter)
+    assert Path(dialog.selectedFiles()[0]).name == "loss.svg"
+    dialog.selectFile("other")
+    dialog.accept()
+    qtbot.waitUntil(lambda: not parent.findChildren(QFileDialog))
+    assert picked == [tmp_path / "other.svg"]

@@ -52,7 +52,7 @@ def test_the_table_is_written_and_told(qtbot: QtBot, tmp_path: Path) -> None:
     bench = Bench(tmp_path)
     bench.exporter.export()
     qtbot.waitUntil(bench.exporter.idle)
-    assert bench.dialogs.asked == ["csv cover.csv"]
+    assert bench.dialogs.asked == ["Export CSV cover.csv"]
     assert bench.told == [("Exported table.csv.", "note")]
     lines = bench.target.read_bytes().decode("utf-8").split("\r\n")
     assert lines[0] == ",".join(CSV_HEADER)
