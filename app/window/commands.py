@@ -45,6 +45,7 @@ class Commands:
     session: Session
     files: Files
     exporter: Exporter
+    import_material: Do
     export_plot: Do
     export_wall: Do
     recent: RecentFiles

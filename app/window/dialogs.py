@@ -52,6 +52,11 @@ class Dialogs(Protocol):
     def pick_open(self, folder: Path, then: Callable[[Path], None]) -> None:
         """Ask for a job file to open."""
 
+    def pick_source(
+        self, title: str, folder: Path, kinds: Sequence[FileKind], then: Callable[[Path], None]
+    ) -> None:
+        """Ask for a file of one of `kinds` to be read."""
+
     def pick_save(self, suggestion: Path, then: Callable[[Path], None]) -> None:
         """Ask where to save a job; overwriting is confirmed by the dialog itself."""
 
@@ -105,9 +110,16 @@ class QtDialogs:
 
     def pick_open(self, folder: Path, then: Callable[[Path], None]) -> None:
         """Ask for a job file to open."""
-        dialog = self._files("Open a job", folder)
+        self.pick_source("Open a job", folder, (JOBS,), then)
+
+    def pick_source(
+        self, title: str, folder: Path, kinds: Sequence[FileKind], then: Callable[[Path], None]
+    ) -> None:
+        """Ask for a file to be read; all kinds are shown together first."""
+        dialog = self._files(title, folder)
         dialog.setFileMode(QFileDialog.FileMode.ExistingFile)
-        dialog.setNameFilters([JOBS.filter, ALL_FILES])
+        together = " ".join(f"*.{kind.suffix}" for kind in kinds)
+        dialog.setNameFilters([f"{kinds[0].words if len(kinds) == 1 else 'Data'} ({together})", ALL_FILES])
         dialog.fileSelected.connect(lambda name: then(Path(name)))
         dialog.open()
 

@@ -30,6 +30,7 @@ from app.window.help_panel import HelpPanel
 from app.window.keys import key_groups
 from app.window.layout import Arrangement
 from app.window.marking import MarkerCommands
+from app.window.material_files import MaterialFiles
 from app.window.messages import Choice, Message, Messages, MessageStrip
 from app.window.panels import Panels, focus_into, make_panels
 from app.window.picture_files import PictureFiles
@@ -104,6 +105,9 @@ class MainWindow(JobWindow):
             lambda: session.job, self._files.suggestion, self._dialogs, self.messages.tell, csv_steps, self
         )
         self._pictures = PictureFiles(self._files.suggestion, self._dialogs, self.messages.tell)
+        self._material_files = MaterialFiles(
+            lambda: self._recent.folder, self._dialogs, self.messages.tell, self._show_columns
+        )
         self._recovery = Recovery(session, state_folder / "recovery", parent=self)
         self._disk = DiskWatch(session, self.messages, self)
         self._actions = self._make_actions()
@@ -184,13 +188,17 @@ class MainWindow(JobWindow):
             event.acceptProposedAction()
 
     def dropEvent(self, event: QDropEvent) -> None:
-        """Open the first file that was dropped, and every other one in a window of its own."""
+        """Open the first job that was dropped, others in windows of their own, and show measured data."""
         first, *rest = self._dropped(event) or (None,)
         if first is None:
             return
         event.acceptProposedAction()
-        self._files.open_path(first)
-        for path in rest:
+        for path in (path for path in (first, *rest) if self._material_files.takes(path)):
+            self._material_files.open(path)
+        jobs = [path for path in (first, *rest) if not self._material_files.takes(path)]
+        if jobs:
+            self._files.open_path(jobs[0])
+        for path in jobs[1:]:
             self._others.open_beside(path)
 
     def keyPressEvent(self, event: QKeyEvent) -> None:
@@ -229,6 +237,7 @@ class MainWindow(JobWindow):
             session=session,
             files=self._files,
             exporter=self._exporter,
+            import_material=self._material_files.pick,
             export_plot=self._export_plot,
             export_wall=lambda: self._pictures.export("wall", self._panels.wall.picture),
             recent=self._recent,
@@ -358,6 +367,10 @@ class MainWindow(JobWindow):
     @staticmethod
     def _dropped(event: QDropEvent) -> tuple[Path, ...]:
         return tuple(Path(url.toLocalFile()) for url in event.mimeData().urls() if url.isLocalFile())
+
+    def _show_columns(self, file: str, text: str) -> None:
+        self._arrangement.open_beside(MATERIAL_DATA)
+        self._panels.material_data.editor.page.open_import(file, text)
 
     def _export_plot(self) -> None:
         self._pictures.export("plot", self._panels.plot_in_hand().picture)

@@ -116,6 +116,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
     material_data = MaterialData(session, view, theme, tell)
     materials.picked.connect(material_data.show_picks)
     material_data.editor.page.kept.connect(lambda: materials.library.reload(read_library()))
+    material_data.editor.page.imported.connect(materials.show_material)
     material_data.show_picks(materials.picks, materials.current_pick)
     return Panels(
         wall=WallPanel(session, view, theme, tell),

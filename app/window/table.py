@@ -43,6 +43,14 @@ def _file(c: Commands) -> Sequence[Act]:
             entries=lambda: sample_entries(c),
         ),
         Act(
+            "file.import_material",
+            menu,
+            "&Import measured material…",
+            c.import_material,
+            ("Ctrl+Shift+O",),
+            "Read columns of measured data from a file, with a preview, as a new material of the job.",
+        ),
+        Act(
             "file.recent",
             menu,
             "Open &recent",

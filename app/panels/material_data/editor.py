@@ -3,6 +3,7 @@
 import re
 import unicodedata
 from collections.abc import Callable
+from pathlib import PurePath
 from typing import Final
 
 from PySide6.QtCore import Qt, Signal
@@ -12,6 +13,7 @@ from PySide6.QtWidgets import QHBoxLayout, QLabel, QScrollArea, QToolButton, QVB
 from app.document import edits
 from app.document.document import material_cell
 from app.document.edit import Edit
+from app.document.library import ALWAYS_DEFINED, PERFECT_METAL, free_name
 from app.document.material_cells import model_of, model_table
 from app.document.session import Change, Session
 from app.document.view import View
@@ -34,6 +36,7 @@ Tell = Callable[[str, Severity], None]
 
 NOTHING: Final = "Choose a material of this job in the panel Materials: its constants can be edited here."
 LOOKED_AT: Final = "An entry of the library: use it in this job to change its constants."
+IMPORTED: Final = "The columns of this file become a new material of the job."
 KEEP_TIP: Final = "Write this material into your own library, to be used in other jobs."
 TABLE: Final = "tabulated"
 ROWS: Final = "rows"
@@ -44,6 +47,8 @@ class EditorPage(QWidget):
 
     kept = Signal()
     """The material was written into the user's own library."""
+    imported = Signal(str)
+    """A material was made of measured columns: its name."""
 
     def __init__(
         self, session: Session, view: View, theme: Theme, tell: Tell, parent: QWidget | None = None
@@ -51,6 +56,7 @@ class EditorPage(QWidget):
         super().__init__(parent)
         self._session, self._view, self._theme, self._tell = session, view, theme, tell
         self._pick = Pick()
+        self._import = ""
         self.title, self.about, self.formula = heading("", self), words("", self), words("", self)
         self.model = QuietChoice(theme, "Model", "How ε and μ follow from the constants.", self)
         for name, model in model_table().items():
@@ -78,6 +84,7 @@ class EditorPage(QWidget):
         """Show this material."""
         if pick != self._pick:
             self._pick = pick
+            self._import = ""
             self.preview.hide()
             self._show()
 
@@ -112,15 +119,17 @@ class EditorPage(QWidget):
         rows = QVBoxLayout(self._rows)
         rows.setContentsMargins(0, 0, 0, 0)
         rows.setSpacing(2)
+        self._deeds = QWidget(self._rows)
         line = buttons(
-            self._rows,
+            self._deeds,
             ("Add row", "Add a row behind the current one (Insert).", lambda: self._command("add")),
             ("Remove row", "Remove the current row (Delete).", lambda: self._command("remove")),
             ("Paste columns…", "Read columns of measured data, with a preview (Ctrl+V).", self.open_preview),
         )
-        self._paste = self._rows.findChildren(QToolButton)[-1]
+        self._paste = self._deeds.findChildren(QToolButton)[-1]
         line.addStretch(1)
-        rows.addLayout(line)
+        self._deeds.setLayout(line)
+        rows.addWidget(self._deeds)
         rows.addWidget(self.table)
         rows.addWidget(self.preview)
         self.preview.hide()
@@ -144,7 +153,7 @@ class EditorPage(QWidget):
 
     def _show(self) -> None:
         document, name = self._session.document, self.name
-        own = bool(name)
+        own = bool(name) and not self._import
         self.model.setVisible(own)
         # While columns are pasted they have the room: what they will replace, and the rest, comes back after.
         pasting = not self.preview.isHidden()
@@ -167,10 +176,14 @@ class EditorPage(QWidget):
         lists = lists_of(document, name)
         self.terms.show_list(name, lists[0] if lists else None)
         self._rows.setVisible(bool(lists))
+        self._deeds.show()
         self._paste.setVisible(model.name == TABLE)
         self._show_notes()
 
     def _show_other(self) -> None:
+        if self._import:
+            self._show_import()
+            return
         entry = self._pick.entry
         self.title.setText(entry.label if entry else "")
         self.title.setVisible(True)
@@ -178,6 +191,15 @@ class EditorPage(QWidget):
         self.formula.hide()
         self._rows.hide()
         self.notes.hide()
+        self.terms.show_list("", None)
+
+    def _show_import(self) -> None:
+        self.title.setText(self._import)
+        _say(self.about, IMPORTED)
+        self.formula.hide()
+        self.notes.hide()
+        self._rows.show()
+        self._deeds.hide()
         self.terms.show_list("", None)
 
     def _show_notes(self) -> None:
@@ -216,12 +238,31 @@ class EditorPage(QWidget):
         self.preview.paste(text)
         self.preview.setFocus(Qt.FocusReason.OtherFocusReason)
 
+    def open_import(self, file: str, text: str) -> None:
+        """Show the columns of a file, to become a new material of the job."""
+        self._import = file
+        self.open_preview(text)
+
     def _take_rows(self, rows: tuple[Constants, ...]) -> None:
-        if self._apply(edits.set_constant(self.name, ROWS, rows)):
+        if self._import:
+            self._take_material(rows)
+        elif self._apply(edits.set_constant(self.name, ROWS, rows)):
             self._tell(f"{self.name} now holds {len(rows)} rows.", "note")
             self._close_preview()
 
+    def _take_material(self, rows: tuple[Constants, ...]) -> None:
+        file = self._import
+        taken = [*ALWAYS_DEFINED, PERFECT_METAL, *(one.name for one in self._session.record.materials)]
+        name = free_name(PurePath(file).stem, taken)
+        source = f"Measured data, file {file}"
+        material = MaterialRecord(name, model=TABLE, constants=Constants(rows=rows), source=source)
+        if self._apply(edits.add_material(material)):
+            self._tell(f"{name} holds {len(rows)} rows of {file}.", "note")
+            self._close_preview()
+            self.imported.emit(name)
+
     def _close_preview(self) -> None:
+        self._import = ""
         self.preview.hide()
         self._show()
         self.table.setFocus(Qt.FocusReason.OtherFocusReason)

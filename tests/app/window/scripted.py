@@ -17,6 +17,7 @@ class ScriptedDialogs:
     open_paths: list[Path] = field(default_factory=list)
     save_paths: list[Path] = field(default_factory=list)
     csv_paths: list[Path] = field(default_factory=list)
+    source_paths: list[Path] = field(default_factory=list)
     picture_paths: list[Path] = field(default_factory=list)
     asked: list[str] = field(default_factory=list)
 
@@ -35,6 +36,14 @@ class ScriptedDialogs:
         self.asked.append(f"open in {folder.name}")
         if self.open_paths:
             then(self.open_paths.pop(0))
+
+    def pick_source(
+        self, title: str, folder: Path, kinds: Sequence[FileKind], then: Callable[[Path], None]
+    ) -> None:
+        """Pick the next of `source_paths`."""
+        self.asked.append(f"{title} in {folder.name}")
+        if self.source_paths:
+            then(self.source_paths.pop(0))
 
     def pick_save(self, suggestion: Path, then: Callable[[Path], None]) -> None:
         """Pick the next of `save_paths`."""
