@@ -14,22 +14,27 @@ from stackcore.job import Job, read_job, write_job
 from stackcore.media.base import AbstractMedium, Constitutive, FrequencyRange, Provenance
 from stackcore.media.conductor import ConductorMedium
 from stackcore.media.constant import VACUUM, ConstantMedium
+from stackcore.polarizations import CIRCULAR, TE, TM, Polarization, polarization, tilted
 from stackcore.propagation import Response, solve
-from stackcore.quantities import QUANTITIES, Quantity
+from stackcore.quantities import QUANTITIES, ElementAbsorptance, Quantity
 from stackcore.sheets.base import AbstractSheet
 from stackcore.sheets.series import SeriesSheet
 from stackcore.stack import METAL, Layer, SheetPlacement, Stack
 
 __all__ = [
+    "CIRCULAR",
     "CONVENTIONS",
     "METAL",
     "QUANTITIES",
+    "TE",
+    "TM",
     "VACUUM",
     "AbstractMedium",
     "AbstractSheet",
     "ConductorMedium",
     "ConstantMedium",
     "Constitutive",
+    "ElementAbsorptance",
     "Fault",
     "FrequencyRange",
     "InputError",
@@ -37,6 +42,7 @@ __all__ = [
     "JobError",
     "Layer",
     "LibraryError",
+    "Polarization",
     "Provenance",
     "Quantity",
     "Response",
@@ -46,7 +52,9 @@ __all__ = [
     "Stack",
     "StackError",
     "UnitError",
+    "polarization",
     "read_job",
     "solve",
+    "tilted",
     "write_job",
 ]

@@ -7,9 +7,9 @@ from typing import Final, Literal, TypedDict, Unpack, get_args
 import numpy as np
 
 from app.document.listeners import Listeners, Report
-from stackcore.conventions import POLARIZATIONS
 from stackcore.job.records import SweepRecord
-from stackcore.quantities import QUANTITIES
+from stackcore.polarizations import TE, TM, Polarization, polarization
+from stackcore.quantities import QUANTITIES, element_absorptance
 
 Power = Literal["fraction", "percent", "decibels"]
 """How a fraction of the incident power is shown: as it is, times 100, or as 10 log10 of it."""
@@ -24,13 +24,13 @@ class ViewState:
     Parameters
     ----------
     quantity
-        What the curves show: a key of `stackcore.quantities.QUANTITIES`, which is a CSV column name.
+        What the curves show: the name of a quantity of `stackcore.quantities`.
     power
         How fractions of power are shown; quantities that are no such fraction ignore it.
     log_frequency
         Draw the frequency axis logarithmically.
     polarizations
-        Which curves are shown, of TE and TM.
+        Which curves are shown: keys of `stackcore.polarizations`, in the order TE, TM, circular, tilts.
     markers
         Frequencies in Hz, in the order they were made.
     active_marker
@@ -52,7 +52,7 @@ class ViewState:
     quantity: str = "transmittance"
     power: Power = "fraction"
     log_frequency: bool = False
-    polarizations: tuple[str, ...] = POLARIZATIONS
+    polarizations: tuple[str, ...] = (TE.key, TM.key)
     markers: tuple[float, ...] = ()
     active_marker: int = 0
     active_angle: int = 0
@@ -60,14 +60,17 @@ class ViewState:
     worst_shown: bool = True
 
     def __post_init__(self) -> None:
-        if self.quantity not in QUANTITIES:
+        if self.quantity not in QUANTITIES and element_absorptance(self.quantity) is None:
             raise ValueError(f"no quantity {self.quantity!r}; one of {', '.join(QUANTITIES)}")
         if self.power not in POWERS:
             raise ValueError(f"no way {self.power!r} to show power; one of {', '.join(POWERS)}")
-        if not self.polarizations or not {*self.polarizations, self.active_polarization} <= {*POLARIZATIONS}:
-            raise ValueError(f"polarizations {self.polarizations}; one or both of {POLARIZATIONS}")
+        if not self.polarizations:
+            raise ValueError("polarizations (); one or more of TE, TM, circular and a tilt")
         if not all(np.isfinite(marker) and marker > 0 for marker in self.markers):
             raise ValueError(f"markers {self.markers} must be positive frequencies in Hz")
+        shown = sorted({polarization(key) for key in self.polarizations}, key=_place)
+        object.__setattr__(self, "polarizations", tuple(wave.key for wave in shown))
+        object.__setattr__(self, "active_polarization", polarization(self.active_polarization).key)
         object.__setattr__(self, "active_marker", min(max(self.active_marker, 0), max(len(self.markers) - 1, 0)))
         object.__setattr__(self, "active_angle", max(self.active_angle, 0))
 
@@ -95,6 +98,11 @@ class ViewState:
         active = kept.index(inside[self.active_marker]) if kept else 0
         angle = min(self.active_angle, len(sweep.angles()) - 1)
         return replace(self, markers=kept, active_marker=active, active_angle=angle)
+
+
+def _place(wave: Polarization) -> tuple[int, float]:
+    """Return where a polarization stands among those shown."""
+    return ("TE", "TM", "circular", "tilted").index(wave.kind), wave.tilt
 
 
 @dataclass(frozen=True, slots=True)

@@ -24,6 +24,8 @@ GRAPHICS: Final = 3.1
 
 SOLID: Final[tuple[float, ...]] = ()
 DASHED: Final[tuple[float, ...]] = (6.0, 4.0)
+DASH_DOT: Final[tuple[float, ...]] = (8.0, 3.0, 2.0, 3.0)
+DASH_DOT_DOT: Final[tuple[float, ...]] = (7.0, 2.5, 2.0, 2.5, 2.0, 2.5)
 
 
 @dataclass(frozen=True, slots=True)
@@ -137,17 +139,32 @@ DARK: Final = Theme(
 THEMES: Final[dict[str, Theme]] = {"light": LIGHT, "dark": DARK}
 
 
+_REFLECTED: Final = {
+    "reflectance",
+    "return_loss_dB",
+    "standing_wave_ratio",
+    "reflection_real",
+    "reflection_imaginary",
+    "input_resistance_ohm",
+    "input_reactance_ohm",
+    "input_impedance_ohm",
+    "copolar_reflectance_dB",
+    "crosspolar_reflectance_dB",
+    "reflected_axial_ratio_dB",
+}
+
+
 def hue(theme: Theme, quantity: str) -> str:
     """Return the colour that stands for a quantity, whatever the angle.
 
     Parameters
     ----------
     quantity
-        A name of `stackcore.quantities.QUANTITIES`; quantities that say the same of the wave share a hue.
+        The name of a quantity of `stackcore.quantities`; quantities that say the same of the wave share a hue.
     """
-    if quantity == "reflection_phase_deg":
+    if quantity in {"reflection_phase_deg", "reflection_phase_difference_deg"}:
         return theme.reflection_phase
-    if quantity == "transmission_phase_deg":
+    if quantity in {"transmission_phase_deg", "transmission_phase_difference_deg"}:
         return theme.transmission_phase
     if quantity == "insertion_phase_delay_deg":
         return theme.delay
@@ -155,9 +172,9 @@ def hue(theme: Theme, quantity: str) -> str:
         return theme.group_delay
     if quantity == "shielding_effectiveness_dB":
         return theme.shielding
-    if quantity in {"reflectance", "return_loss_dB"}:
+    if quantity in _REFLECTED:
         return theme.reflection
-    if quantity == "absorptance":
+    if quantity.startswith(("absorptance", "element_absorptance")):
         return theme.absorption
     return theme.transmission
 
@@ -195,8 +212,31 @@ def label_colour(theme: Theme, colour: str) -> str:
 
 
 def dashes(polarization: str) -> tuple[float, ...]:
-    """Return the dash pattern of a polarization in pen widths; empty means solid (TE), TM is dashed."""
-    return DASHED if polarization == "TM" else SOLID
+    """Return the dash pattern of a polarization in pen widths.
+
+    Empty means solid (TE); TM is dashed, circular a dash and a dot, tilted a dash and two dots. Dots alone are left
+    to curves beyond the data of a material.
+
+    Parameters
+    ----------
+    polarization
+        A key of `stackcore.polarizations`.
+    """
+    return _DASHES.get(polarization, DASH_DOT_DOT)
+
+
+def line_style(polarization: str) -> str:
+    """Return the word for the line style of a polarization: ``solid``, ``dashed``, ``dash and dot``."""
+    return _STYLE_WORDS[dashes(polarization)]
+
+
+_DASHES: Final = {"TE": SOLID, "TM": DASHED, "circular": DASH_DOT}
+_STYLE_WORDS: Final = {
+    SOLID: "solid",
+    DASHED: "dashed",
+    DASH_DOT: "dash and dot",
+    DASH_DOT_DOT: "dash and two dots",
+}
 
 
 @dataclass(frozen=True, slots=True)

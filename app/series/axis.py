@@ -6,9 +6,9 @@ from typing import Final
 import numpy as np
 
 from app.document.view import Power
-from app.series.shown import SHOWN, shown_unit
+from app.series.shown import shown, shown_unit
 from stackcore.media.base import FloatArray
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import quantity_named
 
 _FREQUENCY_UNITS: Final = (
     (1e15, "PHz"),
@@ -65,10 +65,10 @@ def quantity_axis(quantity: str, frequency: FloatArray, *, power: Power = "fract
     'Insertion loss, dB'
     """
     unit, factor = shown_unit(quantity, power=power, frequency=frequency)
-    label = QUANTITIES[quantity].label
+    label = quantity_named(quantity).label
     return Axis(f"{label}, {unit}" if unit else label, unit, factor)
 
 
 def is_power(quantity: str) -> bool:
     """Return whether `quantity` is a fraction of power, which can also be shown in per cent and in decibels."""
-    return SHOWN[quantity].fraction
+    return shown(quantity).fraction

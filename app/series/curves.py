@@ -5,12 +5,12 @@ from dataclasses import dataclass
 import numpy as np
 
 from app.document.view import ViewState
-from app.series.shown import SHOWN, shown_unit, shown_values
+from app.series.shown import shown, shown_unit, shown_values
 from app.series.validity import Doubt, Mask, doubts_of, held_by_all
-from stackcore.conventions import POLARIZATIONS
 from stackcore.media.base import FloatArray
+from stackcore.polarizations import Polarization, polarization
 from stackcore.propagation import Response
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import quantity_named
 
 
 @dataclass(frozen=True, slots=True)
@@ -28,11 +28,11 @@ class Curve:
     Parameters
     ----------
     quantity
-        CSV column name.
+        Name of the quantity.
     label
-        Words for the end of the line: ``TE 30°``.
+        Words for the end of the line: ``TE 30°``, ``Circular 30°``, ``45° tilt 30°``.
     polarization
-        ``TE`` or ``TM``.
+        Key of `stackcore.polarizations`: ``TE``, ``TM``, ``circular``, ``tilt 45 deg``.
     angle
         In rad.
     angle_rank, angle_count
@@ -77,7 +77,7 @@ class Curve:
 def curves_of(
     response: Response, view_state: ViewState, *, unit_from: FloatArray | None = None
 ) -> tuple[Curve, ...]:
-    """Return the curves that `view_state` asks for, angle by angle, TE before TM.
+    """Return the curves that `view_state` asks for, angle by angle, the polarizations in its order.
 
     Reflectance, transmittance and absorptance come as the view shows fractions of power;
     group delay comes in the unit of `app.series.shown` for the frequencies `unit_from`, by default the
@@ -86,31 +86,34 @@ def curves_of(
     quantity = view_state.quantity
     frequency = response.frequency if unit_from is None else unit_from
     unit, factor = shown_unit(quantity, power=view_state.power, frequency=frequency)
-    values = shown_values(quantity, QUANTITIES[quantity].values(response), power=view_state.power, factor=factor)
+    row = quantity_named(quantity)
+    waves = [polarization(key) for key in view_state.polarizations]
+    values = [
+        shown_values(quantity, row.of(response, wave), power=view_state.power, factor=factor) for wave in waves
+    ]
     ranks = np.argsort(np.argsort(response.angle, kind="stable"), kind="stable")
     doubts = doubts_of(response.stack, response.frequency)
     return tuple(
-        _curve(quantity, polarization, response, values, unit, doubts, rank=int(ranks[index]), index=index)
+        _curve(quantity, wave, response, column, unit, doubts, rank=int(ranks[index]), index=index)
         for index in range(len(response.angle))
-        for polarization in POLARIZATIONS
-        if polarization in view_state.polarizations
+        for wave, column in zip(waves, values, strict=True)
     )
 
 
-def curve_label(polarization: str, angle: float) -> str:
+def curve_label(key: str, angle: float) -> str:
     """Return the words for a curve: its polarization and its angle (rad) in degrees.
 
     Examples
     --------
-    >>> curve_label("TM", np.radians(22.5))
-    'TM 22.5°'
+    >>> curve_label("TM", np.radians(22.5)), curve_label("tilt 45 deg", np.radians(30))
+    ('TM 22.5°', '45° tilt 30°')
     """
-    return f"{polarization} {float(f'{np.degrees(angle):.6g}'):g}°"
+    return f"{polarization(key).label} {float(f'{np.degrees(angle):.6g}'):g}°"
 
 
 def _curve(
     quantity: str,
-    polarization: str,
+    wave: Polarization,
     response: Response,
     values: FloatArray,
     unit: str,
@@ -120,14 +123,14 @@ def _curve(
     index: int,
 ) -> Curve:
     x = np.asarray(response.frequency, dtype=np.float64)
-    raw = values[:, index, POLARIZATIONS.index(polarization)]
+    raw = values[:, index]
     finite = np.isfinite(raw)
     worst, infinite = _worst(quantity, x, raw)
     angle = float(response.angle[index])
     return Curve(
         quantity,
-        curve_label(polarization, angle),
-        polarization,
+        curve_label(wave.key, angle),
+        wave.key,
         angle,
         rank,
         len(response.angle),
@@ -145,7 +148,7 @@ def _curve(
 
 def _worst(quantity: str, x: FloatArray, raw: FloatArray) -> tuple[Point | None, float | None]:
     """Return the worst finite point, or else the frequency at which the worst value is infinite."""
-    end = SHOWN[quantity].worst
+    end = shown(quantity).worst
     known = ~np.isnan(raw)
     if end is None or not known.any():
         return None, None
@@ -164,4 +167,4 @@ LONG: int = 20_000
 def takes_long(response: Response, quantity: str) -> bool:
     """Return whether `quantity` of `response` is not worked out yet and would keep the window waiting."""
     points = response.frequency.size * response.angle.size
-    return points > LONG and not response.knows(quantity)
+    return points > LONG and not quantity_named(quantity).ready(response)

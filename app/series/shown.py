@@ -7,7 +7,7 @@ import numpy as np
 
 from app.document.view import Power
 from stackcore.media.base import FloatArray
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import element_absorptance, quantity_named
 
 
 @dataclass(frozen=True, slots=True)
@@ -43,14 +43,47 @@ SHOWN: Final[dict[str, Shown]] = {
     "transmission_phase_deg": Shown(decimals=2),
     "insertion_phase_delay_deg": Shown(decimals=2),
     "group_delay_s": Shown(),
+    "standing_wave_ratio": Shown("high"),
+    "reflection_real": Shown(),
+    "reflection_imaginary": Shown(),
+    "transmission_real": Shown(),
+    "transmission_imaginary": Shown(),
+    "transmission_magnitude_dB": Shown("low", decimals=3),
+    "input_resistance_ohm": Shown(),
+    "input_reactance_ohm": Shown(),
+    "input_impedance_ohm": Shown(),
+    "copolar_transmittance_dB": Shown("low", decimals=3),
+    "crosspolar_transmittance_dB": Shown("high", decimals=3),
+    "copolar_reflectance_dB": Shown("high", decimals=3),
+    "crosspolar_reflectance_dB": Shown("high", decimals=3),
+    "cross_polar_discrimination_dB": Shown("low", decimals=3),
+    "transmitted_axial_ratio_dB": Shown("high", decimals=3),
+    "reflected_axial_ratio_dB": Shown("high", decimals=3),
+    "transmission_phase_difference_deg": Shown(decimals=2),
+    "reflection_phase_difference_deg": Shown(decimals=2),
 }
-"""Name of the quantity (a CSV column) -> how it is shown."""
+"""Name of the quantity -> how it is shown."""
+
+_ELEMENT: Final = Shown("high", fraction=True)
+
+
+def shown(quantity: str) -> Shown:
+    """Return how a quantity is shown, also one that needs an element.
+
+    Examples
+    --------
+    >>> shown("element_absorptance:2").fraction
+    True
+    """
+    return SHOWN[quantity] if element_absorptance(quantity) is None else _ELEMENT
+
 
 _POWER_UNITS: Final[dict[Power, tuple[str, float]]] = {
     "fraction": ("", 1.0),
     "percent": ("%", 100.0),
     "decibels": ("dB", 1.0),
 }
+_SIGNS: Final = {"ohm": "Ω"}
 _DELAY_UNITS: Final = ((1e12, "fs", 1e15), (1e9, "ps", 1e12), (1e6, "ns", 1e9), (0.0, "µs", 1e6))
 
 
@@ -65,17 +98,18 @@ def shown_unit(quantity: str, *, power: Power, frequency: FloatArray) -> tuple[s
     >>> shown_unit("group_delay_s", power="fraction", frequency=np.array([8e9, 12e9]))
     ('ps', 1000000000000.0)
     """
-    if SHOWN[quantity].fraction:
+    if shown(quantity).fraction:
         return _POWER_UNITS[power]
-    if QUANTITIES[quantity].unit == "s":
+    unit = quantity_named(quantity).unit
+    if unit == "s":
         top = float(np.max(frequency))
         return next((unit, factor) for least, unit, factor in _DELAY_UNITS if top >= least)
-    return QUANTITIES[quantity].unit, 1.0
+    return _SIGNS.get(unit, unit), 1.0
 
 
 def shown_values(quantity: str, values: FloatArray, *, power: Power, factor: float) -> FloatArray:
     """Return `values` in the unit on screen; a fraction of 0 in decibels is minus infinity."""
-    if power == "decibels" and SHOWN[quantity].fraction:
+    if power == "decibels" and shown(quantity).fraction:
         with np.errstate(divide="ignore"):
             # A fraction is below 0 only by rounding.
             return np.asarray(10 * np.log10(np.maximum(values, 0.0)))

@@ -7,7 +7,7 @@ wherever it stands.
 import math
 from typing import Final
 
-from app.series.shown import SHOWN
+from app.series.shown import shown
 from stackcore.units import Dimension, format_value
 
 PRACTICAL_DECIBELS: Final = 400.0
@@ -50,8 +50,7 @@ def number_text(quantity: str, value: float, unit: str = "") -> str:
         return "–"
     if math.isinf(value):
         return "∞" if value > 0 else f"{MINUS}∞"
-    shown = SHOWN[quantity]
-    decimals = 3 if unit == "dB" else shown.decimals
+    decimals = 3 if unit == "dB" else shown(quantity).decimals
     text = _significant(value, DIGITS) if decimals is None else _fixed(value, decimals)
     return text.replace("-", MINUS)
 
@@ -83,7 +82,7 @@ def exact_text(value: float, unit: str) -> str:
 
 def beyond_practical(quantity: str, value: float) -> bool:
     """Return whether `value` is more than any wall with edges keeps, though still finite."""
-    return SHOWN[quantity].practical and PRACTICAL_DECIBELS < value < math.inf
+    return shown(quantity).practical and PRACTICAL_DECIBELS < value < math.inf
 
 
 def unit_suffix(unit: str) -> str:

@@ -20,7 +20,7 @@ from stackcore.errors import Fault, InputError, SlabwrightError
 from stackcore.job import Job
 from stackcore.media.base import FloatArray
 from stackcore.propagation import Response, solve
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import quantity_named
 from stackcore.stack import Stack
 
 Solve = Callable[[Stack, FloatArray, FloatArray], Response]
@@ -43,7 +43,7 @@ class Question:
     markers
         Frequencies in Hz of all markers, for the readings.
     quantity
-        CSV column that will be shown, worked out beforehand; empty for none.
+        What will be shown, by name, worked out beforehand; empty for none.
     """
 
     number: int
@@ -282,6 +282,6 @@ def _prepare(question: Question, response: Response, at_marker: Response, at_mar
     """Work out what the panels will ask of the responses, which compute a quantity when it is first asked for."""
     for part in (response, at_markers):
         if question.quantity and part is not None:
-            QUANTITIES[question.quantity].values(part)
+            quantity_named(question.quantity).values(part)
     for name in ("element_absorptance", "absorptance", "reflectance", "transmittance"):
         getattr(at_marker, name)

@@ -21,7 +21,9 @@ from stackcore.quantities import QUANTITIES
 from stackcore.stack import Stack
 from stackcore.units import degrees_of
 
-CSV_HEADER: Final = ("stack", "frequency_Hz", "angle_deg", "polarization", *QUANTITIES)
+_COLUMNS: Final = tuple(quantity for quantity in QUANTITIES.values() if quantity.exported)
+
+CSV_HEADER: Final = ("stack", "frequency_Hz", "angle_deg", "polarization", *(column.name for column in _COLUMNS))
 """Names of the columns in order."""
 
 LINE_END: Final = "\r\n"
@@ -67,7 +69,7 @@ def csv_rows(response: Response, name: str | None = None) -> str:
     # Two quantities that are one array are written as text once.
     texts: dict[int, list[str]] = {}
     columns = []
-    for quantity in QUANTITIES.values():
+    for quantity in _COLUMNS:
         values = quantity.values(response)
         if id(values) not in texts:
             texts[id(values)] = list(map(repr, np.ravel(values).tolist()))

@@ -14,7 +14,7 @@ from stackcore.conventions import POLARIZATIONS
 from stackcore.export.sweep_csv import LINE_END, text_cell
 from stackcore.job import Job
 from stackcore.propagation import solve
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import quantity_named
 from stackcore.stack import Stack
 from stackcore.units import degrees_of
 
@@ -42,7 +42,7 @@ def write_wide_csv(
     stream
         Opened with ``encoding="utf-8", newline=""``.
     quantity
-        Key of `stackcore.quantities.QUANTITIES`.
+        Name of a quantity of `stackcore.quantities`.
     stacks
         In the order of the columns; None means all of the job.
 
@@ -65,7 +65,7 @@ def write_wide_csv(
     >>> stream.getvalue().splitlines()
     ['frequency_Hz,A TE 0 deg transmittance,A TM 0 deg transmittance', '10000000000.0,1.0,1.0']
     """
-    values = QUANTITIES[quantity].values
+    values = quantity_named(quantity).values
     chosen = job.stacks if stacks is None else tuple(stacks)
     stream.write(",".join(map(text_cell, wide_header(job, quantity, chosen))) + LINE_END)
     frequencies, angles = job.sweep.frequencies(), job.sweep.angles()

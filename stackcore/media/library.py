@@ -172,22 +172,26 @@ class Library:
         return Fault("", f"no material {key!r} in the library{hint}", allowed)
 
     def search(self, words: str) -> tuple[LibraryEntry, ...]:
-        """Return the entries that hold every one of `words`, those that hold them in their names first.
+        """Return the entries that hold every one of `words`: those called so, then by name and by text.
 
         Upper and lower case are the same; no words find everything. Names are the key, the label and the
-        further words; the label of the family, the note and the source are looked through as well.
+        further words; the label of the family, the note and the source are looked through as well. Of entries
+        with one of their names just as given, those with the shorter key come first: the plain material before
+        its kinds.
         """
         wanted = words.casefold().split()
-        by_name, by_text = [], []
+        called, by_name, by_text = [], [], []
         for entry in self.entries:
             names = " ".join((entry.key, entry.label, *entry.also)).casefold()
             family = self.family(entry.family).label
             text = f"{names} {family} {entry.provenance.note} {entry.provenance.source}".casefold()
-            if all(word in names for word in wanted):
+            if wanted and " ".join(wanted) in (name.casefold() for name in (entry.name, entry.label, *entry.also)):
+                called.append(entry)
+            elif all(word in names for word in wanted):
                 by_name.append(entry)
             elif all(word in text for word in wanted):
                 by_text.append(entry)
-        return (*by_name, *by_text)
+        return (*sorted(called, key=lambda entry: len(entry.name)), *by_name, *by_text)
 
 
 def materials_dir() -> "Traversable":

@@ -16,7 +16,7 @@ from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import FREE_SPACE_IMPEDANCE
 from stackcore.media.base import AbstractMedium
 from stackcore.propagation.blocks import Block, blocks
-from stackcore.propagation.march import Step, march
+from stackcore.propagation.march import Step, march, start_fields
 from stackcore.propagation.waves import Incidence, Wave
 from stackcore.sheets.base import AbstractSheet
 from stackcore.stack import Layer, PerfectConductor, Stack
@@ -24,14 +24,18 @@ from stackcore.stack import Layer, PerfectConductor, Stack
 _SMALL_U = 0.04
 
 
-def group_delay(stack: Stack, frequency: FloatArray, angle: FloatArray) -> FloatArray:
-    """Return −d(arg t)/dω in s, (2, A, F); 0 behind a metal back, where nothing is transmitted."""
-    delay = np.zeros((2, angle.size, frequency.size))
+def amplitude_slope(stack: Stack, frequency: FloatArray, angle: FloatArray) -> ComplexArray:
+    """Return d/df of ln(√T e^(j arg t)) per Hz, (2, A, F); 0 behind a metal back, where nothing is transmitted.
+
+    The group delay is −1/(2π) of the imaginary part. The real part is that of the amplitude normalised to power;
+    where no wave runs behind the stack it is that of the tangential field.
+    """
+    slope = np.zeros((2, angle.size, frequency.size), dtype=np.complex128)
     if isinstance(stack.back, PerfectConductor):
-        return delay
+        return slope
     for block in blocks(stack, frequency, angle):
-        delay[block.place] = _delay_of_block(stack, stack.back, block)
-    return delay
+        slope[block.place] = _slope_of_block(stack, stack.back, block)
+    return slope
 
 
 @dataclass(frozen=True, slots=True)
@@ -56,7 +60,7 @@ def _slopes(medium: AbstractMedium, wave: Wave, incidence: Incidence, front_inde
     return _Slopes(epsilon_slope, mu_slope, q2, x, b)
 
 
-def _delay_of_block(stack: Stack, back: AbstractMedium, block: Block) -> FloatArray:
+def _slope_of_block(stack: Stack, back: AbstractMedium, block: Block) -> ComplexArray:
     scene, frequency = block.scene, block.frequency
     assert scene.back is not None
     incidence = scene.incidence
@@ -64,8 +68,10 @@ def _delay_of_block(stack: Stack, back: AbstractMedium, block: Block) -> FloatAr
     front_index2 = front.permittivity_slope * front.permeability + front.permittivity * front.permeability_slope
     steps: list[Step] = []
     arrival = march(scene, frequency, watch=steps.append)
-    slope, log_slope = _start_slope(_slopes(back, scene.back, incidence, front_index2), scene.back)
-    slope = slope * np.ones(frequency.size)
+    start, log_slope = _start_slope(_slopes(back, scene.back, incidence, front_index2), scene.back)
+    # From the field behind to its power; the field in front has its own half of that.
+    log_slope = log_slope + _power_slope(start, scene.back, log_slope)
+    slope = start * np.ones(frequency.size)
     for step in steps:
         if step.layer is not None and isinstance(step.element, Layer):
             slopes = _slopes(step.element.medium, step.layer.wave, incidence, front_index2)
@@ -80,8 +86,8 @@ def _delay_of_block(stack: Stack, back: AbstractMedium, block: Block) -> FloatAr
     y0_slope = 0.5 * ratio.real * y0
     inward = y0 * fields[:, 0] + fields[:, 1]
     inward_slope = y0_slope * fields[:, 0] + y0 * slope[:, 0] + slope[:, 1]
-    delay: FloatArray = -np.imag(log_slope - inward_slope / inward) / (2 * np.pi)
-    return delay
+    found: ComplexArray = log_slope + 0.5 * y0_slope / y0 - inward_slope / inward
+    return found
 
 
 def _start_slope(slopes: _Slopes, back: Wave) -> tuple[ComplexArray, ComplexArray]:
@@ -91,6 +97,20 @@ def _start_slope(slopes: _Slopes, back: Wave) -> tuple[ComplexArray, ComplexArra
     te = [zero, q_slope / back.permeability - back.q * slopes.mu / back.permeability**2]
     tm = [q_slope, np.broadcast_to(slopes.epsilon, q_slope.shape)]
     return np.stack([np.stack(te), np.stack(tm)]), np.stack([zero, q_slope / back.q])
+
+
+def _power_slope(start: ComplexArray, back: Wave, log_slope: ComplexArray) -> FloatArray:
+    """Return d/df of ln √Re Y of the half-space behind, (2, A, F or 1); 0 where its wave carries no power.
+
+    `start` and `log_slope` are the slopes of `start_fields` and of the logarithm of its E.
+    """
+    fields = start_fields(back, start.shape[2:])
+    e, h = fields[:, 0], fields[:, 1]
+    power = (h * np.conj(e)).real
+    power_slope = (start[:, 1] * np.conj(e) + h * np.conj(start[:, 0])).real
+    runs = power > 0
+    change: FloatArray = 0.5 * power_slope / np.where(runs, power, 1.0) - log_slope.real
+    return np.where(runs, change, 0.0)
 
 
 def _through_layer(

@@ -9,7 +9,7 @@ from numpy.typing import NDArray
 
 from stackcore.arrays import ComplexArray, FloatArray
 from stackcore.constants import SPEED_OF_LIGHT
-from stackcore.propagation import delay, dissipation, passing
+from stackcore.propagation import delay, dissipation, entrance, passing
 from stackcore.stack import PerfectConductor, Stack
 
 _Number = TypeVar("_Number", np.float64, np.complex128)
@@ -46,7 +46,8 @@ class Response:
 
     def knows(self, name: str) -> bool:
         """Return whether the attribute `name` can be had without computing: it was asked for before, or is free."""
-        return name in vars(self) or name in ("reflection", "log_transmission")
+        name = "insertion_loss_dB" if name == "shielding_effectiveness_dB" else name
+        return name in vars(self) or name in ("reflection", "log_transmission", "bare_transmittance")
 
     @property
     def reflection(self) -> ComplexArray:
@@ -72,6 +73,29 @@ class Response:
     def transmittance(self) -> FloatArray:
         """Part of the incident power that enters the back half-space."""
         return _outward(self._transmittance)
+
+    @property
+    def bare_transmittance(self) -> FloatArray:
+        """Transmittance without the stack: of the bare meeting of the two half-spaces."""
+        return _outward(self._bare_transmittance)
+
+    @cached_property
+    def log_transmittance(self) -> FloatArray:
+        """ln T, finite for a wall of any depth; −inf where no wave runs behind the stack."""
+        with np.errstate(divide="ignore"):
+            bare = np.log(np.maximum(self._bare_transmittance, 0.0))
+        return _outward(bare - 2 * self._log_ratio)
+
+    @cached_property
+    def input_impedance(self) -> ComplexArray:
+        """Tangential E over tangential H at the front face in ohm; both parts `inf` where the face is open."""
+        arrived = self._transmittance + self._absorptance
+        return _outward(entrance.input_impedance(self.stack, self.frequency, self.angle, arrived))
+
+    @cached_property
+    def amplitude_slope(self) -> ComplexArray:
+        """d/df of ln of the transmitted amplitude normalised to power, per Hz; its phase is that of t."""
+        return _outward(delay.amplitude_slope(self.stack, self.frequency, self.angle))
 
     @cached_property
     def absorptance(self) -> FloatArray:
@@ -132,7 +156,7 @@ class Response:
     @cached_property
     def group_delay_s(self) -> FloatArray:
         """−d(arg t)/dω in s, analytic; 0 behind a metal back."""
-        return _outward(delay.group_delay(self.stack, self.frequency, self.angle))
+        return -self.amplitude_slope.imag / (2 * np.pi) + 0.0  # no minus zero behind a metal back
 
     @cached_property
     def _reflectance(self) -> FloatArray:

@@ -28,6 +28,8 @@ DOTTED: Final[tuple[float, ...]] = (1.6, 3.2)
 """Dots where a solid curve stands on a guess."""
 DOTTED_DASHES: Final[tuple[float, ...]] = (1.6, 2.4, 1.6, 6.4)
 """The same of a dashed curve: dots in pairs, so that the line style still tells the polarization."""
+_ONE_MORE_DOT: Final = (1.6, 2.4)
+"""For each dot in the dashes of a circular or a tilted wave."""
 _FEW_POINTS: Final = 40
 _POINT: Final = 2.5
 # Points beyond which the finer drawing would take longer than a person waits without noticing.
@@ -76,7 +78,7 @@ class DrawnCurve:
         """Return the dash pattern where the curve stands on data, or where it does not."""
         if held:
             return self.dashes
-        return DOTTED_DASHES if self.dashes else DOTTED
+        return DOTTED if not self.dashes else _ONE_MORE_DOT * (len(self.dashes) // 2 - 1) + DOTTED_DASHES
 
 
 class CurveLayer(Layer):

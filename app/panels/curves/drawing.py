@@ -19,9 +19,15 @@ from app.panels.curves.scale import FrequencyScale
 from app.series.axis import is_power
 from app.series.curves import Curve
 from app.series.texts import angle_text, frequency_text
-from stackcore.quantities import QUANTITIES
+from stackcore.polarizations import polarization
+from stackcore.quantities import quantity_named
 
-_TURNS: Final = {"reflection_phase_deg": 180.0, "transmission_phase_deg": 180.0}
+_TURNS: Final = {
+    "reflection_phase_deg": 180.0,
+    "transmission_phase_deg": 180.0,
+    "transmission_phase_difference_deg": 180.0,
+    "reflection_phase_difference_deg": 180.0,
+}
 _FADED: Final = 0.72
 _NORMAL: Final = 1e-12
 _GRAINS: Final = {"dB": 1e-9, "deg": 1e-7}
@@ -68,19 +74,39 @@ def draw_curves(
 
 
 def end_labels(curves: Sequence[Curve], drawn: Sequence[DrawnCurve]) -> tuple[EndLabel, ...]:
-    """Return the names at the ends; at normal incidence TE and TM are one curve and have one name."""
-    labels: list[EndLabel] = []
-    named: set[float] = set()
+    """Return the names at the ends; curves of one angle that lie on each other have one name.
+
+    At normal incidence those are TE and TM, and at every angle what is the same for both.
+    """
+    groups: list[tuple[list[Curve], DrawnCurve]] = []
     for curve, picture in zip(curves, drawn, strict=True):
         if not picture.runs:
             continue
-        if curve.angle > _NORMAL:
-            labels.append(EndLabel(curve.label, picture))
-        elif curve.angle not in named:
-            named.add(curve.angle)
-            both = sum(other.angle == curve.angle for other in curves) > 1
-            labels.append(EndLabel(f"TE, TM {angle_text(curve.angle)}" if both else curve.label, picture))
-    return tuple(labels)
+        group = next((members for members, _ in groups if _lies_on(curve, members[0])), None)
+        if group is None:
+            groups.append(([curve], picture))
+        else:
+            group.append(curve)
+    shown = len({curve.polarization for curve in curves})
+    return tuple(EndLabel(_name(members, shown), picture) for members, picture in groups)
+
+
+def _lies_on(curve: Curve, other: Curve) -> bool:
+    if curve.angle != other.angle:
+        return False
+    waves = (polarization(curve.polarization), polarization(other.polarization))
+    if curve.angle <= _NORMAL and all(wave.single is not None for wave in waves):
+        return True  # whatever rounding makes of a phase of half a turn
+    return bool(np.allclose(curve.y, other.y, rtol=1e-9, atol=1e-12, equal_nan=True))
+
+
+def _name(members: Sequence[Curve], shown: int) -> str:
+    if len(members) == 1:
+        return members[0].label
+    if len(members) == shown > 2:
+        return f"all {angle_text(members[0].angle)}"
+    words = ", ".join(polarization(curve.polarization).label for curve in members)
+    return f"{words} {angle_text(members[0].angle)}"
 
 
 def extent_of(curves: Sequence[Curve], scale: FrequencyScale) -> Extent:
@@ -133,7 +159,7 @@ def legend_facts(curves: Sequence[Curve], colours: Sequence[str], state: ViewSta
 
 def quantity_label(state: ViewState) -> str:
     """Return the words for what is shown."""
-    return QUANTITIES[state.quantity].label
+    return quantity_named(state.quantity).label
 
 
 def _values_at(curve: DrawnCurve, position: float) -> tuple[float, ...]:

@@ -8,9 +8,10 @@ from PySide6.QtCore import QPointF, QRectF, QSize, Qt
 from PySide6.QtGui import QColor, QFontMetricsF, QLinearGradient, QPainter, QPaintEvent, QPen
 from PySide6.QtWidgets import QSizePolicy, QWidget
 
-from app.look.theme import Theme, dashes
+from app.look.theme import Theme, dashes, line_style
+from stackcore.polarizations import polarization
 
-_SAMPLE: Final = 22.0
+_SAMPLE: Final = 28.0
 _GAP: Final = 6.0
 _APART: Final = 16.0
 
@@ -49,8 +50,7 @@ class Legend(QWidget):
 
     def sentence(self) -> str:
         """Return the legend in words."""
-        styles = {"TE": "TE solid", "TM": "TM dashed"}
-        lines = ", ".join(styles[polarization] for polarization in self._facts.polarizations)
+        lines = ", ".join(f"{polarization(key).label} {line_style(key)}" for key in self._facts.polarizations)
         angles = self._facts.angles
         ramp = f"; {len(angles)} angles from {angles[0]} to {angles[-1]} by lightness" if len(angles) > 1 else ""
         return f"{lines}{ramp}"
@@ -58,7 +58,8 @@ class Legend(QWidget):
     def sizeHint(self) -> QSize:
         """Return the room the legend needs."""
         metrics = QFontMetricsF(self.font())
-        width = sum(_SAMPLE + _GAP + metrics.horizontalAdvance(p) + _APART for p in self._facts.polarizations)
+        words = [polarization(key).label for key in self._facts.polarizations]
+        width = sum(_SAMPLE + _GAP + metrics.horizontalAdvance(word) + _APART for word in words)
         angles = self._facts.angles
         if angles:
             width += _GAP * 2 + 72 + metrics.horizontalAdvance(angles[0]) + metrics.horizontalAdvance(angles[-1])
@@ -71,13 +72,14 @@ class Legend(QWidget):
         metrics = QFontMetricsF(self.font())
         middle, left = self.height() / 2, 0.0
         text = QColor(self._theme.muted)
-        for polarization in self._facts.polarizations:
+        for key in self._facts.polarizations:
             pen = QPen(QColor(self._theme.text), 1.6)
-            if dashes(polarization):
-                pen.setDashPattern([length / 1.6 for length in dashes(polarization)])
+            if dashes(key):
+                pen.setDashPattern([length / 1.6 for length in dashes(key)])
             painter.setPen(pen)
             painter.drawLine(QPointF(left, middle), QPointF(left + _SAMPLE, middle))
-            left = self._write(painter, metrics, text, left + _SAMPLE + _GAP, polarization) + _APART
+            word = polarization(key).label
+            left = self._write(painter, metrics, text, left + _SAMPLE + _GAP, word) + _APART
         if self._facts.angles:
             left = self._write(painter, metrics, text, left, self._facts.angles[0]) + _GAP
             painter.fillRect(QRectF(left, middle - 3, 72, 6), self._ramp(left, left + 72))

@@ -7,9 +7,10 @@ from typing import Final
 import numpy as np
 
 from app.series.curves import Curve
-from app.series.shown import SHOWN
+from app.series.shown import shown
 from app.series.texts import angle_text, frequency_text, value_text
-from stackcore.quantities import QUANTITIES
+from stackcore.polarizations import polarization
+from stackcore.quantities import quantity_named
 
 MOST_READ: Final = 24
 """Curves named one by one in the description for screen readers; more would be read for minutes."""
@@ -28,11 +29,11 @@ def worst_curve(curves: Sequence[Curve]) -> int | None:
     badness = -math.inf
     for index, curve in enumerate(curves):
         if curve.worst_infinite is not None:
-            sunk = SHOWN[curve.quantity].worst == "low"
+            sunk = shown(curve.quantity).worst == "low"
             value = curve.raw[int(np.argmin(np.abs(curve.x - curve.worst_infinite)))]
             bad = float(-value if sunk else value)
         elif curve.worst is not None:
-            bad = -curve.worst.y if SHOWN[curve.quantity].worst == "low" else curve.worst.y
+            bad = -curve.worst.y if shown(curve.quantity).worst == "low" else curve.worst.y
         else:
             continue
         if best is None or bad > badness:
@@ -71,7 +72,7 @@ def curve_sentence(curve: Curve) -> str:
 def value_words(curve: Curve, index: int) -> tuple[str, str]:
     """Return the name of a curve and one of its values with what it is a value of."""
     value = value_text(curve.quantity, float(curve.raw[index]), curve.unit)
-    return curve.label, f"{QUANTITIES[curve.quantity].label} {value}"
+    return curve.label, f"{quantity_named(curve.quantity).label} {value}"
 
 
 def point_sentence(curve: Curve, index: int) -> str:
@@ -89,11 +90,14 @@ def hidden_sentence(curves: Sequence[Curve]) -> str:
 
 def empty_sentence(quantity: str, curves: Sequence[Curve]) -> str:
     """Return what stands in the middle of the plot when there is no curve in it, or nothing."""
-    label = QUANTITIES[quantity].label
+    label = quantity_named(quantity).label
     if not curves:
         return f"{label} over frequency will be drawn here as soon as the stack has been computed."
     if any(np.isfinite(curve.y).any() for curve in curves):
         return ""
+    singles = all(polarization(curve.polarization).single is not None for curve in curves)
+    if quantity_named(quantity).needs_both and singles:
+        return f"{label} says something of a circular or tilted wave: choose one above under “more”."
     if any(np.isinf(curve.raw).any() for curve in curves):
         return f"{label} is infinite at every frequency: {_NOTHING.get(quantity, 'nothing passes')}."
     return f"{label} has no value here: there is no wave whose {label.lower()} could be told."
@@ -107,7 +111,7 @@ def description(curves: Sequence[Curve]) -> str:
     low, high = float(first.x.min()), float(first.x.max())
     count = "1 curve" if len(curves) == 1 else f"{len(curves)} curves"
     parts = [
-        f"{QUANTITIES[first.quantity].label} from {frequency_text(low)} to {frequency_text(high)}, {count}.",
+        f"{quantity_named(first.quantity).label} from {frequency_text(low)} to {frequency_text(high)}, {count}.",
         f"{worst_sentence(curves)}.",
     ]
     if len(curves) <= MOST_READ:
@@ -127,7 +131,7 @@ def _worst_text(curve: Curve) -> str:
 
 
 def _whose(curve: Curve) -> str:
-    return f"{angle_text(curve.angle)}, {curve.polarization}"
+    return f"{angle_text(curve.angle)}, {polarization(curve.polarization).label}"
 
 
 def _end(curves: Sequence[Curve], *, low: bool) -> tuple[Curve, int] | None:

@@ -12,12 +12,12 @@ from app.document.view import View, ViewChange
 from app.look.theme import Theme
 from app.panels.readings.model import ReadingsModel
 from app.panels.readings.table import ReadingsTable
-from app.panels.sweep.panel import quantity_tip
+from app.panels.sweep.quantity_choice import quantity_tip
 from app.series.curves import curves_of, takes_long
 from app.series.markers import remove_marker
 from app.series.readings import readings_of, table_text
 from stackcore.errors import Severity
-from stackcore.quantities import QUANTITIES
+from stackcore.quantities import quantity_named
 
 if TYPE_CHECKING:
     from app.workers.live import Answer
@@ -101,7 +101,7 @@ class ReadingsPanel(QWidget):
 
     def table_text(self) -> str:
         """Return all readings as text with tabs between columns, every digit and the unit in each cell."""
-        label = QUANTITIES[self._view.state.quantity].label
+        label = quantity_named(self._view.state.quantity).label
         return table_text(self.model.rows, self.model.curves, label)
 
     def copy(self) -> None:
@@ -142,7 +142,7 @@ class ReadingsPanel(QWidget):
         rows = readings_of(self._answer.response, state, self._answer.at_markers)
         curves = curves_of(self._answer.response, state)
         self.table.marker_header.active = state.active_marker
-        self.model.show_readings(rows, curves, quantity_tip(QUANTITIES[state.quantity]))
+        self.model.show_readings(rows, curves, quantity_tip(quantity_named(state.quantity)))
         self.table.marker_header.viewport().update()
         self.table.curve_header.resizeSections()
 

@@ -32,7 +32,7 @@ from app.panels.readings.model import CellText, ReadingsModel
 Index = QModelIndex | QPersistentModelIndex
 
 SIDE: Final = 8
-_SAMPLE: Final = 18
+_SAMPLE: Final = 22
 _GAP: Final = 6
 
 

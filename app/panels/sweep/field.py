@@ -195,9 +195,7 @@ class QuietChoice(QComboBox):
         painter.setPen(QColor(ink))
         room = QRectF(self.rect()).adjusted(_SIDE, 0, -15, 0)
         painter.drawText(room, Qt.AlignmentFlag.AlignVCenter | Qt.AlignmentFlag.AlignLeft, self.currentText())
-        x, y = self.width() - 9.0, self.height() / 2 - 1
-        painter.setPen(QPen(QColor(self._theme.muted), 1.4))
-        painter.drawPolyline([QPointF(x - 3, y), QPointF(x, y + 3), QPointF(x + 3, y)])
+        draw_arrow(painter, self.rect(), self._theme)
         draw_underline(painter, self.rect(), self._theme, lit(self), False)
 
     def enterEvent(self, event: QEnterEvent) -> None:
@@ -265,6 +263,13 @@ class QuietSwitch(QAbstractButton):
 def lit(widget: QWidget) -> str:
     """Return how much a control draws attention to itself: ``focus``, ``hover`` or ``rest``."""
     return "focus" if widget.hasFocus() else "hover" if widget.underMouse() else "rest"
+
+
+def draw_arrow(painter: QPainter, rect: QRect, theme: Theme) -> None:
+    """Draw the small arrow at the right of a word that opens a list."""
+    x, y = rect.width() - 9.0, rect.height() / 2 - 1
+    painter.setPen(QPen(QColor(theme.muted), 1.4))
+    painter.drawPolyline([QPointF(x - 3, y), QPointF(x, y + 3), QPointF(x + 3, y)])
 
 
 def draw_underline(painter: QPainter, rect: QRect, theme: Theme, state: str, faulty: bool) -> None:

@@ -1,9 +1,8 @@
 """The quiet line above the curves: what is computed and shown, read like a sentence and changed in place."""
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from typing import Final
 
-from PySide6.QtCore import Qt
 from PySide6.QtGui import QColor, QPalette
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QWidget
 
@@ -13,14 +12,15 @@ from app.document.reading import list_text
 from app.document.session import Change, Session
 from app.document.view import View, ViewChange
 from app.look.theme import Theme
-from app.panels.sweep.field import QuietChoice, QuietField, QuietSwitch
+from app.panels.sweep.field import QuietChoice, QuietField
 from app.panels.sweep.flow import FlowLayout
-from app.panels.sweep.phrases import angles_text
+from app.panels.sweep.phrases import angles_text, element_offers
+from app.panels.sweep.polarization_choice import PolarizationChoice
+from app.panels.sweep.quantity_choice import QuantityChoice, quantity_tip
 from app.series.axis import is_power
-from stackcore.conventions import CONVENTIONS, POLARIZATIONS
 from stackcore.errors import Severity
 from stackcore.job.records import FrequencyGrid, Spacing
-from stackcore.quantities import QUANTITIES, Quantity
+from stackcore.quantities import quantity_named
 
 Tell = Callable[[str, Severity], None]
 
@@ -47,12 +47,6 @@ _NAMES: Final = {
     LIST: "Frequencies",
     ANGLES: "Angles of incidence",
 }
-
-
-def quantity_tip(quantity: Quantity) -> str:
-    """Return the definition, the unit and the sign of a quantity, as every tooltip says them."""
-    unit = f"In {quantity.unit}." if quantity.unit else "A plain number."
-    return "\n".join(part for part in (quantity.definition, unit, quantity.sign) if part)
 
 
 class SweepPanel(QWidget):
@@ -98,9 +92,10 @@ class SweepPanel(QWidget):
             palette = caption.palette()
             palette.setColor(QPalette.ColorRole.WindowText, QColor(theme.muted))
             caption.setPalette(palette)
-        controls: list[QuietField | QuietChoice | QuietSwitch] = [*self._fields.values(), *self._choices]
-        for control in [*controls, *self.switches.values()]:
+        controls: list[QuietField | QuietChoice] = [*self._fields.values(), *self._choices]
+        for control in controls:
             control.set_theme(theme)
+        self.polarizations.set_theme(theme)
 
     # Making
 
@@ -111,11 +106,7 @@ class SweepPanel(QWidget):
         }
         for column, field in self._fields.items():
             field.committed.connect(lambda text, column=column: self._typed(column, text))
-        self.quantity = QuietChoice(self._theme, "Quantity shown")
-        for name, quantity in QUANTITIES.items():
-            self.quantity.addItem(quantity.label, name)
-            tip = quantity_tip(quantity)
-            self.quantity.setItemData(self.quantity.count() - 1, tip, Qt.ItemDataRole.ToolTipRole)
+        self.quantity = QuantityChoice(self._theme, "Quantity shown", self._elements)
         self.scale = QuietChoice(
             self._theme,
             "Scale of the values",
@@ -134,10 +125,8 @@ class SweepPanel(QWidget):
         self.axis.addItem("linear axis", False)
         self.axis.addItem("log axis", True)
         self._choices = (self.quantity, self.scale, self.spacing, self.axis)
-        self.switches = {
-            name: QuietSwitch(self._theme, name, f"Show the curves of {name}. {CONVENTIONS['angle']}")
-            for name in POLARIZATIONS
-        }
+        self.polarizations = PolarizationChoice(self._view, self._theme, self._tell)
+        self.switches = self.polarizations.switches
         self._connect()
 
     def _connect(self) -> None:
@@ -145,14 +134,12 @@ class SweepPanel(QWidget):
         self.scale.activated.connect(lambda _: self._view.set(self, power=self.scale.currentData()))
         self.axis.activated.connect(lambda _: self._view.set(self, log_frequency=self.axis.currentData()))
         self.spacing.activated.connect(lambda _: self._choose_spacing(self.spacing.currentData()))
-        for switch in self.switches.values():
-            switch.clicked.connect(lambda _: self._choose_polarizations())
 
     def _arrange(self) -> None:
         flow = FlowLayout(self, across=16, down=2)
         fields = self._fields
         self._group(flow, self.quantity, self.scale)
-        self._group(flow, *self.switches.values())
+        self._group(flow, *self.polarizations.parts)
         self._group(flow, self.axis)
         self._band = self._group(flow, "from", fields[START], "to", fields[STOP])
         self._count = self._group(flow, fields[POINTS], "points,", self.spacing)
@@ -206,15 +193,14 @@ class SweepPanel(QWidget):
     def _show_view(self) -> None:
         state = self._view.state
         self.quantity.show_choice(state.quantity)
-        tip = quantity_tip(QUANTITIES[state.quantity])
+        tip = quantity_tip(quantity_named(state.quantity))
         self.quantity.setToolTip(tip)
         self.quantity.setStatusTip(tip)
         self.quantity.setAccessibleDescription(tip)
         self.scale.show_choice(state.power)
         self.scale.setVisible(is_power(state.quantity))
         self.axis.show_choice(state.log_frequency)
-        for name, switch in self.switches.items():
-            switch.setChecked(name in state.polarizations)
+        self.polarizations.show_view()
 
     # Changing
 
@@ -242,14 +228,8 @@ class SweepPanel(QWidget):
             self._tell(str(fault), fault.severity)
         self._show_sweep()
 
-    def _choose_polarizations(self) -> None:
-        chosen = tuple(name for name, switch in self.switches.items() if switch.isChecked())
-        if chosen:
-            self._view.set(self, polarizations=chosen)
-            return
-        # The last one stays: a plot of nothing would say nothing.
-        self._show_view()
-        self._tell("At least one polarization is shown.", "note")
+    def _elements(self) -> Sequence[tuple[str, str]]:
+        return element_offers(self._session.record, self._session.selection.stack)
 
 
 def _spacing(name: str) -> Spacing:

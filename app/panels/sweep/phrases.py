@@ -1,10 +1,11 @@
-"""Angles as a person reads them in the quiet line, in the shortest words that are read back. No toolkit."""
+"""Angles and elements as a person reads them in the quiet line. No toolkit."""
 
 import re
 from typing import Final
 
 from app.document.reading import list_text
-from stackcore.job.records import AngleGrid
+from stackcore.job.records import AngleGrid, JobRecord, LayerRecord
+from stackcore.quantities import ElementAbsorptance
 from stackcore.units import Measure
 
 _PLAIN: Final = re.compile(r"(?P<number>\d+(?:\.\d+)?)\s*(?P<unit>\D+)")
@@ -28,3 +29,16 @@ def angles_text(angle: AngleGrid | tuple[Measure, ...]) -> str:
         return list_text(angle)
     numbers = ", ".join(match["number"] for match in found if match is not None)
     return f"{numbers} {units.pop()}"
+
+
+def element_offers(record: JobRecord, stack: int) -> tuple[tuple[str, str], ...]:
+    """Return for each element of a stack the name of its absorptance and its words: ``2  skin, 0.9 mm``."""
+    offers = []
+    for row, element in enumerate(record.stacks[stack].elements):
+        words = f"{row + 1}  sheet"
+        if isinstance(element, LayerRecord):
+            material = record.material(element.material)
+            label = material.label if material is not None and material.label else element.material
+            words = f"{row + 1}  {label}, {element.thickness.text}"
+        offers.append((ElementAbsorptance(row).name, words))
+    return tuple(offers)

@@ -12,6 +12,7 @@ from app.panels.wall.rays import FIGURE, Arc, Arrow, Clear, Powers, Rays, trace
 from app.panels.wall.wave import Wave
 from app.panels.wall.words import share_text, tilt_text
 from app.series.texts import angle_text, frequency_text
+from stackcore.polarizations import polarization
 
 Role = Literal["incident", "reflectance", "transmittance", "absorptance", "angle", "end"]
 
@@ -62,7 +63,7 @@ def captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMeasure) -
 
 def circumstances(layout: WallLayout, wave: Wave, measure: TextMeasure) -> tuple[Caption, ...]:
     """Return frequency, angle and polarization at the upper left, on as many lines as the room asks for."""
-    parts = (frequency_text(wave.frequency), angle_text(wave.angle), wave.polarization)
+    parts = (frequency_text(wave.frequency), angle_text(wave.angle), polarization(wave.polarization).label)
     room = layout.body.left - 2 * MARGIN
     lines = [", ".join(parts)]
     if measure.width(lines[0]) > room:

@@ -1,13 +1,14 @@
 """What the wave does at the marker: frequency, angle, polarization, ways and powers as one value."""
 
-import math
 import sys
 from dataclasses import dataclass
+
+import numpy as np
 
 from app.panels.wall.rays import Powers
 from app.panels.wall.refraction import Directions, directions
 from app.series.texts import angle_text, frequency_text
-from stackcore.conventions import POLARIZATIONS
+from stackcore.polarizations import polarization as named
 from stackcore.propagation.response import Response
 from stackcore.stack import Stack
 
@@ -21,7 +22,7 @@ class Wave:
     frequency, angle
         Of the marker, in Hz and rad.
     polarization
-        ``TE`` or ``TM``.
+        Key of `stackcore.polarizations`.
     courses
         Where it goes in each medium of the stack that is drawn.
     powers
@@ -40,7 +41,7 @@ class Wave:
     @property
     def circumstances(self) -> str:
         """Frequency, angle and polarization in words."""
-        return f"{frequency_text(self.frequency)}, {angle_text(self.angle)}, {self.polarization}"
+        return f"{frequency_text(self.frequency)}, {angle_text(self.angle)}, {named(self.polarization).label}"
 
 
 def wave_in(
@@ -64,12 +65,12 @@ def powers_of(response: Response, polarization: str) -> Powers:
 
     A transmittance too small for a double, as of a thick metal sheet, is not 0: it becomes the smallest one.
     """
-    point = (0, 0, POLARIZATIONS.index(polarization))
-    transmittance = float(response.transmittance[point])
-    if transmittance == 0 and math.isfinite(response.insertion_loss_dB[point]):
+    shares = np.array(named(polarization).power_shares)
+    transmittance = float(shares @ response.transmittance[0, 0])
+    if transmittance == 0 and np.isfinite(response.insertion_loss_dB[0, 0, shares > 0]).any():
         transmittance = sys.float_info.min
     return Powers(
-        float(response.reflectance[point]),
+        float(shares @ response.reflectance[0, 0]),
         transmittance,
-        tuple(float(share) for share in response.element_absorptance[point]),
+        tuple(float(share) for share in shares @ response.element_absorptance[0, 0]),
     )

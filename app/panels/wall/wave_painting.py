@@ -14,6 +14,7 @@ from app.panels.wall.layout import WallLayout
 from app.panels.wall.pens import colour, rectangle
 from app.panels.wall.rays import Arc, Band, Rays
 from app.panels.wall.wave import Wave
+from stackcore.polarizations import polarization
 
 STALE_OPACITY: Final = 0.35
 LEVEL_ALPHA: Final = 0.34
@@ -126,19 +127,26 @@ def _paint_angle(painter: QPainter, arc: Arc, theme: Theme) -> None:
 
 
 def _paint_field(painter: QPainter, rays: Rays, wave: Wave, theme: Theme) -> None:
-    """Mark the electric field on the incident ray: a point toward the eye for TE, a double arrow for TM."""
+    """Mark the field on the incident ray: a point toward the eye for TE, a double arrow for TM, or both."""
     tail, end = rays.incident.end, rays.incident.foot
     x, y = tail[0] + 0.42 * (end[0] - tail[0]), tail[1] + 0.42 * (end[1] - tail[1])
-    ink = QColor(theme.text)
-    painter.setPen(QPen(ink, 1.4))
-    if wave.polarization == "TE":
+    te, tm = polarization(wave.polarization).power_shares
+    if tm > 0:
+        _paint_arrow(painter, (x, y), wave.angle, theme)
+    if te > 0:
+        ink = QColor(theme.text)
+        painter.setPen(QPen(ink, 1.4))
         painter.setBrush(QColor(theme.base))
         painter.drawEllipse(QPointF(x, y), 6.0, 6.0)
         painter.setPen(Qt.PenStyle.NoPen)
         painter.setBrush(ink)
         painter.drawEllipse(QPointF(x, y), 2.0, 2.0)
-        return
-    theta = wave.angle
+
+
+def _paint_arrow(painter: QPainter, place: tuple[float, float], theta: float, theme: Theme) -> None:
+    x, y = place
+    ink = QColor(theme.text)
+    painter.setPen(QPen(ink, 1.4))
     across = (math.sin(theta), -math.cos(theta))
     along = (math.cos(theta), math.sin(theta))
     painter.drawLine(

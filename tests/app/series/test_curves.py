@@ -4,8 +4,9 @@ import numpy as np
 import pytest
 
 from app.document.view import Power, ViewState
+from app.series import curves as curves_module
 from app.series.axis import frequency_axis, is_power, quantity_axis
-from app.series.curves import curves_of
+from app.series.curves import curves_of, takes_long
 from app.series.shown import SHOWN
 from stackcore.media.constant import ConstantMedium
 from stackcore.propagation import solve
@@ -14,8 +15,15 @@ from stackcore.stack import Layer, Stack
 from tests.app.series.responses import ANGLE, FREQUENCY, slab
 
 FRACTIONS = ("reflectance", "transmittance", "absorptance")
-WORST_HIGH = ("reflectance", "absorptance", "insertion_loss_dB")
-WORST_LOW = ("transmittance", "return_loss_dB", "shielding_effectiveness_dB")
+WORST_HIGH = ("reflectance", "absorptance", "insertion_loss_dB", "standing_wave_ratio", "copolar_reflectance_dB")
+WORST_LOW = (
+    "transmittance",
+    "return_loss_dB",
+    "shielding_effectiveness_dB",
+    "transmission_magnitude_dB",
+    "copolar_transmittance_dB",
+)
+NEED_BOTH = tuple(name for name, quantity in QUANTITIES.items() if quantity.needs_both)
 
 
 def test_every_quantity_has_a_row() -> None:
@@ -28,14 +36,14 @@ def test_a_curve_holds_the_values_of_its_angle_and_polarization(quantity: str) -
     """Each curve is one column of the response, angle by angle, TE before TM."""
     response = slab()
     curves = curves_of(response, ViewState(quantity=quantity))
-    values = getattr(response, quantity) * (1e12 if quantity == "group_delay_s" else 1.0)
+    values = QUANTITIES[quantity].values(response) * (1e12 if quantity == "group_delay_s" else 1.0)
     assert [curve.label for curve in curves] == ["TE 0°", "TM 0°", "TE 60°", "TM 60°", "TE 30°", "TM 30°"]
     for index, curve in enumerate(curves):
         assert curve.quantity == quantity
         assert np.array_equal(curve.x, FREQUENCY)
-        assert np.array_equal(curve.y, values[:, index // 2, index % 2])
+        assert np.array_equal(curve.raw, values[:, index // 2, index % 2])
         assert curve.angle == ANGLE[index // 2]
-        assert curve.hidden_points == 0
+        assert curve.hidden_points == (5 if quantity in NEED_BOTH else 0)
 
 
 def test_ranks_follow_the_size_of_the_angles() -> None:
@@ -83,7 +91,7 @@ def test_other_quantities_are_left_alone(power: Power) -> None:
         assert not is_power(quantity)
         one = curves_of(response, ViewState(quantity=quantity))[0]
         other = curves_of(response, ViewState(quantity=quantity, power=power))[0]
-        assert np.array_equal(one.y, other.y)
+        assert np.array_equal(one.raw, other.raw)
         assert one.unit == other.unit
 
 
@@ -96,10 +104,53 @@ def test_the_worst_point(quantity: str) -> None:
         assert curve.y[list(curve.x).index(curve.worst.x)] == curve.worst.y
 
 
-@pytest.mark.parametrize("quantity", QUANTITIES.keys() - set(WORST_HIGH + WORST_LOW))
+@pytest.mark.parametrize("quantity", sorted(QUANTITIES.keys() - set(WORST_HIGH + WORST_LOW + NEED_BOTH)))
 def test_phases_and_delays_have_no_worst_point(quantity: str) -> None:
     """Neither end of a phase or a delay is worse."""
     assert all(curve.worst is None for curve in curves_of(slab(), ViewState(quantity=quantity)))
+
+
+@pytest.mark.parametrize("quantity", NEED_BOTH)
+def test_what_needs_both_parts_has_a_worst_point_for_a_mixed_wave(quantity: str) -> None:
+    """Discrimination is worst where it is small, what is cross-polar and an axial ratio where they are large."""
+    for curve in curves_of(slab(), ViewState(quantity=quantity, polarizations=("circular",)))[1:]:
+        assert curve.worst is not None
+        ends = np.min if quantity == "cross_polar_discrimination_dB" else np.max
+        assert curve.worst.y == ends(curve.y)
+
+
+def test_mixed_waves_have_curves_of_their_own() -> None:
+    """Circular and tilted come after TE and TM at each angle, with their words and their values."""
+    response = slab()
+    state = ViewState(polarizations=("tilt 45 deg", "TE", "circular", "TM"))
+    curves = curves_of(response, state)
+    assert state.polarizations == ("TE", "TM", "circular", "tilt 45 deg")
+    assert [curve.label for curve in curves[8:]] == ["TE 30°", "TM 30°", "Circular 30°", "45° tilt 30°"]
+    assert [curve.polarization for curve in curves[:4]] == list(state.polarizations)
+    te, tm, circular, slanted = (curve.y for curve in curves[8:])
+    assert circular == pytest.approx((te + tm) / 2, rel=1e-14)
+    assert slanted == pytest.approx(circular, rel=1e-14)
+
+
+def test_an_element_has_a_curve() -> None:
+    """The power one element takes is shown like any fraction of power, also in per cent."""
+    response = slab()
+    state = ViewState(quantity="element_absorptance:0", power="percent")
+    curves = curves_of(response, state)
+    assert is_power(state.quantity)
+    assert curves[3].y == pytest.approx(100 * response.absorptance[:, 1, 1], rel=1e-13)
+    assert quantity_axis(state.quantity, FREQUENCY, power="percent").title == "Absorptance of element 1, %"
+    assert np.isnan(curves_of(response, ViewState(quantity="element_absorptance:7"))[0].y).all()
+
+
+@pytest.mark.parametrize("quantity", QUANTITIES)
+def test_what_is_worked_out_beforehand_is_not_long(quantity: str, monkeypatch: pytest.MonkeyPatch) -> None:
+    """Once its values were asked for, a quantity of a large response can be drawn at once, for any polarization."""
+    monkeypatch.setattr(curves_module, "LONG", 1)
+    response = slab()
+    assert takes_long(response, quantity) == bool(QUANTITIES[quantity].needs)
+    QUANTITIES[quantity].values(response)
+    assert not takes_long(response, quantity)
 
 
 def test_infinite_loss_is_masked_and_counted() -> None:

@@ -23,9 +23,10 @@ def test_all_entries_are_listed(run: Run) -> None:
 
 def test_words_search(run: Run) -> None:
     """Words leave the entries that hold them all; none is told with status 2."""
-    assert {line.split()[0] for line in run("materials", "copper", "annealed").out.splitlines()} == {
-        "metals/copper-annealed"
-    }
+    found = [line.split()[0] for line in run("materials", "copper", "annealed").out.splitlines()]
+    assert found[0] == "metals/copper-annealed"
+    assert found == [entry.key for entry in Library(materials_dir()).search("copper annealed")]
+    assert "metals/silver" not in found
     outcome = run("materials", "unobtainium")
     assert (outcome.status, outcome.out) == (2, "")
     assert "no entry holds all of 'unobtainium'" in outcome.lines[0]

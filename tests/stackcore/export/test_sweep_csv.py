@@ -68,7 +68,7 @@ def test_numbers_are_those_of_the_response_to_the_last_bit() -> None:
     job = read_job(HAND_WRITTEN)
     rows = list(csv.DictReader(io.StringIO(table(job), newline="")))
     response = solve(job.stacks[0], job.sweep.frequencies(), job.sweep.angles())
-    for name, quantity in QUANTITIES.items():
+    for name, quantity in ((name, one) for name, one in QUANTITIES.items() if one.exported):
         written = np.array([float(row[name]) for row in rows])
         assert written.tolist() == quantity.values(response).ravel().tolist()
     assert len(rows) == 401 * 3 * 2

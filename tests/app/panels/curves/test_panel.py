@@ -49,9 +49,10 @@ def test_axis_titles_are_words_with_unit(bench: Bench) -> None:
 @pytest.mark.parametrize("quantity", list(QUANTITIES))
 def test_every_quantity_is_drawn(bench: Bench, quantity: str) -> None:
     """Each quantity of the table gives finite curves inside the range shown."""
-    bench.view.set(quantity=quantity)
+    both = QUANTITIES[quantity].needs_both
+    bench.view.set(quantity=quantity, polarizations=("circular",) if both else ("TE", "TM"))
     frame = bench.plot.frame()
-    for curve in bench.plot.curve_layer.curves:
+    for curve in bench.plot.curve_layer.curves[1 if both else 0 :]:  # at the normal all stays circular
         known = curve.values[np.isfinite(curve.values)]
         assert len(known) > 0
         assert frame.bottom <= known.min()

@@ -16,8 +16,9 @@ from app.document.session import Session
 from app.document.view import POWERS, View
 from app.look.theme import DARK, LIGHT
 from app.panels.sweep import SweepPanel
-from app.panels.sweep.panel import ANGLES, LIST, POINTS, START, STOP, quantity_tip
+from app.panels.sweep.panel import ANGLES, LIST, POINTS, START, STOP
 from app.panels.sweep.phrases import angles_text
+from app.panels.sweep.quantity_choice import quantity_tip
 from stackcore.job.records import AngleGrid, FrequencyGrid
 from stackcore.quantities import QUANTITIES
 from tests.app.panels.results import Told, slab_job
