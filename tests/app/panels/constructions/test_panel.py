@@ -52,11 +52,11 @@ def test_the_sweep_sizes_it_until_something_is_typed(panel: ConstructionsPanel) 
     session.apply(edits.set_title("same sweep"))
     assert panel.rule.text() == first
     panel.type_into(FREQUENCY, "5")
-    assert "5 GHz" in panel.rule.text()
+    assert "at 5 GHz" in panel.rule.text()
     panel.type_into(ANGLE, "45")
     assert "45 deg" in panel.rule.text()
     panel.type_into(FREQUENCY, "")
-    assert "5 GHz" not in panel.rule.text()
+    assert "at 5 GHz" not in panel.rule.text()
 
 
 def test_a_wrong_text_stays_at_its_field_with_the_reason(panel: ConstructionsPanel) -> None:
