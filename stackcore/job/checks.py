@@ -10,6 +10,8 @@ from typing import Final
 
 from stackcore.errors import Fault
 from stackcore.job import limits
+from stackcore.job.conditions import condition_faults
+from stackcore.job.decode_facts import PRICE
 from stackcore.job.inspector import has_lone_surrogate, join, near, one_of, shown
 from stackcore.job.limits import Limits
 from stackcore.job.materials import library_model
@@ -26,6 +28,7 @@ from stackcore.job.records import (
 )
 from stackcore.job.references import ALWAYS_DEFINED as ALWAYS_DEFINED
 from stackcore.job.references import reference_faults
+from stackcore.job.states import state_faults
 from stackcore.media.models import MODELS
 from stackcore.units import Measure
 
@@ -51,6 +54,13 @@ def faults_of(record: JobRecord) -> Iterator[Fault]:
     for place, stack in enumerate(record.stacks):
         yield from _stack_faults(stack, join("stacks", place), known)
     yield from _doubled((stack.name for stack in record.stacks), "stacks", ".name")
+    yield from condition_faults(record, known)
+    for place, condition in enumerate(record.conditions):
+        path = join("conditions", place)
+        yield from _text_faults({join(path, "name"): condition.name, join(path, "note"): condition.note})
+        for side, elements in (("front", condition.front), ("back", condition.back)):
+            for row, element in enumerate(elements):
+                yield from element_faults(element, join(join(path, side), row), known)
     yield from sweep_faults(record.sweep)
 
 
@@ -96,6 +106,13 @@ def material_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
     if material.valid_range is not None:
         yield from _range_faults(material, join(path, "range"))
     yield from _spread_faults(material, join(path, "spread"))
+    if material.density is not None:
+        yield from _within(material.density, limits.MASS_DENSITY, join(path, "density"))
+    if material.ply_thickness is not None:
+        yield from _within(material.ply_thickness, limits.PLY, join(path, "ply_thickness"))
+    if material.price is not None and not (math.isfinite(material.price) and material.price >= 0):
+        yield Fault(join(path, "price"), f"{material.price!r} is no price", PRICE)
+    yield from state_faults(material, path)
 
 
 def _constants_faults(material: MaterialRecord, path: str) -> Iterator[Fault]:
@@ -150,6 +167,25 @@ def _stack_faults(stack: StackRecord, path: str, known: Collection[str]) -> Iter
         yield from _known(stack.back, known, join(path, "back"), f" or {METAL_NAME!r}")
     for place, element in enumerate(stack.elements):
         yield from element_faults(element, join(join(path, "elements"), place), known)
+    yield from _group_faults(stack, path)
+
+
+def _group_faults(stack: StackRecord, path: str) -> Iterator[Fault]:
+    behind, count = -1, 0
+    for group in stack.groups:
+        where = join(join(path, "elements"), max(group.first, 0))
+        if not (behind < group.first <= group.last < len(stack.elements)):
+            yield Fault(where, "this group overlaps another or has no elements", "groups side by side")
+            return
+        if not 1 <= group.repeat <= limits.MOST_REPEATS:
+            what = "too few" if group.repeat < 1 else "too many"
+            allowed = f"a whole number from 1 to {limits.MOST_REPEATS}"
+            yield Fault(f"{where}.repeat", f"{group.repeat} is {what}", allowed)
+        behind = group.last
+        count += (group.last - group.first + 1) * (group.repeat - 1)
+    if len(stack.elements) + count > limits.MOST_ELEMENTS:
+        told = f"the groups make {len(stack.elements) + count} elements"
+        yield Fault(join(path, "elements"), told, f"at most {limits.MOST_ELEMENTS}")
 
 
 def element_faults(element: ElementRecord, path: str, known: Collection[str]) -> Iterator[Fault]:
@@ -163,10 +199,18 @@ def element_faults(element: ElementRecord, path: str, known: Collection[str]) ->
 
 def sheet_faults(sheet: SheetRecord, path: str) -> Iterator[Fault]:
     """Yield what is wrong with one sheet."""
-    parts = {name: getattr(sheet, name) for name in limits.SHEET_PARTS if getattr(sheet, name) is not None}
+    if sheet.kind not in limits.PARTS_OF_KIND:
+        yield Fault(join(path, "sheet"), f"{shown(sheet.kind)} is not known", one_of(limits.PARTS_OF_KIND))
+        return
+    known = limits.PARTS_OF_KIND[sheet.kind]
+    parts = {name: getattr(sheet, name) for name in known if getattr(sheet, name) is not None}
     for name, value in parts.items():
-        yield from _within(value, limits.SHEET_PARTS[name], join(path, name))
-    if not parts:
+        yield from _within(value, known[name], join(path, name))
+    if sheet.kind == "film":
+        for name in known:
+            if name not in parts:
+                yield Fault(join(path, name), "is missing", "conductivity and thickness of the film")
+    elif not parts:
         allowed = f'{one_of(limits.SHEET_PARTS)} or more, for example "resistance": "377 ohm/sq"'
         yield Fault(path, "there is nothing in this sheet", allowed)
     elif sheet.capacitance is None and all(value.value == 0 for value in parts.values()):

@@ -2,10 +2,12 @@
 
 import re
 from collections.abc import Iterable
+from dataclasses import replace
 
 from stackcore.errors import Fault, JobError
 from stackcore.job.decode import FORMAT, JOB_KEYS, decode_job
 from stackcore.job.encode import encode_job
+from stackcore.job.groups import file_path
 from stackcore.job.inspector import MOST_FAULTS, Inspector, join, near, shown
 from stackcore.job.migrations import VERSION, migrate
 from stackcore.job.records import JobRecord
@@ -51,7 +53,8 @@ allowed: version 1 or older; a newer slabwright reads this file
         inspector.faults += error.faults
         current = tree
     record = decode_job({key: current[key] for key in current}, inspector)
-    faults = [*inspector.faults, *_not_told_yet(resolve(record).faults, inspector.faulted)]
+    found = [replace(fault, path=file_path(fault.path, record.stacks)) for fault in resolve(record).faults]
+    faults = [*inspector.faults, *_not_told_yet(found, inspector.faulted)]
     if faults:
         raise JobError(_told(faults, inspector.untold, record))
     return record

@@ -4,20 +4,12 @@ from collections.abc import Mapping
 from typing import Final, Literal
 
 from stackcore.job import checks, limits
+from stackcore.job.decode_facts import FACT_KEYS, decode_facts
+from stackcore.job.decode_stacks import decode_conditions, decode_stack
 from stackcore.job.inspector import Inspector, join, near, one_of, shown
-from stackcore.job.limits import SHEET_PARTS
 from stackcore.job.materials import library_model
-from stackcore.job.records import (
-    AngleGrid,
-    ElementRecord,
-    FrequencyGrid,
-    JobRecord,
-    LayerRecord,
-    MaterialRecord,
-    SheetRecord,
-    StackRecord,
-    SweepRecord,
-)
+from stackcore.job.plies import plies_of
+from stackcore.job.records import AngleGrid, FrequencyGrid, JobRecord, MaterialRecord, SweepRecord
 from stackcore.media.models import CONSTANT_NAMES, MODELS, Model
 from stackcore.media.models.kinds import number_of
 from stackcore.units import Dimension, Measure, measure
@@ -25,26 +17,25 @@ from stackcore.units import Dimension, Measure, measure
 FORMAT: Final = "slabwright-job"
 """Value of the key ``format``."""
 
-JOB_KEYS: Final = ("format", "version", "title", "notes", "materials", "stacks", "sweep")
-STACK_KEYS: Final = ("name", "front", "back", "elements")
+JOB_KEYS: Final = ("format", "version", "title", "notes", "materials", "stacks", "conditions", "sweep")
 FREQUENCY_KEYS: Final = ("start", "stop", "points", "spacing")
 ANGLE_KEYS: Final = ("start", "stop", "points")
-SHEET_KINDS: Final = ("series",)
 
-MATERIAL_KEYS: Final = ("label", "library", "model", "range", "spread", "certainty", "source", "note")
+MATERIAL_KEYS: Final = (
+    *("label", "library", "model", "range", "spread", "certainty", "source", "note"),
+    *FACT_KEYS,
+)
 """Keys of a material beside the constants of its model."""
 
 _REQUIRED: Final = {
     "stacks": '"stacks": [{"name": "A", "elements": []}]',
     "sweep": '"sweep": {"frequency": ["10 GHz"], "angle": ["0 deg"]}',
 }
-_STACK_REQUIRED: Final = {"name": '"name": "A"', "elements": '"elements": []'}
 _SWEEP_REQUIRED: Final = {"frequency": '"frequency": ["10 GHz"]', "angle": '"angle": ["0 deg"]'}
 _FREQUENCY_REQUIRED: Final = {"start": '"start": "8 GHz"', "stop": '"stop": "12 GHz"', "points": '"points": 401'}
 _ANGLE_REQUIRED: Final = {"start": '"start": "0 deg"', "stop": '"stop": "60 deg"', "points": '"points": 7'}
 
 _POINTS: Final = "a whole number from 1 to 1000000"
-_MILLIMETRE: Final = measure(1e-3, Dimension.LENGTH)
 _LOW: Final = measure(1.0, Dimension.FREQUENCY)
 _NORMAL: Final = measure(0.0, Dimension.ANGLE)
 
@@ -56,12 +47,17 @@ def decode_job(tree: Mapping[str, object], inspector: Inspector) -> JobRecord:
     """
     inspector.mapping(tree, "", JOB_KEYS, _REQUIRED)
     stacks = inspector.sequence(tree["stacks"], "stacks", limits.MOST_STACKS) if "stacks" in tree else []
+    materials = _materials(inspector, tree.get("materials", {}))
+    plies = plies_of(materials)
     return JobRecord(
         title=inspector.text(tree.get("title", ""), "title"),
-        stacks=tuple(_stack(inspector, value, join("stacks", place)) for place, value in enumerate(stacks)),
+        stacks=tuple(
+            decode_stack(inspector, value, join("stacks", place), plies) for place, value in enumerate(stacks)
+        ),
         sweep=_sweep(inspector, tree.get("sweep"), "sweep" in tree),
-        materials=_materials(inspector, tree.get("materials", {})),
+        materials=materials,
         notes=inspector.text(tree.get("notes", ""), "notes"),
+        conditions=decode_conditions(inspector, tree.get("conditions", []), plies),
     )
 
 
@@ -93,6 +89,7 @@ def _material(inspector: Inspector, name: str, value: object, path: str) -> Mate
         model = inspector.choice(value["model"], join(path, "model"), MODELS, "")
     known = MODELS.get(model or ("" if "model" in value else library_model(library)))
     _material_keys(inspector, value, path, known)
+    facts = decode_facts(inspector, value, path, known)
     return MaterialRecord(
         name,
         label=text("label"),
@@ -104,6 +101,10 @@ def _material(inspector: Inspector, name: str, value: object, path: str) -> Mate
         certainty=text("certainty"),
         spread=_spread(inspector, value["spread"], join(path, "spread")) if "spread" in value else (),
         note=text("note"),
+        density=facts.density,
+        price=facts.price,
+        ply_thickness=facts.ply_thickness,
+        states=facts.states,
     )
 
 
@@ -146,52 +147,6 @@ def _spread(inspector: Inspector, value: object, path: str) -> tuple[tuple[str, 
         else:
             found.append((name, share))
     return tuple(found)
-
-
-def _stack(inspector: Inspector, value: object, path: str) -> StackRecord:
-    given = inspector.mapping(value, path, STACK_KEYS, _STACK_REQUIRED)
-    if given is None:
-        return StackRecord(path)
-    place = join(path, "elements")
-    elements = inspector.sequence(given["elements"], place, limits.MOST_ELEMENTS) if "elements" in given else []
-    return StackRecord(
-        name=inspector.text(given["name"], join(path, "name"), path) if "name" in given else path,
-        elements=tuple(_element(inspector, item, join(place, row)) for row, item in enumerate(elements)),
-        front=inspector.text(given.get("front", "air"), join(path, "front"), "air"),
-        back=inspector.text(given.get("back", "air"), join(path, "back"), "air"),
-    )
-
-
-def _element(inspector: Inspector, value: object, path: str) -> ElementRecord:
-    stand_in = LayerRecord("air", _MILLIMETRE)
-    allowed = '{"layer": "skin", "thickness": "1 mm"} or {"sheet": "series", "resistance": "377 ohm/sq"}'
-    if not isinstance(value, dict):
-        inspector.fault(path, f"{shown(value)} is not an element", allowed)
-        return stand_in
-    if ("layer" in value) == ("sheet" in value):
-        given = "both a layer and a sheet" if "layer" in value else "neither a layer nor a sheet"
-        inspector.fault(path, f"this is {given}", allowed)
-        return stand_in
-    return _layer(inspector, value, path) if "layer" in value else _sheet(inspector, value, path)
-
-
-def _layer(inspector: Inspector, value: dict[str, object], path: str) -> LayerRecord:
-    inspector.mapping(value, path, ("layer", "thickness"), {"thickness": '"thickness": "1 mm"'})
-    thickness = _MILLIMETRE
-    if "thickness" in value:
-        thickness = inspector.measure(value["thickness"], join(path, "thickness"), Dimension.LENGTH, _MILLIMETRE)
-    return LayerRecord(inspector.text(value["layer"], join(path, "layer"), "air"), thickness)
-
-
-def _sheet(inspector: Inspector, value: dict[str, object], path: str) -> SheetRecord:
-    inspector.mapping(value, path, ("sheet", *SHEET_PARTS))
-    kind = inspector.choice(value["sheet"], join(path, "sheet"), SHEET_KINDS, "series")
-    parts: dict[str, Measure] = {}
-    for name, part in SHEET_PARTS.items():
-        if name in value:
-            stand_in = measure(1.0, part.dimension)
-            parts[name] = inspector.measure(value[name], join(path, name), part.dimension, stand_in)
-    return SheetRecord(kind, **parts)
 
 
 def _sweep(inspector: Inspector, value: object, present: bool) -> SweepRecord:

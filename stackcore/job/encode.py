@@ -4,20 +4,25 @@ import json
 from typing import Final
 
 from stackcore.job.decode import FORMAT
-from stackcore.job.limits import SHEET_PARTS
+from stackcore.job.decode_stacks import SWITCHES
+from stackcore.job.groups import items_of
+from stackcore.job.limits import PARTS_OF_KIND
 from stackcore.job.materials import library_model
 from stackcore.job.migrations import VERSION
 from stackcore.job.records import (
     AngleGrid,
+    ConditionRecord,
     ElementRecord,
     FrequencyGrid,
+    Group,
     JobRecord,
     LayerRecord,
     MaterialRecord,
     StackRecord,
+    StateRecord,
     SweepRecord,
 )
-from stackcore.media.models import MODELS
+from stackcore.media.models import MODELS, Model
 from stackcore.media.models.values import plain_number
 from stackcore.units import Dimension, Measure
 from stackcore.units.written import written_measure
@@ -35,6 +40,7 @@ def encode_job(record: JobRecord) -> str:
         f'  "notes": {_json(record.notes)}',
         f'  "materials": {_block("{}", [_material(material) for material in record.materials], 4)}',
         f'  "stacks": {_block("[]", [_stack(stack) for stack in record.stacks], 4)}',
+        *_conditions(record.conditions),
         f'  "sweep": {_sweep(record.sweep)}',
     ]
     return "{\n" + ",\n".join(members) + "\n}\n"
@@ -66,6 +72,7 @@ def _material(material: MaterialRecord) -> str:
     for key in ("certainty", "source", "note"):
         if value := getattr(material, key):
             members[key] = value
+    members |= _facts(material)
     return f"{_json(material.name)}: {_members(members)}"
 
 
@@ -82,23 +89,77 @@ def _rows(value: object) -> str:
     return "[\n      " + ",\n      ".join(_json(row) for row in value) + "\n    ]"
 
 
+def _facts(material: MaterialRecord) -> dict[str, object]:
+    members: dict[str, object] = {}
+    if material.density is not None:
+        members["density"] = written_measure(material.density, Dimension.MASS_DENSITY)
+    if material.price is not None:
+        members["price"] = plain_number(material.price)
+    if material.ply_thickness is not None:
+        members["ply_thickness"] = written_measure(material.ply_thickness, Dimension.LENGTH)
+    if material.states:
+        model = MODELS.get(material.model or library_model(material.library))
+        members["states"] = {state.name: _state(state, model) for state in material.states}
+    return members
+
+
+def _state(state: StateRecord, model: Model | None) -> dict[str, object]:
+    texts = {key: value for key in ("source", "note") if (value := getattr(state, key))}
+    return {**(model.written(state.constants) if model is not None else {}), **texts}
+
+
 def _stack(stack: StackRecord) -> str:
     members = [
         f'      "name": {_json(stack.name)}',
         f'      "front": {_json(stack.front)}',
         f'      "back": {_json(stack.back)}',
-        f'      "elements": {_block("[]", [_json(_element(element)) for element in stack.elements], 8)}',
+        f'      "elements": {_block("[]", [_item(stack, group, rows) for group, rows in items_of(stack)], 8)}',
     ]
     return "{\n" + ",\n".join(members) + "\n    }"
 
 
+def _item(stack: StackRecord, group: Group | None, rows: range) -> str:
+    if group is None:
+        return _json(_element(stack.elements[rows.start]))
+    inside = _block("[]", [_json(_element(stack.elements[row])) for row in rows], 10)
+    return f'{{"repeat": {group.repeat}, "elements": {inside}}}'
+
+
 def _element(element: ElementRecord) -> dict[str, object]:
+    members: dict[str, object]
     if isinstance(element, LayerRecord):
-        return {"layer": element.material, "thickness": written_measure(element.thickness, Dimension.LENGTH)}
-    members: dict[str, object] = {"sheet": element.kind}
-    for name, limits in SHEET_PARTS.items():
-        if (part := getattr(element, name)) is not None:
-            members[name] = written_measure(part, limits.dimension)
+        members = {"layer": element.material, "thickness": written_measure(element.thickness, Dimension.LENGTH)}
+    else:
+        members = {"sheet": element.kind}
+        for name, limits in PARTS_OF_KIND[element.kind].items():
+            if (part := getattr(element, name)) is not None:
+                members[name] = written_measure(part, limits.dimension)
+    for name, usual in SWITCHES.items():
+        if getattr(element, name) != usual:
+            members[name] = not usual
+    return members
+
+
+def _conditions(conditions: tuple[ConditionRecord, ...]) -> list[str]:
+    """Return the member ``conditions``, nothing when there are none."""
+    return (
+        [f'  "conditions": {_block("[]", [_json(_condition(one)) for one in conditions], 4)}'] if conditions else []
+    )
+
+
+def _condition(condition: ConditionRecord) -> dict[str, object]:
+    members: dict[str, object] = {"name": condition.name}
+    for side in ("front", "back"):
+        if elements := getattr(condition, side):
+            members[side] = [_element(element) for element in elements]
+    if condition.materials:
+        members["materials"] = dict(condition.materials)
+    if condition.states:
+        members["states"] = list(condition.states)
+    if condition.thickness_factors:
+        members["thickness_factors"] = {name: plain_number(one) for name, one in condition.thickness_factors}
+    if condition.note:
+        members["note"] = condition.note
     return members
 
 

@@ -23,10 +23,32 @@ SHEET_PARTS: Final[Mapping[str, Limits]] = {
 }
 """Part of a sheet -> what it may be, in the order of the file."""
 
+CONDUCTIVITY: Final = Limits(Dimension.CONDUCTIVITY, 1e-12, 1e12)
+FILM_PARTS: Final[Mapping[str, Limits]] = {
+    "conductivity": CONDUCTIVITY,
+    "thickness": Limits(Dimension.LENGTH, 1e-15, 1.0),
+}
+"""Part of a film -> what it may be."""
+
+PARTS_OF_KIND: Final[Mapping[str, Mapping[str, Limits]]] = {"series": SHEET_PARTS, "film": FILM_PARTS}
+"""Kind of sheet -> its parts."""
+
+MASS_DENSITY: Final = Limits(Dimension.MASS_DENSITY, 1e-3, 1e5)
+PLY: Final = Limits(Dimension.LENGTH, 1e-9, 1.0)
+
+MOST_REPEATS: Final = 1000
+"""Of one group."""
 MOST_STACKS: Final = 1000
 MOST_MATERIALS: Final = 1000
 MOST_ELEMENTS: Final = 10_000
-"""Of one stack."""
+"""Of one stack, each repetition of a group counted."""
+
+MOST_CONDITIONS: Final = 100
+MOST_STATES: Final = 100
+"""Of one material."""
+
+THICKEST_FACTOR: Final = 1000.0
+"""By which a condition may multiply a thickness."""
 
 MOST_POINTS: Final = 1_000_000
 """Of a grid of frequencies or angles."""

@@ -8,12 +8,13 @@ from collections.abc import Mapping
 from dataclasses import replace
 
 from stackcore.errors import Fault, LibraryError
-from stackcore.job.records import JobRecord, MaterialRecord
+from stackcore.job.records import JobRecord, MaterialRecord, StateRecord
 from stackcore.media.base import AbstractMedium, FrequencyRange, Provenance
 from stackcore.media.constant import VACUUM
 from stackcore.media.library import LibraryEntry, library_entry
 from stackcore.media.library_entry import EVERYWHERE
-from stackcore.media.models import MODELS, Constants
+from stackcore.media.models import MODELS
+from stackcore.media.models.completing import completed
 from stackcore.units import Dimension, measure
 
 
@@ -58,7 +59,7 @@ def medium_of(material: MaterialRecord, media: Mapping[str, AbstractMedium] | No
         return entry.medium
     constants, name = material.given, material.model
     if entry is not None and (not name or not constants):
-        constants, name = _completed(constants, entry), entry.model
+        constants, name = completed(constants, entry.constants), entry.model
     model = MODELS[name]
     used = {other: _referred(other, media or {}) for _, other in model.references(constants)} or None
     valid_range, provenance = _known_range(material), material.about_values
@@ -110,18 +111,6 @@ def _entry(material: MaterialRecord) -> LibraryEntry | None:
     return entry
 
 
-def _completed(given: Constants, entry: LibraryEntry) -> Constants:
-    """Return the constants of `entry` with those `given` in their place, the loss of ε counted once."""
-    constants = entry.constants
-    permittivity = given.get("permittivity")
-    if isinstance(permittivity, complex) and permittivity.imag:
-        constants = constants.with_value("loss_tangent", None)
-    stored = constants.get("permittivity")
-    if "loss_tangent" in given and isinstance(stored, complex):
-        constants = constants.with_value("permittivity", complex(stored.real))
-    return Constants({**constants, **given})
-
-
 def with_resolved_library(record: JobRecord) -> JobRecord:
     """Return `record` with model, constants, range and source written beside every library reference.
 
@@ -133,21 +122,31 @@ def with_resolved_library(record: JobRecord) -> JobRecord:
     LibraryError
         For a reference to an entry that does not exist and whose values are needed.
     """
-    materials = [_with_library_values(material) for material in record.materials]
+    materials = [with_library_values(material) for material in record.materials]
     names = {material.name for material in materials}
     for material in materials:  # which grows while it is walked
         for _, used in references_of(material):
             if "/" in used and used not in names:
                 names.add(used)
-                materials.append(_with_library_values(MaterialRecord(used, library=used)))
+                materials.append(with_library_values(MaterialRecord(used, library=used)))
     return replace(record, materials=tuple(materials))
 
 
-def _with_library_values(material: MaterialRecord) -> MaterialRecord:
+def with_library_values(material: MaterialRecord) -> MaterialRecord:
+    """Return a material with model, constants and facts of its library entry written beside the reference.
+
+    One that has its model and constants beside it already, or no reference, comes back as it is.
+
+    Raises
+    ------
+    LibraryError
+        For a reference to an entry that does not exist and whose values are needed.
+    """
     entry = _entry(material)
     if entry is None or (material.model and material.constants):
         return material
-    constants = _completed(material.given, entry)
+    material = _with_facts(material, entry)
+    constants = completed(material.given, entry.constants)
     if material.constants:  # the library's source and range vouch for its own values only
         return replace(material, model=entry.model, constants=constants)
     provenance = _filled(material.about_values, entry.provenance)
@@ -164,4 +163,20 @@ def _with_library_values(material: MaterialRecord) -> MaterialRecord:
         certainty=provenance.certainty,
         spread=provenance.spread,
         note=provenance.note,
+    )
+
+
+def _with_facts(material: MaterialRecord, entry: LibraryEntry) -> MaterialRecord:
+    """Return a material with density, ply thickness and states of its entry, where it has none of its own."""
+    own = {state.name for state in material.states}
+    states = tuple(
+        StateRecord(state.name, state.constants, state.source, state.note)
+        for state in entry.states
+        if state.name not in own
+    )
+    return replace(
+        material,
+        density=material.density or entry.density,
+        ply_thickness=material.ply_thickness or entry.ply_thickness,
+        states=(*material.states, *states),
     )

@@ -18,6 +18,36 @@ Spacing = Literal["linear", "log"]
 
 
 @dataclass(frozen=True, slots=True)
+class StateRecord:
+    """A named state of a material, such as wet or hot: the constants that differ in it.
+
+    Parameters
+    ----------
+    name
+        No other state of the material has it; conditions refer to it.
+    constants
+        Of the material's own model; they take the place of the material's.
+    source, note
+        Where they come from, and what else to know.
+    """
+
+    name: str
+    constants: Mapping[str, Value] = Constants()
+    source: str = ""
+    note: str = ""
+
+    def __post_init__(self) -> None:
+        if not isinstance(self.constants, Constants):
+            object.__setattr__(self, "constants", Constants(self.constants))
+
+    @property
+    def given(self) -> Constants:
+        """The constants as the frozen mapping they are kept in."""
+        assert isinstance(self.constants, Constants)
+        return self.constants
+
+
+@dataclass(frozen=True, slots=True)
 class MaterialRecord:
     """One material of a job: a model with constants, or a reference into the library, or both.
 
@@ -43,6 +73,14 @@ class MaterialRecord:
         Relative spread in production by name of the constant.
     note
         Anything else a user must know.
+    density
+        Mass by volume, or None.
+    price
+        Of a kilogram, in whatever currency the user counts in, or None.
+    ply_thickness
+        Of one cured ply, for what is built up of plies, or None.
+    states
+        Named states in which constants differ.
     """
 
     name: str
@@ -55,10 +93,18 @@ class MaterialRecord:
     certainty: str = ""
     spread: tuple[tuple[str, float], ...] = ()
     note: str = ""
+    density: Measure | None = None
+    price: float | None = None
+    ply_thickness: Measure | None = None
+    states: tuple[StateRecord, ...] = ()
 
     def __post_init__(self) -> None:
         if not isinstance(self.constants, Constants):
             object.__setattr__(self, "constants", Constants(self.constants))
+
+    def state(self, name: str) -> StateRecord | None:
+        """Return the state called `name`, or None."""
+        return next((state for state in self.states if state.name == name), None)
 
     @property
     def given(self) -> Constants:
@@ -98,33 +144,115 @@ class MaterialRecord:
 
 @dataclass(frozen=True, slots=True)
 class LayerRecord:
-    """A layer: the name of its material and its thickness."""
+    """A layer: the name of its material and its thickness.
+
+    Parameters
+    ----------
+    material
+        Name of a material of the job.
+    thickness
+        Its text may count plies, ``6 ply``; the value is then so many times the ply of the material.
+    enabled
+        Whether it is computed; one that is not stays in the list.
+    locked
+        Whether its thickness is held: it cannot be dragged, and refining leaves it.
+    """
 
     material: str
     thickness: Measure
+    enabled: bool = True
+    locked: bool = False
 
 
 @dataclass(frozen=True, slots=True)
 class SheetRecord:
-    """A sheet of one kind (``series``) with those of its parts that are present."""
+    """A sheet without thickness in the computation.
+
+    Parameters
+    ----------
+    kind
+        ``series``: those of its three parts that are present, in series. ``film``: a conducting film much thinner
+        than its skin depth, of resistance 1/(σd).
+    resistance, inductance, capacitance
+        Of ``series``, per square.
+    conductivity, thickness
+        Of ``film``.
+    enabled, locked
+        As of `LayerRecord`.
+    """
 
     kind: str = "series"
     resistance: Measure | None = None
     inductance: Measure | None = None
     capacitance: Measure | None = None
+    conductivity: Measure | None = None
+    thickness: Measure | None = None
+    enabled: bool = True
+    locked: bool = False
 
 
 ElementRecord = LayerRecord | SheetRecord
 
 
 @dataclass(frozen=True, slots=True)
+class Group:
+    """Neighbouring elements that are repeated as a whole: rows `first` to `last`, both included."""
+
+    first: int
+    last: int
+    repeat: int
+
+
+@dataclass(frozen=True, slots=True)
 class StackRecord:
-    """A named stack: front and back by material name (`back` may be ``metal``) and the elements between."""
+    """A named stack.
+
+    Parameters
+    ----------
+    name
+        No other stack of the job has it.
+    elements
+        From front to back, each once, also those of groups.
+    front, back
+        Names of materials; `back` may be ``metal``.
+    groups
+        Parts of `elements` that are repeated, in their order; none overlap.
+    """
 
     name: str
     elements: tuple[ElementRecord, ...] = ()
     front: str = "air"
     back: str = "air"
+    groups: tuple[Group, ...] = ()
+
+
+@dataclass(frozen=True, slots=True)
+class ConditionRecord:
+    """What is different in rain, in heat or after a repaint, without an edit of any stack.
+
+    Parameters
+    ----------
+    name
+        No other condition of the job has it.
+    front, back
+        Elements added before the first and behind the last of every stack.
+    materials
+        Name of a material -> name of the one that takes its place.
+    states
+        Every material that has one of these states is in it, the first that it has.
+    thickness_factors
+        Name of a material -> factor of the thickness of all its layers.
+    note
+        Anything a user must know.
+    """
+
+    name: str
+    front: tuple[ElementRecord, ...] = ()
+    back: tuple[ElementRecord, ...] = ()
+    materials: tuple[tuple[str, str], ...] = ()
+    states: tuple[str, ...] = ()
+    thickness_factors: tuple[tuple[str, float], ...] = ()
+    note: str = ""
 
 
 @dataclass(frozen=True, slots=True)
@@ -196,6 +324,11 @@ class JobRecord:
     sweep: SweepRecord
     materials: tuple[MaterialRecord, ...] = ()
     notes: str = ""
+    conditions: tuple[ConditionRecord, ...] = ()
+
+    def condition(self, name: str) -> ConditionRecord | None:
+        """Return the condition called `name`, or None."""
+        return next((record for record in self.conditions if record.name == name), None)
 
     def material(self, name: str) -> MaterialRecord | None:
         """Return the material called `name`, or None."""

@@ -10,7 +10,9 @@ import numpy as np
 from stackcore.arrays import FloatArray
 from stackcore.errors import Fault, JobError, LibraryError
 from stackcore.job import checks, limits
-from stackcore.job.inspector import join
+from stackcore.job.conditions import record_under, rows_shifted
+from stackcore.job.groups import expanded_rows
+from stackcore.job.inspector import join, near, one_of
 from stackcore.job.materials import library_model, medium_of, references_of
 from stackcore.job.records import (
     ElementRecord,
@@ -22,9 +24,11 @@ from stackcore.job.records import (
     SweepRecord,
 )
 from stackcore.job.references import building_order
+from stackcore.job.states import in_state, states_of
 from stackcore.media.base import AbstractMedium
 from stackcore.media.constant import VACUUM
 from stackcore.media.models import MODELS, Model
+from stackcore.sheets.film import FilmSheet
 from stackcore.sheets.series import SeriesSheet
 from stackcore.stack import METAL, Element, Layer, PerfectConductor, SheetPlacement, Stack
 
@@ -60,6 +64,10 @@ class Job:
     """In SI units, each ready for `stackcore.propagation.solve`."""
     media: Mapping[str, AbstractMedium] = field(init=False, compare=False, repr=False)
     """Name of the material -> medium, ``air`` and ``vacuum`` included."""
+    rows: tuple[tuple[int, ...], ...] = field(init=False, compare=False, repr=False)
+    """For each stack the row of the record that each of its elements came from: groups stand there repeated,
+    disabled elements not at all."""
+    _under: dict[str, "Job"] = field(init=False, compare=False, repr=False)
 
     def __post_init__(self) -> None:
         resolution = resolve(self.record)
@@ -67,6 +75,8 @@ class Job:
             raise JobError(resolution.faults)
         object.__setattr__(self, "stacks", resolution.stacks)
         object.__setattr__(self, "media", MappingProxyType(dict(resolution.media)))
+        object.__setattr__(self, "rows", tuple(expanded_rows(stack) for stack in self.record.stacks))
+        object.__setattr__(self, "_under", {})
 
     def __reduce__(self) -> tuple[type["Job"], tuple[JobRecord]]:
         # What is derived is derived again in the other process.
@@ -90,6 +100,57 @@ class Job:
     def stack(self, name: str) -> Stack | None:
         """Return the stack called `name`, or None."""
         return next((stack for stack in self.stacks if stack.name == name), None)
+
+    def under(self, condition: str) -> "Job":
+        """Return the job as it is under a condition.
+
+        Raises
+        ------
+        JobError
+            When there is no condition of this name, with the nearest match, or when a stack cannot be computed
+            under it.
+        """
+        if condition not in self._under:
+            found = self.record.condition(condition)
+            if found is None:
+                names = [one.name for one in self.record.conditions]
+                allowed = one_of(names) if names else "the job has no conditions"
+                raise JobError(
+                    [Fault("conditions", f"there is no condition {condition!r}{near(condition, names)}", allowed)]
+                )
+            # Two threads may both work it out: they find the same.
+            self._under[condition] = Job(record_under(self.record, found))
+        return self._under[condition]
+
+    def stack_under(self, stack: int, condition: str) -> Stack:
+        """Return a stack as it is under a condition; raises as `under` does."""
+        return self.under(condition).stacks[stack]
+
+    def rows_under(self, stack: int, condition: str) -> tuple[int, ...]:
+        """Return the row of each element of `stack_under`, −1 for one that the condition added."""
+        found = self.record.condition(condition)
+        rows = self.under(condition).rows[stack]
+        assert found is not None
+        return rows_shifted(rows, found, len(self.record.stacks[stack].elements))
+
+    def medium_in(self, material: str, state: str) -> AbstractMedium:
+        """Return the medium of a material in one of its states.
+
+        Raises
+        ------
+        JobError
+            When the job has no such material or the material no such state, with the nearest match.
+        """
+        record = self.record.material(material)
+        names = [one.name for one in states_of(record)] if record is not None else []
+        if record is None or state not in names:
+            what = f"state {state!r} of {material!r}" if record is not None else f"material {material!r}"
+            given, known = (
+                (state, names) if record is not None else (material, [one.name for one in self.materials])
+            )
+            allowed = one_of(known) if known else "it has no states"
+            raise JobError([Fault(join("materials", material), f"there is no {what}{near(given, known)}", allowed)])
+        return medium_of(in_state(record, state), self.media)
 
 
 @dataclass(frozen=True, slots=True)
@@ -154,14 +215,22 @@ def _front_faults(
 
 def _stack(record: StackRecord, media: Mapping[str, AbstractMedium]) -> Stack:
     back: AbstractMedium | PerfectConductor = METAL if record.back == checks.METAL_NAME else media[record.back]
-    elements = tuple(_element(element, media) for element in record.elements)
+    each = [_element(element, media) if element.enabled else None for element in record.elements]
+    expanded = [each[row] for row in expanded_rows(record)]
+    elements = tuple(element for element in expanded if element is not None)
     return Stack(elements, media[record.front], back, record.name)
 
 
 def _element(record: ElementRecord, media: Mapping[str, AbstractMedium]) -> Element:
     if isinstance(record, LayerRecord):
         return Layer(media[record.material], record.thickness.value)
-    return SheetPlacement(_series(record))
+    return SheetPlacement(_film(record) if record.kind == "film" else _series(record))
+
+
+def _film(record: SheetRecord) -> FilmSheet:
+    assert record.conductivity is not None
+    assert record.thickness is not None
+    return FilmSheet(record.conductivity.value, record.thickness.value)
 
 
 def _series(record: SheetRecord) -> SeriesSheet:

@@ -8,11 +8,35 @@ from typing import Final
 from stackcore.errors import Fault, LibraryError
 from stackcore.media.base import AbstractMedium, FrequencyRange, Provenance
 from stackcore.media.models import Constants, Model
+from stackcore.units import Measure
 
 EVERYWHERE: Final = FrequencyRange(0.0, math.inf)
 """The range of an entry that has no limit of its own."""
 
 _MOST_NESTED: Final = 8
+
+
+@dataclass(frozen=True, slots=True)
+class EntryState:
+    """A named state of an entry: the constants that differ in it, where they come from, and what else to know."""
+
+    name: str
+    constants: Constants
+    source: str = ""
+    note: str = ""
+
+
+@dataclass(frozen=True, slots=True)
+class Facts:
+    """What is known of an entry beside its constants."""
+
+    density: Measure | None = None
+    ply_thickness: Measure | None = None
+    states: tuple[EntryState, ...] = ()
+
+
+NO_FACTS: Final = Facts()
+"""Of an entry whose source gives none."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -42,6 +66,8 @@ class LibraryEntry:
         Whether it comes from the user's folder.
     shadows
         Whether it stands in the place of an entry that came with the program.
+    facts
+        Density, ply thickness and named states.
     """
 
     key: str
@@ -55,11 +81,27 @@ class LibraryEntry:
     also: tuple[str, ...] = ()
     own: bool = False
     shadows: bool = False
+    facts: Facts = NO_FACTS
 
     @property
     def name(self) -> str:
         """Part of `key` after the slash."""
         return self.key.partition("/")[2]
+
+    @property
+    def density(self) -> Measure | None:
+        """Mass by volume, or None where the source gives none."""
+        return self.facts.density
+
+    @property
+    def ply_thickness(self) -> Measure | None:
+        """Of one cured ply, for what is built up of plies."""
+        return self.facts.ply_thickness
+
+    @property
+    def states(self) -> tuple[EntryState, ...]:
+        """Named states in which constants differ."""
+        return self.facts.states
 
 
 @dataclass(frozen=True, slots=True)
@@ -93,6 +135,7 @@ class Draft:
     valid_range: FrequencyRange | None
     provenance: Provenance
     also: tuple[str, ...]
+    facts: Facts = NO_FACTS
 
     @property
     def name(self) -> str:
@@ -130,6 +173,7 @@ class Draft:
             self.also,
             own,
             shadows,
+            self.facts,
         )
 
 

@@ -14,6 +14,9 @@ table ``[[material]]``:
     certainty = "read"                 # read, recalled or common practice
     spread = { conductivity = 0.01 }   # relative, one standard deviation, for ε, μ, tan δ and σ where given
     note = "20 °C; ..."                # temperature, form, cautions; may be left out
+    density = "8960 kg/m3"             # may be left out, as what follows
+    ply_thickness = "0.25 mm"          # of one cured ply, of what is built up of plies
+    states = { hot = { conductivity = "45 MS/m", note = "100 °C" } }   # constants that differ in a named state
 
 An entry may be made of others: ``host = "plastics/ptfe"``. An entry with a fault is left out; the others of the
 file stay.
@@ -27,15 +30,20 @@ from typing import Final
 
 from stackcore.errors import Fault, LibraryError, UnitError, nearest
 from stackcore.media.base import FrequencyRange, Provenance
-from stackcore.media.library_entry import Draft, Family, FamilyFile, media_of
+from stackcore.media.library_entry import Draft, EntryState, Facts, Family, FamilyFile, media_of
 from stackcore.media.models import CONSTANT_NAMES, MODELS, Constants, Model
-from stackcore.units import Dimension, parse_measure
+from stackcore.media.models.completing import completed
+from stackcore.units import Dimension, Measure, parse_measure
 
 CERTAINTIES: Final = ("read", "recalled", "common practice")
 """How a value is known: read in the source, remembered from it, or what the trade takes as typical."""
 
 _NAME: Final = re.compile(r"[a-z0-9]+(-[a-z0-9]+)*")
-_ENTRY_KEYS: Final = ("name", "label", "also", "model", "range", "source", "certainty", "spread", "note")
+_ENTRY_KEYS: Final = (
+    *("name", "label", "also", "model", "range", "source", "certainty", "spread", "note"),
+    *("density", "ply_thickness", "states"),
+)
+_STATE_KEYS: Final = ("source", "note")
 _FAMILY_KEYS: Final = ("label", "note")
 
 _Table = dict[str, object]
@@ -125,11 +133,64 @@ class _Reading:
         note = self.text(place, table, "note", "")
         constants = self.constants(place, table, model) if model else Constants()
         spread = self.spread(place, table, model)
+        facts = self.facts(place, table, model, constants)
         if model is None or len(self.faults) > before:
             return
         provenance, key = Provenance(source, certainty, spread, note), f"{self.family}/{name}"
         where = f"{self.file}: {name}"
-        self.drafts.append(Draft(where, key, label, model, constants, valid_range, provenance, also))
+        self.drafts.append(Draft(where, key, label, model, constants, valid_range, provenance, also, facts))
+
+    def facts(self, place: str, table: _Table, model: Model | None, constants: Constants) -> Facts:
+        """Return density, ply thickness and states."""
+        states = table.get("states", {})
+        if not isinstance(states, dict):
+            self.fault(f"{place}states", f"{states!r} is not a table", "{ wet = { loss_tangent = 0.03 } }")
+            states = {}
+        return Facts(
+            self.quantity(place, table, "density", Dimension.MASS_DENSITY),
+            self.quantity(place, table, "ply_thickness", Dimension.LENGTH),
+            tuple(
+                self.state(f"{place}states.{name}.", name, state, model, constants)
+                for name, state in states.items()
+                if model is not None
+            ),
+        )
+
+    def quantity(self, place: str, table: _Table, key: str, dimension: Dimension) -> Measure | None:
+        """Return a quantity that may be left out; it must be more than 0."""
+        value = table.get(key)
+        if value is None:
+            return None
+        try:
+            found = parse_measure(value if isinstance(value, str) else "", dimension)
+        except UnitError as error:
+            self.fault(f"{place}{key}", error.message, error.allowed)
+            return None
+        if found.value <= 0:
+            self.fault(f"{place}{key}", f"{found.text} is not above 0", f"for example {dimension.example}")
+            return None
+        return found
+
+    def state(self, place: str, name: str, value: object, model: Model, constants: Constants) -> EntryState:
+        """Return a state; together with the constants of the entry it must make a material."""
+        if not isinstance(value, dict):
+            self.fault(place[:-1], f"{value!r} is not a table", "{ loss_tangent = 0.03 }")
+            return EntryState(name, Constants())
+        self.check_keys(place, value, (*_STATE_KEYS, *model.names))
+        texts = {key: self.text(place, value, key, "") for key in _STATE_KEYS}
+        told: set[str] = set()
+
+        def tell(path: str, message: str, allowed: str) -> None:
+            told.add(path)
+            self.fault(f"{place}{path.removeprefix('.')}", message, allowed)
+
+        given = model.read(value, "", tell)
+        if not given and not told:
+            self.fault(place[:-1], "nothing differs in this state", "{ loss_tangent = 0.03 }")
+        elif not told:
+            for fault in model.faults(completed(given, constants), ""):
+                tell(fault.path, fault.message, fault.allowed)
+        return EntryState(name, given, **texts)
 
     def check_keys(self, place: str, table: _Table, known: tuple[str, ...]) -> None:
         for key in table:

@@ -59,6 +59,7 @@ class Dimension(Enum):
     RATE = "rate"
     TEMPERATURE = "temperature"
     DENSITY = "number density"
+    MASS_DENSITY = "density"
     NUMBER = "number"
 
     @property
@@ -174,6 +175,7 @@ _FACTS: Final[dict[Dimension, _Facts]] = {
     # `stackcore.units.measure` shows in K what lies far from room temperature.
     Dimension.TEMPERATURE: _Facts("K", ("°C", "K"), "20 °C", "°C", (("°C", Fraction(0)),)),
     Dimension.DENSITY: _Facts("1/m3", ("1/m3", "1/cm3"), "1e18 1/m3", "1/m3", (("1/m3", Fraction(0)),)),
+    Dimension.MASS_DENSITY: _Facts("kg/m3", ("kg/m3", "g/cm3"), "1900 kg/m3", "kg/m3", (("kg/m3", Fraction(0)),)),
     Dimension.NUMBER: _Facts("", (), "4.2", "", (("", Fraction(0)),)),
 }
 
@@ -232,6 +234,9 @@ UNITS: Final[dict[str, Unit]] = {
     **_degrees("°F", Fraction(5, 9), Fraction(45967, 180), "degF", "fahrenheit"),
     **_named(Dimension.DENSITY, "1/m3", Fraction(1), "/m3", "1/m^3", "/m^3", "1/m³", "/m³", "m^-3"),
     **_named(Dimension.DENSITY, "1/cm3", Fraction(10**6), "/cm3", "1/cm^3", "/cm^3", "1/cm³", "/cm³", "cm^-3"),
+    **_named(Dimension.MASS_DENSITY, "kg/m3", Fraction(1), "kg/m^3", "kg/m³"),
+    **_named(Dimension.MASS_DENSITY, "g/cm3", Fraction(1000), "g/cm^3", "g/cm³", "g/cc", "kg/l", "g/ml"),
+    **_named(Dimension.MASS_DENSITY, "lb/ft3", Fraction(45359237, 10**8) / (_INCH * 12) ** 3, "lb/ft^3", "pcf"),
     **_named(Dimension.NUMBER, "%", Fraction(1, 100)),
 }
 """Name as typed, after `stackcore.units.spelling.plain` -> unit."""
