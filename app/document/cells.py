@@ -10,10 +10,12 @@ from app.document.library import with_material
 from app.document.material_cells import material_columns, material_text, with_material_text
 from app.document.material_edits import material_of
 from app.document.reading import list_text, read_like, read_list, read_points, read_range
+from app.document.sheet_cells import part_of, sheet_columns, with_part
 from stackcore.errors import UnitError, nearest
-from stackcore.job.limits import SHEET_PARTS
+from stackcore.job.groups import group_of
+from stackcore.job.plies import counts_plies, ply_of, read_plies
 from stackcore.job.records import AngleGrid, FrequencyGrid, JobRecord, LayerRecord, SheetRecord, Spacing
-from stackcore.units import Dimension, Measure
+from stackcore.units import Dimension, Measure, measure
 
 SPACINGS: Final[tuple[Spacing, ...]] = ("linear", "log")
 
@@ -34,7 +36,9 @@ def columns_of(record: JobRecord, cell: Cell) -> tuple[str, ...]:
     """Return the columns there are where `cell` is; refuses a stack or an element that does not exist."""
     if cell.row != WHOLE_ROW:
         element = element_at(record, cell.stack, cell.row)
-        return ("material", "thickness") if isinstance(element, LayerRecord) else tuple(SHEET_PARTS)
+        repeat = ("repeat",) if group_of(record.stacks[cell.stack], cell.row) is not None else ()
+        own = ("material", "thickness") if isinstance(element, LayerRecord) else sheet_columns(element)
+        return (*own, *repeat)
     if not cell.of_job:
         stack_at(record, cell.stack)
         return STACK_COLUMNS
@@ -72,6 +76,8 @@ def place_words(cell: Cell) -> str:
     ('thickness of layer 2', 'last frequency')
     """
     if cell.row != WHOLE_ROW:
+        if cell.column == "repeat":
+            return f"repetitions of the group at {cell.row + 1}"
         kind = "layer" if cell.column in ("material", "thickness") else "sheet"
         return f"{cell.column} of {kind} {cell.row + 1}"
     if cell.column.startswith("material:"):
@@ -91,10 +97,13 @@ def value_text(record: JobRecord, cell: Cell) -> str:
     """
     check_cell(record, cell)
     if cell.row != WHOLE_ROW:
+        if cell.column == "repeat":
+            group = group_of(record.stacks[cell.stack], cell.row)
+            return str(group.repeat) if group is not None else ""
         element = element_at(record, cell.stack, cell.row)
         if isinstance(element, LayerRecord):
             return element.material if cell.column == "material" else element.thickness.text
-        part = _part(element, cell.column)
+        part = part_of(element, cell.column)
         return part.text if part is not None else ""
     if not cell.of_job:
         return cast(str, getattr(stack_at(record, cell.stack), cell.column))
@@ -135,28 +144,25 @@ def with_text(record: JobRecord, cell: Cell, text: str) -> JobRecord:
 
 
 def _with_element_text(record: JobRecord, cell: Cell, text: str) -> JobRecord:
+    stack = stack_at(record, cell.stack)
+    if cell.column == "repeat":
+        wanted = group_of(stack, cell.row)
+        repeat = read_points(text)
+        groups = tuple(replace(group, repeat=repeat) if group is wanted else group for group in stack.groups)
+        return with_stack(record, cell.stack, replace(stack, groups=groups))
     element = element_at(record, cell.stack, cell.row)
     if isinstance(element, SheetRecord):
-        return with_element(record, cell.stack, cell.row, _with_part(element, cell.column, text))
+        return with_element(record, cell.stack, cell.row, with_part(element, cell.column, text))
     if cell.column == "material":
         record, name = with_material(record, text)
         return with_element(record, cell.stack, cell.row, replace(element, material=name))
-    thickness = read_like(element.thickness, text, Dimension.LENGTH)
+    if counts_plies(text):
+        thickness = read_plies(text, ply_of(record.material(element.material)))
+    else:
+        counted = counts_plies(element.thickness.text)
+        old = measure(element.thickness.value, Dimension.LENGTH) if counted else element.thickness
+        thickness = read_like(old, text, Dimension.LENGTH)
     return with_element(record, cell.stack, cell.row, replace(element, thickness=thickness))
-
-
-def _part(sheet: SheetRecord, part: str) -> Measure | None:
-    return {"resistance": sheet.resistance, "inductance": sheet.inductance, "capacitance": sheet.capacitance}[part]
-
-
-def _with_part(sheet: SheetRecord, part: str, text: str) -> SheetRecord:
-    """Return `sheet` with one part set; an empty text takes the part away."""
-    value = read_like(_part(sheet, part), text, SHEET_PARTS[part].dimension) if text.strip() else None
-    if part == "resistance":
-        return replace(sheet, resistance=value)
-    if part == "inductance":
-        return replace(sheet, inductance=value)
-    return replace(sheet, capacitance=value)
 
 
 def _with_stack_text(record: JobRecord, cell: Cell, text: str) -> JobRecord:

@@ -15,7 +15,10 @@ WHOLE_ROW: Final = -1
 WHOLE_JOB: Final = -1
 """The stack of a cell that belongs to no stack; `Cell` sets it by itself."""
 
-ELEMENT_COLUMNS: Final = ("material", "thickness", "resistance", "inductance", "capacitance")
+ELEMENT_COLUMNS: Final = (
+    *("material", "thickness", "resistance", "conductivity", "inductance", "capacitance"),
+    "repeat",
+)
 STACK_COLUMNS: Final = ("name", "front", "back")
 
 
@@ -33,11 +36,12 @@ class Cell:
     row
         Index of the element, or -1 for a place that belongs to no element.
     column
-        Of an element ``material``, ``thickness``, ``resistance``, ``inductance``, ``capacitance``; of a stack
-        ``name``, ``front``, ``back``; of the job ``title``, ``notes``, ``sweep.frequency``,
-        ``sweep.frequency.start`` (``stop``, ``points``, ``spacing``), ``sweep.angle``, ``sweep.angle.start``
-        (``stop``, ``points``) and ``material:skin.permittivity`` (``name``, ``label``, ``source``, any constant of
-        its model, and ``terms[0].relaxation_time`` of a list).
+        Of an element ``material``, ``thickness``, ``resistance``, ``conductivity``, ``inductance``,
+        ``capacitance``, and ``repeat`` of the group it belongs to; of a stack ``name``, ``front``, ``back``; of the
+        job ``title``, ``notes``, ``sweep.frequency``, ``sweep.frequency.start`` (``stop``, ``points``,
+        ``spacing``), ``sweep.angle``, ``sweep.angle.start`` (``stop``, ``points``) and
+        ``material:skin.permittivity`` (``name``, ``label``, ``source``, any constant of its model, and
+        ``terms[0].relaxation_time`` of a list).
 
     Examples
     --------

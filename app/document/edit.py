@@ -6,6 +6,7 @@ from dataclasses import dataclass, replace
 from app.document.document import Cell, Document, Draft, Selection
 from stackcore.errors import Fault, JobError
 from stackcore.job import Job
+from stackcore.job.plies import with_plies
 from stackcore.job.records import ElementRecord, JobRecord, StackRecord
 
 Select = Selection | Callable[[Document], Selection]
@@ -49,6 +50,7 @@ class Edit:
 def with_record(document: Document, record: JobRecord, drafts: Iterable[Draft] | None = None) -> Document:
     """Return the document of `record`, resolved anew; raises JobError with every fault when it does not resolve."""
     kept = document.drafts if drafts is None else tuple(drafts)
+    record = with_plies(record)
     job = document.job if record == document.record else Job(record)
     return Document(job, kept)
 

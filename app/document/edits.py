@@ -4,6 +4,7 @@ One named function an edit; each returns an `Edit`. A later capability adds a fi
 names here.
 """
 
+from app.document.condition_edits import add_condition, change_condition, remove_condition, rename_condition
 from app.document.constant_edits import add_row, remove_row, set_constant, set_model
 from app.document.edit import Edit
 from app.document.element_edits import (
@@ -38,37 +39,59 @@ from app.document.stack_edits import (
     set_back,
     set_front,
 )
+from app.document.structure_edits import (
+    fill_down,
+    group_rows,
+    mirror,
+    reverse,
+    set_enabled,
+    set_locked,
+    set_repeat,
+    ungroup,
+)
 from app.document.typed import type_into
 
 __all__ = [
     "Edit",
+    "add_condition",
     "add_layer",
     "add_material",
     "add_row",
     "add_sheet",
     "add_stack",
+    "change_condition",
     "change_material",
     "delete",
     "delete_stack",
     "duplicate",
     "duplicate_stack",
+    "fill_down",
+    "group_rows",
+    "mirror",
     "move",
+    "remove_condition",
     "remove_material",
     "remove_row",
+    "rename_condition",
     "rename_material",
     "rename_stack",
     "replace_material",
+    "reverse",
     "set_angle_grid",
     "set_angles",
     "set_back",
     "set_constant",
+    "set_enabled",
     "set_frequency_grid",
     "set_frequency_list",
     "set_front",
+    "set_locked",
     "set_model",
     "set_notes",
+    "set_repeat",
     "set_thickness",
     "set_title",
     "type_into",
+    "ungroup",
     "use_library_entry",
 ]

@@ -1,6 +1,6 @@
 """Edits of the elements of a stack: add, remove, rearrange, and set one value."""
 
-from collections.abc import Hashable, Iterable
+from collections.abc import Hashable, Iterable, Sequence
 from dataclasses import replace
 from math import isfinite
 from typing import Final
@@ -18,6 +18,7 @@ from app.document.edit import (
     without_draft,
 )
 from app.document.library import with_material
+from stackcore.job.groups import rearranged
 from stackcore.job.records import ElementRecord, JobRecord, LayerRecord, SheetRecord
 from stackcore.units import Dimension, Measure, format_value, measure, parse_measure
 
@@ -44,6 +45,8 @@ def set_thickness(stack: int, row: int, metres: float, *, merge_key: Hashable | 
         element = element_at(document.record, stack, row)
         if not isinstance(element, LayerRecord):
             raise refuse(cell.path, "a sheet has no thickness", "a layer")
+        if element.locked:
+            raise refuse(cell.path, "the thickness is locked", "unlock it first, or type the thickness")
         if not isfinite(value):
             raise refuse(cell.path, f"{text} is not a thickness", "0 or more, for example 2 mm")
         layer = replace(element, thickness=measure(value, Dimension.LENGTH))
@@ -96,7 +99,7 @@ def delete(stack: int, rows: Iterable[int]) -> Edit:
 
     def change(document: Document) -> Document:
         origins = _origins(document.record, stack, gone)
-        return _rearranged(document, stack, [row for row in origins if row not in gone])
+        return with_rows(document, stack, [row for row in origins if row not in gone])
 
     return Edit(f"delete {_words(gone)}", change, Selection(stack, gone[:1]))
 
@@ -108,7 +111,7 @@ def duplicate(stack: int, rows: Iterable[int]) -> Edit:
 
     def change(document: Document) -> Document:
         origins = _origins(document.record, stack, copied)
-        return _rearranged(document, stack, [*origins[:behind], *copied, *origins[behind:]])
+        return with_rows(document, stack, [*origins[:behind], *copied, *origins[behind:]])
 
     selected = tuple(range(behind, behind + len(copied)))
     return Edit(f"duplicate {_words(copied)}", change, Selection(stack, selected))
@@ -127,7 +130,7 @@ def move(stack: int, rows: Iterable[int], before_row: int) -> Edit:
         if not 0 <= before_row <= len(origins):
             raise refuse(f"stacks[{stack}]", f"no place before element {before_row}", f"0 to {len(origins)}")
         rest = [row for row in origins if row not in moved]
-        return _rearranged(document, stack, [*rest[:start], *moved, *rest[start:]])
+        return with_rows(document, stack, [*rest[:start], *moved, *rest[start:]])
 
     selected = tuple(range(start, start + len(moved)))
     return Edit(f"move {_words(moved)}", change, Selection(stack, selected))
@@ -143,15 +146,17 @@ def with_inserted(
         raise refuse(f"stacks[{stack}]", f"no place before element {row}", f"0 to {count}")
     elements = (*old.elements[:row], *new, *old.elements[row:])
     origins = [*range(row), *(None for _ in new), *range(row, count)]
-    record = with_stack(record, stack, replace(old, elements=elements))
+    groups = rearranged(old.groups, origins)
+    record = with_stack(record, stack, replace(old, elements=elements, groups=groups))
     return with_record(document, record, follow_rows(document.drafts, stack, origins))
 
 
-def _rearranged(document: Document, stack: int, origins: list[int]) -> Document:
-    """Return the document in which each row of a stack is the one that `origins` names."""
+def with_rows(document: Document, stack: int, origins: Sequence[int]) -> Document:
+    """Return the document in which each row of a stack is the one `origins` names; groups follow their rows."""
     old = stack_at(document.record, stack)
     elements = tuple(old.elements[row] for row in origins)
-    record = with_stack(document.record, stack, replace(old, elements=elements))
+    groups = rearranged(old.groups, origins)
+    record = with_stack(document.record, stack, replace(old, elements=elements, groups=groups))
     return with_record(document, record, follow_rows(document.drafts, stack, origins))
 
 

@@ -9,6 +9,7 @@ from stackcore.job.groups import items_of
 from stackcore.job.limits import PARTS_OF_KIND
 from stackcore.job.materials import library_model
 from stackcore.job.migrations import VERSION
+from stackcore.job.plies import counts_plies
 from stackcore.job.records import (
     AngleGrid,
     ConditionRecord,
@@ -128,7 +129,9 @@ def _item(stack: StackRecord, group: Group | None, rows: range) -> str:
 def _element(element: ElementRecord) -> dict[str, object]:
     members: dict[str, object]
     if isinstance(element, LayerRecord):
-        members = {"layer": element.material, "thickness": written_measure(element.thickness, Dimension.LENGTH)}
+        text = element.thickness.text
+        thickness = text if counts_plies(text) else written_measure(element.thickness, Dimension.LENGTH)
+        members = {"layer": element.material, "thickness": thickness}
     else:
         members = {"sheet": element.kind}
         for name, limits in PARTS_OF_KIND[element.kind].items():

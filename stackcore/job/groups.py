@@ -61,7 +61,8 @@ def file_path(path: str, stacks: Sequence[StackRecord]) -> str:
     row = int(match["row"])
     for place, (group, rows) in enumerate(items_of(stacks[int(match["stack"])])):
         if row in rows:
-            inner = f".elements[{row - rows.start}]" if group is not None else ""
+            deeper = group is not None and match["rest"] != ".repeat"
+            inner = f".elements[{row - rows.start}]" if deeper else ""
             return f"{match['head']}[{place}]{inner}{match['rest']}"
     return path
 

@@ -236,7 +236,7 @@ UNITS: Final[dict[str, Unit]] = {
     **_named(Dimension.DENSITY, "1/cm3", Fraction(10**6), "/cm3", "1/cm^3", "/cm^3", "1/cm³", "/cm³", "cm^-3"),
     **_named(Dimension.MASS_DENSITY, "kg/m3", Fraction(1), "kg/m^3", "kg/m³"),
     **_named(Dimension.MASS_DENSITY, "g/cm3", Fraction(1000), "g/cm^3", "g/cm³", "g/cc", "kg/l", "g/ml"),
-    **_named(Dimension.MASS_DENSITY, "lb/ft3", Fraction(45359237, 10**8) / (_INCH * 12) ** 3, "lb/ft^3", "pcf"),
+    **_named(Dimension.MASS_DENSITY, "pcf", Fraction(45359237, 10**8) / (_INCH * 12) ** 3),
     **_named(Dimension.NUMBER, "%", Fraction(1, 100)),
 }
 """Name as typed, after `stackcore.units.spelling.plain` -> unit."""

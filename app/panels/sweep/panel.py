@@ -229,7 +229,7 @@ class SweepPanel(QWidget):
         self._show_sweep()
 
     def _elements(self) -> Sequence[tuple[str, str]]:
-        return element_offers(self._session.record, self._session.selection.stack)
+        return element_offers(self._session.job, self._session.selection.stack)
 
 
 def _spacing(name: str) -> Spacing:

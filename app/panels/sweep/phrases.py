@@ -4,7 +4,9 @@ import re
 from typing import Final
 
 from app.document.reading import list_text
-from stackcore.job.records import AngleGrid, JobRecord, LayerRecord
+from app.series.rows import places_of_row
+from stackcore.job import Job
+from stackcore.job.records import AngleGrid, LayerRecord
 from stackcore.quantities import ElementAbsorptance
 from stackcore.units import Measure
 
@@ -31,14 +33,17 @@ def angles_text(angle: AngleGrid | tuple[Measure, ...]) -> str:
     return f"{numbers} {units.pop()}"
 
 
-def element_offers(record: JobRecord, stack: int) -> tuple[tuple[str, str], ...]:
+def element_offers(job: Job, stack: int) -> tuple[tuple[str, str], ...]:
     """Return for each element of a stack the name of its absorptance and its words: ``2  skin, 0.9 mm``."""
-    offers = []
+    record, offers = job.record, []
     for row, element in enumerate(record.stacks[stack].elements):
+        places = places_of_row(job.rows[stack], row)
+        if not places:
+            continue
         words = f"{row + 1}  sheet"
         if isinstance(element, LayerRecord):
             material = record.material(element.material)
             label = material.label if material is not None and material.label else element.material
             words = f"{row + 1}  {label}, {element.thickness.text}"
-        offers.append((ElementAbsorptance(row).name, words))
+        offers.append((ElementAbsorptance(*places).name, words))
     return tuple(offers)

@@ -32,6 +32,7 @@ from app.panels.wall.parts import LayerPart, Wall, wall_of
 from app.panels.wall.pens import FontMeasure
 from app.panels.wall.scale import ThicknessScale
 from app.panels.wall.wave import Wave, wave_in
+from app.series.rows import elements_by_row
 from stackcore.errors import Fault, Severity
 from stackcore.job.records import SweepRecord
 from stackcore.stack import Stack
@@ -162,13 +163,24 @@ class WallPanel(QWidget):
     def _wave_now(self, stack: Stack, sweep: SweepRecord, state: ViewState) -> Wave:
         polarization, answer = state.active_polarization, self._answer
         if answer is None or len(answer.at_marker.stack.elements) != len(stack.elements):
-            return wave_in(stack, state.marker_frequency(sweep), state.marker_angle(sweep), polarization)
+            place = (state.marker_frequency(sweep), state.marker_angle(sweep))
+            return wave_in(stack, *place, polarization, rows=self._rows, count=self._count)
         frequency, angle = answer.question.marker_frequency, answer.question.marker_angle
-        return wave_in(stack, frequency, angle, polarization, answer.at_marker, stale=self._stale)
+        response = answer.at_marker
+        point = (frequency, angle, polarization, response)
+        return wave_in(stack, *point, stale=self._stale, rows=self._rows, count=self._count)
 
     @property
     def _solved(self) -> Stack:
         return self._session.job.stacks[self._stack]
+
+    @property
+    def _rows(self) -> tuple[int, ...]:
+        return self._session.job.rows[self._stack]
+
+    @property
+    def _count(self) -> int:
+        return len(self._session.record.stacks[self._stack].elements)
 
     def _measure(self) -> FontMeasure:
         return FontMeasure(QFontMetricsF(self.font(), self))
@@ -308,7 +320,7 @@ class WallPanel(QWidget):
 
     def _take(self, event: QKeyEvent) -> bool:
         """Do what a key asks for; returns False for keys that mean nothing here."""
-        rows, count = self._session.selection.rows, len(self._solved.elements)
+        rows, count = self._session.selection.rows, self._count
         wanted = keys.row_wanted(event.key(), event.modifiers(), rows, count)
         steps = keys.steps_wanted(event.key(), event.modifiers())
         if wanted is not None:
@@ -359,7 +371,9 @@ class WallPanel(QWidget):
     def _show_tip(self, event: QHelpEvent) -> None:
         layout, wave, measure = self.layout_now, self.wave, self._measure()
         written = captions(layout, rays_in(layout, wave, measure), wave, measure)
-        text = tips.tip_at(layout, wave, self._solved, written, event.pos().x(), event.pos().y())
+        elements = elements_by_row(self._session.job, self._stack)
+        x, y = event.pos().x(), event.pos().y()
+        text = tips.tip_at(layout, wave, self._solved, written, x, y, elements)
         QToolTip.showText(event.globalPos(), text, self)
 
     def focusInEvent(self, event: QFocusEvent) -> None:

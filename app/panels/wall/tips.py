@@ -12,19 +12,35 @@ from app.series.texts import frequency_text
 from stackcore.conventions import CONVENTIONS
 from stackcore.media.base import AbstractMedium
 from stackcore.quantities import QUANTITIES
-from stackcore.stack import Layer, Stack
+from stackcore.stack import Element, Layer, Stack
 
+LEFT_OUT: Final = "Left out of the computation."
 DRAG_HINT: Final = "Drag to change the thickness."
 
 
-def tip_at(layout: WallLayout, wave: Wave, stack: Stack, written: Sequence[Caption], x: float, y: float) -> str:
-    """Return what to say of the place (x, y), empty where there is nothing to say."""
+Elements = Sequence[Element | None]
+"""What stands for each row of the wall; None for a row that is left out."""
+
+
+def tip_at(
+    layout: WallLayout,
+    wave: Wave,
+    stack: Stack,
+    written: Sequence[Caption],
+    x: float,
+    y: float,
+    elements: Elements | None = None,
+) -> str:
+    """Return what to say of the place (x, y), empty where there is nothing to say.
+
+    `elements` are those of the rows; without them every element of `stack` is a row.
+    """
     caption = next((one for one in written if one.row is None and _holds(one, x, y)), None)
     if caption is not None:
         return _caption_tip(caption)
     row = row_at(layout, x, y)
     if row is not None:
-        return element_tip(layout, wave, stack, row)
+        return element_tip(layout, wave, stack.elements if elements is None else elements, row)
     if not layout.body.top <= y <= layout.height:
         return ""
     if x < layout.body.left:
@@ -43,10 +59,12 @@ def row_at(layout: WallLayout, x: float, y: float) -> int | None:
     return layout.row_at(x) if y >= layout.body.top else None
 
 
-def element_tip(layout: WallLayout, wave: Wave, stack: Stack, row: int) -> str:
+def element_tip(layout: WallLayout, wave: Wave, elements: Elements, row: int) -> str:
     """Return name, thickness, material values at the marker, direction of the wave and absorbed share."""
-    part, element = layout.wall.elements[row], stack.elements[row]
+    part, element = layout.wall.elements[row], elements[row]
     lines = [part_text(row, part)]
+    if element is None:
+        return "\n".join([*lines, LEFT_OUT])
     if isinstance(element, Layer):
         lines.append(f"{medium_text(element.medium, wave.frequency)} at {frequency_text(wave.frequency)}")
         course = wave.courses.elements[row]

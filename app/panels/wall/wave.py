@@ -1,12 +1,14 @@
 """What the wave does at the marker: frequency, angle, polarization, ways and powers as one value."""
 
 import sys
-from dataclasses import dataclass
+from collections.abc import Sequence
+from dataclasses import dataclass, replace
 
 import numpy as np
 
 from app.panels.wall.rays import Powers
 from app.panels.wall.refraction import Directions, directions
+from app.series.rows import sums_by_row
 from app.series.texts import angle_text, frequency_text
 from stackcore.polarizations import polarization as named
 from stackcore.propagation.response import Response
@@ -52,12 +54,25 @@ def wave_in(
     response: Response | None = None,
     *,
     stale: bool = False,
+    rows: Sequence[int] | None = None,
+    count: int = 0,
 ) -> Wave:
-    """Return the wave in `stack`, with the powers of a response at one point when it has as many elements."""
+    """Return the wave in `stack`, with the powers of a response at one point when it has as many elements.
+
+    With `rows`, the row that each element stands for, everything is told for each of `count` rows: a row that is
+    repeated has the way of its first element and the losses of all, one that is left out has neither.
+    """
     powers = None
     if response is not None and len(response.stack.elements) == len(stack.elements):
         powers = powers_of(response, polarization)
-    return Wave(frequency, angle, polarization, directions(stack, frequency, angle), powers, stale)
+    courses = directions(stack, frequency, angle)
+    if rows is not None:
+        firsts = [rows.index(row) if row in rows else None for row in range(count)]
+        ways = tuple(courses.elements[place] if place is not None else None for place in firsts)
+        courses = replace(courses, elements=ways)
+        if powers is not None:
+            powers = replace(powers, absorbed=sums_by_row(rows, powers.absorbed, count))
+    return Wave(frequency, angle, polarization, courses, powers, stale)
 
 
 def powers_of(response: Response, polarization: str) -> Powers:

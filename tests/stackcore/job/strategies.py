@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
+from dataclasses import replace
 from typing import Final
 
 from hypothesis import strategies as st
@@ -10,14 +11,17 @@ from hypothesis import strategies as st
 from stackcore.job.limits import SHEET_PARTS
 from stackcore.job.records import (
     AngleGrid,
+    ConditionRecord,
     ElementRecord,
     FrequencyGrid,
+    Group,
     JobRecord,
     LayerRecord,
     MaterialRecord,
     SheetRecord,
     Spacing,
     StackRecord,
+    StateRecord,
     SweepRecord,
 )
 from stackcore.media.models import MODELS
@@ -48,18 +52,69 @@ def materials(draw: st.DrawFn, name: str, others: Sequence[str]) -> MaterialReco
     spread = tuple(
         (one.name, draw(st.floats(0, 0.5))) for one in model.constants if one.varies and draw(st.booleans())
     )
-    return MaterialRecord(name, label, model.name, "", constants, source, ends, certainty, spread, note)
+    plain = MaterialRecord(name, label, model.name, "", constants, source, ends, certainty, spread, note)
+    state_names = draw(st.lists(names, max_size=2, unique=True))
+    states = tuple(StateRecord(one, constants, draw(texts), draw(texts)) for one in state_names)
+    return replace(
+        plain,
+        states=states,
+        density=draw(st.none() | measures(Dimension.MASS_DENSITY, 0.1, 3e4)),
+        price=draw(st.none() | st.floats(0, 1e6)),
+        ply_thickness=draw(st.none() | measures(Dimension.LENGTH, 1e-6, 1e-2)),
+    )
 
 
 @st.composite
 def elements(draw: st.DrawFn, known: list[str]) -> ElementRecord:
-    """Return a layer of one of the materials `known`, or a sheet."""
+    """Return a layer of one of the materials `known`, a sheet or a film; some left out, some locked."""
+    enabled, locked = draw(st.integers(0, 4)) > 0, draw(st.integers(0, 4)) == 0
     if draw(st.booleans()):
-        return LayerRecord(draw(st.sampled_from(known)), draw(measures(Dimension.LENGTH, 0, 1)))
+        return LayerRecord(draw(st.sampled_from(known)), draw(measures(Dimension.LENGTH, 0, 1)), enabled, locked)
+    if draw(st.integers(0, 2)) == 0:
+        conductivity = draw(measures(Dimension.CONDUCTIVITY, 1.0, 1e8))
+        thickness = draw(measures(Dimension.LENGTH, 1e-9, 1e-6))
+        return SheetRecord("film", conductivity=conductivity, thickness=thickness, enabled=enabled, locked=locked)
     ranges = {"resistance": (1e-3, 1e6), "inductance": (1e-15, 1e-3), "capacitance": (1e-18, 1e-3)}
     present = draw(st.sets(st.sampled_from(tuple(SHEET_PARTS)), min_size=1))
     parts = {part: draw(measures(SHEET_PARTS[part].dimension, *ranges[part])) for part in sorted(present)}
-    return SheetRecord("series", **parts)
+    return SheetRecord("series", **parts, enabled=enabled, locked=locked)
+
+
+@st.composite
+def groups(draw: st.DrawFn, count: int) -> tuple[Group, ...]:
+    """Return groups of `count` rows, side by side."""
+    found: list[Group] = []
+    row = 0
+    while row < count:
+        last = draw(st.integers(row, count - 1))
+        if draw(st.booleans()):
+            found.append(Group(row, last, draw(st.integers(1, 5))))
+        row = last + 1
+    return tuple(found)
+
+
+@st.composite
+def stacks(draw: st.DrawFn, name: str, known: list[str]) -> StackRecord:
+    """Return a stack of layers, sheets and groups."""
+    inside = tuple(draw(st.lists(elements(known), max_size=4)))
+    front, back = draw(st.sampled_from(("air", "vacuum"))), draw(st.sampled_from((*known, "metal")))
+    return StackRecord(name, inside, front, back, draw(groups(len(inside))))
+
+
+@st.composite
+def conditions(draw: st.DrawFn, name: str, known: list[str], states: list[str]) -> ConditionRecord:
+    """Return a condition that adds, exchanges and multiplies."""
+    exchanged = draw(st.lists(st.sampled_from(known), max_size=2, unique=True))
+    thicker = draw(st.lists(st.sampled_from(known), max_size=2, unique=True))
+    return ConditionRecord(
+        name,
+        tuple(draw(st.lists(elements(known), max_size=2))),
+        tuple(draw(st.lists(elements(known), max_size=1))),
+        tuple((one, draw(st.sampled_from(known))) for one in exchanged),
+        tuple(draw(st.lists(st.sampled_from(states), max_size=2, unique=True)) if states else ()),
+        tuple((one, draw(st.floats(0, 10))) for one in thicker),
+        draw(texts),
+    )
 
 
 @st.composite
@@ -84,15 +139,10 @@ def records(draw: st.DrawFn) -> JobRecord:
     keys = draw(st.lists(names, max_size=4, unique=True))
     known = [*keys, "air", "vacuum"]
     stack_names = draw(st.lists(names, min_size=1, max_size=3, unique=True))
-    stacks = [
-        StackRecord(
-            name,
-            tuple(draw(st.lists(elements(known), max_size=4))),
-            draw(st.sampled_from(("air", "vacuum"))),
-            draw(st.sampled_from((*known, "metal"))),
-        )
-        for name in stack_names
-    ]
+    built = tuple(draw(stacks(name, known)) for name in stack_names)
     # Each may be made of those before it; a chain of any length would be refused as too deep.
     made = tuple(draw(materials(key, keys[:place])) for place, key in enumerate(keys))
-    return JobRecord(draw(texts), tuple(stacks), draw(sweeps()), made, draw(texts))
+    states = [state.name for material in made for state in material.states]
+    condition_names = draw(st.lists(names, max_size=2, unique=True))
+    weather = tuple(draw(conditions(name, known, states)) for name in condition_names)
+    return JobRecord(draw(texts), built, draw(sweeps()), made, draw(texts), weather)

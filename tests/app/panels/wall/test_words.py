@@ -86,7 +86,7 @@ def test_a_text_that_is_no_value_marks_its_part_and_leaves_the_last_thickness() 
     assert [part.faulty for part in drawn.elements] == [True, False, False, False]
     assert drawn.elements[0].text == "1 mm"
     layout, wave, stack = scene(document)
-    assert "no value yet" in tips.element_tip(layout, wave, stack, 0)
+    assert "no value yet" in tips.element_tip(layout, wave, stack.elements, 0)
 
 
 def test_a_bare_number_gets_its_unit() -> None:
