@@ -20,7 +20,7 @@ LONGEST_TEXT: Final = 100
 
 _NUMBER: Final = r"(?:[0-9][0-9.,]*|[.,][0-9][0-9.,]*)(?:[eE][+-]?[0-9]+)?"
 _INVERSE: Final = r"(?:1 *)?/ *(?:c?m\^?3|c?m³|s)(?!\w)|(?:s\^-1|c?m\^-3)(?!\w)"
-_UNIT: Final = rf"{_INVERSE}|[^\W\d_]\w*(?: */ *[^\W\d_]\w*)?|% *[A-Za-z]*|° *[CcFf]?|\""
+_UNIT: Final = rf"{_INVERSE}|[^\W\d_]\w*(?: */ *[^\W\d_]\w*(?:\^\d)?)?|% *[A-Za-z]*|° *[CcFf]?|\""
 _TOKEN: Final = re.compile(rf" *(?:(?P<number>{_NUMBER})|(?P<unit>{_UNIT})|(?P<sign>[-+*/()]))")
 _SIMPLE: Final = re.compile(rf"(?P<number>[-+]?{_NUMBER}) *(?P<unit>{_UNIT})?")
 
