@@ -7,13 +7,17 @@ import sys
 from collections.abc import Callable, Sequence
 from typing import Final
 
-from stackcore.cli import materials, sweep
+from stackcore.cli import materials, sweep, vary
 from stackcore.cli.telling import DONE, GIVEN_UP, let_go_of_standard_output, one_line, tell
 from stackcore.errors import Fault, SlabwrightError, nearest
 
 __all__ = ["main"]
 
-COMMANDS: Final[dict[str, Callable[[Sequence[str]], int]]] = {"sweep": sweep.main, "materials": materials.main}
+COMMANDS: Final[dict[str, Callable[[Sequence[str]], int]]] = {
+    "sweep": sweep.main,
+    "vary": vary.main,
+    "materials": materials.main,
+}
 """Name -> function of the arguments behind it. What is not here belongs to the window."""
 
 WINDOW_COMMANDS: Final = ("picture",)
@@ -21,6 +25,7 @@ WINDOW_COMMANDS: Final = ("picture",)
 HELP: Final = """\
 usage: slabwright [JOB]
        slabwright sweep JOB --csv OUT [--stack NAME]
+       slabwright vary JOB --csv OUT --vary PLACE --from VALUE --to VALUE --points N [--stack NAME]
        slabwright materials [WORD ...] [--at F,F] [--csv OUT] [--check FILE]
        slabwright picture JOB --png OUT [--size WxH]
 
@@ -28,6 +33,7 @@ Plane waves through flat multilayer walls.
 
   slabwright [JOB]   open the window, with a job file if one is named
   sweep              compute every stack of a job over its sweep and write a table
+  vary               the same while one number of the job runs through a range
   materials          list, search and show the material library; check materials of a file
   picture            draw the window with a job to a PNG, without a display
 

@@ -1,6 +1,7 @@
 """``slabwright materials --check``: the health of every material in a file."""
 
 from collections.abc import Callable, Iterator
+from dataclasses import dataclass
 from pathlib import Path
 from typing import TYPE_CHECKING, Final
 
@@ -11,11 +12,23 @@ from stackcore.errors import Fault
 if TYPE_CHECKING:
     from stackcore.arrays import FloatArray
     from stackcore.media.base import AbstractMedium
+    from stackcore.media.library_entry import LibraryEntry
 
 _LARGEST: Final = 64 * 2**20
 """Bytes of a file that is looked at at all."""
 
-Named = tuple[str, "AbstractMedium"]
+
+@dataclass(frozen=True, slots=True)
+class Checked:
+    """A material to be checked: its place in the file, its medium, and the library entry it is or came from.
+
+    `among` are the entries to look for other editions in; None takes the library.
+    """
+
+    place: str
+    medium: "AbstractMedium"
+    entry: "str | LibraryEntry" = ""
+    among: "tuple[LibraryEntry, ...] | None" = None
 
 
 def check_file(path: str, frequencies: "FloatArray | None") -> int:
@@ -33,37 +46,41 @@ def check_file(path: str, frequencies: "FloatArray | None") -> int:
             content = file.read(_LARGEST)
     except OSError as error:
         return tell([unreadable(path, error, Path(path).suffix, "a job file, a library file or a table")])
-    readers: dict[str, Callable[[str, bytes], tuple[list[Named], list[Fault], FloatArray | None]]]
+    readers: dict[str, Callable[[str, bytes], tuple[list[Checked], list[Fault], FloatArray | None]]]
     readers = {".slabjob": _of_job, ".json": _of_job, ".toml": _of_library}
     media, faults, sweep = readers.get(Path(path).suffix.casefold(), _of_columns)(path, content)
     status = DONE
-    for name, medium in media:
-        for line, is_error in _lines(name, medium, sweep if frequencies is None else frequencies):
+    for checked in media:
+        for line, is_error in _lines(checked, sweep if frequencies is None else frequencies):
             print(line)
             status = NO if is_error else status
     return tell(faults) if faults else status
 
 
-def _lines(name: str, medium: "AbstractMedium", frequencies: "FloatArray | None") -> Iterator[tuple[str, bool]]:
+def _lines(checked: Checked, frequencies: "FloatArray | None") -> Iterator[tuple[str, bool]]:
     """Yield each finding of a medium as a line, and whether it is an error."""
-    from stackcore.media.health import check_medium
+    from stackcore.media.health import check_medium, edition_findings
 
-    findings = check_medium(medium, frequencies)
+    findings = [*check_medium(checked.medium, frequencies)]
+    findings += edition_findings(checked.entry, frequencies, checked.among) if checked.entry else ()
     for finding in findings:
-        yield f"{name}: {finding}", finding.severity == "error"
+        yield f"{checked.place}: {finding}", finding.severity == "error"
     if not findings:
-        yield f"{name}: nothing speaks against it", False
+        yield f"{checked.place}: nothing speaks against it", False
 
 
-def _of_job(path: str, content: bytes) -> tuple[list[Named], list[Fault], "FloatArray | None"]:
+def _of_job(path: str, content: bytes) -> tuple[list[Checked], list[Fault], "FloatArray | None"]:
     from stackcore.job import Job, job_from_json
 
     job = Job(job_from_json(content))  # its faults are told by who called
-    media = [(f"materials.{material.name}", job.media[material.name]) for material in job.materials]
+    media = [
+        Checked(f"materials.{material.name}", job.media[material.name], material.library)
+        for material in job.materials
+    ]
     return media, [], job.sweep.frequencies()
 
 
-def _of_library(path: str, content: bytes) -> tuple[list[Named], list[Fault], "FloatArray | None"]:
+def _of_library(path: str, content: bytes) -> tuple[list[Checked], list[Fault], "FloatArray | None"]:
     from stackcore.errors import LibraryError
     from stackcore.media.library import read_library
     from stackcore.media.library_entry import media_of
@@ -71,19 +88,19 @@ def _of_library(path: str, content: bytes) -> tuple[list[Named], list[Fault], "F
 
     parsed = parse_family(Path(path).stem, content, path)
     own, library = {draft.key: draft for draft in parsed.drafts}, read_library()
-    media: list[Named] = []
-    faults = list(parsed.faults)
+    entries, faults = [], list(parsed.faults)
     for draft in parsed.drafts:
         try:
-            entry = draft.entry(media_of(draft, lambda key: own.get(key) or library.draft(key)))
+            entries.append(draft.entry(media_of(draft, lambda key: own.get(key) or library.draft(key))))
         except LibraryError as error:
             faults += error.faults
-        else:
-            media.append((draft.key, entry.medium))
-    return media, faults, None
+    # Of an edition that stands in the file and in the library, the file has the word.
+    known = library.family(parsed.key).entries if parsed.key in library.families() else ()
+    among = (*entries, *(entry for entry in known if entry.key not in own))
+    return [Checked(entry.key, entry.medium, entry, among) for entry in entries], faults, None
 
 
-def _of_columns(path: str, content: bytes) -> tuple[list[Named], list[Fault], "FloatArray | None"]:
+def _of_columns(path: str, content: bytes) -> tuple[list[Checked], list[Fault], "FloatArray | None"]:
     from stackcore.media.columns import read_columns
 
     reading = read_columns(content)
@@ -102,4 +119,4 @@ def _of_columns(path: str, content: bytes) -> tuple[list[Named], list[Fault], "F
         return [], faults or [Fault(path, "holds no table of a material", "columns with headings")], None
     for sentence in reading.understood:
         print(f"{path}: note: {sentence}")
-    return [(path, reading.table)], faults, None
+    return [Checked(path, reading.table)], faults, None

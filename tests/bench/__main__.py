@@ -1,4 +1,4 @@
-"""Print the figures: ``python -m tests.bench [solver | start | window] ...``, all of them without a name."""
+"""Print the figures: ``python -m tests.bench [solver | maps | start | window] ...``, all of them without a name."""
 
 import importlib
 import os
@@ -6,7 +6,7 @@ import sys
 
 os.environ.setdefault("QT_QPA_PLATFORM", "offscreen")
 
-SUBJECTS = ("solver", "start", "window")
+SUBJECTS = ("solver", "maps", "start", "window")
 
 
 def main(names: list[str]) -> int:

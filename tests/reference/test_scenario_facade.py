@@ -70,8 +70,8 @@ def test_sixty_degrees() -> None:
 def test_the_gap_is_a_handle(gigahertz: float, least: float, at: float, most: float) -> None:
     """Gaps from 6 to 30 mm swing the loss by 7.5 and 14.2 dB; the least is at the gap given.
 
-    At 2.45 GHz the loss still rises at the end of the range: the reference's half-millimetre steps end before 30
-    mm, where it would be 36.18 dB.
+    At 2.45 GHz the loss still rises at the end of the range: it is 36.09 dB at 29.5 mm and 36.18 dB at 30 mm. The
+    reference prints 36.1, so its half-millimetre steps are taken to end before 30 mm.
     """
     gaps = np.arange(6e-3, 29.9e-3, 0.5e-3)
     found = [loss(glazing(float(gap)), gigahertz) for gap in gaps]
@@ -91,7 +91,7 @@ def test_areas_mix_by_power() -> None:
     wall = loss(Stack((Layer(CONCRETE, 0.2),)), 3.5)
     coated, bare = loss(glazing(), 3.5), loss(glazing(coated=False), 3.5)
     assert mixed([(0.7, coated), (0.3, wall)]) == pytest.approx(24.01, abs=0.006)
-    assert mixed([(0.68, coated), (0.02, bare), (0.3, wall)]) == pytest.approx(18.32, abs=0.02)
+    assert mixed([(0.68, coated), (0.02, bare), (0.3, wall)]) == pytest.approx(18.32, abs=0.006)
 
 
 def test_areas_mix_at_28_ghz() -> None:
@@ -100,7 +100,7 @@ def test_areas_mix_at_28_ghz() -> None:
     coated, bare = loss(glazing(), 28.0), loss(glazing(coated=False), 28.0)
     assert wall > 60
     assert mixed([(0.7, coated), (0.3, wall)]) == pytest.approx(34.76, abs=0.006)
-    assert mixed([(0.68, coated), (0.02, bare), (0.3, wall)]) == pytest.approx(20.19, abs=0.02)
+    assert mixed([(0.68, coated), (0.02, bare), (0.3, wall)]) == pytest.approx(20.19, abs=0.006)
 
 
 def test_the_edition_moves_the_figure() -> None:

@@ -1,9 +1,11 @@
 """The health of the job's materials: checked while it is looked at, one material after the other."""
 
+import contextlib
+import threading
 from collections.abc import Callable
-from typing import Final
+from typing import Final, NamedTuple
 
-from PySide6.QtCore import Qt, QTimer, Signal
+from PySide6.QtCore import QObject, Qt, QTimer, Signal, Slot
 from PySide6.QtGui import QGuiApplication, QHideEvent, QKeyEvent, QKeySequence, QResizeEvent, QShowEvent
 from PySide6.QtWidgets import QListView, QWidget
 
@@ -11,15 +13,16 @@ from app.document.session import Change, Session
 from app.look.theme import Theme
 from app.panels.materials.findings import AskedOfFinding, FindingDelegate, FindingsModel, Told
 from app.panels.materials.pieces import column, ink, words
+from stackcore.job import Job, material_findings
 from stackcore.job.records import SweepRecord
 from stackcore.media.base import AbstractMedium
-from stackcore.media.health import Finding, check_medium
+from stackcore.media.health import Finding
 
 ALL_WELL: Final = "Nothing speaks against the materials of this job over its sweep."
 CHECKING: Final = "Checking…"
 ABOUT: Final = (
-    "Checked over the sweep: gain, the range of the data, loss given twice, units, and whether ε′ and its loss "
-    "belong together."
+    "Checked over the sweep: gain, the range of the data, loss given twice, units, whether ε′ and its loss belong "
+    "together, and other editions of the source."
 )
 PAUSE: Final = 150
 """Milliseconds without a change before a check begins, so that it does not run behind every letter typed."""
@@ -52,6 +55,25 @@ class FindingsList(QListView):
         self.scheduleDelayedItemsLayout()
 
 
+class Checked(NamedTuple):
+    """The findings on one material, and the question they answer."""
+
+    number: int
+    job: Job
+    findings: tuple[Finding, ...]
+
+
+class Relay(QObject):
+    """Carries findings from the thread; without a parent, so that it outlives the panel."""
+
+    arrived = Signal(object)
+
+
+def _check(relay: Relay, number: int, job: Job, name: str) -> None:
+    with contextlib.suppress(RuntimeError):  # the program has ended meanwhile
+        relay.arrived.emit(Checked(number, job, material_findings(job, name)))
+
+
 class Checks(QWidget):
     """The findings on all materials of the job over its sweep."""
 
@@ -65,6 +87,9 @@ class Checks(QWidget):
         self._session = session
         self._known: dict[str, tuple[AbstractMedium, SweepRecord, tuple[Finding, ...]]] = {}
         self._waiting: list[str] = []
+        self._asked = 0
+        self._relay = Relay()
+        self._relay.arrived.connect(self._take, Qt.ConnectionType.QueuedConnection)
         self._model = FindingsModel(self)
         self._delegate = FindingDelegate(theme, self)
         self.list = FindingsList(self._go, self)
@@ -123,6 +148,7 @@ class Checks(QWidget):
     def _begin(self, pause: int) -> None:
         job = self._session.job
         names = [material.name for material in job.materials]
+        self._asked += 1  # what is being checked still belongs to an earlier job
         self._known = {name: known for name, known in self._known.items() if name in names}
         self._waiting = [name for name in names if not self._is_known(name)]
         self._show()
@@ -135,16 +161,25 @@ class Checks(QWidget):
         return known is not None and known[0] == job.media[name] and known[1] == job.sweep
 
     def _step(self) -> None:
-        """Check one material, and go on when Qt has had its turn."""
+        """Check the next material aside; the window goes on meanwhile."""
         job = self._session.job
-        while self._waiting:
-            name = self._waiting.pop(0)
-            if name in job.media:
-                medium = job.media[name]
-                self._known[name] = (medium, job.sweep, check_medium(medium, job.sweep.frequencies()))
-                break
-        self._show()
+        self._waiting = [name for name in self._waiting if name in job.media]
         if self._waiting:
+            self._asked += 1
+            work = (self._relay, self._asked, job, self._waiting[0])
+            threading.Thread(target=_check, args=work, name="check of materials", daemon=True).start()
+        else:
+            self._show()
+
+    @Slot(object)
+    def _take(self, checked: Checked) -> None:
+        """Take what was found, unless the question has changed meanwhile, and go on."""
+        if checked.number != self._asked or not self._waiting:
+            return
+        name = self._waiting.pop(0)
+        self._known[name] = (checked.job.media[name], checked.job.sweep, checked.findings)
+        self._show()
+        if self._waiting and self.isVisible():
             self._timer.start(0)
 
     def _show(self) -> None:

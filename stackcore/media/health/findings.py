@@ -6,7 +6,7 @@ from typing import Final, Literal
 
 from stackcore.errors import Severity
 
-Topic = Literal["passivity", "causality", "range", "condition", "join", "loss", "units"]
+Topic = Literal["passivity", "causality", "range", "condition", "join", "loss", "units", "edition"]
 
 _ORDER: Final[dict[Severity, int]] = {"error": 0, "warning": 1, "note": 2}
 

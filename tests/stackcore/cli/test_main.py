@@ -99,7 +99,7 @@ def test_a_mistyped_command_is_told(run: Run, install: Callable[..., None]) -> N
     outcome = run("swep", "cover.slabjob")
     assert outcome.status == 2
     told = "there is no command and no file 'swep', did you mean 'sweep'?"
-    allowed = "allowed: sweep, materials, picture, or a job file"
+    allowed = "allowed: sweep, vary, materials, picture, or a job file"
     assert outcome.lines == [f"slabwright: {told}; {allowed}"]
 
 
