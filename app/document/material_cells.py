@@ -5,6 +5,7 @@ from collections.abc import Mapping
 from dataclasses import replace
 from typing import Final
 
+from app.document.fact_cells import FACTS, fact_text, with_fact
 from app.document.library import pinned
 from app.document.material_edits import material_of
 from app.document.reading import read_like, read_list, read_range, read_relative
@@ -56,7 +57,7 @@ def material_columns(material: MaterialRecord) -> tuple[str, ...]:
     ('terms[0].permittivity_step', 'terms[0].relaxation_time', 'conductivity')
     """
     shown = pinned(material)
-    columns: list[str] = [*WORDS, *USUAL]
+    columns: list[str] = [*WORDS, *FACTS, *USUAL]
     for constant in MODELS[shown.model].constants:
         if not isinstance(constant.kind, Terms):
             columns.append(constant.name)
@@ -64,7 +65,8 @@ def material_columns(material: MaterialRecord) -> tuple[str, ...]:
         value = shown.constants.get(constant.name)
         rows = len(value) if isinstance(value, tuple) else 0
         columns += [f"{constant.name}[{row}].{part.name}" for row in range(rows) for part in constant.kind.of]
-    return (*dict.fromkeys(columns[: len(WORDS)]), *_last_wins(columns[len(WORDS) :]))
+    words = len(WORDS) + len(FACTS)
+    return (*dict.fromkeys(columns[:words]), *_last_wins(columns[words:]))
 
 
 def _last_wins(names: list[str]) -> tuple[str, ...]:
@@ -83,6 +85,8 @@ def material_text(material: MaterialRecord, column: str) -> str:
         return "" if ends is None else f"{ends[0].text} to {ends[1].text}"
     if column in WORDS:
         return str(getattr(material, column))
+    if column in FACTS:
+        return fact_text(material, column)
     return constant_text(material, column)
 
 
@@ -110,6 +114,8 @@ def with_material_text(record: JobRecord, name: str, column: str, text: str) -> 
             new = replace(old, note=text.strip())
         case "range":
             new = replace(old, valid_range=_range(text))
+        case _ if column in FACTS:
+            new = with_fact(pinned(old), model_of(old), column, text, _read_constant)
         case _:
             new = with_constant_text(old, column, text)
     return replace(record, materials=tuple(new if one is old else one for one in record.materials))
@@ -184,6 +190,10 @@ def parsed(constant: Constant, text: str, old: Value | None) -> Value:
         case Terms(row=row):
             raise UnitError(f"{text!r} is no list of {row}s", f"each {row} is typed by itself")
     return parse_measure(text, Dimension.NUMBER).value
+
+
+def _read_constant(model: Model, name: str, text: str) -> Value:
+    return parsed(_constant(model, name), text, None)
 
 
 def _constant(model: Model, name: str) -> Constant:

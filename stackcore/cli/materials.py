@@ -169,12 +169,19 @@ def _about(entry: "LibraryEntry") -> list[str]:
     spread = ", ".join(f"{name} ±{100 * share:.3g} %" for name, share in told.spread if share)
     facts = {
         "range": _range(entry),
+        "density": entry.density.text if entry.density is not None else "",
+        "ply": entry.ply_thickness.text if entry.ply_thickness is not None else "",
         "spread": f"{spread} (one standard deviation in production)" if spread else "",
         "certainty": told.certainty,
         "source": told.source,
         "note": told.note,
     }
-    return lines + [f"  {name:<10} {text}" for name, text in facts.items() if text]
+    lines += [f"  {name:<10} {text}" for name, text in facts.items() if text]
+    for state in entry.states:
+        differs = ", ".join(f"{name} {value_text(value)}" for name, value in state.constants.items())
+        note = "; ".join(part for part in (state.note, state.source) if part)
+        lines.append(f"  state      {state.name}: {differs}{f' ({note})' if note else ''}")
+    return lines
 
 
 def _values(medium: "AbstractMedium", at: "FloatArray", outside: "FloatArray") -> list[str]:

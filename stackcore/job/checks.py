@@ -285,8 +285,6 @@ def _list_faults(count: int, path: str) -> Iterator[Fault]:
 
 def _angle_faults(angle: Measure, path: str) -> Iterator[Fault]:
     if not 0 <= angle.value < _RIGHT_ANGLE:
-        yield Fault(
-            path,
-            f"the angle {shown(angle.text)} is out of range",
-            "0 deg or more and below 90 deg; without a unit, rad",
-        )
+        bare = "" if any(letter.isalpha() or letter == "°" for letter in angle.text) else "; without a unit, rad"
+        told = f"the angle {shown(angle.text)} is out of range"
+        yield Fault(path, told, f"0 deg or more and below 90 deg{bare}")

@@ -119,5 +119,7 @@ def _anew(element: ElementRecord, plies: Mapping[str, float]) -> ElementRecord:
         return element
     ply = plies.get(element.material)
     if ply is None:
-        return replace(element, thickness=measure(element.thickness.value, Dimension.LENGTH))
+        # Twelve digits: the product of plies must not show its rounding.
+        length = float(f"{element.thickness.value:.12g}")
+        return replace(element, thickness=measure(length, Dimension.LENGTH))
     return replace(element, thickness=read_plies(element.thickness.text, ply))

@@ -7,6 +7,7 @@ from typing import Final
 import numpy as np
 
 from app.document.document import Document, material_cell
+from app.document.fact_cells import FACTS
 from app.document.library import ALWAYS_DEFINED, pinned
 from app.document.material_cells import material_text, model_of
 from app.series.material_quantities import plain_number
@@ -19,10 +20,21 @@ from stackcore.media.mixing_rules import hashin_shtrikman_bounds, wiener_bounds
 from stackcore.media.mixture import MixtureMedium
 from stackcore.media.models import Choice, Constant, Flag, Model, Reference, Terms, value_text
 
+NO_FACT: Final = "not given"
 _LABEL: Final = "What the material is called in tables, drawings and reports."
 _RANGE: Final = "Lowest and highest frequency at which the constants hold, for example 8 GHz to 12.4 GHz."
 _SOURCE: Final = "Where the numbers come from: publication with edition, test report or data sheet."
 _CERTAINTY: Final = "How the numbers are known."
+_FACTS: Final = {
+    "density": ("Density", "Mass by volume, for the mass of a wall: 1900 kg/m3. It changes no curve."),
+    "ply_thickness": ("Ply", "Thickness of one cured ply: thicknesses can then be typed as 6 ply."),
+    "price": ("Price per kg", "Of a kilogram in your own currency, for the cost of a wall."),
+    "spread": ("Spread", "One standard deviation in production: permittivity 3 %; loss_tangent 20 %."),
+    "states": (
+        "States",
+        "What differs when it is wet or hot; conditions use it: wet: permittivity 4.6, loss_tangent 0.03.",
+    ),
+}
 _NOTE: Final = "Temperature, form, direction, or anything else a user must know."
 
 
@@ -72,6 +84,7 @@ def fields_of(document: Document, name: str) -> tuple[FieldFacts, ...]:
     fields.append(_words(document, material, "label", "Label", _LABEL))
     if model.ranged:
         fields.append(_words(document, material, "range", "Holds from", _RANGE))
+    fields += [_fact(document, material, column) for column in FACTS]
     fields.append(_words(document, material, "source", "Source", _SOURCE))
     fields.append(_words(document, material, "certainty", "Certainty", _CERTAINTY, ("", *CERTAINTIES)))
     fields.append(_words(document, material, "note", "Note", _NOTE))
@@ -147,6 +160,12 @@ def _constant_field(document: Document, material: MaterialRecord, model: Model, 
     tip = f"{constant.about} {_allowed(constant)}" + (f" Left out: {hint}." if hint else "")
     text, fault = _typed(document, material, constant.name)
     return FieldFacts(constant.name, _titled(constant), tip, text, fault, hint, options)
+
+
+def _fact(document: Document, material: MaterialRecord, column: str) -> FieldFacts:
+    label, tip = _FACTS[column]
+    text, fault = _typed(document, material, column)
+    return FieldFacts(column, label, tip, text, fault, NO_FACT, wide=column in ("spread", "states"))
 
 
 def _words(
