@@ -6,7 +6,7 @@ import sys
 
 os.environ.setdefault("QT_QPA_PLATFORM", "offscreen")
 
-SUBJECTS = ("solver", "maps", "start", "window")
+SUBJECTS = ("solver", "maps", "materials", "start", "window")
 
 
 def main(names: list[str]) -> int:

@@ -108,6 +108,7 @@ def test_plies_follow_the_ply(session: Session) -> None:
     assert thickness(session) == (pytest.approx(1.5e-3), "6 ply")
     assert type_into(session, "e-glass-epoxy", "ply_thickness", "0.2 mm") == ""
     assert thickness(session) == (pytest.approx(1.2e-3), "6 ply")
+    session.end_merge()
     assert type_into(session, "e-glass-epoxy", "ply_thickness", "") == ""
     assert thickness(session) == (pytest.approx(1.2e-3), "1.2 mm")
     session.undo()
