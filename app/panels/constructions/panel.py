@@ -57,7 +57,7 @@ class ConstructionsPanel(QWidget):
         self._arrange()
         self.destroyed.connect(session.subscribe(self._follow))
         self.set_theme(theme)
-        self._show()
+        # Nothing is shown before it is looked at: the library would be read at the start of the program.
 
     @property
     def choosing(self) -> Choosing:
@@ -128,7 +128,8 @@ class ConstructionsPanel(QWidget):
     def _take(self, choosing: Choosing) -> None:
         if choosing != self._choosing:
             self._choosing = choosing
-            self._show()
+            if self.isVisible():
+                self._show()
 
     def _follow(self, change: Change) -> None:
         # The curves move at every step of a drag; what is shown here follows sweep and materials only.
