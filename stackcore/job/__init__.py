@@ -1,7 +1,6 @@
 """The job: what a person writes down, stored in a file, resolved into stacks that can be solved."""
 
 from stackcore.job.codec import job_from_json, job_to_json
-from stackcore.job.health import material_findings
 from stackcore.job.materials import with_resolved_library
 from stackcore.job.ranges import RangeFinding, range_findings
 from stackcore.job.resolve import Job
@@ -12,7 +11,6 @@ __all__ = [
     "RangeFinding",
     "job_from_json",
     "job_to_json",
-    "material_findings",
     "range_findings",
     "read_job",
     "with_resolved_library",

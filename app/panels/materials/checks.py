@@ -13,7 +13,8 @@ from app.document.session import Change, Session
 from app.look.theme import Theme
 from app.panels.materials.findings import AskedOfFinding, FindingDelegate, FindingsModel, Told
 from app.panels.materials.pieces import column, ink, words
-from stackcore.job import Job, material_findings
+from stackcore.job import Job
+from stackcore.job.health import material_findings
 from stackcore.job.records import SweepRecord
 from stackcore.media.base import AbstractMedium
 from stackcore.media.health import Finding

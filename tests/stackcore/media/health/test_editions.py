@@ -6,7 +6,8 @@ import numpy as np
 import pytest
 
 from stackcore.cli import main
-from stackcore.job import Job, job_from_json, material_findings
+from stackcore.job import Job, job_from_json
+from stackcore.job.health import material_findings
 from stackcore.media.health import edition_findings
 from stackcore.media.library import materials_dir
 from stackcore.media.library_file import read_family
