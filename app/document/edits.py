@@ -40,6 +40,7 @@ from app.document.stack_edits import (
     set_front,
 )
 from app.document.structure_edits import (
+    fill_columns,
     fill_down,
     group_rows,
     mirror,
@@ -65,6 +66,7 @@ __all__ = [
     "delete_stack",
     "duplicate",
     "duplicate_stack",
+    "fill_columns",
     "fill_down",
     "group_rows",
     "mirror",

@@ -165,6 +165,18 @@ def fill_down(stack: int, rows: Iterable[int], column: str) -> Edit:
     return Edit(f"fill {column} down {len(chosen)} rows", change)
 
 
+def fill_columns(stack: int, rows: Iterable[int], columns: Sequence[str]) -> Edit:
+    """Return the edit that fills several columns down in one step."""
+    chosen = _ascending(rows)
+
+    def change(document: Document) -> Document:
+        for column in columns:
+            document = fill_down(stack, chosen, column).change(document)
+        return document
+
+    return Edit(f"fill down {len(chosen)} rows", change)
+
+
 def _text(element: ElementRecord, column: str) -> str:
     value = getattr(element, column, "")
     return str(getattr(value, "text", value if value is not None else ""))

@@ -6,7 +6,7 @@ from dataclasses import dataclass
 from app.document.session import Session
 from app.panels.elements.panel import ElementsPanel
 from app.window.beside import Beside
-from app.window.editing import ElementQuestions, StackCommands
+from app.window.editing import ElementQuestions, StackCommands, StructureCommands
 from app.window.exporting import Exporter
 from app.window.files import Files
 from app.window.marking import MarkerCommands
@@ -52,6 +52,7 @@ class Commands:
     samples: tuple[Sample, ...]
     elements: ElementsPanel
     selected: ElementQuestions
+    structure: StructureCommands
     stacks: StackCommands
     rename_stack: Do
     markers: MarkerCommands

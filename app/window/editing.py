@@ -7,6 +7,8 @@ from app.document.document import Selection
 from app.document.edit import Edit
 from app.document.session import Session
 from stackcore.errors import Severity
+from stackcore.job.groups import group_of
+from stackcore.job.records import ElementRecord, LayerRecord, StackRecord
 
 Tell = Callable[[str, Severity], None]
 
@@ -31,6 +33,92 @@ class ElementQuestions:
         selection = self._session.selection
         rows, count = selection.rows, len(self._session.record.stacks[selection.stack].elements)
         return bool(rows) and rows != tuple(range(count - len(rows), count))
+
+
+class StructureCommands:
+    """What is done to the selected elements as parts of a whole: use, lock, group, mirror, reverse, fill."""
+
+    def __init__(self, session: Session, tell: Tell) -> None:
+        self._session, self._tell = session, tell
+
+    def used(self) -> bool:
+        """Whether every selected element is computed."""
+        return all(element.enabled for element in self._chosen())
+
+    def locked(self) -> bool:
+        """Whether every selected element is locked."""
+        chosen = self._chosen()
+        return bool(chosen) and all(element.locked for element in chosen)
+
+    def any_selected(self) -> bool:
+        """Whether at least one element is selected."""
+        return bool(self._session.selection.rows)
+
+    def several(self) -> bool:
+        """Whether at least two elements are selected."""
+        return len(self._session.selection.rows) > 1
+
+    def in_a_group(self) -> bool:
+        """Whether a selected element is in a group."""
+        stack = self._stack
+        return any(group_of(stack, row) is not None for row in self._session.selection.rows)
+
+    def any_elements(self) -> bool:
+        """Whether the stack has elements."""
+        return bool(self._stack.elements)
+
+    def use(self) -> None:
+        """Compute the selected elements, or leave them out."""
+        selection = self._session.selection
+        self._apply(edits.set_enabled(selection.stack, selection.rows, not self.used()))
+
+    def lock(self) -> None:
+        """Lock the thickness of the selected elements, or unlock it."""
+        selection = self._session.selection
+        self._apply(edits.set_locked(selection.stack, selection.rows, not self.locked()))
+
+    def group(self) -> None:
+        """Repeat the selected elements as a group, twice at first; the count stands in the table."""
+        selection = self._session.selection
+        self._apply(edits.group_rows(selection.stack, selection.rows))
+
+    def end_group(self) -> None:
+        """Let the elements of the group stand once each."""
+        selection = self._session.selection
+        self._apply(edits.ungroup(selection.stack, selection.rows))
+
+    def write_out(self) -> None:
+        """Write the group out, element by element."""
+        selection = self._session.selection
+        self._apply(edits.ungroup(selection.stack, selection.rows, written_out=True))
+
+    def mirror(self) -> None:
+        """Make the selected elements, or the whole stack, symmetric about the last of them."""
+        selection = self._session.selection
+        self._apply(edits.mirror(selection.stack, selection.rows if self.several() else ()))
+
+    def reverse(self) -> None:
+        """Turn the selected elements, or the whole stack, round."""
+        selection = self._session.selection
+        self._apply(edits.reverse(selection.stack, selection.rows if self.several() else ()))
+
+    def fill(self) -> None:
+        """Give the selected elements what the first of them has: material and thickness, or resistance."""
+        selection = self._session.selection
+        first = self._stack.elements[selection.rows[0]]
+        columns = ("material", "thickness") if isinstance(first, LayerRecord) else ("resistance",)
+        self._apply(edits.fill_columns(selection.stack, selection.rows, columns))
+
+    @property
+    def _stack(self) -> StackRecord:
+        return self._session.record.stacks[self._session.selection.stack]
+
+    def _chosen(self) -> list[ElementRecord]:
+        return [self._stack.elements[row] for row in self._session.selection.rows]
+
+    def _apply(self, edit: Edit) -> None:
+        for fault in self._session.apply(edit):
+            self._tell(str(fault), fault.severity)
 
 
 class StackCommands:

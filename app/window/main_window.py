@@ -21,7 +21,7 @@ from app.window.commands import Commands, HelpCommands, ViewCommands
 from app.window.crash_net import CrashNet
 from app.window.diagnostics import diagnostics, parts, version_of
 from app.window.dialogs import Dialogs, QtDialogs
-from app.window.editing import ElementQuestions, StackCommands
+from app.window.editing import ElementQuestions, StackCommands, StructureCommands
 from app.window.exporting import Exporter, ProgressLine, csv_steps
 from app.window.files import Files
 from app.window.first_view import first_view
@@ -244,6 +244,7 @@ class MainWindow(JobWindow):
             samples=samples(),
             elements=self._panels.elements,
             selected=ElementQuestions(session),
+            structure=StructureCommands(session, tell),
             stacks=StackCommands(session, tell),
             rename_stack=self._panels.rename_stack,
             markers=MarkerCommands(session, self._view, self._panels.curves.commands),

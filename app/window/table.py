@@ -4,6 +4,7 @@ from collections.abc import Sequence
 
 from app.window.actions import Act
 from app.window.commands import Commands
+from app.window.structure import structure_acts
 from app.window.submenus import recent_entries, sample_entries
 from app.window.table_of_views import arrangement_acts, help_acts, markers_acts, theme_acts, worst_acts
 
@@ -13,6 +14,7 @@ def action_table(c: Commands) -> tuple[Act, ...]:
     parts = (
         *(_file, _save),
         *(_history, _clipboard, _new_elements, _elements, _order),
+        structure_acts,
         *(_stack, _other_stacks),
         *(markers_acts, worst_acts),
         *(theme_acts, arrangement_acts),

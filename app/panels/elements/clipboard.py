@@ -134,5 +134,7 @@ def _columns_from(block: Block, anchor: str) -> tuple[str, ...]:
 def _are_whole_rows(block: Block, offset: int) -> bool:
     """Whether the column that would be under What holds only the words it can hold."""
     place_of_what = 1 - offset
-    words = [row[place_of_what].casefold() for row in block.rows if len(row) > place_of_what]
-    return bool(words) and all(word in {"layer", "sheet", "front", "back"} for word in words)
+    words = [
+        row[place_of_what].partition(",")[0].strip().casefold() for row in block.rows if len(row) > place_of_what
+    ]
+    return bool(words) and all(word in {"layer", "sheet", "film", "front", "back"} for word in words)

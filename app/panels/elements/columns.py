@@ -54,6 +54,19 @@ RESISTANCE: Final = Column(
     "The menus of the table and View show the columns for an inductance and a capacitance.",
     Dimension.RESISTANCE,
 )
+CONDUCTIVITY: Final = Column(
+    "conductivity",
+    "Conductivity",
+    "Conductivity of a film, more than 0; with its thickness it gives the resistance, 1/(σd). Type a thickness for "
+    "a sheet that is nothing but a resistance, and it becomes a film.",
+    Dimension.CONDUCTIVITY,
+)
+REPEAT: Final = Column(
+    "repeat",
+    "Times",
+    "How often the group of elements is repeated, a whole number from 1; it stands at the first of them.",
+    Dimension.NUMBER,
+)
 INDUCTANCE: Final = Column(
     "inductance",
     "Inductance",
@@ -68,11 +81,11 @@ CAPACITANCE: Final = Column(
 )
 
 LAYER_COLUMNS: Final = (NUMBER, WHAT, MATERIAL, THICKNESS)
-SHEET_COLUMNS: Final = (RESISTANCE, INDUCTANCE, CAPACITANCE)
-RARE_COLUMNS: Final = (INDUCTANCE, CAPACITANCE)
+SHEET_COLUMNS: Final = (RESISTANCE, INDUCTANCE, CAPACITANCE, CONDUCTIVITY)
+RARE_COLUMNS: Final = (INDUCTANCE, CAPACITANCE, CONDUCTIVITY)
 """Shown only where a sheet of the stack uses them, or when they are asked for."""
 LAYER_CELLS: Final = (MATERIAL, THICKNESS)
-ALL_COLUMNS: Final = LAYER_COLUMNS + SHEET_COLUMNS
+ALL_COLUMNS: Final = (*LAYER_COLUMNS, *SHEET_COLUMNS, REPEAT)
 _PLACES: Final = {column.name: place for place, column in enumerate(ALL_COLUMNS)}
 
 
@@ -85,14 +98,18 @@ def columns_of(document: Document, stack: int, *, rare: bool = False) -> tuple[C
     """Return the columns a stack needs, in the order of `ALL_COLUMNS`.
 
     Those of sheets are there only when it has a sheet, and those of `RARE_COLUMNS` only when a sheet uses them,
-    or holds a text for them that is no value yet, or when `rare` asks for them.
+    or holds a text for them that is no value yet, or when `rare` asks for them. That of groups is there when there
+    is one.
     """
-    sheets = [one for one in document.record.stacks[stack].elements if isinstance(one, SheetRecord)]
+    record = document.record.stacks[stack]
+    sheets = [one for one in record.elements if isinstance(one, SheetRecord)]
+    repeat = (REPEAT,) if record.groups else ()
     if not sheets:
-        return LAYER_COLUMNS
+        return (*LAYER_COLUMNS, *repeat)
     drafted = {draft.cell.column for draft in document.drafts if draft.cell.stack == stack}
     used = {
         column.name for column in RARE_COLUMNS if any(getattr(sheet, column.name) is not None for sheet in sheets)
     }
     wanted = {column.name for column in RARE_COLUMNS} if rare else used | drafted
-    return tuple(column for column in ALL_COLUMNS if column not in RARE_COLUMNS or column.name in wanted)
+    shown = [column for column in ALL_COLUMNS if column not in RARE_COLUMNS or column.name in wanted]
+    return tuple(column for column in shown if column is not REPEAT or repeat)

@@ -49,7 +49,11 @@ class CellDelegate(QuietDelegate):
             painter.drawRect(patch)
             painter.setBrush(Qt.BrushStyle.NoBrush)
             room = room.adjusted(SWATCH + PADDING, 0, 0, 0)
-        self.paint_words(painter, room, index, self.theme.text)
+        self.paint_words(painter, room, index, self._ink(index))
+
+    def _ink(self, index: Index) -> str:
+        """Return the colour of a row's words: muted where it is left out, which its kind says as well."""
+        return self.theme.muted if index.data(Asked.LEFT_OUT) else self.theme.text
 
     def _paint_quantity(self, painter: QPainter, room: QRect, index: Index) -> None:
         metrics = painter.fontMetrics()
@@ -57,10 +61,10 @@ class CellDelegate(QuietDelegate):
         widths = self.widths[index.column()]
         left = room.right() - widths.unit - widths.fraction - metrics.horizontalAdvance(number)
         if not number or left < room.left():
-            self.paint_words(painter, room, index, self.theme.text)
+            self.paint_words(painter, room, index, self._ink(index))
             return
         vertical = Qt.AlignmentFlag.AlignVCenter
-        painter.setPen(QColor(self.theme.text))
+        painter.setPen(QColor(self._ink(index)))
         painter.drawText(QRect(left, room.top(), room.width(), room.height()), vertical, number + fraction)
         painter.setPen(QColor(self.theme.muted))
         unit_left = room.right() - widths.unit + metrics.horizontalAdvance(" ")

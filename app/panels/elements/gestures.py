@@ -7,12 +7,23 @@ from app.document import edits
 from app.document.document import Cell, Document, Selection
 from app.document.edit import Edit, refuse
 from app.document.element_edits import NEW_SHEET
-from app.panels.elements.columns import LAYER_CELLS, MATERIAL, SHEET_COLUMNS, WHAT, Column
-from app.panels.elements.lines import WORDS
+from app.document.sheet_cells import sheet_columns
+from app.panels.elements.columns import (
+    CONDUCTIVITY,
+    LAYER_CELLS,
+    MATERIAL,
+    RESISTANCE,
+    SHEET_COLUMNS,
+    THICKNESS,
+    WHAT,
+    Column,
+)
+from app.panels.elements.lines import FILM, WORDS
 from app.panels.elements.names import MaterialNames
 from stackcore.job.records import JobRecord, LayerRecord, SheetRecord
 from stackcore.units import Dimension, parse_measure
 
+FILM_COLUMNS: Final = (THICKNESS, CONDUCTIVITY)
 NEW_MATERIAL: Final = "air"
 NEW_THICKNESS: Final = parse_measure("1 mm", Dimension.LENGTH)
 """What a new layer begins as."""
@@ -85,9 +96,9 @@ def _is_half_space(texts: Mapping[str, str]) -> bool:
 
 def _kind(texts: Mapping[str, str], present: LayerRecord | SheetRecord | None) -> type[LayerRecord | SheetRecord]:
     """Return what a row is: by its word, else as the present element, else by which of its cells are filled."""
-    word = texts.get(WHAT.name, "").casefold()
-    if word in (WORDS["layer"].casefold(), WORDS["sheet"].casefold()):
-        return SheetRecord if word == WORDS["sheet"].casefold() else LayerRecord
+    word = texts.get(WHAT.name, "").partition(",")[0].strip().casefold()
+    if word in (WORDS["layer"].casefold(), WORDS["sheet"].casefold(), FILM.casefold()):
+        return LayerRecord if word == WORDS["layer"].casefold() else SheetRecord
     if present is not None:
         return type(present)
     of_sheet = any(texts.get(column.name) for column in SHEET_COLUMNS)
@@ -106,7 +117,7 @@ def _type_row(document: Document, stack: int, row: int, texts: Mapping[str, str]
     element = document.record.stacks[stack].elements[row]
     is_layer = isinstance(element, LayerRecord)
     columns = LAYER_CELLS if is_layer else _sheet_order(texts)
-    others = SHEET_COLUMNS if is_layer else LAYER_CELLS
+    others = SHEET_COLUMNS if is_layer else _not_of_sheets(texts)
     if any(texts.get(other.name) for other in others):
         word, other_word = ("layer", "sheet") if is_layer else ("sheet", "layer")
         raise refuse(
@@ -116,16 +127,33 @@ def _type_row(document: Document, stack: int, row: int, texts: Mapping[str, str]
         )
     for column in columns:
         text = texts.get(column.name)
-        if text is None or (not text and is_layer):
+        if text is None or (not text and (is_layer or column in FILM_COLUMNS)):
             continue
+        if not is_layer and column.name not in _offered(document, stack, row):
+            continue  # an inductance of what has just become a film, or the conductivity of what is none
         names = MaterialNames(document.record)
         document = typed_edit(names, Cell(stack, row, column.name), text).change(document)
     return document
 
 
 def _sheet_order(texts: Mapping[str, str]) -> list[Column]:
-    """Return the columns of a sheet, those with a text first: no moment may leave the sheet without any part."""
-    return sorted(SHEET_COLUMNS, key=lambda column: not texts.get(column.name))
+    """Return the columns of a sheet, those with a text first: no moment may leave the sheet without any part.
+
+    A thickness comes behind the resistance it makes a film of, and the film's conductivity last.
+    """
+    parts = [column for column in SHEET_COLUMNS if column not in FILM_COLUMNS]
+    return [*sorted(parts, key=lambda column: not texts.get(column.name)), THICKNESS, CONDUCTIVITY]
+
+
+def _not_of_sheets(texts: Mapping[str, str]) -> Sequence[Column]:
+    """Return the columns that a row of a sheet must not fill; a film has a thickness, with what makes it a film."""
+    film = texts.get(RESISTANCE.name) or texts.get(CONDUCTIVITY.name)
+    return (MATERIAL,) if film else LAYER_CELLS
+
+
+def _offered(document: Document, stack: int, row: int) -> tuple[str, ...]:
+    element = document.record.stacks[stack].elements[row]
+    return sheet_columns(element) if isinstance(element, SheetRecord) else ()
 
 
 def _count(number: int, what: str) -> str:

@@ -8,10 +8,12 @@ from dataclasses import dataclass
 from typing import Final, Literal
 
 from app.document.document import WHOLE_ROW, Cell, Document
+from app.document.sheet_cells import part_of, sheet_columns
 from app.panels.elements.columns import (
     ALL_COLUMNS,
     MATERIAL,
     NUMBER,
+    REPEAT,
     SHEET_COLUMNS,
     THICKNESS,
     WHAT,
@@ -21,13 +23,18 @@ from app.panels.elements.columns import (
 from app.panels.elements.names import MaterialNames
 from app.series.kinds import kind_of
 from stackcore.errors import Fault
-from stackcore.job.records import ElementRecord, LayerRecord, StackRecord
+from stackcore.job.groups import group_of
+from stackcore.job.plies import counts_plies
+from stackcore.job.records import ElementRecord, LayerRecord, SheetRecord, StackRecord
 from stackcore.units import Dimension, Measure
 
 LineKind = Literal["front", "layer", "sheet", "back"]
 
 WORDS: Final[dict[LineKind, str]] = {"front": "Front", "layer": "Layer", "sheet": "Sheet", "back": "Back"}
 HALF_SPACE: Final = "half-space"
+FILM: Final = "Film"
+LEFT_OUT: Final = "left out"
+LOCKED: Final = "locked"
 
 _WITHOUT_UNIT: Final = re.compile(r"[\d\s.,()+*/−-]*(?:[eE][-+]?\d+)?")
 
@@ -68,12 +75,15 @@ class Line:
         ``layer 2``, ``front half-space``: for a person who cannot see where the cell stands.
     material_kind
         Kind of its material (see `app.series.kinds`), empty for a sheet and a perfect conductor.
+    left_out
+        Whether it is left out of the computation.
     """
 
     kind: LineKind
     cells: tuple[CellView, ...]
     place: str
     material_kind: str = ""
+    left_out: bool = False
 
     @property
     def is_element(self) -> bool:
@@ -85,10 +95,13 @@ class Line:
         return self.cells[place_of(column)]
 
 
-def lines_of(document: Document, stack: int) -> tuple[Line, ...]:
-    """Return the lines of one stack: front, elements, back."""
+def lines_of(document: Document, stack: int, *, films: bool = False) -> tuple[Line, ...]:
+    """Return the lines of one stack: front, elements, back.
+
+    With `films` a sheet that is nothing but a resistance has a thickness to type into, which makes it a film.
+    """
     record = document.record.stacks[stack]
-    reading = _Reading(document, stack, MaterialNames(document.record))
+    reading = _Reading(document, stack, MaterialNames(document.record), films)
     elements = (reading.element(row, element) for row, element in enumerate(record.elements))
     return (reading.half_space("front", record), *elements, reading.half_space("back", record))
 
@@ -110,6 +123,8 @@ def with_unit(measure: Measure, dimension: Dimension) -> str:
     >>> with_unit(Measure(0.001, "0.001"), Dimension.LENGTH), with_unit(Measure(0.001, "1 mm"), Dimension.LENGTH)
     ('0.001 m', '1 mm')
     """
+    if counts_plies(measure.text):
+        return measure.text
     bare = _WITHOUT_UNIT.fullmatch(measure.text) is not None
     return f"{measure.text} {dimension.si_unit}" if bare and dimension.si_unit else measure.text
 
@@ -121,6 +136,7 @@ class _Reading:
     document: Document
     stack: int
     names: MaterialNames
+    films: bool = False
 
     def half_space(self, side: Literal["front", "back"], record: StackRecord) -> Line:
         material = record.front if side == "front" else record.back
@@ -131,20 +147,47 @@ class _Reading:
     def element(self, row: int, element: ElementRecord) -> Line:
         if isinstance(element, LayerRecord):
             return self._layer(row, element)
-        cells = {NUMBER.name: CellView(str(row + 1)), WHAT.name: CellView(WORDS["sheet"])}
-        for column in SHEET_COLUMNS:
-            part: Measure | None = getattr(element, column.name)
-            cells[column.name] = self._quantity(row, column, part)
-        return Line("sheet", _in_order(cells), f"sheet {row + 1}")
+        cells = self._head(row, element, "sheet")
+        offered = sheet_columns(element)
+        for column in (*SHEET_COLUMNS, THICKNESS):
+            if column.name in offered and (column is not THICKNESS or element.kind == "film" or self.films):
+                cells[column.name] = self._quantity(row, column, part_of(element, column.name))
+        place = f"{element.kind if element.kind == 'film' else 'sheet'} {row + 1}{self._said(row, element)}"
+        return Line("sheet", _in_order(cells), place, left_out=not element.enabled)
+
+    def _head(self, row: int, element: ElementRecord, kind: LineKind) -> dict[str, CellView]:
+        """Return the cells that say what the row is: its number with the bracket of its group, and its kind."""
+        group = group_of(self.document.record.stacks[self.stack], row)
+        bracket = ""
+        if group is not None and group.first != group.last:
+            bracket = " ┐" if row == group.first else " ┘" if row == group.last else " │"
+        word = FILM if isinstance(element, SheetRecord) and element.kind == "film" else WORDS[kind]
+        marks = [LEFT_OUT] if not element.enabled else []
+        marks += [LOCKED] if element.locked else []
+        cells = {
+            NUMBER.name: CellView(f"{row + 1}{bracket}"),
+            WHAT.name: CellView(", ".join((word, *marks))),
+        }
+        if group is not None and row == group.first:
+            cells[REPEAT.name] = self._view(Cell(self.stack, row, REPEAT.name), str(group.repeat))
+        return cells
+
+    def _said(self, row: int, element: ElementRecord) -> str:
+        """Return what a person who cannot see the marks is told of a row."""
+        group = group_of(self.document.record.stacks[self.stack], row)
+        told = [LEFT_OUT] if not element.enabled else []
+        told += [LOCKED] if element.locked else []
+        told += [f"in a group repeated {group.repeat} times"] if group is not None else []
+        return f", {', '.join(told)}" if told else ""
 
     def _layer(self, row: int, layer: LayerRecord) -> Line:
         cells = {
-            NUMBER.name: CellView(str(row + 1)),
-            WHAT.name: CellView(WORDS["layer"]),
+            **self._head(row, layer, "layer"),
             MATERIAL.name: self._view(Cell(self.stack, row, MATERIAL.name), self.names.shown(layer.material)),
             THICKNESS.name: self._quantity(row, THICKNESS, layer.thickness),
         }
-        return Line("layer", _in_order(cells), f"layer {row + 1}", self._kind(layer.material))
+        place = f"layer {row + 1}{self._said(row, layer)}"
+        return Line("layer", _in_order(cells), place, self._kind(layer.material), not layer.enabled)
 
     def _quantity(self, row: int, column: Column, measure: Measure | None) -> CellView:
         assert column.dimension is not None

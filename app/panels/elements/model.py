@@ -10,7 +10,7 @@ from PySide6.QtCore import QAbstractTableModel, QModelIndex, QObject, QPersisten
 from app.document import edits
 from app.document.document import Document
 from app.document.session import Change, Session
-from app.panels.elements.columns import MATERIAL, Column, columns_of, place_of
+from app.panels.elements.columns import CONDUCTIVITY, MATERIAL, Column, columns_of, place_of
 from app.panels.elements.difference import Inserted, Moved, Removed, Step, step_between
 from app.panels.elements.gestures import typed_edit
 from app.panels.elements.lines import CellView, Line, cell_of, lines_of
@@ -36,6 +36,8 @@ class Asked(IntEnum):
     """Kind of the row's material, or an empty text."""
     COLUMN = Ask.OWN + 2
     """The `Column`."""
+    LEFT_OUT = Ask.OWN + 3
+    """Whether the row is left out of the computation."""
 
 
 class ElementsModel(QAbstractTableModel):
@@ -58,7 +60,7 @@ class ElementsModel(QAbstractTableModel):
         self._stack_index = session.selection.stack
         self._rare_columns = False
         self._columns = self._wanted_columns()
-        self._lines = lines_of(self._document, self._stack_index)
+        self._lines = self._read_lines()
         self._following = False
         self.destroyed.connect(session.subscribe(self._follow))
 
@@ -98,8 +100,12 @@ class ElementsModel(QAbstractTableModel):
         self._following = True
         try:
             self._set_columns(self._wanted_columns())
+            self._take_lines(self._read_lines())
         finally:
             self._following = False
+
+    def _read_lines(self) -> tuple[Line, ...]:
+        return lines_of(self._document, self._stack_index, films=CONDUCTIVITY in self._wanted_columns())
 
     @property
     def lines(self) -> tuple[Line, ...]:
@@ -153,6 +159,8 @@ class ElementsModel(QAbstractTableModel):
                 return line.material_kind
             case Asked.COLUMN:
                 return column
+            case Asked.LEFT_OUT:
+                return line.left_out
         return None
 
     def headerData(self, section: int, orientation: Qt.Orientation, role: int = Role.DisplayRole) -> object:
@@ -229,17 +237,21 @@ class ElementsModel(QAbstractTableModel):
             self.beginResetModel()
             self._document, self._stack_index = change.after, stack
             self._columns = self._wanted_columns()
-            self._lines = lines_of(change.after, stack)
+            self._lines = self._read_lines()
             self.endResetModel()
         elif change.after is not self._document:
             self._show_step(change.after)
 
     def _show_step(self, after: Document) -> None:
         old, new = self.stack, after.record.stacks[self._stack_index]
-        lines = lines_of(after, self._stack_index)
         self._document = after
+        lines = self._read_lines()
         self._set_columns(self._wanted_columns())
         self._take_step(step_between(old.elements, new.elements), lines)
+        self._take_lines(lines)
+
+    def _take_lines(self, lines: tuple[Line, ...]) -> None:
+        """Show lines of the same rows, and tell Qt which of them differ."""
         changed = [row for row, (was, now) in enumerate(zip(self._lines, lines, strict=True)) if was != now]
         self._lines = lines
         for first, last in _runs(changed):

@@ -6,10 +6,14 @@ from app.document.session import Session
 from app.panels.elements.columns import (
     ALL_COLUMNS,
     CAPACITANCE,
+    CONDUCTIVITY,
     INDUCTANCE,
     LAYER_COLUMNS,
+    NUMBER,
+    REPEAT,
     RESISTANCE,
     THICKNESS,
+    WHAT,
     columns_of,
 )
 from app.panels.elements.lines import cell_of, lines_of, with_unit
@@ -31,9 +35,48 @@ def test_cells_that_can_be_typed_into(session: Session) -> None:
     session.apply(edits.add_sheet(0, 0))
     can = [[cell.editable for cell in line.cells] for line in lines_of(session.document, 0)]
 
-    assert can[0] == can[-1] == [False, False, True, False, False, False, False]
-    assert can[1] == [False, False, False, False, True, True, True]
-    assert can[2] == [False, False, True, True, False, False, False]
+    assert can[0] == can[-1] == [False, False, True, *[False] * 6]
+    assert can[1] == [*[False] * 4, True, True, True, False, False]
+    assert can[2] == [False, False, True, True, *[False] * 5]
+
+
+def test_a_film_has_thickness_conductivity_and_the_resistance_that_follows(session: Session) -> None:
+    """Its cells can be typed into; its kind is said, and the columns it needs are there."""
+    session.apply(edits.add_sheet(0, 0))
+    session.apply(edits.type_into(Cell(0, 0, "thickness"), "10 nm"))
+    film = lines_of(session.document, 0)[1]
+    assert CONDUCTIVITY in columns_of(session.document, 0)
+    assert [film.cell(column).text for column in (WHAT, THICKNESS, RESISTANCE, CONDUCTIVITY)] == [
+        "Film",
+        "10 nm",
+        "377 Ω/sq",
+        "265.252 kS/m",
+    ]
+    assert all(film.cell(column).editable for column in (THICKNESS, RESISTANCE, CONDUCTIVITY))
+    assert film.place == "film 1"
+
+
+def test_a_plain_resistance_offers_a_thickness_where_films_are_shown(session: Session) -> None:
+    """Only there: elsewhere a sheet has none."""
+    session.apply(edits.add_sheet(0, 0))
+    for films in (False, True):
+        line = lines_of(session.document, 0, films=films)[1]
+        assert line.cell(THICKNESS).editable == films
+
+
+def test_groups_and_what_is_left_out_are_said(session: Session) -> None:
+    """A bracket joins the rows of a group, its first has the count; the kind says left out and locked."""
+    session.apply(edits.group_rows(0, (0, 1), 8))
+    session.apply(edits.set_enabled(0, (1,), on=False))
+    session.apply(edits.set_locked(0, (2,), on=True))
+    lines = lines_of(session.document, 0)
+    assert REPEAT in columns_of(session.document, 0)
+    assert [line.cell(NUMBER).text for line in lines[1:4]] == ["1 ┐", "2 ┘", "3"]
+    assert [line.cell(WHAT).text for line in lines[1:4]] == ["Layer", "Layer, left out", "Layer, locked"]
+    assert [line.cell(REPEAT).text for line in lines[1:4]] == ["8", "", ""]
+    assert lines[1].cell(REPEAT).editable
+    assert lines[2].left_out
+    assert lines[2].place == "layer 2, left out, in a group repeated 8 times"
 
 
 def test_columns_of_sheets_only_with_a_sheet(session: Session) -> None:
@@ -41,7 +84,7 @@ def test_columns_of_sheets_only_with_a_sheet(session: Session) -> None:
     assert columns_of(session.document, 0, rare=True) == LAYER_COLUMNS
     session.apply(edits.add_sheet(0, 0))
     assert columns_of(session.document, 0) == (*LAYER_COLUMNS, RESISTANCE)
-    assert columns_of(session.document, 0, rare=True) == ALL_COLUMNS
+    assert columns_of(session.document, 0, rare=True) == ALL_COLUMNS[:-1]
     session.apply(edits.type_into(Cell(0, 0, "capacitance"), "1 pF"))
     assert columns_of(session.document, 0) == (*LAYER_COLUMNS, RESISTANCE, CAPACITANCE)
     session.apply(edits.type_into(Cell(0, 0, "capacitance"), ""))

@@ -100,7 +100,9 @@ def test_rare_columns_come_when_asked_for_and_stay_where_used(session: Session) 
     model.show_rare_columns(True)
     assert [column.title for column in model.columns][4:] == []
     session.apply(edits.add_sheet(0, 0))
-    assert [column.title for column in model.columns][4:] == ["Resistance", "Inductance", "Capacitance"]
+    assert [column.title for column in model.columns][4:] == [
+        *("Resistance", "Inductance", "Capacitance", "Conductivity")
+    ]
     assert model.setData(model.index(1, 6), "1 pF")
     model.show_rare_columns(False)
     assert [column.title for column in model.columns][4:] == ["Resistance", "Capacitance"]

@@ -84,10 +84,10 @@ def test_rare_columns_are_shown_from_the_menus_and_leave_the_selection(shown: Sh
     shown.go(2, 3)
     (action,) = shown.panel.table.horizontalHeader().actions()
     assert action in shown.panel.table.actions()
-    for columns in (7, 5):
+    for columns in (8, 5):
         action.trigger()
         assert shown.panel.table.elements_model().columnCount() == columns
-        assert shown.panel.rare_columns == action.isChecked() == (columns == 7)
+        assert shown.panel.rare_columns == action.isChecked() == (columns == 8)
         assert shown.panel.table.selected_elements() == shown.session.selection.rows == (1,)
     shown.panel.delete()
     assert [line[1] for line in shown.texts()[1:-1]] == ["Sheet", "Layer", "Layer"]

@@ -223,7 +223,7 @@ def test_parts_of_a_sheet_come_and_go(shown: Shown) -> None:
     shown.go(4, 4)
     press(Key.Key_Backspace)
     press(Key.Key_Return)
-    assert shown.texts()[4][4:] == ["", "20 pH", ""]
+    assert shown.texts()[4][4:] == ["", "20 pH", "", ""]
 
     shown.go(4, 5)
     press(Key.Key_Backspace)
