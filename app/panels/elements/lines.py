@@ -161,6 +161,8 @@ class _Reading:
         bracket = ""
         if group is not None and group.first != group.last:
             bracket = " ┐" if row == group.first else " ┘" if row == group.last else " │"
+        if group is not None and row == group.first:
+            bracket += f" ×{group.repeat}"
         word = FILM if isinstance(element, SheetRecord) and element.kind == "film" else WORDS[kind]
         marks = [LEFT_OUT] if not element.enabled else []
         marks += [LOCKED] if element.locked else []

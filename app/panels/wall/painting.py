@@ -107,6 +107,12 @@ def paint_layout(painter: QPainter, layout: WallLayout, theme: Theme, wave: Wave
 
 def _paint_slab(painter: QPainter, slab: Slab, theme: Theme) -> None:
     style = kind_style(theme, slab.part.kind)
+    if slab.part.left_out:
+        # A gap with its outline: what is not computed is not there, and yet it is in the list.
+        painter.setBrush(Qt.BrushStyle.NoBrush)
+        painter.setPen(QPen(QColor(style.ink), 1.0, Qt.PenStyle.DotLine))
+        painter.drawRect(rectangle(slab.box).adjusted(2, 2, -2, -2))
+        return
     painter.fillRect(rectangle(slab.box), QColor(style.tint))
     _paint_strokes(painter, strokes(style.hatch, slab.box), colour(style.ink, HATCH_ALPHA))
 
@@ -209,7 +215,8 @@ def _paint_runs(painter: QPainter, label: Label, theme: Theme, *, faulty: bool, 
 
 
 def _paint_rail(painter: QPainter, layout: WallLayout, measure: TextMeasure, theme: Theme, touch: Touch) -> None:
-    """Write the half-spaces' names and the elements' numbers below the wall."""
+    """Write the half-spaces' names and the elements' numbers below the wall, and join those of groups."""
+    _paint_groups(painter, layout, measure, theme)
     for number in layout.numbers:
         selected = number.row in touch.selected
         painter.setPen(QColor(theme.accent if selected else theme.muted))
@@ -220,6 +227,20 @@ def _paint_rail(painter: QPainter, layout: WallLayout, measure: TextMeasure, the
     if not layout.wall.elements:
         painter.setPen(QColor(theme.muted))
         painter.drawText(rectangle(layout.rail), Qt.AlignmentFlag.AlignCenter, EMPTY_HINT)
+
+
+def _paint_groups(painter: QPainter, layout: WallLayout, measure: TextMeasure, theme: Theme) -> None:
+    """Draw a line below the elements of each group, and how often they are repeated at its end."""
+    for group in layout.wall.groups:
+        left, right = layout.extent(group.first).left, layout.extent(group.last).right
+        y = layout.body.bottom - 1.5
+        painter.setPen(QPen(QColor(theme.text), 3.0, Qt.PenStyle.SolidLine, Qt.PenCapStyle.FlatCap))
+        painter.drawLine(QPointF(left + 1, y), QPointF(right - 1, y))
+        words = f"×{group.repeat}"
+        wide = measure.width(words) + 6
+        box = QRectF(min(max(right - wide, left), layout.width - wide), y - layout.line - 1, wide, layout.line)
+        painter.fillRect(box, colour(theme.base, 0.85))
+        painter.drawText(box, Qt.AlignmentFlag.AlignCenter, words)
 
 
 def _paint_handle(painter: QPainter, layout: WallLayout, face: Face, tag: str, theme: Theme) -> None:

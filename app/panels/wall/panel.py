@@ -289,7 +289,9 @@ class WallPanel(QWidget):
         layout = self.layout_now
         if not layout.body.top <= y <= layout.body.bottom:
             return None
-        return layout.face_at(x, self._session.selection.rows)
+        face = layout.face_at(x, self._session.selection.rows)
+        part = layout.wall.elements[face.row] if face is not None else None
+        return None if isinstance(part, LayerPart) and part.locked else face
 
     def _hover(self, face: Face | None) -> None:
         if face is None:

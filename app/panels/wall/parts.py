@@ -4,21 +4,27 @@ from dataclasses import dataclass
 
 from app.document.document import Document
 from app.document.library import ALWAYS_DEFINED, PERFECT_METAL
+from app.document.sheet_cells import part_of
 from app.series.kinds import kind_of
-from stackcore.job.records import LayerRecord, SheetRecord, StackRecord
+from stackcore.job.records import Group, LayerRecord, SheetRecord, StackRecord
 from stackcore.job.resolve import Job
 from stackcore.units import Dimension, Measure, format_value
 
 
 @dataclass(frozen=True, slots=True)
 class LayerPart:
-    """A layer: name for people, thickness in m and as written, kind of material, and whether a text waits at it."""
+    """A layer: name for people, thickness in m and as written, kind of material, and whether a text waits at it.
+
+    One that is `left_out` is not computed and drawn as a gap; one that is `locked` cannot be dragged.
+    """
 
     name: str
     thickness: float
     text: str
     kind: str
     faulty: bool = False
+    left_out: bool = False
+    locked: bool = False
 
 
 @dataclass(frozen=True, slots=True)
@@ -29,6 +35,7 @@ class SheetPart:
     text: str
     name: str = "sheet"
     faulty: bool = False
+    left_out: bool = False
 
 
 @dataclass(frozen=True, slots=True)
@@ -49,13 +56,15 @@ class Wall:
     front: HalfSpacePart
     elements: tuple[Part, ...]
     back: HalfSpacePart
+    groups: tuple[Group, ...] = ()
 
 
 def wall_of(document: Document, stack: int) -> Wall:
     """Return what the drawing shows of one stack; a text that is no value yet leaves the last good one standing."""
     record = document.record.stacks[stack]
     elements = tuple(_part(document, stack, record, row) for row in range(len(record.elements)))
-    return Wall(half_space(document.job, record.front), elements, half_space(document.job, record.back))
+    front, back = half_space(document.job, record.front), half_space(document.job, record.back)
+    return Wall(front, elements, back, record.groups)
 
 
 def half_space(job: Job, name: str) -> HalfSpacePart:
@@ -78,25 +87,31 @@ def written(measure: Measure, dimension: Dimension) -> str:
 
 def sheet_part(record: SheetRecord, faulty: bool = False) -> SheetPart:
     """Return the words of a sheet."""
+    name = "film" if record.kind == "film" else "sheet"
+    if not record.enabled:
+        name = f"{name} (left out)"
     values = (
-        ("R", record.resistance, Dimension.RESISTANCE),
+        ("R", part_of(record, "resistance"), Dimension.RESISTANCE),
         ("L", record.inductance, Dimension.INDUCTANCE),
         ("C", record.capacitance, Dimension.CAPACITANCE),
     )
     present = [(letter, written(value, dimension)) for letter, value, dimension in values if value is not None]
     text = ", ".join(text for _, text in present)
-    return SheetPart(tuple(letter for letter, _ in present), text, faulty=faulty)
+    return SheetPart(tuple(letter for letter, _ in present), text, name, faulty, not record.enabled)
 
 
 def _part(document: Document, stack: int, record: StackRecord, row: int) -> Part:
     element = record.elements[row]
     faulty = any((draft.cell.stack, draft.cell.row) == (stack, row) for draft in document.drafts)
     if isinstance(element, LayerRecord):
+        name = shown_name(document.job, element.material)
         return LayerPart(
-            shown_name(document.job, element.material),
+            name if element.enabled else f"{name} (left out)",
             element.thickness.value,
             written(element.thickness, Dimension.LENGTH),
             kind_of(document.job, element.material),
             faulty,
+            not element.enabled,
+            element.locked,
         )
     return sheet_part(element, faulty)

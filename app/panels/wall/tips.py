@@ -14,6 +14,7 @@ from stackcore.media.base import AbstractMedium
 from stackcore.quantities import QUANTITIES
 from stackcore.stack import Element, Layer, Stack
 
+LOCKED: Final = "Locked: its faces cannot be dragged; type the thickness, or unlock it."
 LEFT_OUT: Final = "Left out of the computation."
 DRAG_HINT: Final = "Drag to change the thickness."
 
@@ -76,7 +77,9 @@ def element_tip(layout: WallLayout, wave: Wave, elements: Elements, row: int) ->
         lines.append(f"absorbs {share_text(wave.powers.absorbed[row])} of the incident power{old}")
     if part.faulty:
         lines.append("What is typed for it in the table is no value yet; the last good one is drawn.")
-    if isinstance(part, LayerPart):
+    if isinstance(part, LayerPart) and part.locked:
+        lines.append(LOCKED)
+    elif isinstance(part, LayerPart):
         lines.append(DRAG_HINT.replace("Drag", "Drag a face"))
     return "\n".join(lines)
 

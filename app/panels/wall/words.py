@@ -88,6 +88,10 @@ def described(wall: Wall, powers: Powers | None, circumstances: str = "") -> str
     parts = [f"{part_text(row, part)}." for row, part in enumerate(wall.elements)]
     words = [f"Wall: front {wall.front.name}, {' and '.join(counts)}, back {wall.back.name}."]
     words += parts
+    words += [
+        f"Elements {group.first + 1} to {group.last + 1} are repeated {group.repeat} times."
+        for group in wall.groups
+    ]
     if powers is not None:
         words.append(
             f"At {circumstances}: reflected {share_text(powers.reflectance)}, "

@@ -71,7 +71,7 @@ def test_groups_and_what_is_left_out_are_said(session: Session) -> None:
     session.apply(edits.set_locked(0, (2,), on=True))
     lines = lines_of(session.document, 0)
     assert REPEAT in columns_of(session.document, 0)
-    assert [line.cell(NUMBER).text for line in lines[1:4]] == ["1 ┐", "2 ┘", "3"]
+    assert [line.cell(NUMBER).text for line in lines[1:4]] == ["1 ┐ ×8", "2 ┘", "3"]
     assert [line.cell(WHAT).text for line in lines[1:4]] == ["Layer", "Layer, left out", "Layer, locked"]
     assert [line.cell(REPEAT).text for line in lines[1:4]] == ["8", "", ""]
     assert lines[1].cell(REPEAT).editable
