@@ -3,6 +3,7 @@
 import os
 import sys
 from collections.abc import Sequence
+from dataclasses import replace
 from typing import TYPE_CHECKING, TextIO
 
 from stackcore.cli.arguments import Parser
@@ -25,6 +26,18 @@ def _parser() -> Parser:
     parser.add_argument("job", metavar="JOB", help="job file (.slabjob)")
     parser.add_argument("--csv", metavar="OUT", required=True, help="table to write; - is standard output")
     parser.add_argument("--stack", metavar="NAME", help="only the stack of this name")
+    parser.add_argument(
+        "--condition",
+        metavar="NAME",
+        action="append",
+        default=[],
+        help="under this condition of the job, in rows of their own; may be given more than once",
+    )
+    parser.add_argument(
+        "--wide",
+        metavar="QUANTITY",
+        help="one quantity, a row a frequency and a column a stack, angle and polarization; for spreadsheets",
+    )
     return parser
 
 
@@ -47,13 +60,14 @@ def main(argv: Sequence[str]) -> int:
         job = read_job(arguments.job)
     except OSError as error:
         return tell([unreadable(arguments.job, error, ".slabjob", "a job file")])
-    stacks = _chosen(job, arguments.stack)
+    stacks = _under(job, _chosen(job, arguments.stack), arguments.condition)
+    quantity = _quantity(arguments.wide)
     if arguments.csv == "-":
-        return _to_standard_output(job, stacks)
+        return _to_standard_output(job, stacks, quantity)
     if _same_file(arguments.job, arguments.csv):
         allowed = "another file for the table"
         return tell([Fault(arguments.csv, "the table would take the place of the job", allowed)])
-    return _to_file(job, stacks, arguments.csv)
+    return _to_file(job, stacks, arguments.csv, quantity)
 
 
 def _same_file(one: str, other: str) -> bool:
@@ -74,31 +88,65 @@ def _chosen(job: "Job", name: str | None) -> tuple["Stack", ...]:
     return chosen
 
 
-def _to_file(job: "Job", stacks: tuple["Stack", ...], path: str) -> int:
+def _under(job: "Job", stacks: tuple["Stack", ...], conditions: Sequence[str]) -> tuple["Stack", ...]:
+    """Return the stacks and, behind each, the stack under every condition, called ``A, Wet``."""
+    known = [condition.name for condition in job.record.conditions]
+    faults = []
+    for name in conditions:
+        if name not in known:
+            allowed = f"one of {', '.join(map(repr, known))}" if known else "the job has no conditions"
+            faults.append(Fault("--condition", f"the job has no condition {name!r}{nearest(name, known)}", allowed))
+    if faults:
+        raise InputError(faults)
+    places = [job.stacks.index(stack) for stack in stacks]
+    found = []
+    for place, stack in zip(places, stacks, strict=True):
+        found.append(stack)
+        for name in conditions:
+            found.append(replace(job.stack_under(place, name), name=f"{stack.name}, {name}"))
+    return tuple(found)
+
+
+def _quantity(name: str | None) -> str | None:
+    if name is None:
+        return None
+    from stackcore.quantities import QUANTITIES
+
+    if name not in QUANTITIES:
+        message = f"there is no quantity {name!r}{nearest(name, QUANTITIES)}"
+        raise InputError([Fault("--wide", message, f"one of {', '.join(QUANTITIES)}")])
+    return name
+
+
+def _to_file(job: "Job", stacks: tuple["Stack", ...], path: str, quantity: str | None) -> int:
     from stackcore.job.replacing import replacing
 
     try:
         with replacing(path) as file, utf8(file) as stream:
-            _write(job, stacks, stream)
+            _write(job, stacks, stream, quantity)
     except OSError as error:
         return tell([unwritable(path, error)])
     return DONE
 
 
-def _to_standard_output(job: "Job", stacks: tuple["Stack", ...]) -> int:
+def _to_standard_output(job: "Job", stacks: tuple["Stack", ...], quantity: str | None) -> int:
     if sys.stdout is None:
         return one_line("standard output is closed; allowed: --csv with the name of a file")
     try:
         with utf8(sys.stdout.buffer) as stream:
-            _write(job, stacks, stream)
+            _write(job, stacks, stream, quantity)
         sys.stdout.flush()
     except OSError as error:
         return standard_output_fault(error)
     return DONE
 
 
-def _write(job: "Job", stacks: tuple["Stack", ...], stream: TextIO) -> None:
-    from stackcore.export import write_csv
+def _write(job: "Job", stacks: tuple["Stack", ...], stream: TextIO, quantity: str | None) -> None:
+    from stackcore.export import write_csv, write_wide_csv
 
-    for _ in write_csv(job, stream, stacks=stacks):
-        pass
+    if quantity is None:
+        for _ in write_csv(job, stream, stacks=stacks):
+            pass
+    else:
+        for _ in write_wide_csv(job, stream, quantity, stacks=stacks):
+            pass

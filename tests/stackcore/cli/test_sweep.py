@@ -11,7 +11,7 @@ import pytest
 
 from stackcore.export import sweep_csv
 from tests.stackcore.cli.conftest import Run
-from tests.stackcore.formats.files import SAVED
+from tests.stackcore.formats.files import FORMATS, SAVED
 
 
 def test_the_table_is_written(run: Run, job_file: Path, tmp_path: Path) -> None:
@@ -50,7 +50,7 @@ def test_every_fault_of_the_file_is_a_line(run: Run, job_file: Path, tmp_path: P
     outcome = run("sweep", job_file, "--csv", tmp_path / "out.csv")
     assert outcome.status == 2
     thickness = "'-1 mm' is negative; allowed: 0 m to 1e6 m, for example '2 mm'"
-    angle = "the angle '95 deg' is out of range; allowed: 0 deg or more and below 90 deg; without a unit, rad"
+    angle = "the angle '95 deg' is out of range; allowed: 0 deg or more and below 90 deg"
     assert outcome.lines == [
         f"slabwright: stacks[0].elements[0].thickness: {thickness}",
         f"slabwright: sweep.angle[2]: {angle}",
@@ -179,3 +179,46 @@ def test_a_device_as_output_is_written_to(run: Run, job_file: Path) -> None:
     """The null device can be named as the output and is not replaced."""
     assert run("sweep", job_file, "--csv", os.devnull) == (0, "", [])
     assert Path(os.devnull).is_char_device()
+
+
+BUILT_UP = FORMATS / "built-up-v1.slabjob"
+
+
+def test_conditions_come_as_rows_of_their_own(run: Run) -> None:
+    """Behind the stack itself stands the stack under each condition, with its name behind a comma."""
+    outcome = run("sweep", BUILT_UP, "--csv", "-", "--condition", "Wet", "--condition", "Repaint")
+    rows = list(csv.DictReader(io.StringIO(outcome.out, newline="")))
+    assert list(dict.fromkeys(row["stack"] for row in rows)) == ["A", "A, Wet", "A, Repaint"]
+    first = {row["stack"]: float(row["transmittance"]) for row in reversed(rows)}
+    assert first["A, Wet"] < first["A"]
+
+
+def test_without_a_condition_the_table_is_that_of_the_stacks(run: Run) -> None:
+    """The table is the same for a job with and without conditions that nobody asks for."""
+    names = [row[0] for row in csv.reader(io.StringIO(run("sweep", BUILT_UP, "--csv", "-").out))]
+    assert set(names[1:]) == {"A"}
+
+
+def test_unknown_conditions_and_quantities_are_told(run: Run) -> None:
+    """Each with the nearest name and all there are."""
+    outcome = run("sweep", BUILT_UP, "--csv", "-", "--condition", "wet", "--condition", "Repant")
+    assert (outcome.status, outcome.out) == (2, "")
+    assert "did you mean 'Wet'" in outcome.lines[0]
+    assert "did you mean 'Repaint'" in outcome.lines[1]
+    outcome = run("sweep", SAVED, "--csv", "-", "--condition", "Wet")
+    assert "the job has no conditions" in outcome.lines[0]
+    outcome = run("sweep", BUILT_UP, "--csv", "-", "--wide", "transmitance")
+    assert (outcome.status, outcome.out) == (2, "")
+    assert "did you mean 'transmittance'" in outcome.lines[0]
+
+
+def test_a_wide_table_has_a_row_a_frequency(run: Run, tmp_path: Path) -> None:
+    """One quantity; a column a stack, condition, angle and polarization; to a file as to standard output."""
+    out = tmp_path / "wide.csv"
+    arguments = ("sweep", BUILT_UP, "--wide", "transmittance", "--condition", "Wet", "--csv")
+    assert run(*arguments, out) == (0, "", [])
+    header, *rows = list(csv.reader(io.StringIO(out.read_bytes().decode(), newline="")))
+    assert len(rows) == 2
+    assert header[:2] == ["frequency_Hz", "A TE 0 deg transmittance"]
+    assert "A, Wet TM 40 deg transmittance" in header
+    assert run(*arguments, "-").out == out.read_bytes().decode()
