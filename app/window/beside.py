@@ -60,8 +60,11 @@ CONSTRUCTIONS: Final = Beside(
     "Ctrl+Shift+I",
     "Show or hide walls as they are built, sized for the band and angle of the job.",
 )
+MAP: Final = Beside(
+    "map", "M&ap", "Ctrl+Shift+P", "Show or hide a map over frequency and angle, or over a thickness or a constant."
+)
 NOTES: Final = Beside("notes", "&Title and notes", "Ctrl+I", "Show or hide title and notes of the job.")
 HELP: Final = Beside("help", "Help", "", "Definitions, keys and cautions.", in_menu=False)
 
-BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, NOTES, HELP)
+BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, NOTES, HELP)
 """Every panel beside, in the order of the menu and of F6."""

@@ -265,6 +265,9 @@ class MainWindow(JobWindow):
         self._recompute.busy.connect(self._panels.curves.set_busy)
         self._panels.curves.pointed.connect(self._status.point)
         self._panels.material_data.pointed.connect(self._status.point)
+        self._panels.map.pointed.connect(self._status.point)
+        self._panels.map.live_busy = self._recompute.lane_busy
+        self._recompute.asked.connect(self._panels.map.give_way)
         self._panels.materials.detail_wanted.connect(lambda: self._arrangement.open_beside(MATERIAL_DATA))
         self._panels.wall.edit_requested.connect(self._panels.edit_element)
         self._exporter.running.connect(self._actions.refresh)
@@ -399,6 +402,7 @@ class MainWindow(JobWindow):
         QGuiApplication.styleHints().colorSchemeChanged.disconnect(self._take_theme)
         for unsubscribe in self._unsubscribe:
             unsubscribe()
+        self._panels.map.close_lane()
         self._recompute.close()
         self._exporter.close()
         self._files.close()

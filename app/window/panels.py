@@ -13,6 +13,7 @@ from app.panels.constructions.panel import ConstructionsPanel
 from app.panels.curves.panel import CurvesPanel
 from app.panels.elements.panel import ElementsPanel
 from app.panels.elements.stacks import StackBar
+from app.panels.maps.panel import MapPanel
 from app.panels.material_data.panel import MaterialData
 from app.panels.materials.panel import MaterialsPanel
 from app.panels.readings.panel import ReadingsPanel
@@ -47,6 +48,7 @@ class Panels:
     materials: MaterialsPanel
     material_data: MaterialData
     constructions: ConstructionsPanel
+    map: MapPanel
     notes: NotesPanel
     help: HelpPanel
 
@@ -66,14 +68,14 @@ class Panels:
         work = (self.wall, self.elements, self.sweep, self.curves, self.readings)
         return (*work, *(widget for _, widget in self.beside))
 
-    def plot_in_hand(self) -> CurvesPanel:
+    def plot_in_hand(self) -> CurvesPanel | MapPanel:
         """Return the plot that has the focus, else the curves."""
         return next((plot for plot in self.plots if has_focus(plot)), self.curves)
 
     @property
-    def plots(self) -> tuple[CurvesPanel, ...]:
+    def plots(self) -> tuple[CurvesPanel | MapPanel, ...]:
         """Every panel that can be exported as a plot."""
-        return (self.curves,)
+        return self.curves, self.map
 
     def places(self, strip: QWidget) -> Places:
         """Return who goes where."""
@@ -127,6 +129,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
         materials=materials,
         material_data=material_data,
         constructions=ConstructionsPanel(session, theme, tell),
+        map=MapPanel(session, view, theme, tell),
         notes=NotesPanel(session, tell),
         help=help_panel,
     )

@@ -34,6 +34,8 @@ class Recompute(QObject):
 
     Signals
     -------
+    asked()
+        A question goes to the lane: what takes long must give way.
     told(str)
         Words for the status line: points and time, or why the result is old.
     failed(object)
@@ -44,6 +46,7 @@ class Recompute(QObject):
         A calculation takes longer than `PATIENCE`, or no longer does.
     """
 
+    asked = Signal()
     told = Signal(str)
     failed = Signal(object)
     answered = Signal(object)
@@ -78,8 +81,13 @@ class Recompute(QObject):
         """Whether the panels show the present job, as far as it has values."""
         return self._newest is not None and not self._lane.busy and not self._fault
 
+    def lane_busy(self) -> bool:
+        """Return whether the lane has a question without an answer yet."""
+        return self._lane.busy
+
     def ask(self, *, fresh: bool = False) -> None:
         """Ask for the stack that is looked at; `fresh` forgets the answers to all earlier questions."""
+        self.asked.emit()
         number = self._lane.ask_job(self._session.job, self._session.selection.stack, self._view.state)
         if fresh:
             self._oldest = number

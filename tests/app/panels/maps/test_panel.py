@@ -1,0 +1,226 @@
+"""The panel of maps: right at every cell, live while it is shown, and gone without a trace."""
+
+import xml.etree.ElementTree as ElementTree
+from collections.abc import Iterator
+from dataclasses import replace
+
+import numpy as np
+import pytest
+from PySide6.QtCore import QPointF, Qt
+from PySide6.QtGui import QGuiApplication
+from PySide6.QtTest import QTest
+from pytestqt.qtbot import QtBot
+
+from app.document import edits
+from app.document.document import Cell
+from app.document.session import Session
+from app.document.view import View
+from app.look.pictures import svg_bytes
+from app.look.theme import DARK, LIGHT
+from app.panels.maps.panel import MapPanel
+from app.panels.maps.picture import frame_of, image_of
+from app.panels.maps.question import question_of
+from app.window.samples import samples
+from stackcore.errors import Severity
+from stackcore.job import read_job
+from stackcore.propagation import solve
+
+SVG = "{http://www.w3.org/2000/svg}"
+
+
+class Bench:
+    """The panel on a radar cover, with what it said."""
+
+    def __init__(self, qtbot: QtBot) -> None:
+        self.qtbot = qtbot
+        cover = next(one for one in samples() if "radar" in one.path.name)
+        self.session, self.view = Session(read_job(cover.path)), View()
+        self.told: list[str] = []
+
+        def tell(text: str, severity: Severity) -> None:
+            self.told.append(text)
+
+        self.panel = MapPanel(self.session, self.view, LIGHT, tell)
+        qtbot.addWidget(self.panel)
+        self.panel.resize(520, 460)
+
+    def show(self) -> None:
+        """Show the panel and wait until the map is whole."""
+        self.panel.show()
+        self.qtbot.waitExposed(self.panel)
+        self.settle()
+
+    def settle(self) -> None:
+        """Wait until the map of now is whole."""
+        self.qtbot.waitUntil(lambda: self.panel.shown is not None and self.whole(), timeout=20_000)
+
+    def whole(self) -> bool:
+        """Whether what is shown is the whole map of the job of now."""
+        shown = self.panel.shown
+        wanted = question_of(self.session.job, self.session.selection.stack, self.view.state, self.panel._over)
+        return shown is not None and shown.share == 1 and shown.question == wanted
+
+
+@pytest.fixture
+def bench(qtbot: QtBot) -> Iterator[Bench]:
+    """A bench whose lane is closed at the end."""
+    made = Bench(qtbot)
+    yield made
+    made.panel.close_lane()
+
+
+def test_every_cell_is_what_the_solver_says(bench: Bench) -> None:
+    """Ten cells of the map agree with plain solving, and the axes cover the sweep."""
+    bench.show()
+    shown = bench.panel.shown
+    assert shown is not None
+    rng = np.random.default_rng(3)
+    stack = bench.session.job.stacks[0]
+    for _ in range(10):
+        row, column = int(rng.integers(shown.values.shape[0])), int(rng.integers(shown.values.shape[1]))
+        answer = solve(stack, float(shown.level.x[column]), float(shown.level.y[row]))
+        assert shown.values[row, column] == pytest.approx(float(answer.transmittance[0, 0, 0]), abs=1e-12)
+    assert (shown.x[0], shown.x[-1]) == pytest.approx((8.0, 11.0))
+    assert (shown.y[0], shown.y[-1]) == pytest.approx((0.0, 55.0))
+    assert shown.worst is not None
+    assert bench.panel.worst.text().startswith("Worst: ")
+
+
+def test_it_follows_edits_and_what_is_looked_at(bench: Bench) -> None:
+    """A thickness typed, another quantity and another polarization each bring another map."""
+    bench.show()
+    before = bench.panel.shown
+    bench.session.apply(edits.type_into(Cell(0, 0, "thickness"), "9 mm"))
+    bench.settle()
+    after = bench.panel.shown
+    assert before is not None
+    assert after is not None
+    assert not np.array_equal(before.values, after.values)
+    bench.view.set(quantity="insertion_loss_dB", active_polarization="TM")
+    bench.settle()
+    assert bench.panel.shown is not None
+    assert bench.panel.shown.titles[2] == "Insertion loss, dB"
+
+
+def test_a_thickness_can_run_upward(bench: Bench) -> None:
+    """The offer holds what can be varied; the axis has its unit, and the values are those of the varied stack."""
+    bench.show()
+    paths = [bench.panel.over.itemData(place) for place in range(bench.panel.over.count())]
+    assert paths[0] == ""
+    assert "stacks[0].elements[0].thickness" in paths
+    bench.panel.choose_over("stacks[0].elements[0].thickness")
+    bench.settle()
+    shown = bench.panel.shown
+    assert shown is not None
+    assert shown.titles[1].endswith(", mm")
+    session = Session(bench.session.job)
+    session.apply(edits.set_thickness(0, 0, float(f"{shown.level.y[40]:.3g}")))
+    assert shown.y[40] == pytest.approx(shown.level.y[40] * 1e3, rel=1e-9)
+
+
+def test_what_runs_upward_and_is_gone_becomes_the_angle(bench: Bench) -> None:
+    """Deleting the element leaves a map over the angle."""
+    bench.show()
+    bench.panel.choose_over("stacks[0].elements[0].thickness")
+    bench.settle()
+    bench.session.apply(edits.delete(0, (0,)))
+    bench.settle()
+    assert bench.panel.shown is not None
+    assert "Angle" in bench.panel.shown.titles[1]
+
+
+def test_nothing_is_computed_while_it_is_hidden(bench: Bench) -> None:
+    """Neither before it is shown nor after it is closed."""
+    bench.session.apply(edits.type_into(Cell(0, 0, "thickness"), "9.1 mm"))
+    assert bench.panel._asked is None
+    bench.show()
+    bench.panel.hide()
+    bench.session.apply(edits.type_into(Cell(0, 0, "thickness"), "9.2 mm"))
+    assert bench.panel._asked is None
+    bench.qtbot.waitUntil(lambda: not bench.panel._lane.busy)
+
+
+def test_cells_are_told_by_mouse_and_keys(bench: Bench) -> None:
+    """Value, frequency and angle of the cell; arrows move by one, with Ctrl by ten, and stop at the edge."""
+    bench.show()
+    shown, view = bench.panel.shown, bench.panel.map
+    assert shown is not None
+    told: list[str] = []
+    bench.panel.pointed.connect(told.append)
+    frame = frame_of(shown, view.width(), view.height())
+    QTest.mouseMove(view, frame.area.center().toPoint())
+    assert "GHz" in told[-1]
+    assert "°" in told[-1]
+    view.setFocus()
+    view.point((0, 0))
+    QTest.keyClick(view, Qt.Key.Key_Left)
+    assert view.cursor_cell == (0, 0)
+    QTest.keyClick(view, Qt.Key.Key_Up, Qt.KeyboardModifier.ControlModifier)
+    assert view.cursor_cell == (10, 0)
+    assert view.cell_at(QPointF(0, 0)) is None
+
+
+def test_colours_can_be_typed(bench: Bench) -> None:
+    """Both ends or one; an end that is none, or a range that falls, is told and changes nothing."""
+    bench.show()
+    panel = bench.panel
+    for field, text in ((panel.low, "0.5"), (panel.high, "1")):
+        field.setText(text)
+        field.committed.emit(text)
+    assert panel.map.range_shown() == (0.5, 1.0)
+    panel.low.setText("2")
+    panel.low.committed.emit("2")
+    assert panel.map.range_shown() == (0.5, 1.0)
+    assert "must be below" in bench.told[-1]
+    panel.low.setText("much")
+    panel.low.committed.emit("much")
+    assert "much" in bench.told[-1]
+
+
+def test_data_and_picture_can_be_taken_away(bench: Bench) -> None:
+    """A table with both axes in full precision, and a drawing whose texts are texts."""
+    bench.show()
+    shown = bench.panel.shown
+    assert shown is not None
+    bench.panel.copy_data()
+    rows = QGuiApplication.clipboard().text().splitlines()
+    assert len(rows) == shown.values.shape[0] + 1
+    assert float(rows[1].split("\t")[5]) == shown.values[0, 4]
+    root = ElementTree.fromstring(svg_bytes(bench.panel.picture()))
+    words = "".join(root.itertext())
+    assert "Frequency, GHz" in words
+    assert "Transmittance" in words
+    bench.panel.copy_picture()
+    assert QGuiApplication.clipboard().mimeData().hasImage()
+
+
+def test_light_and_dark_differ(bench: Bench) -> None:
+    """The ground follows the look; the colours of the map stay."""
+    bench.show()
+    pictures = []
+    for theme in (LIGHT, DARK):
+        bench.panel.set_theme(theme)
+        pictures.append(bench.panel.map.grab().toImage())
+    assert pictures[0].pixelColor(2, 2).name() == LIGHT.base
+    assert pictures[1].pixelColor(2, 2).name() == DARK.base
+    middle = QPointF(pictures[0].width() / 2, pictures[0].height() / 2).toPoint()
+    assert pictures[0].pixelColor(middle) == pictures[1].pixelColor(middle)
+
+
+def test_infinite_and_missing_values_are_drawn(bench: Bench) -> None:
+    """Infinite decibels have the end of the colours, and what has no meaning is clear."""
+    values = np.array([[0.0, 10.0], [np.inf, np.nan]])
+    image = image_of(values, 0.0, 10.0)
+    assert image.pixelColor(0, 0) == image.pixelColor(1, 1)
+    assert image.pixelColor(1, 0).alpha() == 0
+
+
+def test_a_logarithmic_axis_spaces_by_ratio(bench: Bench) -> None:
+    """The middle of the map is the geometric middle of the band."""
+    bench.view.replace(replace(bench.view.state, log_frequency=True))
+    bench.show()
+    shown = bench.panel.shown
+    assert shown is not None
+    assert shown.x[300] == pytest.approx(np.sqrt(8 * 11), rel=1e-9)
+    frame = frame_of(shown, 500, 400)
+    assert frame.across(float(np.sqrt(8 * 11))) == pytest.approx(frame.area.center().x())
