@@ -63,8 +63,14 @@ CONSTRUCTIONS: Final = Beside(
 MAP: Final = Beside(
     "map", "M&ap", "Ctrl+Shift+P", "Show or hide a map over frequency and angle, or over a thickness or a constant."
 )
+VARIANTS: Final = Beside(
+    "variants",
+    "&Variants",
+    "Ctrl+Shift+V",
+    "Show or hide all stacks of the job beside each other: thickness, mass, cost and worst value.",
+)
 NOTES: Final = Beside("notes", "&Title and notes", "Ctrl+I", "Show or hide title and notes of the job.")
 HELP: Final = Beside("help", "Help", "", "Definitions, keys and cautions.", in_menu=False)
 
-BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, NOTES, HELP)
+BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, VARIANTS, NOTES, HELP)
 """Every panel beside, in the order of the menu and of F6."""

@@ -21,6 +21,7 @@ from app.window.commands import Commands, HelpCommands, ViewCommands
 from app.window.crash_net import CrashNet
 from app.window.diagnostics import diagnostics, parts, version_of
 from app.window.dialogs import Dialogs, QtDialogs
+from app.window.dropping import dropped_files, open_dropped
 from app.window.editing import ElementQuestions, StackCommands, StructureCommands
 from app.window.exporting import Exporter, ProgressLine, csv_steps
 from app.window.files import Files
@@ -184,22 +185,14 @@ class MainWindow(JobWindow):
 
     def dragEnterEvent(self, event: QDragEnterEvent) -> None:
         """Welcome local files."""
-        if self._dropped(event):
+        if dropped_files(event):
             event.acceptProposedAction()
 
     def dropEvent(self, event: QDropEvent) -> None:
         """Open the first job that was dropped, others in windows of their own, and show measured data."""
-        first, *rest = self._dropped(event) or (None,)
-        if first is None:
-            return
-        event.acceptProposedAction()
-        for path in (path for path in (first, *rest) if self._material_files.takes(path)):
-            self._material_files.open(path)
-        jobs = [path for path in (first, *rest) if not self._material_files.takes(path)]
-        if jobs:
-            self._files.open_path(jobs[0])
-        for path in jobs[1:]:
-            self._others.open_beside(path)
+        if paths := dropped_files(event):
+            event.acceptProposedAction()
+            open_dropped(paths, self._files, self._material_files, self._others)
 
     def keyPressEvent(self, event: QKeyEvent) -> None:
         """Dismiss the message with Esc, when nothing else wanted the key."""
@@ -265,9 +258,10 @@ class MainWindow(JobWindow):
         self._recompute.busy.connect(self._panels.curves.set_busy)
         self._panels.curves.pointed.connect(self._status.point)
         self._panels.material_data.pointed.connect(self._status.point)
-        self._panels.map.pointed.connect(self._status.point)
-        self._panels.map.live_busy = self._recompute.lane_busy
-        self._recompute.asked.connect(self._panels.map.give_way)
+        for panel in self._panels.slow:
+            panel.pointed.connect(self._status.point)
+            panel.live_busy = self._recompute.lane_busy
+            self._recompute.asked.connect(panel.give_way)
         self._panels.materials.detail_wanted.connect(lambda: self._arrangement.open_beside(MATERIAL_DATA))
         self._panels.wall.edit_requested.connect(self._panels.edit_element)
         self._exporter.running.connect(self._actions.refresh)
@@ -368,10 +362,6 @@ class MainWindow(JobWindow):
         QGuiApplication.clipboard().setText(diagnostics(self._theme, log))
         self.messages.tell("Copied the diagnostics.")
 
-    @staticmethod
-    def _dropped(event: QDropEvent) -> tuple[Path, ...]:
-        return tuple(Path(url.toLocalFile()) for url in event.mimeData().urls() if url.isLocalFile())
-
     def _show_columns(self, file: str, text: str) -> None:
         self._arrangement.open_beside(MATERIAL_DATA)
         self._panels.material_data.editor.page.open_import(file, text)
@@ -402,7 +392,7 @@ class MainWindow(JobWindow):
         QGuiApplication.styleHints().colorSchemeChanged.disconnect(self._take_theme)
         for unsubscribe in self._unsubscribe:
             unsubscribe()
-        self._panels.map.close_lane()
+        self._panels.close_lanes()
         self._recompute.close()
         self._exporter.close()
         self._files.close()

@@ -18,6 +18,7 @@ from app.panels.material_data.panel import MaterialData
 from app.panels.materials.panel import MaterialsPanel
 from app.panels.readings.panel import ReadingsPanel
 from app.panels.sweep.panel import SweepPanel
+from app.panels.variants.panel import VariantsPanel
 from app.panels.wall.panel import WallPanel
 from app.window.beside import BESIDE, Beside
 from app.window.exporting import Tell
@@ -49,6 +50,7 @@ class Panels:
     material_data: MaterialData
     constructions: ConstructionsPanel
     map: MapPanel
+    variants: VariantsPanel
     notes: NotesPanel
     help: HelpPanel
 
@@ -76,6 +78,16 @@ class Panels:
     def plots(self) -> tuple[CurvesPanel | MapPanel, ...]:
         """Every panel that can be exported as a plot."""
         return self.curves, self.map
+
+    @property
+    def slow(self) -> tuple[MapPanel | VariantsPanel, ...]:
+        """Those that compute what takes long, and give way to the curves."""
+        return self.map, self.variants
+
+    def close_lanes(self) -> None:
+        """End for good what the slow panels compute."""
+        for panel in self.slow:
+            panel.close_lane()
 
     def places(self, strip: QWidget) -> Places:
         """Return who goes where."""
@@ -130,6 +142,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
         material_data=material_data,
         constructions=ConstructionsPanel(session, theme, tell),
         map=MapPanel(session, view, theme, tell),
+        variants=VariantsPanel(session, view, theme, tell),
         notes=NotesPanel(session, tell),
         help=help_panel,
     )

@@ -73,7 +73,7 @@ def _material(material: MaterialRecord) -> str:
     for key in ("certainty", "source", "note"):
         if value := getattr(material, key):
             members[key] = value
-    members |= _facts(material)
+    members |= fact_members(material)
     return f"{_json(material.name)}: {_members(members)}"
 
 
@@ -90,7 +90,8 @@ def _rows(value: object) -> str:
     return "[\n      " + ",\n      ".join(_json(row) for row in value) + "\n    ]"
 
 
-def _facts(material: MaterialRecord) -> dict[str, object]:
+def fact_members(material: MaterialRecord) -> dict[str, object]:
+    """Return density, price, ply thickness and states of a material as they are written."""
     members: dict[str, object] = {}
     if material.density is not None:
         members["density"] = written_measure(material.density, Dimension.MASS_DENSITY)

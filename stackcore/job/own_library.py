@@ -5,6 +5,7 @@ from pathlib import Path
 from typing import Final
 
 from stackcore.errors import Fault, LibraryError
+from stackcore.job.encode import fact_members
 from stackcore.job.materials import with_resolved_library
 from stackcore.job.records import JobRecord, MaterialRecord, SweepRecord
 from stackcore.job.replacing import replacing
@@ -80,4 +81,16 @@ def _entry(material: MaterialRecord, name: str) -> str:
         ends, note = (_ALL[0], _ALL[1]), f"{note} Range not stated.".strip()
     certainty = shown.certainty or "common practice"
     provenance = Provenance(shown.source or "Not stated", certainty, told_spread, note)
-    return entry_text(name, shown.label or shown.name, shown.model, shown.constants, ends, provenance)
+    return entry_text(
+        name, shown.label or shown.name, shown.model, shown.constants, ends, provenance, _library_facts(shown)
+    )
+
+
+def _library_facts(material: MaterialRecord) -> dict[str, object]:
+    """Return what the library keeps of the facts: all but the price, which is the job's; numbers with units."""
+    units = {"density": "kg/m3", "ply_thickness": "m"}
+    written = {key: value for key, value in fact_members(material).items() if key != "price"}
+    return {
+        key: f"{value} {units[key]}" if key in units and not isinstance(value, str) else value
+        for key, value in written.items()
+    }

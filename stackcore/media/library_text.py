@@ -20,8 +20,11 @@ def entry_text(
     constants: Mapping[str, Value],
     valid_range: tuple[Measure, Measure] | None,
     provenance: Provenance,
+    facts: Mapping[str, object] | None = None,
 ) -> str:
     """Return the table ``[[material]]`` of one entry, as `stackcore.media.library_file` reads it.
+
+    `facts` are density, ply thickness and states as they are written.
 
     Examples
     --------
@@ -44,6 +47,7 @@ def entry_text(
     members |= {"source": provenance.source, "certainty": provenance.certainty, "spread": dict(provenance.spread)}
     if provenance.note:
         members["note"] = provenance.note
+    members |= facts or {}
     lines = [f"{_key(key)} = {toml_text(value)}" for key, value in members.items()]
     return "\n".join(["[[material]]", *lines, ""])
 

@@ -6,7 +6,7 @@ import pytest
 
 from stackcore.errors import LibraryError
 from stackcore.job.own_library import keep_material
-from stackcore.job.records import MaterialRecord
+from stackcore.job.records import MaterialRecord, StateRecord
 from stackcore.media.library import (
     Library,
     forget_library,
@@ -100,6 +100,30 @@ def test_a_material_is_kept_and_found_again() -> None:
     assert entry.valid_range.highest == 12e9
     assert (foam.provenance.source, foam.provenance.note) == ("Not stated", "Range not stated.")
     assert read_family("ours", path.read_bytes()).faults == ()
+
+
+@pytest.mark.usefixtures("program_home")
+def test_facts_and_states_are_kept() -> None:
+    """Density, ply thickness and states of a material go into the user's library; its price does not."""
+    wet = StateRecord("wet, 20 °C", {"permittivity": 4.6 + 0j, "loss_tangent": 0.03}, note="saturated")
+    record = MaterialRecord(
+        "skin",
+        model="constant",
+        constants={"permittivity": 4.2 + 0j},
+        density=parse_measure("1900", Dimension.MASS_DENSITY),
+        ply_thickness=parse_measure("0.25 mm", Dimension.LENGTH),
+        price=12.5,
+        states=(wet,),
+    )
+    path = keep_material(record, "ours/skin")
+    entry = library_entry("ours/skin")
+    assert entry.density is not None
+    assert entry.density.value == 1900
+    assert entry.ply_thickness is not None
+    assert entry.ply_thickness.value == 0.25e-3
+    (state,) = entry.states
+    assert (state.name, state.constants, state.note) == (wet.name, wet.constants, wet.note)
+    assert "price" not in path.read_text(encoding="utf-8")
 
 
 @pytest.mark.usefixtures("program_home")

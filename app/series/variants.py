@@ -1,0 +1,110 @@
+"""The stacks of a job compared: thickness, mass, cost, and the worst value of what is shown."""
+
+from collections.abc import Generator
+from dataclasses import dataclass
+
+import numpy as np
+
+from app.document.view import Power, ViewState
+from app.series.shown import shown, shown_unit, shown_values
+from app.series.texts import angle_text, frequency_text, value_text
+from stackcore.arrays import FloatArray
+from stackcore.job import Job
+from stackcore.job.mass import Sum, cost_per_area, mass_per_area
+from stackcore.polarizations import polarization
+from stackcore.propagation import solve
+from stackcore.quantities import quantity_named
+
+
+@dataclass(frozen=True, slots=True)
+class Worst:
+    """The worst value of a stack over the sweep: as a number in the unit on screen, and in words with its place."""
+
+    value: float
+    text: str
+    place: str
+
+
+@dataclass(frozen=True, slots=True)
+class Variant:
+    """One stack.
+
+    Parameters
+    ----------
+    name
+        Of the stack.
+    thickness
+        Of all layers, m.
+    mass, cost
+        By area, as far as materials say them.
+    worst
+        Of the quantity shown; None where it has no worse end, or while it is not worked out.
+    """
+
+    name: str
+    thickness: float
+    mass: Sum
+    cost: Sum
+    worst: Worst | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class Comparison:
+    """All stacks of a job, and what their worst values are of."""
+
+    quantity: str
+    power: Power
+    variants: tuple[Variant, ...]
+    unit: str = ""
+
+    def difference(self, stack: int, reference: int) -> float | None:
+        """Return the worst value of a stack less that of another, in the unit on screen; None without both."""
+        one, other = self.variants[stack].worst, self.variants[reference].worst
+        if one is None or other is None or stack == reference:
+            return None
+        gap = one.value - other.value
+        return gap if np.isfinite(gap) else None
+
+
+def comparing(job: Job, view: ViewState) -> Generator[Comparison, None, None]:
+    """Compare the stacks of `job`, yielding after each all that is known; nothing is done until it is advanced."""
+    quantity, power = view.quantity, view.power
+    if "element_absorptance" in quantity:
+        quantity = "absorptance"  # an element of one stack is none of another
+    frequency = job.sweep.frequencies()
+    unit, factor = shown_unit(quantity, power=power, frequency=frequency)
+    found = [
+        Variant(stack.name, stack.thickness, mass_per_area(job, place), cost_per_area(job, place))
+        for place, stack in enumerate(job.stacks)
+    ]
+    yield Comparison(quantity, power, tuple(found), unit)
+    for place, stack in enumerate(job.stacks):
+        response = solve(stack, frequency, job.sweep.angles())
+        values = np.stack(
+            [quantity_named(quantity).of(response, polarization(side)) for side in view.polarizations], axis=-1
+        )
+        values = shown_values(quantity, values, power=power, factor=factor)
+        old = found[place]
+        worst = _worst(quantity, unit, values, response.frequency, response.angle, view.polarizations)
+        found[place] = Variant(old.name, old.thickness, old.mass, old.cost, worst)
+        yield Comparison(quantity, power, tuple(found), unit)
+
+
+def _worst(
+    quantity: str,
+    unit: str,
+    values: FloatArray,
+    frequency: FloatArray,
+    angle: FloatArray,
+    sides: tuple[str, ...],
+) -> Worst | None:
+    end = shown(quantity).worst
+    known = ~np.isnan(values)
+    if end is None or not known.any():
+        return None
+    badness = np.where(known, values if end == "high" else -values, -np.inf)
+    row, column, side = np.unravel_index(int(np.argmax(badness)), values.shape)
+    value = float(values[row, column, side])
+    label = polarization(sides[int(side)]).label
+    place = f"{frequency_text(float(frequency[row]))}, {angle_text(float(angle[column]))}, {label}"
+    return Worst(value, value_text(quantity, value, unit), place)
