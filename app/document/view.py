@@ -41,6 +41,12 @@ class ViewState:
         The polarization the wall drawing shows.
     worst_shown
         Mark the worst point of each curve.
+    conditions
+        Names of the conditions over which the curves show an envelope, besides the stack as it is built.
+    beside
+        Names of other stacks of the job whose curves are drawn with those of the stack in hand.
+    less
+        Name of the stack whose values are taken off all curves; empty to show them whole.
 
     Raises
     ------
@@ -58,6 +64,9 @@ class ViewState:
     active_angle: int = 0
     active_polarization: str = "TE"
     worst_shown: bool = True
+    conditions: tuple[str, ...] = ()
+    beside: tuple[str, ...] = ()
+    less: str = ""
 
     def __post_init__(self) -> None:
         if self.quantity not in QUANTITIES and element_absorptance(self.quantity) is None:
@@ -126,6 +135,9 @@ class ViewChanges(TypedDict, total=False):
     active_angle: int
     active_polarization: str
     worst_shown: bool
+    conditions: tuple[str, ...]
+    beside: tuple[str, ...]
+    less: str
 
 
 class View:

@@ -55,6 +55,14 @@ class Curve:
         For each point, whether every material of the stack is known there.
     doubts
         The materials that are not known at all points.
+    stack
+        Name of the stack when it is not the one in hand.
+    less
+        Name of the stack whose values are taken off; there is then no worst point.
+    low, high
+        Ends of the envelope over the conditions in `unit`, nan where nothing can be drawn, or None without one.
+    worst_in
+        The condition in which the worst point is, empty for the stack as it is built.
     """
 
     quantity: str
@@ -72,6 +80,20 @@ class Curve:
     hidden_points: int
     held: Mask
     doubts: tuple[Doubt, ...] = ()
+    stack: str = ""
+    less: str = ""
+    low: FloatArray | None = None
+    high: FloatArray | None = None
+    worst_in: str = ""
+
+    @property
+    def infinite_value(self) -> float:
+        """The worst value where it is infinite; that of a condition where the curve itself is not."""
+        assert self.worst_infinite is not None
+        value = float(self.raw[int(np.argmin(np.abs(self.x - self.worst_infinite)))])
+        if np.isfinite(value):
+            return np.inf if shown(self.quantity).worst == "high" else -np.inf
+        return value
 
 
 def curves_of(
@@ -125,7 +147,7 @@ def _curve(
     x = np.asarray(response.frequency, dtype=np.float64)
     raw = values[:, index]
     finite = np.isfinite(raw)
-    worst, infinite = _worst(quantity, x, raw)
+    worst, infinite = worst_point(quantity, x, raw)
     angle = float(response.angle[index])
     return Curve(
         quantity,
@@ -146,7 +168,7 @@ def _curve(
     )
 
 
-def _worst(quantity: str, x: FloatArray, raw: FloatArray) -> tuple[Point | None, float | None]:
+def worst_point(quantity: str, x: FloatArray, raw: FloatArray) -> tuple[Point | None, float | None]:
     """Return the worst finite point, or else the frequency at which the worst value is infinite."""
     end = shown(quantity).worst
     known = ~np.isnan(raw)

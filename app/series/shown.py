@@ -24,12 +24,15 @@ class Shown:
         Whether a large value stands for more than a real wall keeps (see `app.series.texts`).
     decimals
         Digits after the point on screen, or None for significant digits.
+    wraps
+        Whether it is an angle that runs from −180° to 180° and begins again.
     """
 
     worst: Literal["low", "high"] | None = None
     fraction: bool = False
     practical: bool = False
     decimals: int | None = None
+    wraps: bool = False
 
 
 SHOWN: Final[dict[str, Shown]] = {
@@ -39,8 +42,8 @@ SHOWN: Final[dict[str, Shown]] = {
     "return_loss_dB": Shown("low", decimals=3),
     "insertion_loss_dB": Shown("high", practical=True, decimals=3),
     "shielding_effectiveness_dB": Shown("low", practical=True, decimals=3),
-    "reflection_phase_deg": Shown(decimals=2),
-    "transmission_phase_deg": Shown(decimals=2),
+    "reflection_phase_deg": Shown(decimals=2, wraps=True),
+    "transmission_phase_deg": Shown(decimals=2, wraps=True),
     "insertion_phase_delay_deg": Shown(decimals=2),
     "group_delay_s": Shown(),
     "standing_wave_ratio": Shown("high"),
@@ -59,8 +62,8 @@ SHOWN: Final[dict[str, Shown]] = {
     "cross_polar_discrimination_dB": Shown("low", decimals=3),
     "transmitted_axial_ratio_dB": Shown("high", decimals=3),
     "reflected_axial_ratio_dB": Shown("high", decimals=3),
-    "transmission_phase_difference_deg": Shown(decimals=2),
-    "reflection_phase_difference_deg": Shown(decimals=2),
+    "transmission_phase_difference_deg": Shown(decimals=2, wraps=True),
+    "reflection_phase_difference_deg": Shown(decimals=2, wraps=True),
 }
 """Name of the quantity -> how it is shown."""
 

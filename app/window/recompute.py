@@ -7,8 +7,10 @@ from PySide6.QtCore import QObject, QTimer, Signal
 
 from app.document.cells import place_words
 from app.document.document import WHOLE_JOB, Draft
+from app.document.following import following
 from app.document.session import Change, Session
-from app.document.view import View, ViewChange
+from app.document.view import View, ViewChange, ViewState
+from app.series.cases import cases_of
 from app.workers.live import Answer, Failure, LiveLane
 
 PATIENCE: Final = 200
@@ -102,6 +104,7 @@ class Recompute(QObject):
         self._lane.close()
 
     def _edited(self, change: Change) -> None:
+        self._view.replace(following(self._view.state, change.before.record, change.after.record), self)
         stack = change.selection.stack
         other_stack = change.kind == "open" or stack != self._stack
         self._stack = stack
@@ -112,13 +115,14 @@ class Recompute(QObject):
         self._tell()
 
     def _looked(self, change: ViewChange) -> None:
-        sweep = self._session.job.sweep
-        points = [
-            (state.marker_frequency(sweep), state.marker_angle(sweep), state.markers, state.quantity)
-            for state in (change.before, change.after)
-        ]
-        if points[0] != points[1]:
+        if self._asked_for(change.before) != self._asked_for(change.after):
             self.ask()
+
+    def _asked_for(self, state: ViewState) -> tuple[object, ...]:
+        """Return what of the view decides which points are computed."""
+        job = self._session.job
+        points = (state.marker_frequency(job.sweep), state.marker_angle(job.sweep), state.markers)
+        return (*points, state.quantity, cases_of(job.record, self._session.selection.stack, state))
 
     def _take(self, answer: Answer) -> None:
         if answer.question.number < self._oldest:
@@ -185,9 +189,12 @@ def summary(answer: Answer) -> str:
     ``401 frequencies × 3 angles, 12 ms``
     """
     frequencies, angles = len(answer.question.frequency), len(answer.question.angle)
+    others = f" × {len(answer.compared) + 1} cases" if answer.compared else ""
     seconds = answer.seconds
     took = f"{seconds * 1000:.0f} ms" if seconds < 1 else f"{seconds:.1f} s"
-    return f"{_count(frequencies, 'frequency', 'frequencies')} × {_count(angles, 'angle', 'angles')}, {took}"
+    return (
+        f"{_count(frequencies, 'frequency', 'frequencies')} × {_count(angles, 'angle', 'angles')}{others}, {took}"
+    )
 
 
 def _count(number: int, one: str, many: str) -> str:

@@ -7,14 +7,15 @@ is taken.
 
 import threading
 import time
-from collections.abc import Callable
-from dataclasses import dataclass
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass, field
 from typing import NamedTuple, final
 
 import numpy as np
 from PySide6.QtCore import QObject, Qt, Signal, Slot
 
 from app.document.view import ViewState
+from app.series.cases import Case, cases_of
 from app.workers.collecting import WindowCollector
 from stackcore.errors import Fault, InputError, SlabwrightError
 from stackcore.job import Job
@@ -44,6 +45,10 @@ class Question:
         Frequencies in Hz of all markers, for the readings.
     quantity
         What will be shown, by name, worked out beforehand; empty for none.
+    job, place
+        Where `stack` comes from: the job and the index of the stack, for what is compared with it.
+    cases
+        Other stacks, and this one under conditions, to be solved over the same sweep.
     """
 
     number: int
@@ -54,6 +59,17 @@ class Question:
     marker_angle: float
     markers: tuple[float, ...] = ()
     quantity: str = ""
+    job: Job | None = None
+    place: int = 0
+    cases: tuple[Case, ...] = ()
+
+
+@dataclass(frozen=True, slots=True)
+class Compared:
+    """A case over the sweep, and at the frequencies of all markers (None without markers)."""
+
+    response: Response
+    at_markers: Response | None
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -72,6 +88,8 @@ class Answer:
         Solved at the very frequencies of all markers and all angles, (M, A, 2), or None without markers.
     seconds
         What the calculation took.
+    compared
+        The same of every case of the question.
     """
 
     question: Question
@@ -79,6 +97,17 @@ class Answer:
     at_marker: Response
     at_markers: Response | None
     seconds: float
+    compared: Mapping[Case, Compared] = field(default_factory=dict)
+
+    @property
+    def others(self) -> dict[Case, Response]:
+        """The cases over the sweep."""
+        return {case: one.response for case, one in self.compared.items()}
+
+    @property
+    def others_at_markers(self) -> dict[Case, Response]:
+        """The cases at the markers, those that have markers."""
+        return {case: one.at_markers for case, one in self.compared.items() if one.at_markers is not None}
 
 
 class Failure(NamedTuple):
@@ -171,6 +200,9 @@ class LiveLane(QObject):
         marker_angle: float | None = None,
         markers: tuple[float, ...] = (),
         quantity: str = "",
+        job: Job | None = None,
+        place: int = 0,
+        cases: tuple[Case, ...] = (),
     ) -> int:
         """Ask a new question and return its number; the present calculation is finished first.
 
@@ -184,6 +216,8 @@ class LiveLane(QObject):
             Frequencies to be solved exactly for the readings.
         quantity
             What will be shown of the response: worked out here, not in the window's thread.
+        job, place, cases
+            The job `stack` is of, its place there, and what is solved for comparison.
 
         Returns
         -------
@@ -204,6 +238,9 @@ class LiveLane(QObject):
             float(angle[0]) if marker_angle is None else marker_angle,
             markers,
             quantity,
+            job,
+            place,
+            cases,
         )
         self._slot.put(question)
         self._start()
@@ -219,6 +256,9 @@ class LiveLane(QObject):
             marker_angle=view.marker_angle(job.sweep),
             markers=view.markers,
             quantity=view.quantity,
+            job=job,
+            place=stack,
+            cases=cases_of(job.record, stack, view),
         )
 
     def close(self) -> None:
@@ -265,6 +305,7 @@ def _result(question: Question, solve: Solve) -> Answer | Failure:
         if question.markers:
             at_markers = solve(question.stack, np.array(question.markers), question.angle)
         _prepare(question, response, at_marker, at_markers)
+        compared = solve_cases(question, solve)
     except InputError as error:
         return Failure(question, error.faults)
     except SlabwrightError as error:
@@ -275,7 +316,24 @@ def _result(question: Question, solve: Solve) -> Answer | Failure:
     except Exception as error:
         message = f"the calculation failed: {type(error).__name__}: {error}"
         return Failure(question, (Fault("", message, "please report this with the job file"),))
-    return Answer(question, response, at_marker, at_markers, time.perf_counter() - begun)
+    return Answer(question, response, at_marker, at_markers, time.perf_counter() - begun, compared)
+
+
+def solve_cases(question: Question, solve: Solve) -> dict[Case, Compared]:
+    """Return what became of every case of `question`, solved over the same sweep and at the same markers."""
+    found: dict[Case, Compared] = {}
+    if question.job is None:
+        return found
+    for case in question.cases:
+        stack = case.resolved(question.job)
+        response = solve(stack, question.frequency, question.angle)
+        markers = np.array(question.markers)
+        at_markers = solve(stack, markers, question.angle) if question.markers else None
+        for part in (response, at_markers):
+            if question.quantity and part is not None:
+                quantity_named(question.quantity).values(part)
+        found[case] = Compared(response, at_markers)
+    return found
 
 
 def _prepare(question: Question, response: Response, at_marker: Response, at_markers: Response | None) -> None:

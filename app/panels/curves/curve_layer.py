@@ -32,6 +32,16 @@ _ONE_MORE_DOT: Final = (1.6, 2.4)
 """For each dot in the dashes of a circular or a tilted wave."""
 _FEW_POINTS: Final = 40
 _POINT: Final = 2.5
+_BAND: Final = 0.16
+_BAND_EDGE: Final = 0.5
+_SIGN_APART: Final = 90.0
+SIGNS: Final[tuple[tuple[tuple[float, float], ...], ...]] = (
+    ((-4.0, 3.5), (4.0, 3.5), (0.0, -4.5)),
+    ((-3.5, -3.5), (3.5, -3.5), (3.5, 3.5), (-3.5, 3.5)),
+    ((0.0, -5.0), (4.0, 0.0), (0.0, 5.0), (-4.0, 0.0)),
+    ((-4.0, -3.5), (4.0, -3.5), (0.0, 4.5)),
+)
+"""Triangle, square, diamond, triangle on its tip: corners in pixels about the point."""
 # Points beyond which the finer drawing would take longer than a person waits without noticing.
 _FINE_POINTS: Final = 60_000
 
@@ -56,6 +66,10 @@ class DrawnCurve:
         Neighbouring values that differ by more are not joined.
     held
         For each point, whether what it stands on is known there; None for everywhere. Elsewhere it is dotted.
+    low, high
+        Ends of a band that is filled behind the curve, not a number where there is none; None without one.
+    sign
+        Sign that is set on the curve again and again: of a stack that is not the one in hand. -1 for none.
     """
 
     positions: FloatArray
@@ -65,6 +79,9 @@ class DrawnCurve:
     chosen: bool = False
     leap: float = np.inf
     held: Mask | None = None
+    low: FloatArray | None = None
+    high: FloatArray | None = None
+    sign: int = -1
     runs: tuple[tuple[int, int], ...] = field(init=False)
     pieces: tuple[tuple[int, int, bool], ...] = field(init=False)
 
@@ -118,7 +135,9 @@ class CurveLayer(Layer):
         """Draw the visible part of each curve; the chosen one lies on top."""
         # Half a line's width of room, so that a curve along the edge is not cut lengthwise.
         painter.setClipRect(QRectF(-1.5, -1.5, frame.width + 3.0, frame.height + 3.0))
-        for curve in sorted(self._curves, key=lambda one: one.chosen):
+        for curve in self._curves:
+            _draw_band(painter, curve, frame)
+        for curve in sorted(self._curves, key=lambda one: (one.sign < 0, one.chosen)):
             width = LIVE_WIDTH if not self._fine else CHOSEN_WIDTH if curve.chosen else FINE_WIDTH
             pen = QPen(QColor(curve.colour), width)
             # One device pixel, whatever the scale of the screen, is what the raster engine draws fastest.
@@ -133,6 +152,8 @@ class CurveLayer(Layer):
                 if last - first == 1 or len(curve.values) <= _FEW_POINTS:
                     for x, y in zip(across.tolist(), down.tolist(), strict=True):
                         _draw_dot(painter, curve, QPointF(x, y))
+                if curve.sign >= 0:
+                    draw_signs(painter, curve.colour, curve.sign, across, down)
 
 
 def held_pieces(first: int, last: int, held: Mask | None) -> tuple[tuple[int, int, bool], ...]:
@@ -193,6 +214,51 @@ def _draw_run(
             pen.setDashOffset((float(lengths[begin]) - lead) / width)
             painter.setPen(pen)
         painter.drawPolyline(points)
+
+
+def _draw_band(painter: QPainter, curve: DrawnCurve, frame: Frame) -> None:
+    """Fill the envelope of a curve, paler than any line so that curves in front of it stay readable."""
+    if curve.low is None or curve.high is None:
+        return
+    fill, edge = QColor(curve.colour), QColor(curve.colour)
+    fill.setAlphaF(_BAND)
+    edge.setAlphaF(_BAND_EDGE)
+    for begin, end in finite_runs(curve.low, curve.leap):
+        first, last = _visible(curve.positions, begin, end, frame)
+        if last - first < 2:
+            continue
+        across = frame.across(curve.positions[first:last])
+        ends = [frame.down(values[first:last]) for values in (curve.low, curve.high)]
+        painter.setPen(Qt.PenStyle.NoPen)
+        painter.setBrush(fill)
+        painter.drawPolygon(
+            polygon(np.concatenate((across, across[::-1])), np.concatenate((ends[0], ends[1][::-1])))
+        )
+        painter.setBrush(Qt.BrushStyle.NoBrush)
+        pen = QPen(edge, LIVE_WIDTH)
+        pen.setCosmetic(True)
+        painter.setPen(pen)
+        for down in ends:
+            painter.drawPolyline(polygon(across, down))
+
+
+def draw_signs(painter: QPainter, colour: str, sign: int, across: FloatArray, down: FloatArray) -> None:
+    """Set a sign on a line every so many pixels; different signs begin at different places.
+
+    Parameters
+    ----------
+    sign
+        Which one: it begins anew after the last of `SIGNS`.
+    """
+    lengths = np.concatenate(([0.0], np.cumsum(np.hypot(np.diff(across), np.diff(down)))))
+    first = _SIGN_APART * (0.25 + 0.5 * (sign % 2))
+    places = np.arange(first, max(float(lengths[-1]), first + 1.0), _SIGN_APART)
+    painter.setPen(Qt.PenStyle.NoPen)
+    painter.setBrush(QColor(colour))
+    shape = SIGNS[sign % len(SIGNS)]
+    for x, y in zip(np.interp(places, lengths, across), np.interp(places, lengths, down), strict=True):
+        painter.drawPolygon(QPolygonF([QPointF(x + dx, y + dy) for dx, dy in shape]))
+    painter.setBrush(Qt.BrushStyle.NoBrush)
 
 
 def _draw_dot(painter: QPainter, curve: DrawnCurve, at: QPointF) -> None:

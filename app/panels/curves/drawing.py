@@ -1,6 +1,7 @@
 """From curves of numbers to curves on the screen: colours, dashes, places, and what is marked."""
 
 from collections.abc import Sequence
+from dataclasses import replace
 from typing import Final
 
 import numpy as np
@@ -18,17 +19,15 @@ from app.panels.curves.plot import Extent
 from app.panels.curves.scale import FrequencyScale
 from app.series.axis import is_power
 from app.series.curves import Curve
+from app.series.shown import shown
 from app.series.texts import angle_text, frequency_text
 from stackcore.polarizations import polarization
 from stackcore.quantities import quantity_named
 
-_TURNS: Final = {
-    "reflection_phase_deg": 180.0,
-    "transmission_phase_deg": 180.0,
-    "transmission_phase_difference_deg": 180.0,
-    "reflection_phase_difference_deg": 180.0,
-}
+_HALF_TURN: Final = 180.0
 _FADED: Final = 0.72
+_ASIDE: Final = 0.8
+_LONGEST: Final = 16
 _NORMAL: Final = 1e-12
 _GRAINS: Final = {"dB": 1e-9, "deg": 1e-7}
 
@@ -43,9 +42,12 @@ def fill_palette(widget: QWidget, theme: Theme) -> None:
 
 
 def colours_of(curves: Sequence[Curve], theme: Theme, *, stale: bool) -> tuple[str, ...]:
-    """Return the colour of each curve; those of an earlier job are nearly grey."""
+    """Return the colour of each curve; those of an earlier job and of other stacks are nearly grey."""
     full = (curve_colour(theme, curve.quantity, curve.angle_rank, curve.angle_count) for curve in curves)
-    return tuple(mix(colour, theme.stale, _FADED) if stale else colour for colour in full)
+    return tuple(
+        mix(colour, theme.stale, _FADED) if stale else mix(colour, theme.muted, _ASIDE) if curve.stack else colour
+        for colour, curve in zip(full, curves, strict=True)
+    )
 
 
 def chosen_index(curves: Sequence[Curve], state: ViewState) -> int | None:
@@ -61,34 +63,62 @@ def draw_curves(
     curves: Sequence[Curve], colours: Sequence[str], scale: FrequencyScale, chosen: int | None
 ) -> tuple[DrawnCurve, ...]:
     """Return the curves as they are drawn, each rising in frequency."""
+    stacks = list(dict.fromkeys(curve.stack for curve in curves if curve.stack))
     drawn = []
-    for index, (curve, colour) in enumerate(zip(curves, colours, strict=True)):
-        positions, values, held = scale.positions(curve.x), curve.y, curve.held
-        if len(positions) > 1 and not bool(np.all(positions[1:] >= positions[:-1])):
-            order = np.argsort(positions, kind="stable")
-            positions, values, held = positions[order], values[order], held[order]
-        leap = _TURNS.get(curve.quantity, np.inf)
-        style = dashes(curve.polarization)
-        drawn.append(DrawnCurve(positions, values, colour, style, index == chosen, leap, held))
+    for index, (given, colour) in enumerate(zip(curves, colours, strict=True)):
+        curve = _rising(given)
+        drawn.append(
+            DrawnCurve(
+                scale.positions(curve.x),
+                curve.y,
+                colour,
+                dashes(curve.polarization),
+                index == chosen,
+                _HALF_TURN if shown(curve.quantity).wraps else np.inf,
+                curve.held,
+                curve.low,
+                curve.high,
+                stacks.index(curve.stack) if curve.stack else -1,
+            )
+        )
     return tuple(drawn)
+
+
+def _rising(curve: Curve) -> Curve:
+    """Return a curve with its points in the order of their frequencies."""
+    if len(curve.x) < 2 or bool(np.all(curve.x[1:] >= curve.x[:-1])):
+        return curve
+    order = np.argsort(curve.x, kind="stable")
+    low = None if curve.low is None else curve.low[order]
+    high = None if curve.high is None else curve.high[order]
+    return replace(curve, x=curve.x[order], y=curve.y[order], held=curve.held[order], low=low, high=high)
 
 
 def end_labels(curves: Sequence[Curve], drawn: Sequence[DrawnCurve]) -> tuple[EndLabel, ...]:
     """Return the names at the ends; curves of one angle that lie on each other have one name.
 
-    At normal incidence those are TE and TM, and at every angle what is the same for both.
+    At normal incidence those are TE and TM, and at every angle what is the same for both. Of another stack one
+    curve is named, with the name of the stack.
     """
     groups: list[tuple[list[Curve], DrawnCurve]] = []
+    others: dict[str, EndLabel] = {}
     for curve, picture in zip(curves, drawn, strict=True):
         if not picture.runs:
+            continue
+        if curve.stack:
+            others[curve.stack] = EndLabel(_short(curve.stack), picture)
             continue
         group = next((members for members, _ in groups if _lies_on(curve, members[0])), None)
         if group is None:
             groups.append(([curve], picture))
         else:
             group.append(curve)
-    shown = len({curve.polarization for curve in curves})
-    return tuple(EndLabel(_name(members, shown), picture) for members, picture in groups)
+    count = len({curve.polarization for curve in curves})
+    return (*(EndLabel(_name(members, count), picture) for members, picture in groups), *others.values())
+
+
+def _short(name: str) -> str:
+    return name if len(name) <= _LONGEST else f"{name[: _LONGEST - 1].rstrip()}…"
 
 
 def _lies_on(curve: Curve, other: Curve) -> bool:
@@ -112,16 +142,16 @@ def _name(members: Sequence[Curve], shown: int) -> str:
 def extent_of(curves: Sequence[Curve], scale: FrequencyScale) -> Extent:
     """Return the whole of what there is to show."""
     ends = [scale.position(float(end)) for curve in curves[:1] for end in (curve.x.min(), curve.x.max())]
-    known = [curve.y[np.isfinite(curve.y)] for curve in curves]
+    lines = [line for curve in curves for line in (curve.y, curve.low, curve.high) if line is not None]
+    known = [line[np.isfinite(line)] for line in lines]
     values = np.concatenate(known) if known else np.zeros(0)
     low, high = (float(values.min()), float(values.max())) if len(values) else (0.0, 1.0)
     left, right = ends if ends else (0.0, 1.0)
     if not curves:
         return Extent(left, right, low, high)
     quantity, unit = curves[0].quantity, curves[0].unit
-    turn = _TURNS.get(quantity)
-    floor, top = (-turn, turn) if turn is not None else (None, None)
-    if is_power(quantity) and unit != "dB":
+    floor, top = (-_HALF_TURN, _HALF_TURN) if shown(quantity).wraps else (None, None)
+    if is_power(quantity) and unit != "dB" and not curves[0].less:
         top = 100.0 if unit == "%" else 1.0
     return Extent(left, right, low, high, floor, top, unit == "deg", _GRAINS.get(unit, 1e-30))
 
@@ -147,19 +177,26 @@ def draw_markers(state: ViewState, drawn: Sequence[DrawnCurve], scale: Frequency
     return tuple(markers)
 
 
-def legend_facts(curves: Sequence[Curve], colours: Sequence[str], state: ViewState) -> LegendFacts:
-    """Return what the legend says of these curves."""
-    by_angle = sorted({(curve.angle, colour) for curve, colour in zip(curves, colours, strict=True)})
+def legend_facts(
+    curves: Sequence[Curve], colours: Sequence[str], state: ViewState, *, crowded: bool
+) -> LegendFacts:
+    """Return what the legend says: the other stacks and the envelope, and all when names have no room."""
+    own = [(curve, colour) for curve, colour in zip(curves, colours, strict=True) if not curve.stack]
+    by_angle = sorted({(curve.angle, colour) for curve, colour in own}) if crowded else []
     return LegendFacts(
-        state.polarizations,
+        state.polarizations if crowded else (),
         tuple(angle_text(angle) for angle, _ in by_angle),
         tuple(colour for _, colour in by_angle),
+        tuple(dict.fromkeys(curve.stack for curve in curves if curve.stack)),
+        state.conditions if any(curve.low is not None for curve, _ in own) else (),
+        own[0][1] if own else "",
     )
 
 
 def quantity_label(state: ViewState) -> str:
     """Return the words for what is shown."""
-    return quantity_named(state.quantity).label
+    less = f", difference to {state.less}" if state.less else ""
+    return f"{quantity_named(state.quantity).label}{less}"
 
 
 def _values_at(curve: DrawnCurve, position: float) -> tuple[float, ...]:

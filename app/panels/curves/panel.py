@@ -23,9 +23,12 @@ from app.panels.curves.plot_commands import PlotCommands
 from app.panels.curves.range_strip import RangeStrip
 from app.panels.curves.scale import FrequencyScale
 from app.series.axis import frequency_axis, quantity_axis
-from app.series.curves import Curve, curves_of, takes_long
+from app.series.cases import Case, cases_of
+from app.series.compared import curves_beside, curves_in_hand
+from app.series.curves import Curve, takes_long
 from app.series.texts import frequency_text
 from app.series.validity import doubt_sentence
+from app.workers.scene import scene_of
 from stackcore.arrays import FloatArray
 from stackcore.errors import Severity
 
@@ -38,6 +41,18 @@ WIDE: Final = 1e5
 """Ratio of the ends of a logarithmic band from which numbers carry their own unit: 1 kHz ... 1 THz."""
 
 _REACH: Final = 9.0
+DRAWN: Final = (
+    "quantity",
+    "power",
+    "log_frequency",
+    "polarizations",
+    "active_angle",
+    "active_polarization",
+    "conditions",
+    "beside",
+    "less",
+)
+"""What of the view changes curves, not only marks on them."""
 
 
 class CurvesPanel(QWidget):
@@ -66,6 +81,7 @@ class CurvesPanel(QWidget):
         self._answer: Answer | None = None
         self._stale = False
         self._curves: tuple[Curve, ...] = ()
+        self._beside: tuple[Curve, ...] = ()
         self._colours: tuple[str, ...] = ()
         self._worst_spots: dict[int, Spot] = {}
         self._shown_as: tuple[object, ...] = ()
@@ -179,9 +195,10 @@ class CurvesPanel(QWidget):
 
     def copy_data(self) -> None:
         """Put the curves on the clipboard as a table."""
-        if self._curves:
-            QGuiApplication.clipboard().setText(data_table(self._curves))
-            self.pointed.emit(f"Copied {len(self._curves)} curves of {len(self._curves[0].x)} points.")
+        curves = (*self._curves, *self._beside)
+        if curves:
+            QGuiApplication.clipboard().setText(data_table(curves))
+            self.pointed.emit(f"Copied {len(curves)} curves of {len(curves[0].x)} points.")
 
     def picture(self) -> Picture:
         """Return the plot as it stands, in the light look, with the stack's name and the worst point above."""
@@ -203,16 +220,19 @@ class CurvesPanel(QWidget):
     def _view_changed(self, change: ViewChange) -> None:
         if self._answer is not None and takes_long(self._answer.response, change.after.quantity):
             return  # it is being worked out elsewhere and comes as an answer
-        drawn = ("quantity", "power", "log_frequency", "polarizations", "active_angle", "active_polarization")
-        if any(getattr(change.before, name) != getattr(change.after, name) for name in drawn):
+        if self._answer is not None and any(case not in self._answer.compared for case in self._cases()):
+            return  # what is compared comes with the next answer
+        if any(getattr(change.before, name) != getattr(change.after, name) for name in DRAWN):
             self._draw()
         else:
             self._draw_marks()
 
     def _draw(self) -> None:
         state = self._view.state
-        self._curves = curves_of(self._answer.response, state) if self._answer is not None else ()
-        curves = self._curves
+        scene = scene_of(self._session.record, self._answer) if self._answer is not None else None
+        self._curves = curves_in_hand(scene, state) if scene is not None else ()
+        self._beside = curves_beside(scene, state) if scene is not None else ()
+        curves = (*self._curves, *self._beside)
         self._colours = drawing.colours_of(curves, self._theme, stale=self._stale)
         across = frequency_axis(self.sweep, log=state.log_frequency)
         upward = quantity_axis(state.quantity, self.sweep, power=state.power)
@@ -221,13 +241,15 @@ class CurvesPanel(QWidget):
         wide = state.log_frequency and float(self.sweep.max()) > float(self.sweep.min()) * WIDE
         self.plot.bottom_axis.spell = self._spell if wide else None
         self.plot.bottom_axis.set_title("Frequency" if wide else across.title)
-        self.plot.left_axis.set_title(upward.title)
-        shown_as = (state.quantity, state.power, across.unit, state.log_frequency)
+        less = self._curves[0].less if self._curves else ""
+        self.plot.left_axis.set_title(f"Difference: {upward.title}" if less else upward.title)
+        shown_as = (state.quantity, state.power, less, across.unit, state.log_frequency)
         # Where other numbers stand at an axis, a range of the old ones would show nothing: follow the new.
-        self.plot.follows[0] |= shown_as[2:] != self._shown_as[2:]
-        self.plot.follows[1] |= shown_as[:2] != self._shown_as[:2]
+        self.plot.follows[0] |= shown_as[3:] != self._shown_as[3:]
+        self.plot.follows[1] |= shown_as[:3] != self._shown_as[:3]
         self._shown_as = shown_as
-        drawn = drawing.draw_curves(curves, self._colours, self.scale, drawing.chosen_index(curves, state))
+        chosen = drawing.chosen_index(self._curves, state)
+        drawn = drawing.draw_curves(curves, self._colours, self.scale, chosen)
         self.plot.show_curves(
             drawn,
             drawing.end_labels(curves, drawn),
@@ -260,13 +282,19 @@ class CurvesPanel(QWidget):
         self.header.set_doubt(doubt)
         self._show_legend()
         self.plot.note_layer.set_text(empty)
-        said = words.description(curves) + (f" Dotted where {doubt}." if doubt else "")
+        beside = f" Beside: {', '.join(dict.fromkeys(one.stack for one in self._beside))}." if self._beside else ""
+        said = words.description(curves) + beside + (f" Dotted where {doubt}." if doubt else "")
         self.plot.setAccessibleName(f"Curves of {label.lower()}")
         self.plot.setAccessibleDescription(f"{'Last good result. ' if self._stale else ''}{empty} {said}".strip())
 
     def _show_legend(self) -> None:
-        self.header.legend.set_facts(drawing.legend_facts(self._curves, self._colours, self._view.state))
-        self.header.legend.setVisible(bool(self._curves) and self.plot.end_labels.crowded)
+        curves, crowded = (*self._curves, *self._beside), self.plot.end_labels.crowded
+        facts = drawing.legend_facts(curves, self._colours, self._view.state, crowded=crowded)
+        self.header.legend.set_facts(facts)
+        self.header.legend.setVisible(bool(self._curves) and bool(facts))
+
+    def _cases(self) -> tuple[Case, ...]:
+        return cases_of(self._session.record, self._session.selection.stack, self._view.state)
 
     # Pointing and choosing
 
@@ -275,7 +303,7 @@ class CurvesPanel(QWidget):
         frame, best = self.plot.frame(), None
         places = self.scale.positions(self.sweep)
         point = int(np.nanargmin(np.abs(places - frame.position(at.x()))))
-        for index, curve in enumerate(self._curves):
+        for index, curve in enumerate((*self._curves, *self._beside)):
             if np.isfinite(curve.y[point]):
                 gap = abs(frame.down(float(curve.y[point])) - at.y())
                 if best is None or gap < best[2]:
@@ -289,7 +317,7 @@ class CurvesPanel(QWidget):
             self.pointed.emit("")
             return
         index, point, _ = found
-        curve = self._curves[index]
+        curve = (*self._curves, *self._beside)[index]
         spot = Spot(self.scale.position(float(curve.x[point])), float(curve.y[point]), self._colours[index])
         self.plot.pointer_layer.point(spot)
         guess = doubt_sentence(self._session.job, curve.doubts, point)
@@ -313,7 +341,7 @@ class CurvesPanel(QWidget):
 
     def _choose_curve(self, at: QPointF) -> None:
         found = self._nearest(at)
-        if found is not None and found[2] <= _REACH:
+        if found is not None and found[2] <= _REACH and found[0] < len(self._curves):
             self.choose_curve(found[0])
 
     def choose_curve(self, index: int) -> None:

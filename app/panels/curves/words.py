@@ -29,9 +29,7 @@ def worst_curve(curves: Sequence[Curve]) -> int | None:
     badness = -math.inf
     for index, curve in enumerate(curves):
         if curve.worst_infinite is not None:
-            sunk = shown(curve.quantity).worst == "low"
-            value = curve.raw[int(np.argmin(np.abs(curve.x - curve.worst_infinite)))]
-            bad = float(-value if sunk else value)
+            bad = -curve.infinite_value if shown(curve.quantity).worst == "low" else curve.infinite_value
         elif curve.worst is not None:
             bad = -curve.worst.y if shown(curve.quantity).worst == "low" else curve.worst.y
         else:
@@ -69,10 +67,16 @@ def curve_sentence(curve: Curve) -> str:
     return f"Worst of {curve.label}: {_worst_text(curve)}"
 
 
-def value_words(curve: Curve, index: int) -> tuple[str, str]:
-    """Return the name of a curve and one of its values with what it is a value of."""
+def value_words(curve: Curve, index: int) -> tuple[str, ...]:
+    """Return the name of a curve and one of its values with what it is a value of, and the ends of its envelope."""
     value = value_text(curve.quantity, float(curve.raw[index]), curve.unit)
-    return curve.label, f"{quantity_named(curve.quantity).label} {value}"
+    less = f", difference to {curve.less}" if curve.less else ""
+    name = f"{curve.stack}, {curve.label}" if curve.stack else curve.label
+    told = (name, f"{quantity_named(curve.quantity).label}{less} {value}")
+    if curve.low is None or curve.high is None or not np.isfinite(curve.low[index]):
+        return told
+    ends = [value_text(curve.quantity, float(end[index]), curve.unit) for end in (curve.low, curve.high)]
+    return (*told, f"under conditions {ends[0]} to {ends[1]}")
 
 
 def point_sentence(curve: Curve, index: int) -> str:
@@ -125,9 +129,10 @@ def _worst_text(curve: Curve) -> str:
         value, frequency = curve.worst.y, curve.worst.x
     else:
         frequency = curve.worst_infinite if curve.worst_infinite is not None else float(curve.x[0])
-        value = float(curve.raw[int(np.argmin(np.abs(curve.x - frequency)))])
+        value = curve.infinite_value if curve.worst_infinite is not None else float(curve.raw[0])
     text = value_text(curve.quantity, value, curve.unit)
-    return f"{text} at {frequency_text(frequency)}"
+    under = f", {curve.worst_in}" if curve.worst_in else ""
+    return f"{text} at {frequency_text(frequency)}{under}"
 
 
 def _whose(curve: Curve) -> str:

@@ -124,5 +124,6 @@ def _cell_text(row: ReadingRow, column: int) -> CellText:
     if reading is None:
         return CellText("", "")
     whole, point, rest = reading.number.partition(".")
-    note = f"at {frequency_text(reading.frequency)}" if row.marker is None else ""
+    under = f", {reading.condition}" if reading.condition else ""
+    note = f"at {frequency_text(reading.frequency)}{under}" if row.kind == "worst" else ""
     return CellText(whole, point + rest, unit_suffix(reading.unit), note)

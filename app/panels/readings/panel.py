@@ -13,9 +13,11 @@ from app.look.theme import Theme
 from app.panels.readings.model import ReadingsModel
 from app.panels.readings.table import ReadingsTable
 from app.panels.sweep.quantity_choice import quantity_tip
-from app.series.curves import curves_of, takes_long
+from app.series.compared import curves_in_hand
+from app.series.curves import takes_long
 from app.series.markers import remove_marker
 from app.series.readings import readings_of, table_text
+from app.workers.scene import scene_at_markers, scene_of
 from stackcore.errors import Severity
 from stackcore.quantities import quantity_named
 
@@ -139,8 +141,13 @@ class ReadingsPanel(QWidget):
         self.hint.setVisible(not state.markers)
         if self._answer is None:
             return
-        rows = readings_of(self._answer.response, state, self._answer.at_markers)
-        curves = curves_of(self._answer.response, state)
+        scene = scene_of(self._session.record, self._answer)
+        curves = curves_in_hand(scene, state)
+        at_markers = scene_at_markers(self._session.record, self._answer)
+        # The unit of a delay follows the sweep, so that a column has one unit.
+        unit_from = self._answer.response.frequency
+        exact = curves_in_hand(at_markers, state, unit_from=unit_from) if at_markers is not None else None
+        rows = readings_of(curves, state, exact)
         self.table.marker_header.active = state.active_marker
         self.model.show_readings(rows, curves, quantity_tip(quantity_named(state.quantity)))
         self.table.marker_header.viewport().update()

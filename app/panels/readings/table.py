@@ -90,7 +90,7 @@ class ReadingDelegate(QStyledItemDelegate):
         painter.drawText(QRectF(rect.left(), top + line, rect.width() - SIDE, line), right, cell.note)
 
     def _has_note(self, index: Index) -> bool:
-        return self._model.rows[index.row()].marker is None
+        return self._model.rows[index.row()].kind == "worst"
 
     def _widths(self, metrics: QFontMetricsF, column: int) -> tuple[float, float, float, float]:
         """Return the widest whole part, rest, unit and note of a column, in pixels.
@@ -168,7 +168,7 @@ class MarkerHeader(QHeaderView):
         """Return the room of flag and name."""
         metrics = QFontMetricsF(self.font())
         text = str(self._model.headerData(section, Qt.Orientation.Vertical))
-        noted = section < len(self._model.rows) and self._model.rows[section].marker is None
+        noted = section < len(self._model.rows) and self._model.rows[section].kind == "worst"
         return QSize(round(metrics.horizontalAdvance(text)) + 3 * SIDE, row_height(metrics, noted))
 
     def paintSection(self, painter: QPainter, rect: QRect, section: int) -> None:

@@ -4,7 +4,8 @@ import numpy as np
 
 from app.document.session import Session
 from app.document.view import View
-from app.workers.live import Answer, Question
+from app.series.cases import cases_of
+from app.workers.live import Answer, Question, solve_cases
 from stackcore.errors import Severity
 from stackcore.job import Job, job_from_json
 from stackcore.propagation import solve
@@ -28,13 +29,25 @@ def answer_to(session: Session, view: View, stack: int = 0) -> Answer:
     job, state = session.job, view.state
     frequency, angle = job.sweep.frequencies(), job.sweep.angles()
     at, tilt = state.marker_frequency(job.sweep), state.marker_angle(job.sweep)
-    question = Question(1, job.stacks[stack], frequency, angle, at, tilt, state.markers)
+    question = Question(
+        1,
+        job.stacks[stack],
+        frequency,
+        angle,
+        at,
+        tilt,
+        state.markers,
+        job=job,
+        place=stack,
+        cases=cases_of(job.record, stack, state),
+    )
     return Answer(
         question,
         solve(question.stack, frequency, angle),
         solve(question.stack, np.array([at]), np.array([tilt])),
         solve(question.stack, np.array(state.markers), angle) if state.markers else None,
         0.0,
+        solve_cases(question, solve),
     )
 
 

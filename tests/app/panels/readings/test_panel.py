@@ -90,12 +90,12 @@ def test_a_marker_reads_the_exact_value(bench: Bench) -> None:
 
 
 def test_headers_name_curves_and_markers(bench: Bench) -> None:
-    """Columns are curves, rows are markers with their numbers, the last row is the worst."""
+    """Columns are curves, rows are markers with their numbers, the last rows are their difference and the worst."""
     model = bench.panel.model
     across = [model.headerData(column, Qt.Orientation.Horizontal) for column in range(model.columnCount())]
     assert across == ["TE 0°", "TM 0°", "TE 30°", "TM 30°", "TE 60°", "TM 60°"]
     down = [model.headerData(row, Qt.Orientation.Vertical) for row in range(model.rowCount())]
-    assert down == ["1   9.4321 GHz", "2   11 GHz", "Worst"]
+    assert down == ["1   9.4321 GHz", "2   11 GHz", "2 less 1: 1.5679 GHz", "Worst"]
 
 
 def test_a_worst_value_says_where(bench: Bench) -> None:
@@ -103,7 +103,7 @@ def test_a_worst_value_says_where(bench: Bench) -> None:
     response = answer_to(bench.session, bench.view).response
     column = response.transmittance[:, 2, 0]
     place = int(np.argmin(column))
-    assert bench.text(2, 4) == f"{column[place]:.4f} at {response.frequency[place] / GHZ:g} GHz"
+    assert bench.text(3, 4) == f"{column[place]:.4f} at {response.frequency[place] / GHZ:g} GHz"
 
 
 def test_numbers_are_cut_at_their_point(bench: Bench) -> None:
@@ -159,7 +159,7 @@ def test_everything_is_copied_when_nothing_is_chosen(bench: Bench) -> None:
     bench.panel.table.clearSelection()
     bench.panel.copy()
     lines = QGuiApplication.clipboard().text().splitlines()
-    assert len(lines) == 4
+    assert len(lines) == 5
     assert all(len(line.split("\t")) == 7 for line in lines)
 
 
