@@ -1,5 +1,6 @@
 """Edits of the conditions of a job: rain, ice, heat, another coat of paint."""
 
+from collections.abc import Callable
 from dataclasses import dataclass, replace
 from typing import Final
 
@@ -77,25 +78,50 @@ def add_condition(preset: Preset) -> Edit:
     return Edit(f"add condition {preset.name}", change)
 
 
-def change_condition(name: str, condition: ConditionRecord) -> Edit:
-    """Return the edit that puts `condition` in the place of the one called `name`.
-
-    Layers and exchanges may name entries of the library, which are then added to the job.
-    """
+def new_condition() -> Edit:
+    """Return the edit that adds a condition that changes nothing yet."""
 
     def change(document: Document) -> Document:
+        record = document.record
+        name = free_name("Condition", [one.name for one in record.conditions])
+        return with_record(document, replace(record, conditions=(*record.conditions, ConditionRecord(name))))
+
+    return Edit("add condition", change)
+
+
+def change_condition(name: str, change: Callable[[ConditionRecord], ConditionRecord]) -> Edit:
+    """Return the edit that puts ``change(condition)`` in the place of the condition called `name`.
+
+    What the new one calls its materials may be names, labels, or keys of the library, whose entries are then added
+    to the job. A material that comes twice where it may come once is refused.
+    """
+
+    def whole(document: Document) -> Document:
         place = _place(document.record, name)
+        condition = change(document.record.conditions[place])
         record, front = with_elements(document.record, condition.front)
         record, back = with_elements(record, condition.back)
         exchanged = []
         for one, other in condition.materials:
+            record, known = with_material(record, one)
             record, taken = with_material(record, other)
-            exchanged.append((one, taken))
-        new = replace(condition, front=front, back=back, materials=tuple(exchanged))
+            exchanged.append((known, taken))
+        factors = []
+        for one, factor in condition.thickness_factors:
+            record, known = with_material(record, one)
+            factors.append((known, factor))
+        for pairs in (exchanged, factors):
+            names = [one for one, _ in pairs]
+            twice = next((one for one in names if names.count(one) > 1), None)
+            if twice is not None:
+                raise refuse(f"conditions[{place}]", f"{twice} comes twice", "each material once")
+        new = replace(
+            condition, front=front, back=back, materials=tuple(exchanged), thickness_factors=tuple(factors)
+        )
         conditions = (*record.conditions[:place], new, *record.conditions[place + 1 :])
         return with_record(document, replace(record, conditions=conditions))
 
-    return Edit(f"change condition {name}", change)
+    return Edit(f"change condition {name}", whole)
 
 
 def rename_condition(name: str, new_name: str) -> Edit:

@@ -4,7 +4,14 @@ One named function an edit; each returns an `Edit`. A later capability adds a fi
 names here.
 """
 
-from app.document.condition_edits import add_condition, change_condition, remove_condition, rename_condition
+from app.document.condition_edits import (
+    add_condition,
+    change_condition,
+    new_condition,
+    remove_condition,
+    rename_condition,
+)
+from app.document.condition_rows import add_change, note_condition, remove_change, type_change
 from app.document.constant_edits import add_row, remove_row, set_constant, set_model
 from app.document.edit import Edit
 from app.document.element_edits import (
@@ -54,6 +61,7 @@ from app.document.typed import type_into
 
 __all__ = [
     "Edit",
+    "add_change",
     "add_condition",
     "add_layer",
     "add_material",
@@ -71,6 +79,9 @@ __all__ = [
     "group_rows",
     "mirror",
     "move",
+    "new_condition",
+    "note_condition",
+    "remove_change",
     "remove_condition",
     "remove_material",
     "remove_row",
@@ -93,6 +104,7 @@ __all__ = [
     "set_repeat",
     "set_thickness",
     "set_title",
+    "type_change",
     "type_into",
     "ungroup",
     "use_library_entry",

@@ -69,8 +69,14 @@ VARIANTS: Final = Beside(
     "Ctrl+Shift+V",
     "Show or hide all stacks of the job beside each other: thickness, mass, cost and worst value.",
 )
+CONDITIONS: Final = Beside(
+    "conditions",
+    "C&onditions",
+    "Ctrl+Shift+W",
+    "Show or hide what rain, ice, heat or another coat of paint makes of the stacks.",
+)
 NOTES: Final = Beside("notes", "&Title and notes", "Ctrl+I", "Show or hide title and notes of the job.")
 HELP: Final = Beside("help", "Help", "", "Definitions, keys and cautions.", in_menu=False)
 
-BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, VARIANTS, NOTES, HELP)
+BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, VARIANTS, CONDITIONS, NOTES, HELP)
 """Every panel beside, in the order of the menu and of F6."""

@@ -262,7 +262,7 @@ class MainWindow(JobWindow):
             panel.pointed.connect(self._status.point)
             panel.live_busy = self._recompute.lane_busy
             self._recompute.asked.connect(panel.give_way)
-        self._panels.materials.detail_wanted.connect(lambda: self._arrangement.open_beside(MATERIAL_DATA))
+        self._panels.open_with(self._arrangement.open_beside)
         self._panels.wall.edit_requested.connect(self._panels.edit_element)
         self._exporter.running.connect(self._actions.refresh)
         self._panels.elements.columns_asked.connect(self._actions.refresh)

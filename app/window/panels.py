@@ -1,5 +1,6 @@
 """The panels of the main window, made and addressed together."""
 
+from collections.abc import Callable
 from dataclasses import dataclass, fields
 from typing import Protocol
 
@@ -9,6 +10,7 @@ from PySide6.QtWidgets import QApplication, QWidget
 from app.document.session import Session
 from app.document.view import View
 from app.look.theme import Theme
+from app.panels.conditions.panel import ConditionsPanel
 from app.panels.constructions.panel import ConstructionsPanel
 from app.panels.curves.panel import CurvesPanel
 from app.panels.elements.panel import ElementsPanel
@@ -20,7 +22,7 @@ from app.panels.readings.panel import ReadingsPanel
 from app.panels.sweep.panel import SweepPanel
 from app.panels.variants.panel import VariantsPanel
 from app.panels.wall.panel import WallPanel
-from app.window.beside import BESIDE, Beside
+from app.window.beside import BESIDE, CONDITIONS, MATERIAL_DATA, Beside
 from app.window.exporting import Tell
 from app.window.help_panel import HelpPanel
 from app.window.layout import Places
@@ -51,6 +53,7 @@ class Panels:
     constructions: ConstructionsPanel
     map: MapPanel
     variants: VariantsPanel
+    conditions: ConditionsPanel
     notes: NotesPanel
     help: HelpPanel
 
@@ -99,6 +102,11 @@ class Panels:
         for panel in themed:
             panel.set_theme(theme)
 
+    def open_with(self, open_beside: Callable[[Beside], None]) -> None:
+        """Let panels that lead to another one open it by `open_beside`."""
+        self.materials.detail_wanted.connect(lambda: open_beside(MATERIAL_DATA))
+        self.sweep.comparison.conditions_wanted.connect(lambda: open_beside(CONDITIONS))
+
     def rename_stack(self) -> None:
         """Open the line for a new name of the stack, in its place."""
         bar = self.elements.findChild(StackBar)
@@ -143,6 +151,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
         constructions=ConstructionsPanel(session, theme, tell),
         map=MapPanel(session, view, theme, tell),
         variants=VariantsPanel(session, view, theme, tell),
+        conditions=ConditionsPanel(session, view, theme, tell),
         notes=NotesPanel(session, tell),
         help=help_panel,
     )

@@ -32,8 +32,9 @@ _ONE_MORE_DOT: Final = (1.6, 2.4)
 """For each dot in the dashes of a circular or a tilted wave."""
 _FEW_POINTS: Final = 40
 _POINT: Final = 2.5
-_BAND: Final = 0.16
-_BAND_EDGE: Final = 0.5
+_BAND: Final = 0.22
+_FAINTEST: Final = 0.012
+_BAND_EDGE: Final = 0.35
 _SIGN_APART: Final = 90.0
 SIGNS: Final[tuple[tuple[tuple[float, float], ...], ...]] = (
     ((-4.0, 3.5), (4.0, 3.5), (0.0, -4.5)),
@@ -135,8 +136,9 @@ class CurveLayer(Layer):
         """Draw the visible part of each curve; the chosen one lies on top."""
         # Half a line's width of room, so that a curve along the edge is not cut lengthwise.
         painter.setClipRect(QRectF(-1.5, -1.5, frame.width + 3.0, frame.height + 3.0))
-        for curve in self._curves:
-            _draw_band(painter, curve, frame)
+        banded = [curve for curve in self._curves if curve.low is not None]
+        for curve in banded:
+            _draw_band(painter, curve, frame, _BAND / len(banded))
         for curve in sorted(self._curves, key=lambda one: (one.sign < 0, one.chosen)):
             width = LIVE_WIDTH if not self._fine else CHOSEN_WIDTH if curve.chosen else FINE_WIDTH
             pen = QPen(QColor(curve.colour), width)
@@ -216,12 +218,12 @@ def _draw_run(
         painter.drawPolyline(points)
 
 
-def _draw_band(painter: QPainter, curve: DrawnCurve, frame: Frame) -> None:
-    """Fill the envelope of a curve, paler than any line so that curves in front of it stay readable."""
+def _draw_band(painter: QPainter, curve: DrawnCurve, frame: Frame, strength: float) -> None:
+    """Fill the envelope of a curve, so pale that all of them over each other leave the curves readable."""
     if curve.low is None or curve.high is None:
         return
     fill, edge = QColor(curve.colour), QColor(curve.colour)
-    fill.setAlphaF(_BAND)
+    fill.setAlphaF(max(strength, _FAINTEST))
     edge.setAlphaF(_BAND_EDGE)
     for begin, end in finite_runs(curve.low, curve.leap):
         first, last = _visible(curve.positions, begin, end, frame)

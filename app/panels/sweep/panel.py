@@ -12,6 +12,7 @@ from app.document.reading import list_text
 from app.document.session import Change, Session
 from app.document.view import View, ViewChange
 from app.look.theme import Theme
+from app.panels.sweep.comparison_choice import ComparisonChoice
 from app.panels.sweep.field import QuietChoice, QuietField
 from app.panels.sweep.flow import FlowLayout
 from app.panels.sweep.phrases import angles_text, element_offers
@@ -96,6 +97,7 @@ class SweepPanel(QWidget):
         for control in controls:
             control.set_theme(theme)
         self.polarizations.set_theme(theme)
+        self.comparison.set_theme(theme)
 
     # Making
 
@@ -127,6 +129,7 @@ class SweepPanel(QWidget):
         self._choices = (self.quantity, self.scale, self.spacing, self.axis)
         self.polarizations = PolarizationChoice(self._view, self._theme, self._tell)
         self.switches = self.polarizations.switches
+        self.comparison = ComparisonChoice(self._session, self._view, self._theme)
         self._connect()
 
     def _connect(self) -> None:
@@ -141,6 +144,7 @@ class SweepPanel(QWidget):
         self._group(flow, self.quantity, self.scale)
         self._group(flow, *self.polarizations.parts)
         self._group(flow, self.axis)
+        self._group(flow, self.comparison.opener)
         self._band = self._group(flow, "from", fields[START], "to", fields[STOP])
         self._count = self._group(flow, fields[POINTS], "points,", self.spacing)
         self._listed = self._group(flow, "at", fields[LIST])
@@ -166,6 +170,7 @@ class SweepPanel(QWidget):
 
     def _session_changed(self, change: Change) -> None:
         self._show_sweep()
+        self.comparison.show_view()
 
     def _view_changed(self, change: ViewChange) -> None:
         self._show_view()
@@ -201,6 +206,7 @@ class SweepPanel(QWidget):
         self.scale.setVisible(is_power(state.quantity))
         self.axis.show_choice(state.log_frequency)
         self.polarizations.show_view()
+        self.comparison.show_view()
 
     # Changing
 

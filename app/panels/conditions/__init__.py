@@ -1,0 +1,1 @@
+"""The panel of conditions: rain, ice, heat, another coat, without an edit of any stack."""
