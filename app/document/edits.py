@@ -58,6 +58,7 @@ from app.document.structure_edits import (
     ungroup,
 )
 from app.document.typed import type_into
+from app.document.variation_edits import take_value
 
 __all__ = [
     "Edit",
@@ -104,6 +105,7 @@ __all__ = [
     "set_repeat",
     "set_thickness",
     "set_title",
+    "take_value",
     "type_change",
     "type_into",
     "ungroup",

@@ -56,12 +56,18 @@ MATERIAL_DATA: Final = Beside(
 )
 CONSTRUCTIONS: Final = Beside(
     "constructions",
-    "Constr&uctions",
+    "Const&ructions",
     "Ctrl+Shift+I",
     "Show or hide walls as they are built, sized for the band and angle of the job.",
 )
 MAP: Final = Beside(
     "map", "M&ap", "Ctrl+Shift+P", "Show or hide a map over frequency and angle, or over a thickness or a constant."
+)
+CUTS: Final = Beside(
+    "cuts",
+    "C&uts",
+    "Ctrl+Shift+U",
+    "Show or hide curves over the angle, or over a thickness or a constant, with the value that is best.",
 )
 VARIANTS: Final = Beside(
     "variants",
@@ -78,5 +84,5 @@ CONDITIONS: Final = Beside(
 NOTES: Final = Beside("notes", "&Title and notes", "Ctrl+I", "Show or hide title and notes of the job.")
 HELP: Final = Beside("help", "Help", "", "Definitions, keys and cautions.", in_menu=False)
 
-BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, VARIANTS, CONDITIONS, NOTES, HELP)
+BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, CUTS, VARIANTS, CONDITIONS, NOTES, HELP)
 """Every panel beside, in the order of the menu and of F6."""

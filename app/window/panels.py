@@ -13,6 +13,7 @@ from app.look.theme import Theme
 from app.panels.conditions.panel import ConditionsPanel
 from app.panels.constructions.panel import ConstructionsPanel
 from app.panels.curves.panel import CurvesPanel
+from app.panels.cuts.panel import CutsPanel
 from app.panels.elements.panel import ElementsPanel
 from app.panels.elements.stacks import StackBar
 from app.panels.maps.panel import MapPanel
@@ -52,6 +53,7 @@ class Panels:
     material_data: MaterialData
     constructions: ConstructionsPanel
     map: MapPanel
+    cuts: CutsPanel
     variants: VariantsPanel
     conditions: ConditionsPanel
     notes: NotesPanel
@@ -73,19 +75,19 @@ class Panels:
         work = (self.wall, self.elements, self.sweep, self.curves, self.readings)
         return (*work, *(widget for _, widget in self.beside))
 
-    def plot_in_hand(self) -> CurvesPanel | MapPanel:
+    def plot_in_hand(self) -> CurvesPanel | MapPanel | CutsPanel:
         """Return the plot that has the focus, else the curves."""
         return next((plot for plot in self.plots if has_focus(plot)), self.curves)
 
     @property
-    def plots(self) -> tuple[CurvesPanel | MapPanel, ...]:
+    def plots(self) -> tuple[CurvesPanel | MapPanel | CutsPanel, ...]:
         """Every panel that can be exported as a plot."""
-        return self.curves, self.map
+        return self.curves, self.map, self.cuts
 
     @property
-    def slow(self) -> tuple[MapPanel | VariantsPanel, ...]:
+    def slow(self) -> tuple[MapPanel | CutsPanel | VariantsPanel, ...]:
         """Those that compute what takes long, and give way to the curves."""
-        return self.map, self.variants
+        return self.map, self.cuts, self.variants
 
     def close_lanes(self) -> None:
         """End for good what the slow panels compute."""
@@ -150,6 +152,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
         material_data=material_data,
         constructions=ConstructionsPanel(session, theme, tell),
         map=MapPanel(session, view, theme, tell),
+        cuts=CutsPanel(session, view, theme, tell),
         variants=VariantsPanel(session, view, theme, tell),
         conditions=ConditionsPanel(session, view, theme, tell),
         notes=NotesPanel(session, tell),

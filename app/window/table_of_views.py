@@ -126,7 +126,7 @@ def arrangement_acts(c: Commands) -> Sequence[Act]:
             "Move the keyboard focus to the panel before.",
             group=2,
         ),
-        Act("view.reset", menu, "&Reset layout", view.reset_layout, tip="Arrange everything as at first.", group=3),
+        Act("view.reset", menu, "R&eset layout", view.reset_layout, tip="Arrange everything as at first.", group=3),
     )
 
 

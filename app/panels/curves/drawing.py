@@ -156,6 +156,11 @@ def extent_of(curves: Sequence[Curve], scale: FrequencyScale) -> Extent:
     return Extent(left, right, low, high, floor, top, unit == "deg", _GRAINS.get(unit, 1e-30))
 
 
+def with_ends(extent: Extent, left: float, right: float) -> Extent:
+    """Return an extent whose horizontal axis has these ends, however far the curves reach."""
+    return replace(extent, left=left, right=right)
+
+
 def worst_spots(curves: Sequence[Curve], colours: Sequence[str], scale: FrequencyScale) -> dict[int, Spot]:
     """Return the worst points by the index of their curve."""
     return {
@@ -172,7 +177,7 @@ def draw_markers(state: ViewState, drawn: Sequence[DrawnCurve], scale: Frequency
         position = scale.position(hertz)
         active = index == state.active_marker
         text = f"{index + 1}   {frequency_text(hertz)}" if active else str(index + 1)
-        spots = [Spot(position, value, curve.colour) for curve in drawn for value in _values_at(curve, position)]
+        spots = [Spot(position, value, curve.colour) for curve in drawn for value in values_at(curve, position)]
         markers.append(DrawnMarker(text, position, active, tuple(spots)))
     return tuple(markers)
 
@@ -199,7 +204,7 @@ def quantity_label(state: ViewState) -> str:
     return f"{quantity_named(state.quantity).label}{less}"
 
 
-def _values_at(curve: DrawnCurve, position: float) -> tuple[float, ...]:
+def values_at(curve: DrawnCurve, position: float) -> tuple[float, ...]:
     """Return the value of a curve at a position, or nothing in a gap or beyond its ends."""
     for begin, end in curve.runs:
         if curve.positions[begin] <= position <= curve.positions[end - 1]:

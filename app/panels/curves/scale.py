@@ -20,7 +20,7 @@ _TURN_PARTS: Final = (15.0, 30.0, 45.0, 90.0, 180.0, 360.0)
 
 @dataclass(frozen=True, slots=True)
 class FrequencyScale:
-    """The frequency axis: hertz to position on the axis and back.
+    """The horizontal axis: hertz, or what else runs along it in SI units, to position on the axis and back.
 
     Parameters
     ----------
@@ -28,6 +28,8 @@ class FrequencyScale:
         Axis units per hertz (1e-9 for GHz).
     logarithmic
         Whether a position is log₁₀ of the value in axis units.
+    offset
+        Is added to the value in axis units: −273.15 where kelvins are shown as °C.
 
     Examples
     --------
@@ -37,15 +39,16 @@ class FrequencyScale:
 
     factor: float = 1e-9
     logarithmic: bool = False
+    offset: float = 0.0
 
     def position(self, hertz: float) -> float:
         """Return where a frequency in Hz lies."""
-        value = hertz * self.factor
+        value = hertz * self.factor + self.offset
         return math.log10(max(value, _TINY)) if self.logarithmic else value
 
     def positions(self, hertz: FloatArray) -> FloatArray:
         """Return where frequencies in Hz lie; not positive ones on a logarithmic axis are not a number."""
-        values: FloatArray = np.asarray(hertz, dtype=float) * self.factor
+        values: FloatArray = np.asarray(hertz, dtype=float) * self.factor + self.offset
         if not self.logarithmic:
             return values
         shown = np.full(values.shape, np.nan)
@@ -54,7 +57,7 @@ class FrequencyScale:
     def hertz(self, position: float) -> float:
         """Return the frequency in Hz at a position; the inverse of `position`."""
         value = 10.0 ** min(max(position, -300.0), 300.0) if self.logarithmic else position
-        return value / self.factor
+        return (value - self.offset) / self.factor
 
 
 @dataclass(frozen=True, slots=True)

@@ -1,0 +1,1 @@
+"""The panel of cuts: the quantity of the curves over the angle, a thickness or a constant."""
