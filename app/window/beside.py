@@ -69,6 +69,12 @@ CUTS: Final = Beside(
     "Ctrl+Shift+U",
     "Show or hide curves over the angle, or over a thickness or a constant, with the value that is best.",
 )
+PLANE: Final = Beside(
+    "plane",
+    "Comple&x plane",
+    "Ctrl+Shift+X",
+    "Show or hide reflection, transmission or input impedance in the complex plane.",
+)
 VARIANTS: Final = Beside(
     "variants",
     "&Variants",
@@ -84,5 +90,5 @@ CONDITIONS: Final = Beside(
 NOTES: Final = Beside("notes", "&Title and notes", "Ctrl+I", "Show or hide title and notes of the job.")
 HELP: Final = Beside("help", "Help", "", "Definitions, keys and cautions.", in_menu=False)
 
-BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, CUTS, VARIANTS, CONDITIONS, NOTES, HELP)
+BESIDE: Final = (MATERIALS, MATERIAL_DATA, CONSTRUCTIONS, MAP, CUTS, PLANE, VARIANTS, CONDITIONS, NOTES, HELP)
 """Every panel beside, in the order of the menu and of F6."""

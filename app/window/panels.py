@@ -19,6 +19,7 @@ from app.panels.elements.stacks import StackBar
 from app.panels.maps.panel import MapPanel
 from app.panels.material_data.panel import MaterialData
 from app.panels.materials.panel import MaterialsPanel
+from app.panels.plane.panel import PlanePanel
 from app.panels.readings.panel import ReadingsPanel
 from app.panels.sweep.panel import SweepPanel
 from app.panels.variants.panel import VariantsPanel
@@ -40,6 +41,10 @@ class Themed(Protocol):
         """Take the colours of `theme`."""
 
 
+Plot = CurvesPanel | MapPanel | CutsPanel | PlanePanel
+"""What can be exported as a plot."""
+
+
 @dataclass(frozen=True, slots=True, weakref_slot=True)
 class Panels:
     """Every panel by its name."""
@@ -54,6 +59,7 @@ class Panels:
     constructions: ConstructionsPanel
     map: MapPanel
     cuts: CutsPanel
+    plane: PlanePanel
     variants: VariantsPanel
     conditions: ConditionsPanel
     notes: NotesPanel
@@ -62,7 +68,7 @@ class Panels:
     @property
     def viewers(self) -> tuple[Viewer, ...]:
         """Those that show results."""
-        return self.wall, self.elements, self.curves, self.readings
+        return self.wall, self.elements, self.curves, self.readings, self.plane
 
     @property
     def beside(self) -> tuple[tuple[Beside, QWidget], ...]:
@@ -75,14 +81,14 @@ class Panels:
         work = (self.wall, self.elements, self.sweep, self.curves, self.readings)
         return (*work, *(widget for _, widget in self.beside))
 
-    def plot_in_hand(self) -> CurvesPanel | MapPanel | CutsPanel:
+    def plot_in_hand(self) -> Plot:
         """Return the plot that has the focus, else the curves."""
         return next((plot for plot in self.plots if has_focus(plot)), self.curves)
 
     @property
-    def plots(self) -> tuple[CurvesPanel | MapPanel | CutsPanel, ...]:
+    def plots(self) -> tuple[Plot, ...]:
         """Every panel that can be exported as a plot."""
-        return self.curves, self.map, self.cuts
+        return self.curves, self.map, self.cuts, self.plane
 
     @property
     def slow(self) -> tuple[MapPanel | CutsPanel | VariantsPanel, ...]:
@@ -153,6 +159,7 @@ def make_panels(session: Session, view: View, theme: Theme, tell: Tell, help_pan
         constructions=ConstructionsPanel(session, theme, tell),
         map=MapPanel(session, view, theme, tell),
         cuts=CutsPanel(session, view, theme, tell),
+        plane=PlanePanel(session, view, theme, tell),
         variants=VariantsPanel(session, view, theme, tell),
         conditions=ConditionsPanel(session, view, theme, tell),
         notes=NotesPanel(session, tell),

@@ -1,0 +1,1 @@
+"""The panel of the complex plane: reflection, transmission and input impedance."""
