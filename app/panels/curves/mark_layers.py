@@ -123,6 +123,31 @@ class MarkerLayer(Layer):
         painter.drawText(flag, Qt.AlignmentFlag.AlignCenter, marker.text)
 
 
+class LevelLayer(Layer):
+    """A dashed line across the plot at a level that the marker is taken to."""
+
+    def __init__(self, area: Any, height: float, theme: Theme) -> None:
+        super().__init__(area, height)
+        self.theme = theme
+        self.level: float | None = None
+
+    def set_level(self, level: float | None) -> None:
+        """Draw the line at a value, or none."""
+        if level != self.level:
+            self.level = level
+            self.update()
+
+    def draw(self, painter: QPainter, frame: Frame) -> None:
+        """Draw the line."""
+        if self.level is None or not frame.bottom <= self.level <= frame.top:
+            return
+        pen = QPen(QColor(self.theme.accent), 1.0)
+        pen.setDashPattern([6.0, 4.0])
+        painter.setPen(pen)
+        y = frame.down(self.level)
+        painter.drawLine(QPointF(0.0, y), QPointF(frame.width, y))
+
+
 class PointerLayer(Layer):
     """A hair line under the mouse and a ring on the curve it is nearest to."""
 

@@ -20,12 +20,13 @@ from app.panels.curves.mark_layers import Spot
 from app.panels.curves.picture import plot_picture
 from app.panels.curves.plot import CurvePlot
 from app.panels.curves.plot_commands import PlotCommands
-from app.panels.curves.range_strip import RangeStrip
 from app.panels.curves.scale import FrequencyScale
+from app.panels.curves.strips import Strips
 from app.series.axis import frequency_axis, quantity_axis
 from app.series.cases import Case, cases_of
 from app.series.compared import curves_beside, curves_in_hand
 from app.series.curves import Curve, takes_long
+from app.series.snapping import Evaluate, evaluator
 from app.series.texts import frequency_text
 from app.series.validity import doubt_sentence
 from app.workers.scene import scene_of
@@ -88,7 +89,7 @@ class CurvesPanel(QWidget):
         self.scale = FrequencyScale()
         self.header = Header(theme, self)
         self.plot = CurvePlot(theme, self)
-        self.strip = RangeStrip(theme, self)
+        self.strips = Strips(self.plot, lambda: self.scale, theme, self)
         self.commands = PlotCommands(self, view)
         self._arrange()
         self._connect()
@@ -100,7 +101,7 @@ class CurvesPanel(QWidget):
         column.setSpacing(4)
         column.addWidget(self.header)
         column.addWidget(self.plot, 1)
-        column.addWidget(self.strip)
+        column.addWidget(self.strips)
         self.setAutoFillBackground(True)
         self.setMinimumSize(240, 160)
         self.setFocusProxy(self.plot)
@@ -113,14 +114,12 @@ class CurvesPanel(QWidget):
         hand.marker_chosen.connect(lambda index: self._view.set(self, active_marker=index))
         hand.marker_dragged.connect(lambda index, at: self.commands.move_marker(index, self.frequency_at(at)))
         hand.menu_wanted.connect(self._open_menu)
-        hand.range_wanted.connect(self.type_range)
+        hand.range_wanted.connect(self.strips.type_range)
         self.plot.key_taken = self._take_key
         self.plot.ranges_changed.connect(self._ranges_moved)
         self.plot.crowding_changed.connect(self._show_legend)
         self.header.marker_wanted.connect(lambda: self.commands.add_marker(self.commands.place()))
-        self.strip.wanted.connect(self._set_ranges)
-        self.strip.all_wanted.connect(self.plot.show_all)
-        self.strip.closed.connect(self._close_strip)
+        self.strips.level.wanted.connect(self.commands.to_level)
         leave = self._view.subscribe(self._view_changed)
         self.destroyed.connect(lambda: leave())
 
@@ -147,7 +146,7 @@ class CurvesPanel(QWidget):
         self._theme = theme
         drawing.fill_palette(self, theme)
         self.header.set_theme(theme)
-        self.strip.set_theme(theme)
+        self.strips.set_theme(theme)
         self.plot.set_theme(theme)
         self._draw()
 
@@ -169,6 +168,17 @@ class CurvesPanel(QWidget):
         wanted = self.plot.frame().position(at.x())
         return float(self.sweep[int(np.nanargmin(np.abs(places - wanted)))])
 
+    @property
+    def curve_in_hand(self) -> Curve | None:
+        """The chosen curve, or the first; None while there are none."""
+        return self._curves[drawing.chosen_index(self._curves, self._view.state) or 0] if self._curves else None
+
+    def between_points(self, curve: Curve) -> Evaluate | None:
+        """Return what solves a curve between its points, or None for what is no curve of the stack in hand."""
+        if self._answer is None or self._stale:
+            return None
+        return evaluator(self._answer.response.stack, curve, self._view.state.power)
+
     def visible_values(self) -> tuple[float, float] | None:
         """Return the smallest and largest value between the visible frequencies, or None."""
         frame = self.plot.frame()
@@ -181,17 +191,11 @@ class CurvesPanel(QWidget):
 
     def values_at(self, hertz: float) -> tuple[str, ...]:
         """Return the reading of the chosen curve, or of the first, at the nearest frequency, in words."""
-        if not self._curves:
+        curve = self.curve_in_hand
+        if curve is None:
             return ()
-        state = self._view.state
-        curve = self._curves[drawing.chosen_index(self._curves, state) or 0]
         point = int(np.argmin(np.abs(curve.x - hertz)))
         return words.value_words(curve, point)
-
-    def type_range(self, axis: str) -> None:
-        """Open the line in which the ranges are typed, at the axis ``left`` or ``bottom``."""
-        self._fill_strip()
-        self.strip.start(axis)
 
     def copy_data(self) -> None:
         """Put the curves on the clipboard as a table."""
@@ -236,7 +240,7 @@ class CurvesPanel(QWidget):
         self._colours = drawing.colours_of(curves, self._theme, stale=self._stale)
         across = frequency_axis(self.sweep, log=state.log_frequency)
         upward = quantity_axis(state.quantity, self.sweep, power=state.power)
-        self._units = (across.unit, upward.unit)
+        self.strips.set_units(across.unit, upward.unit)
         self.scale = FrequencyScale(across.factor, state.log_frequency)
         wide = state.log_frequency and float(self.sweep.max()) > float(self.sweep.min()) * WIDE
         self.plot.bottom_axis.spell = self._spell if wide else None
@@ -362,18 +366,3 @@ class CurvesPanel(QWidget):
 
     def _ranges_moved(self) -> None:
         self.plot.pointer_layer.point(None)
-        if self.strip.isVisible():
-            self._fill_strip()
-
-    def _fill_strip(self) -> None:
-        frame = self.plot.frame()
-        hertz = (self.scale.hertz(frame.left), self.scale.hertz(frame.right))
-        self.strip.show_ranges(hertz, (frame.bottom, frame.top), self.scale.factor, self._units)
-
-    def _set_ranges(self, hertz: tuple[float, float], values: tuple[float, float]) -> None:
-        low, high = (self.scale.position(end) for end in hertz)
-        self.plot.set_ranges((low, high), values)
-
-    def _close_strip(self) -> None:
-        self.strip.hide()
-        self.plot.setFocus()

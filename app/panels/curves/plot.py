@@ -27,8 +27,9 @@ from app.panels.curves.curve_layer import CurveLayer, DrawnCurve
 from app.panels.curves.end_labels import EndLabel, EndLabels
 from app.panels.curves.frame import Frame
 from app.panels.curves.hand import PlottingHand
-from app.panels.curves.mark_layers import MarkerLayer, PointerLayer, WorstLayer
+from app.panels.curves.mark_layers import LevelLayer, MarkerLayer, PointerLayer, WorstLayer
 from app.panels.curves.note_layer import NoteLayer
+from app.panels.curves.range_history import RangeHistory, Shown
 from app.panels.curves.scale import round_range
 
 REST: Final = 250
@@ -74,6 +75,7 @@ class CurvePlot(pg.GraphicsView):
     def __init__(self, theme: Theme, parent: QWidget | None = None) -> None:
         super().__init__(parent, background=theme.base)
         self.follows = [True, True]
+        self.history = RangeHistory()
         self._extent = Extent(0.0, 1.0, 0.0, 1.0)
         self.area = pg.ViewBox(enableMenu=False, enableMouse=False, defaultPadding=0.0)
         self.area.disableAutoRange()
@@ -83,6 +85,7 @@ class CurvePlot(pg.GraphicsView):
         self.end_labels = EndLabels(self.area)
         self.curve_layer = CurveLayer(self.area, 10.0)
         self.worst_layer = WorstLayer(self.area, 20.0, theme)
+        self.level_layer = LevelLayer(self.area, 15.0, theme)
         self.marker_layer = MarkerLayer(self.area, 30.0, theme)
         self.pointer_layer = PointerLayer(self.area, 40.0, theme)
         self.note_layer = NoteLayer(self.area, 50.0, theme)
@@ -131,7 +134,8 @@ class CurvePlot(pg.GraphicsView):
         self.setBackground(theme.base)
         for axis in (self.left_axis, self.bottom_axis):
             axis.set_theme(theme)
-        for layer in (self.worst_layer, self.marker_layer, self.pointer_layer, self.note_layer):
+        marks = (self.worst_layer, self.level_layer, self.marker_layer, self.pointer_layer, self.note_layer)
+        for layer in marks:
             layer.theme = theme
             layer.update()
         self.show_focus(False)
@@ -146,6 +150,7 @@ class CurvePlot(pg.GraphicsView):
         if logarithmic != self.bottom_axis.logarithmic:
             self.bottom_axis.logarithmic = logarithmic
             self.follows[0] = True
+            self.history = RangeHistory()
             self.bottom_axis.picture = None
         if extent.degrees != self.left_axis.degrees:
             self.left_axis.degrees = extent.degrees
@@ -189,13 +194,22 @@ class CurvePlot(pg.GraphicsView):
 
     def show_all(self) -> None:
         """Show everything, and follow the data from now on."""
+        self.history.note(self._shown())
         self.follows = [True, True]
         self._follow()
         self.ranges_changed.emit()
 
     def follow_values(self) -> None:
         """Let the axis of values follow the data again, and leave the frequencies as they are."""
+        self.history.note(self._shown())
         self.follows[1] = True
+        self._follow()
+        self.ranges_changed.emit()
+
+    def follow_positions(self) -> None:
+        """Let the frequency axis follow the data again, and leave the values as they are."""
+        self.history.note(self._shown())
+        self.follows[0] = True
         self._follow()
         self.ranges_changed.emit()
 
@@ -209,11 +223,35 @@ class CurvePlot(pg.GraphicsView):
         values: tuple[float, float] | None = None,
     ) -> None:
         """Show these ranges of positions and values; an axis that is given no longer follows the data."""
+        self.history.note(self._shown())
         self.rouse()
         for axis, wanted in enumerate((positions, values)):
             if wanted is not None and _sensible(*wanted):
                 self.follows[axis] = False
                 self._set_range(axis, wanted)
+        self.ranges_changed.emit()
+        self._check_crowding()
+
+    def go_back(self) -> None:
+        """Show what was shown before the last change of the ranges by hand."""
+        self._show_again(self.history.back(self._shown()))
+
+    def go_forward(self) -> None:
+        """Take the last step back again."""
+        self._show_again(self.history.forward(self._shown()))
+
+    def _shown(self) -> Shown:
+        across, upward = (tuple(map(float, ends)) for ends in self.area.viewRange())
+        return Shown((across[0], across[1]), (upward[0], upward[1]), (self.follows[0], self.follows[1]))
+
+    def _show_again(self, shown: Shown | None) -> None:
+        if shown is None:
+            return
+        self.rouse()
+        self.follows = list(shown.follows)
+        self._set_range(0, shown.positions)
+        self._set_range(1, shown.values)
+        self._follow()
         self.ranges_changed.emit()
         self._check_crowding()
 

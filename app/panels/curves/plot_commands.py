@@ -9,7 +9,8 @@ from app.document.view import View
 from app.panels.curves import words
 from app.panels.curves.commands import Command
 from app.series.markers import add_marker, move_marker, remove_marker, snap_to_worst, step_marker
-from app.series.texts import frequency_text
+from app.series.snapping import next_crossing, next_extremum
+from app.series.texts import frequency_text, value_text
 
 if TYPE_CHECKING:
     from app.panels.curves.panel import CurvesPanel
@@ -84,6 +85,38 @@ class PlotCommands:
         state = self._view.state
         self._view.replace(snap_to_worst(state, state.active_marker, curve), self._panel)
         self._panel.choose_curve(index)
+
+    def to_extremum(self, step: int) -> None:
+        """Take the active marker, or a new one, to the next extremum of the chosen curve."""
+        curve = self._panel.curve_in_hand
+        if curve is None:
+            return
+        start = self._begin_marker()
+        found = next_extremum(curve, start, step, self._panel.between_points(curve))
+        if found is None:
+            self._panel.say(f"{curve.label} has no extremum between its ends.")
+        else:
+            self.move_marker(self._view.state.active_marker, found)
+
+    def to_level(self, level: float, step: int) -> None:
+        """Take the active marker, or a new one, to the next place where the chosen curve crosses a level."""
+        curve = self._panel.curve_in_hand
+        if curve is None:
+            return
+        self._panel.plot.level_layer.set_level(level)
+        start = self._begin_marker()
+        found = next_crossing(curve, level, start, step, self._panel.between_points(curve))
+        if found is None:
+            self._panel.say(f"{curve.label} does not cross {value_text(curve.quantity, level, curve.unit)}.")
+        else:
+            self.move_marker(self._view.state.active_marker, found)
+
+    def _begin_marker(self) -> float:
+        """Return the frequency of the active marker; without one, of a new one at the lower end of the sweep."""
+        if not self._view.state.markers:
+            self.add_marker(float(self._panel.sweep.min()))
+        state = self._view.state
+        return state.markers[state.active_marker]
 
     def next_marker(self, step: int) -> None:
         """Make the next marker along the axis the active one."""
@@ -161,13 +194,36 @@ class PlotCommands:
                 "Show all values between the visible frequencies.",
             ),
             Command(
+                "Whole band",
+                plot.follow_positions,
+                ("X",),
+                "Show every frequency of the sweep, and leave the values as they are.",
+                enabled=lambda: not plot.follows[0],
+            ),
+            Command(
                 "Values follow the curves",
                 self.toggle_follow,
                 ("F",),
                 "Let the axis of values adapt whenever the curves change.",
                 checked=lambda: plot.follows[1],
             ),
-            Command("Set ranges…", lambda: panel.type_range("bottom"), ("R",), "Type the ends of both axes."),
+            Command(
+                "Ranges before",
+                plot.go_back,
+                ("Z",),
+                "Show what was shown before the last zoom or shift.",
+                enabled=lambda: plot.history.can_go[0],
+            ),
+            Command(
+                "Ranges after",
+                plot.go_forward,
+                ("Shift+Z",),
+                "Take the last step back again.",
+                enabled=lambda: plot.history.can_go[1],
+            ),
+            Command(
+                "Set ranges…", lambda: panel.strips.type_range("bottom"), ("R",), "Type the ends of both axes."
+            ),
             Command("", lambda: self.zoom(0.8), ("+", "=")),
             Command("", lambda: self.zoom(1.25), ("-",)),
             Command("", lambda: self.pan(0.1, 0.0), ("Shift+Left",)),
@@ -197,6 +253,22 @@ class PlotCommands:
                 group=1,
             ),
             Command(
+                "Marker to the next extremum",
+                lambda: self.to_extremum(1),
+                ("E",),
+                "Take the marker to the next smallest or largest value of the chosen curve; Shift+E goes back.",
+                enabled=lambda: bool(self._panel.curves),
+                group=1,
+            ),
+            Command(
+                "Marker to a level…",
+                self._panel.strips.type_level,
+                ("V",),
+                "Type a value; the marker goes where the chosen curve crosses it.",
+                enabled=lambda: bool(self._panel.curves),
+                group=1,
+            ),
+            Command(
                 "Remove marker",
                 self.remove,
                 ("Del", "Backspace"),
@@ -205,6 +277,7 @@ class PlotCommands:
                 group=1,
             ),
             *(Command("", partial(self.step, steps), (key,)) for key, steps in _STEPS.items()),
+            Command("", lambda: self.to_extremum(-1), ("Shift+E",)),
             Command("", lambda: self.next_marker(1), ("N", "PgDown")),
             Command("", lambda: self.next_marker(-1), ("P", "PgUp")),
             Command("", lambda: self.next_curve(1), ("Down",)),

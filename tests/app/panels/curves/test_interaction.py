@@ -238,7 +238,7 @@ def test_zoom_ends_before_numbers_run_out(bench: Bench) -> None:
 def test_ranges_are_typed(bench: Bench) -> None:
     """R opens the line of ranges; texts with units set them, Escape closes and gives the focus back."""
     bench.press(Qt.Key.Key_R)
-    strip = bench.panel.strip
+    strip = bench.panel.strips.ranges
     assert strip.isVisible()
     assert strip.fields[0].text() == "8 GHz"
     for field, text in zip(strip.fields, ("8500 MHz", "11", "0.5", "0.9"), strict=True):
@@ -254,7 +254,7 @@ def test_ranges_are_typed(bench: Bench) -> None:
 def test_a_range_that_is_none_is_marked_and_kept(bench: Bench) -> None:
     """A lower end above the upper one, or a wrong unit, stays as typed with its fault and changes nothing."""
     bench.press(Qt.Key.Key_R)
-    strip, before = bench.panel.strip, bench.plot.frame()
+    strip, before = bench.panel.strips.ranges, bench.plot.frame()
     field = strip.fields[1]
     for text, words in (("5 GHz", "not above the lower end"), ("9 mm", "length")):
         field.selectAll()
@@ -271,8 +271,8 @@ def test_a_double_click_on_an_axis_opens_its_range(bench: Bench) -> None:
     area = bench.plot.area_rect()
     at = QPoint(int(area.left()) - 20, int(area.center().y()))
     QTest.mouseDClick(bench.plot.viewport(), Qt.MouseButton.LeftButton, pos=at)
-    assert bench.panel.strip.isVisible()
-    assert bench.panel.strip.fields[2].selectedText() == bench.panel.strip.fields[2].text()
+    assert bench.panel.strips.ranges.isVisible()
+    assert bench.panel.strips.ranges.fields[2].selectedText() == bench.panel.strips.ranges.fields[2].text()
 
 
 def test_another_quantity_is_shown_whole(bench: Bench) -> None:
@@ -327,7 +327,8 @@ def test_the_menu_holds_what_keys_do(bench: Bench) -> None:
     QTest.mouseClick(bench.plot.viewport(), Qt.MouseButton.RightButton, pos=bench.pixel(11 * GHZ, 0.7))
     menu = bench.panel.menu
     texts = [action.text().split("\t")[0] for action in menu.actions() if action.text()]
-    assert texts[:4] == ["Show all", "Fit values to the visible band", "Values follow the curves", "Set ranges…"]
+    assert texts[:2] == ["Show all", "Fit values to the visible band"]
+    assert {"Values follow the curves", "Set ranges…", "Ranges before", "Marker to a level…"} <= set(texts)
     assert {"Add marker", "Remove marker", "Copy picture", "Copy data", "Reset plot"} <= set(texts)
     by_text = {action.text().split("\t")[0]: action for action in menu.actions()}
     assert not by_text["Remove marker"].isEnabled()
