@@ -49,6 +49,7 @@ from app.document.stack_edits import (
 from app.document.structure_edits import (
     fill_columns,
     fill_down,
+    fill_elements,
     group_rows,
     mirror,
     reverse,
@@ -77,6 +78,7 @@ __all__ = [
     "duplicate_stack",
     "fill_columns",
     "fill_down",
+    "fill_elements",
     "group_rows",
     "mirror",
     "move",

@@ -4,7 +4,16 @@ from collections.abc import Callable, Iterable, Sequence
 from dataclasses import replace
 
 from app.document.document import Cell, Document, Selection
-from app.document.edit import Edit, element_at, follow_rows, refuse, stack_at, with_record, with_stack
+from app.document.edit import (
+    Edit,
+    element_at,
+    follow_rows,
+    refuse,
+    stack_at,
+    with_record,
+    with_stack,
+    without_draft,
+)
 from app.document.element_edits import with_rows
 from app.document.typed import type_into
 from stackcore.job.groups import group_of
@@ -35,8 +44,8 @@ def set_locked(stack: int, rows: Iterable[int], on: bool) -> Edit:
 def group_rows(stack: int, rows: Iterable[int], repeat: int = 2) -> Edit:
     """Return the edit that repeats neighbouring elements as a whole.
 
-    Every row between the first and the last belongs to the group. Rows that overlap a group take its place, when
-    they hold all of it; else the edit is refused.
+    Every row between the first and the last belongs to the group. Refused where a row is in a group already: there
+    are no groups within groups, and a count that stands must not be lost.
     """
     chosen = _ascending(rows)
 
@@ -49,12 +58,11 @@ def group_rows(stack: int, rows: Iterable[int], repeat: int = 2) -> Edit:
             element_at(document.record, stack, row)
         old = stack_at(document.record, stack)
         new = Group(chosen[0], chosen[-1], repeat)
-        rest = [group for group in old.groups if group.last < new.first or group.first > new.last]
-        cut = [group for group in old.groups if group not in rest and not _holds(new, group)]
-        if cut:
-            where = f"rows {cut[0].first + 1} to {cut[0].last + 1}"
-            raise refuse(f"stacks[{stack}]", f"this would cut the group of {where}", "all of it, or none")
-        groups = tuple(sorted((*rest, new), key=lambda group: group.first))
+        there = next((one for one in old.groups if one.last >= new.first and one.first <= new.last), None)
+        if there is not None:
+            where = f"rows {there.first + 1} to {there.last + 1} are repeated {there.repeat} times already"
+            raise refuse(f"stacks[{stack}]", where, "type the count under Times, or end that group")
+        groups = tuple(sorted((*old.groups, new), key=lambda group: group.first))
         return with_record(document, with_stack(document.record, stack, replace(old, groups=groups)))
 
     what = f"elements {chosen[0] + 1} to {chosen[-1] + 1}" if chosen else "nothing"
@@ -163,6 +171,34 @@ def fill_down(stack: int, rows: Iterable[int], column: str) -> Edit:
         return document
 
     return Edit(f"fill {column} down {len(chosen)} rows", change)
+
+
+def fill_elements(stack: int, rows: Iterable[int]) -> Edit:
+    """Return the edit that gives the other chosen elements what the first of them is made of, in one step.
+
+    Layers get its material and thickness, with texts that have no value yet; sheets get all its parts, so that a
+    film stays one. Elements of the other kind, and what is left out or locked, stay as they are.
+    """
+    chosen = _ascending(rows)
+
+    def change(document: Document) -> Document:
+        if len(chosen) < 2:
+            raise refuse(f"stacks[{stack}]", "there is nothing below to fill", "select two elements or more")
+        first = element_at(document.record, stack, chosen[0])
+        if isinstance(first, LayerRecord):
+            return fill_columns(stack, chosen, ("material", "thickness")).change(document)
+
+        def changed(element: ElementRecord) -> ElementRecord:
+            if isinstance(element, LayerRecord):
+                return element
+            return replace(first, enabled=element.enabled, locked=element.locked)
+
+        cells = [draft.cell for draft in document.drafts if draft.cell.stack == stack]
+        gone = [cell for cell in cells if cell.row in chosen[1:]]
+        filled = _each(stack, chosen[1:], changed)(document)
+        return Document(filled.job, without_draft(filled.drafts, *gone))
+
+    return Edit(f"fill down {len(chosen)} rows", change)
 
 
 def fill_columns(stack: int, rows: Iterable[int], columns: Sequence[str]) -> Edit:

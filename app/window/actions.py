@@ -123,6 +123,22 @@ class Actions:
             if act.checked is not None:
                 action.setChecked(act.checked())
 
+    def chosen(self, menus: Iterable[str], owner: QWidget) -> list[QAction]:
+        """Return the actions of some menus in their order, a separator between groups, for a menu beside."""
+        found: list[QAction] = []
+        before: tuple[str, int] | None = None
+        for act in self.table:
+            action = self._qt.get(act.key)
+            if action is None or act.menu not in menus:
+                continue
+            if before is not None and before != (act.menu, act.group):
+                line = QAction(owner)
+                line.setSeparator(True)
+                found.append(line)
+            before = (act.menu, act.group)
+            found.append(action)
+        return found
+
     def fill(self, bar: QMenuBar) -> None:
         """Put every act into its menu."""
         menus: dict[str, QMenu] = {}

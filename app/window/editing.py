@@ -43,12 +43,25 @@ class StructureCommands:
 
     def used(self) -> bool:
         """Whether every selected element is computed."""
-        return all(element.enabled for element in self._chosen())
+        chosen = self._chosen()
+        return bool(chosen) and all(element.enabled for element in chosen)
 
     def locked(self) -> bool:
-        """Whether every selected element is locked."""
-        chosen = self._chosen()
-        return bool(chosen) and all(element.locked for element in chosen)
+        """Whether every selected layer is locked."""
+        chosen = self._layers()
+        return bool(chosen) and all(self._stack.elements[row].locked for row in chosen)
+
+    def any_layer(self) -> bool:
+        """Whether a selected element has a thickness to lock."""
+        return bool(self._layers())
+
+    def can_group(self) -> bool:
+        """Whether elements are selected, none of which is in a group already."""
+        return self.any_selected() and not self.in_a_group()
+
+    def can_mirror(self) -> bool:
+        """Whether there are two elements or more to mirror."""
+        return len(self._stack.elements) > 1
 
     def any_selected(self) -> bool:
         """Whether at least one element is selected."""
@@ -73,9 +86,8 @@ class StructureCommands:
         self._apply(edits.set_enabled(selection.stack, selection.rows, not self.used()))
 
     def lock(self) -> None:
-        """Lock the thickness of the selected elements, or unlock it."""
-        selection = self._session.selection
-        self._apply(edits.set_locked(selection.stack, selection.rows, not self.locked()))
+        """Lock the thickness of the selected layers, or unlock it."""
+        self._apply(edits.set_locked(self._session.selection.stack, self._layers(), not self.locked()))
 
     def group(self) -> None:
         """Repeat the selected elements as a group, twice at first; the count stands in the table."""
@@ -103,15 +115,17 @@ class StructureCommands:
         self._apply(edits.reverse(selection.stack, selection.rows if self.several() else ()))
 
     def fill(self) -> None:
-        """Give the selected elements what the first of them has: material and thickness, or resistance."""
+        """Give the selected elements what the first of them is made of."""
         selection = self._session.selection
-        first = self._stack.elements[selection.rows[0]]
-        columns = ("material", "thickness") if isinstance(first, LayerRecord) else ("resistance",)
-        self._apply(edits.fill_columns(selection.stack, selection.rows, columns))
+        self._apply(edits.fill_elements(selection.stack, selection.rows))
 
     @property
     def _stack(self) -> StackRecord:
         return self._session.record.stacks[self._session.selection.stack]
+
+    def _layers(self) -> list[int]:
+        rows = self._session.selection.rows
+        return [row for row in rows if isinstance(self._stack.elements[row], LayerRecord)]
 
     def _chosen(self) -> list[ElementRecord]:
         return [self._stack.elements[row] for row in self._session.selection.rows]

@@ -258,10 +258,7 @@ class MainWindow(JobWindow):
         self._recompute.busy.connect(self._panels.curves.set_busy)
         self._panels.curves.pointed.connect(self._status.point)
         self._panels.material_data.pointed.connect(self._status.point)
-        for panel in self._panels.slow:
-            panel.pointed.connect(self._status.point)
-            panel.live_busy = self._recompute.lane_busy
-            self._recompute.asked.connect(panel.give_way)
+        self._panels.give_way_to(self._recompute, self._status.point)
         self._panels.open_with(self._arrangement.open_beside)
         self._panels.wall.edit_requested.connect(self._panels.edit_element)
         self._exporter.running.connect(self._actions.refresh)
@@ -278,6 +275,7 @@ class MainWindow(JobWindow):
         self.setAcceptDrops(True)
         self.setDockNestingEnabled(True)
         self._actions.fill(self.menuBar())
+        self._panels.elements.offer(self._actions.chosen(("&Edit", "&Build-up"), self))
         self.setStatusBar(self._status)
         self._status.add_progress(ProgressLine(self._exporter, self))
         self._arrangement.restore()

@@ -29,7 +29,7 @@ from app.window.exporting import Tell
 from app.window.help_panel import HelpPanel
 from app.window.layout import Places
 from app.window.notes_panel import NotesPanel
-from app.window.recompute import Viewer
+from app.window.recompute import Recompute, Viewer
 from stackcore.job.records import LayerRecord
 from stackcore.media.library import read_library
 
@@ -94,6 +94,14 @@ class Panels:
     def slow(self) -> tuple[MapPanel | CutsPanel | VariantsPanel, ...]:
         """Those that compute what takes long, and give way to the curves."""
         return self.map, self.cuts, self.variants
+
+    def give_way_to(self, recompute: Recompute, point: Callable[[str], None]) -> None:
+        """Let the slow ones wait while the curves are computed, and say what is pointed at in them."""
+        for panel in self.slow:
+            panel.pointed.connect(point)
+            panel.live_busy = recompute.lane_busy
+            recompute.asked.connect(panel.give_way)
+        self.plane.pointed.connect(point)
 
     def close_lanes(self) -> None:
         """End for good what the slow panels compute."""

@@ -27,8 +27,8 @@ def structure_acts(c: Commands) -> Sequence[Act]:
             "&Lock thickness",
             do.lock,
             ("Ctrl+J",),
-            "Hold the thickness of the selected elements: their faces cannot be dragged.",
-            enabled=do.any_selected,
+            "Hold the thickness of the selected layers: their faces cannot be dragged.",
+            enabled=do.any_layer,
             checked=do.locked,
         ),
         Act(
@@ -38,7 +38,7 @@ def structure_acts(c: Commands) -> Sequence[Act]:
             do.group,
             ("Ctrl+G",),
             "Repeat the selected elements as a whole; the count is typed in the column Times.",
-            enabled=do.any_selected,
+            enabled=do.can_group,
             group=1,
         ),
         Act(
@@ -66,7 +66,7 @@ def structure_acts(c: Commands) -> Sequence[Act]:
             "&Mirror",
             do.mirror,
             tip="Make the selected elements, or the whole stack, symmetric about the last of them.",
-            enabled=do.any_elements,
+            enabled=do.can_mirror,
             group=2,
         ),
         Act(
@@ -84,7 +84,7 @@ def structure_acts(c: Commands) -> Sequence[Act]:
             "&Fill down",
             do.fill,
             ("Ctrl+Shift+Down",),
-            "Give the selected elements the material and thickness of the first of them.",
+            "Give the selected elements the material and thickness of the first, or all parts of a sheet.",
             enabled=do.several,
             place="elements",
             group=2,

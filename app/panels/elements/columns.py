@@ -86,6 +86,8 @@ RARE_COLUMNS: Final = (INDUCTANCE, CAPACITANCE, CONDUCTIVITY)
 """Shown only where a sheet of the stack uses them, or when they are asked for."""
 LAYER_CELLS: Final = (MATERIAL, THICKNESS)
 ALL_COLUMNS: Final = (*LAYER_COLUMNS, *SHEET_COLUMNS, REPEAT)
+SHOWN_ORDER: Final = (NUMBER, WHAT, REPEAT, MATERIAL, THICKNESS, *SHEET_COLUMNS)
+"""From left to right: the count of a group beside its bracket, where no wide table hides it."""
 _PLACES: Final = {column.name: place for place, column in enumerate(ALL_COLUMNS)}
 
 
@@ -94,8 +96,13 @@ def place_of(column: Column) -> int:
     return _PLACES[column.name]
 
 
+def shown_place(column: Column) -> int:
+    """Return the place of a column from left to right among all."""
+    return SHOWN_ORDER.index(column)
+
+
 def columns_of(document: Document, stack: int, *, rare: bool = False) -> tuple[Column, ...]:
-    """Return the columns a stack needs, in the order of `ALL_COLUMNS`.
+    """Return the columns a stack needs, in the order of `SHOWN_ORDER`.
 
     Those of sheets are there only when it has a sheet, and those of `RARE_COLUMNS` only when a sheet uses them,
     or holds a text for them that is no value yet, or when `rare` asks for them. That of groups is there when there
@@ -105,11 +112,11 @@ def columns_of(document: Document, stack: int, *, rare: bool = False) -> tuple[C
     sheets = [one for one in record.elements if isinstance(one, SheetRecord)]
     repeat = (REPEAT,) if record.groups else ()
     if not sheets:
-        return (*LAYER_COLUMNS, *repeat)
+        return tuple(column for column in SHOWN_ORDER if column in (*LAYER_COLUMNS, *repeat))
     drafted = {draft.cell.column for draft in document.drafts if draft.cell.stack == stack}
     used = {
         column.name for column in RARE_COLUMNS if any(getattr(sheet, column.name) is not None for sheet in sheets)
     }
     wanted = {column.name for column in RARE_COLUMNS} if rare else used | drafted
-    shown = [column for column in ALL_COLUMNS if column not in RARE_COLUMNS or column.name in wanted]
+    shown = [column for column in SHOWN_ORDER if column not in RARE_COLUMNS or column.name in wanted]
     return tuple(column for column in shown if column is not REPEAT or repeat)

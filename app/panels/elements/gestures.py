@@ -18,8 +18,9 @@ from app.panels.elements.columns import (
     WHAT,
     Column,
 )
-from app.panels.elements.lines import FILM, WORDS
+from app.panels.elements.lines import FILM, WORDS, Marks, marks_of
 from app.panels.elements.names import MaterialNames
+from stackcore.job.groups import group_of
 from stackcore.job.records import JobRecord, LayerRecord, SheetRecord
 from stackcore.units import Dimension, parse_measure
 
@@ -74,7 +75,8 @@ def paste_edit(stack: int, row: int, pasted: Sequence[Mapping[str, str]], *, ins
             if kind is not type(present):
                 document = _new_element(stack, place, kind).change(document)
             document = _type_row(document, stack, place, texts)
-        return document
+            document = _marked(document, stack, place, marks_of(texts))
+        return _grouped(document, stack, row, [marks_of(texts) for texts in rows]) if insert else document
 
     selection = Selection(stack, tuple(range(row, row + len(rows))))
     return Edit(f"paste {_count(len(rows), 'row')}", change, selection)
@@ -133,6 +135,32 @@ def _type_row(document: Document, stack: int, row: int, texts: Mapping[str, str]
             continue  # an inductance of what has just become a film, or the conductivity of what is none
         names = MaterialNames(document.record)
         document = typed_edit(names, Cell(stack, row, column.name), text).change(document)
+    return document
+
+
+def _marked(document: Document, stack: int, row: int, marks: Marks) -> Document:
+    """Return the document with a row left out and locked as it was where it was copied."""
+    element = document.record.stacks[stack].elements[row]
+    if marks.left_out is not None and element.enabled == marks.left_out:
+        document = edits.set_enabled(stack, (row,), not marks.left_out).change(document)
+    if marks.locked is not None and element.locked != marks.locked:
+        document = edits.set_locked(stack, (row,), marks.locked).change(document)
+    return document
+
+
+def _grouped(document: Document, stack: int, row: int, marks: Sequence[Marks]) -> Document:
+    """Return the document with the groups that were copied whole; a part of one is no group."""
+    begun: tuple[int, int] | None = None
+    for place, mark in enumerate(marks, start=row):
+        if mark.repeat is not None:
+            begun = (place, mark.repeat)
+        elif not mark.inside:
+            begun = None
+        if begun is not None and mark.ends:
+            first, repeat = begun
+            if group_of(document.record.stacks[stack], first) is None:
+                document = edits.group_rows(stack, range(first, place + 1), repeat).change(document)
+            begun = None
     return document
 
 

@@ -4,6 +4,7 @@ Line 0 is the front half-space, the last line the back; element `row` is line `r
 """
 
 import re
+from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import Final, Literal
 
@@ -35,6 +36,9 @@ HALF_SPACE: Final = "half-space"
 FILM: Final = "Film"
 LEFT_OUT: Final = "left out"
 LOCKED: Final = "locked"
+FIRST, MIDDLE, LAST = "┐│┘"
+"""Brackets of a group behind the numbers of its rows."""
+_COUNT: Final = re.compile(r"×(\d+)")
 
 _WITHOUT_UNIT: Final = re.compile(r"[\d\s.,()+*/−-]*(?:[eE][-+]?\d+)?")
 
@@ -93,6 +97,42 @@ class Line:
     def cell(self, column: Column) -> CellView:
         """Return what the row shows in `column`."""
         return self.cells[place_of(column)]
+
+
+@dataclass(frozen=True, slots=True)
+class Marks:
+    """What the table's own words say of a row beside its values.
+
+    Parameters
+    ----------
+    left_out, locked
+        As of the element; None where the row does not say what it is.
+    repeat
+        Count of the group that begins here, None where none begins.
+    inside, ends
+        Whether the row belongs to the group that began before, and whether it is its last.
+    """
+
+    left_out: bool | None = None
+    locked: bool | None = None
+    repeat: int | None = None
+    inside: bool = False
+    ends: bool = False
+
+
+def marks_of(texts: Mapping[str, str]) -> Marks:
+    """Return what a copied row says by its words and brackets; the inverse of what the table writes."""
+    word, *marks = (part.strip().casefold() for part in texts.get(WHAT.name, "").split(","))
+    number = texts.get(NUMBER.name, "")
+    count = _COUNT.search(number)
+    begins = count is not None
+    return Marks(
+        LEFT_OUT in marks if word else None,
+        LOCKED in marks if word else None,
+        int(count[1]) if count is not None else None,
+        MIDDLE in number or LAST in number,
+        LAST in number or (begins and FIRST not in number),
+    )
 
 
 def lines_of(document: Document, stack: int, *, films: bool = False) -> tuple[Line, ...]:
@@ -160,7 +200,7 @@ class _Reading:
         group = group_of(self.document.record.stacks[self.stack], row)
         bracket = ""
         if group is not None and group.first != group.last:
-            bracket = " ┐" if row == group.first else " ┘" if row == group.last else " │"
+            bracket = f" {FIRST if row == group.first else LAST if row == group.last else MIDDLE}"
         if group is not None and row == group.first:
             bracket += f" ×{group.repeat}"
         word = FILM if isinstance(element, SheetRecord) and element.kind == "film" else WORDS[kind]

@@ -10,7 +10,7 @@ from PySide6.QtCore import QAbstractTableModel, QModelIndex, QObject, QPersisten
 from app.document import edits
 from app.document.document import Document
 from app.document.session import Change, Session
-from app.panels.elements.columns import CONDUCTIVITY, MATERIAL, Column, columns_of, place_of
+from app.panels.elements.columns import CONDUCTIVITY, MATERIAL, Column, columns_of, shown_place
 from app.panels.elements.difference import Inserted, Moved, Removed, Step, step_between
 from app.panels.elements.gestures import typed_edit
 from app.panels.elements.lines import CellView, Line, cell_of, lines_of
@@ -267,7 +267,7 @@ class ElementsModel(QAbstractTableModel):
                 self.endRemoveColumns()
         for column in columns:
             if column not in self._columns:
-                place = sum(place_of(other) < place_of(column) for other in self._columns)
+                place = sum(shown_place(other) < shown_place(column) for other in self._columns)
                 self.beginInsertColumns(_NOWHERE, place, place)
                 self._columns = (*self._columns[:place], column, *self._columns[place:])
                 self.endInsertColumns()

@@ -100,6 +100,12 @@ class ElementsPanel(QWidget):
             self._rare.setChecked(shown)
             self.columns_asked.emit()
 
+    def offer(self, actions: Sequence[QAction]) -> None:
+        """Let the menu of the table offer these instead of its own, before the switch for rare columns."""
+        for action in self._actions.values():
+            self._table.removeAction(action)
+        self._table.insertActions(self._table.actions()[0], list(actions))
+
     # What can be done with rows
 
     def add_layer(self) -> None:
