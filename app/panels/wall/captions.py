@@ -14,7 +14,7 @@ from app.panels.wall.words import share_text, tilt_text
 from app.series.texts import angle_text, frequency_text
 from stackcore.polarizations import polarization
 
-Role = Literal["incident", "reflectance", "transmittance", "absorptance", "angle", "end"]
+Role = Literal["incident", "reflectance", "transmittance", "absorptance", "angle", "end", "group"]
 
 END_GAP: Final = 6.0
 """Between the end of an arrow and what is written there, in px."""
@@ -51,7 +51,7 @@ def captions(layout: WallLayout, rays: Rays, wave: Wave, measure: TextMeasure) -
     if rays.total:
         wanted.append(_total_caption(layout, rays, measure))
     wanted += [_angle_caption(arc, measure) for arc in rays.arcs]
-    taken = [label.box for label in layout.labels]
+    taken = [label.box for label in layout.labels] + [name.box for name in group_names(layout, measure)]
     placed = []
     for caption in wanted:
         inside = caption.box.left >= 0 and caption.box.right <= layout.width
@@ -138,6 +138,33 @@ def end_names(layout: WallLayout, measure: TextMeasure) -> tuple[Caption, ...]:
     edge = layout.width - MARGIN
     right = Box(edge - measure.width(back), rail.top, edge, rail.bottom)
     return Caption(front, left, "end"), Caption(back, right, "end")
+
+
+def group_names(layout: WallLayout, measure: TextMeasure) -> tuple[Caption, ...]:
+    """Return how often each group is repeated: among the numbers below it, or at its foot for want of room."""
+    taken = [number.box for number in layout.numbers] + [name.box for name in end_names(layout, measure)]
+    found = []
+    for group in layout.wall.groups:
+        text = f"×{group.repeat}"
+        box = _group_box(layout, group.first, group.last, measure.width(text) + 4, taken)
+        taken.append(box)
+        found.append(Caption(text, box, "group", group.last))
+    return tuple(found)
+
+
+def _group_box(layout: WallLayout, first: int, last: int, width: float, taken: Sequence[Box]) -> Box:
+    rail, left, right = layout.rail, layout.extent(first).left, layout.extent(last).right
+    starts = [right - width, (left + right - width) / 2, left, right + 3, left - width - 3]
+    starts += [box.right + 4 for box in taken] + [box.left - width - 4 for box in taken]
+    boxes = [Box(start, rail.top, start + width, rail.bottom) for start in starts]
+    near = [box for box in boxes if box.right > left - width - 8 and box.left < right + width + 8]
+    for box in near:
+        inside = box.left >= 0 and box.right <= layout.width
+        if inside and not any(box.grown(2).overlaps(other) for other in taken):
+            return box
+    bottom = layout.body.bottom - 5
+    start = min(max(right - width, left), layout.width - width)
+    return Box(start, bottom - layout.line, start + width, bottom)
 
 
 def arrow_texts(powers: Powers) -> tuple[str, str]:

@@ -230,17 +230,17 @@ def _paint_rail(painter: QPainter, layout: WallLayout, measure: TextMeasure, the
 
 
 def _paint_groups(painter: QPainter, layout: WallLayout, measure: TextMeasure, theme: Theme) -> None:
-    """Draw a line below the elements of each group, and how often they are repeated at its end."""
+    """Draw a line below the elements of each group, and how often they are repeated beside their numbers."""
+    painter.setPen(QPen(QColor(theme.text), 3.0, Qt.PenStyle.SolidLine, Qt.PenCapStyle.FlatCap))
     for group in layout.wall.groups:
         left, right = layout.extent(group.first).left, layout.extent(group.last).right
         y = layout.body.bottom - 1.5
-        painter.setPen(QPen(QColor(theme.text), 3.0, Qt.PenStyle.SolidLine, Qt.PenCapStyle.FlatCap))
         painter.drawLine(QPointF(left + 1, y), QPointF(right - 1, y))
-        words = f"×{group.repeat}"
-        wide = measure.width(words) + 6
-        box = QRectF(min(max(right - wide, left), layout.width - wide), y - layout.line - 1, wide, layout.line)
-        painter.fillRect(box, colour(theme.base, 0.85))
-        painter.drawText(box, Qt.AlignmentFlag.AlignCenter, words)
+    painter.setPen(QColor(theme.text))
+    for name in captions.group_names(layout, measure):
+        if name.box.bottom <= layout.body.bottom:
+            painter.fillRect(rectangle(name.box), colour(theme.base, 0.85))
+        painter.drawText(rectangle(name.box), Qt.AlignmentFlag.AlignCenter, name.text)
 
 
 def _paint_handle(painter: QPainter, layout: WallLayout, face: Face, tag: str, theme: Theme) -> None:

@@ -10,6 +10,8 @@ from app.document.document import Document
 from app.document.session import Session
 from app.document.view import View
 from app.look.theme import LIGHT
+from app.panels.wall.captions import captions, end_names, group_names, rays_in
+from app.panels.wall.layout import lay_out
 from app.panels.wall.panel import WallPanel
 from app.panels.wall.parts import LayerPart, SheetPart, wall_of
 from app.panels.wall.wave import wave_in
@@ -17,6 +19,7 @@ from app.panels.wall.words import described
 from app.workers.live import LiveLane
 from stackcore.job import Job, job_from_json
 from stackcore.propagation import solve
+from tests.app.panels.wall.walls import EvenFont
 from tests.stackcore.formats.files import FORMATS
 
 
@@ -95,3 +98,28 @@ def test_the_live_lane_takes_groups(qtbot: QtBot, job: Job) -> None:
     assert panel.wave.powers is not None
     lane.close()
     lane.deleteLater()
+
+
+@pytest.mark.parametrize("width", [300, 500, 900, 1600])
+@pytest.mark.parametrize("parts", [1, 3, 9])
+def test_the_count_of_a_group_is_covered_by_nothing(width: int, parts: int) -> None:
+    """Neither a number nor an end's name lies on it, nor what is absorbed; it stands within the drawing."""
+    elements = ", ".join('{"layer": "skin", "thickness": "2 mm"}' for _ in range(parts))
+    text = f"""{{"format": "slabwright-job", "version": 1,
+"materials": {{"skin": {{"model": "constant", "permittivity": 4.2, "loss_tangent": 0.05}}}},
+"stacks": [{{"name": "A", "elements": [{{"repeat": 8, "elements": [{elements}]}}]}}],
+"sweep": {{"frequency": ["10 GHz"], "angle": ["20 deg"]}}}}"""
+    job = Job(job_from_json(text))
+    document, stack = Document(job), job.stacks[0]
+    measure = EvenFont()
+    layout = lay_out(wall_of(document, 0), float(width), 300.0, measure)
+    response = solve(stack, 10e9, 0.35)
+    wave = wave_in(stack, 10e9, 0.35, "TE", response, rows=job.rows[0], count=parts)
+    (name,) = group_names(layout, measure)
+    assert name.text == "×8"
+    assert name.box.left >= 0
+    assert name.box.right <= width
+    around = [number.box for number in layout.numbers] + [end.box for end in end_names(layout, measure)]
+    written = captions(layout, rays_in(layout, wave, measure), wave, measure)
+    around += [caption.box for caption in written]
+    assert not any(name.box.overlaps(box) for box in around)
