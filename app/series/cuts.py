@@ -6,19 +6,18 @@ from typing import Final, Literal
 
 import numpy as np
 
-from app.document.variation_edits import taken
 from app.document.view import Power, ViewState
 from app.series.curves import Curve, curve_label, worst_point
 from app.series.shown import shown, shown_unit, shown_values
-from app.series.texts import angle_text, frequency_text, value_text
+from app.series.texts import frequency_text, value_text
 from app.series.validity import doubts_of, held_by_all
+from app.series.variation_axis import VariationAxis, variation_at, variation_axis, varied_words
 from stackcore.arrays import FloatArray
 from stackcore.job import Job
 from stackcore.polarizations import polarization
 from stackcore.propagation import Response, solve
 from stackcore.quantities import quantity_named
-from stackcore.studies import Variation, check_values, curve_over, variations_of
-from stackcore.units import Dimension, format_value, parse_measure
+from stackcore.studies import Variation, check_values, curve_over
 
 Where = Literal["marker", "band"]
 """At the frequency of a marker, or at the frequency of the band where each value is worst."""
@@ -26,10 +25,6 @@ Where = Literal["marker", "band"]
 POINTS: Final = 201
 BAND_POINTS: Final = 101
 """Frequencies at which the worst of the band is looked for, unless the sweep has fewer."""
-STEEPEST: Final = np.radians(89.5)
-"""Largest angle of a cut in rad; grazing incidence itself is no angle of a plane wave."""
-FLATTEST_SPAN: Final = np.radians(85.0)
-"""End of a cut over the angle for a job of one angle."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -74,6 +69,15 @@ class CutQuestion:
     def values(self) -> FloatArray:
         """Return what stands at the axis, SI."""
         return np.linspace(self.low, self.high, POINTS)
+
+    @property
+    def axis(self) -> VariationAxis:
+        """What stands beside the axis."""
+        return variation_axis(self.variation, self.low, self.high)
+
+    def words(self, value: float) -> str:
+        """Return a value of what is varied in words."""
+        return varied_words(self.variation, value)
 
     def study(self) -> "Generator[Cut, None, None]":
         """Return the study that answers it."""
@@ -129,21 +133,6 @@ class Cut:
         return float(self.curves[0].x[place]), float(worst[place] if end == "low" else -worst[place])
 
 
-def variation_at(job: Job, stack: int, path: str) -> Variation | None:
-    """Return the variation of a path, None for an empty one and for what is no longer there."""
-    return next((one for one in variations_of(job, stack) if one.path == path), None) if path else None
-
-
-def usual_range(job: Job, stack: int, path: str) -> tuple[float, float]:
-    """Return the ends a cut begins with, SI: those of the variation, or the sweep's angles."""
-    variation = variation_at(job, stack, path)
-    if variation is not None:
-        return variation.low, variation.high
-    angles = job.sweep.angles()
-    low, high = float(angles.min()), float(angles.max())
-    return (0.0, FLATTEST_SPAN) if low == high else (low, high)
-
-
 def cut_question(
     job: Job, stack: int, view: ViewState, over: str, ends: tuple[float, float], where: Where
 ) -> CutQuestion:
@@ -170,49 +159,9 @@ def cut_question(
     )
 
 
-def axis_of(question: CutQuestion) -> tuple[str, str, float, float]:
-    """Return title and unit of the axis, and what makes an SI value one of the axis: a factor, then an offset.
-
-    Examples
-    --------
-    >>> from app.document.untitled import untitled_job
-    >>> from app.document.view import ViewState
-    >>> axis_of(cut_question(untitled_job(), 0, ViewState(), "", (0.0, 1.0), "marker"))[:2]
-    ('Angle of incidence, deg', 'deg')
-    """
-    variation = question.variation
-    if variation is None:
-        return "Angle of incidence, deg", "deg", 180.0 / np.pi, 0.0
-    if variation.dimension is Dimension.NUMBER:
-        return variation.label, "", 1.0, 0.0
-    if variation.dimension is Dimension.TEMPERATURE:
-        return f"{variation.label}, °C", "°C", 1.0, -273.15
-    unit = unit_of(variation.dimension, max(abs(question.low), abs(question.high)))
-    return f"{variation.label}, {unit}", unit, 1 / parse_measure(f"1 {unit}", variation.dimension).value, 0.0
-
-
-def unit_of(dimension: Dimension, size: float) -> str:
-    """Return the unit in which values up to `size` (SI) read well.
-
-    Examples
-    --------
-    >>> unit_of(Dimension.LENGTH, 0.0098)
-    'mm'
-    """
-    return format_value(float(f"{size:.3g}"), dimension).partition(" ")[2]
-
-
-def value_words(question: CutQuestion, value: float) -> str:
-    """Return a value of what is varied in words: ``9.86 mm``, ``30°``."""
-    variation = question.variation
-    if variation is None:
-        return angle_text(float(f"{value:.5g}"))
-    return format_value(taken(variation, value), variation.dimension)
-
-
 def point_words(cut: Cut, curve: Curve, point: int) -> str:
     """Return the reading of a curve at a point of it."""
-    where = value_words(cut.question, float(curve.x[point]))
+    where = cut.question.words(float(curve.x[point]))
     return f"{curve.label}: {value_text(curve.quantity, float(curve.raw[point]), curve.unit)} at {where}"
 
 
@@ -225,7 +174,7 @@ def best_words(cut: Cut) -> str:
     unit = cut.curves[0].unit
     told = value_text(cut.question.quantity, worst, unit)
     what = "worst of the curves" if len(cut.curves) > 1 else "value"
-    return f"Best {value_words(cut.question, value)}: {what} {told}"
+    return f"Best {cut.question.words(value)}: {what} {told}"
 
 
 def where_words(question: CutQuestion) -> str:

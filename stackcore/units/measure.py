@@ -170,7 +170,7 @@ def format_value(value: float, dimension: Dimension, *, unit: str | None = None,
         seen = Decimal(repr(value)) if digits is None else _rounded(Fraction(value), digits)
         unit = _readable_unit(abs(Fraction(seen)), dimension)
     written = _unit(unit, dimension) if unit else _unit(dimension.si_unit, dimension)
-    exact = (Fraction(value) - written.zero) / written.scale
+    exact = _from_zero(value, written) / written.scale
     number = _shortest(value, written) if digits is None else _rounded(exact, digits)
     return f"{_plain_number(number)} {unit}".strip()
 
@@ -214,6 +214,11 @@ def _readable_unit(magnitude: Fraction, dimension: Dimension) -> str:
     return next((unit for unit, smallest in ladder if magnitude >= smallest), ladder[-1][0])
 
 
+def _from_zero(value: float, unit: Unit) -> Fraction:
+    """Return how far a value lies from the zero of its unit; nothing where it is the double nearest to it."""
+    return Fraction(0) if unit.zero and float(unit.zero) == value else Fraction(value) - unit.zero
+
+
 def _decimal(value: Fraction) -> Decimal:
     return _EXACT.divide(Decimal(value.numerator), Decimal(value.denominator))
 
@@ -224,7 +229,9 @@ def _rounded(value: Fraction, digits: int) -> Decimal:
 
 def _shortest(value: float, unit: Unit) -> Decimal:
     """Return the decimal with the fewest digits that has `value` as nearest double when it is in `unit`."""
-    wanted = _decimal((Fraction(value) - unit.zero) / unit.scale)
+    wanted = _decimal(_from_zero(value, unit) / unit.scale)
+    if not wanted:
+        return Decimal(0)
     # A double near absolute zero needs the digits of 273.15 in front of its own.
     most = _EXACT.prec if unit.zero else 18
     for digits in range(1, most):

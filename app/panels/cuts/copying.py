@@ -2,7 +2,7 @@
 
 import numpy as np
 
-from app.series.cuts import Cut, axis_of, where_words
+from app.series.cuts import Cut, where_words
 from stackcore.quantities import quantity_named
 
 
@@ -12,10 +12,10 @@ def data_table(cut: Cut, title: str, stack: str) -> str:
     A value that is infinite, and so not drawn, is written ``inf``.
     """
     question = cut.question
-    across, _, factor, offset = axis_of(question)
+    axis = question.axis
     label = quantity_named(question.quantity).label
     heads = [f"{label} {curve.label}{f', {curve.unit}' if curve.unit else ''}" for curve in cut.curves]
     about = ", ".join(part for part in (title, stack, where_words(question)) if part)
-    table = np.column_stack([cut.curves[0].x * factor + offset, *(curve.raw for curve in cut.curves)])
+    table = np.column_stack([axis.numbers(cut.curves[0].x), *(curve.raw for curve in cut.curves)])
     rows = ["\t".join(map(repr, row)) for row in table.tolist()]
-    return "\n".join([about, "\t".join([across, *heads]), *rows]) + "\n"
+    return "\n".join([about, "\t".join([axis.title, *heads]), *rows]) + "\n"

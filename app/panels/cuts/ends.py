@@ -1,4 +1,4 @@
-"""The two fields in which the ends of a cut are typed."""
+"""The two fields in which the ends of what a study varies are typed."""
 
 from collections.abc import Callable
 from typing import Final
@@ -8,18 +8,18 @@ from PySide6.QtWidgets import QWidget
 
 from app.look.theme import Theme
 from app.panels.sweep.field import QuietField
-from app.series.cuts import STEEPEST, usual_range, variation_at
 from app.series.texts import angle_text
+from app.series.variation_axis import STEEPEST, usual_range, variation_at
 from stackcore.errors import Fault, JobError, UnitError
 from stackcore.job import Job
 from stackcore.studies import Variation, check_values
 from stackcore.units import Dimension, format_value, parse_measure
 
-TIP: Final = "End of the cut, with a unit; empty for the usual one."
+TIP: Final = "End of what is varied, with a unit; empty for the usual one."
 
 
 class EndFields:
-    """The ends of cuts, remembered for each thing that is varied; an empty one is the usual end.
+    """The ends of studies, remembered for each thing that is varied; an empty one is the usual end.
 
     The usual ends stay as they were first found while the present value lies between them, so that the plot stands
     still while a value is dragged.

@@ -28,12 +28,11 @@ from app.series.cuts import (
     Where,
     best_words,
     cut_question,
-    value_words,
-    variation_at,
     where_words,
 )
 from app.series.shown import shown
 from app.series.texts import angle_text, frequency_text
+from app.series.variation_axis import variation_at
 from app.workers.batch import BatchEnd, BatchFailure, BatchLane, BatchStep
 from stackcore.errors import Severity
 from stackcore.job import Job
@@ -325,7 +324,7 @@ class CutsPanel(QWidget):
             angle = self._view.state.marker_angle(job.sweep)
             self.cut_view.set_flag(angle, angle_text(angle))
         else:
-            self.cut_view.set_flag(variation.value, value_words(cut.question, variation.value))
+            self.cut_view.set_flag(variation.value, cut.question.words(variation.value))
 
     # Taking
 
@@ -353,7 +352,7 @@ class CutsPanel(QWidget):
         values = cut.question.values()
         wanted = variation.value + steps * float(values[1] - values[0])
         self.take(min(max(wanted, cut.question.low), cut.question.high), going_on=True)
-        self.pointed.emit(value_words(cut.question, variation.value))
+        self.pointed.emit(cut.question.words(variation.value))
 
     def _show_all(self) -> None:
         self.ends.widen()

@@ -15,7 +15,7 @@ from app.panels.curves.plot import CurvePlot
 from app.panels.curves.scale import FrequencyScale
 from app.series.axis import quantity_axis
 from app.series.curves import Curve
-from app.series.cuts import Cut, axis_of, best_words, point_words, where_words
+from app.series.cuts import Cut, best_words, point_words, where_words
 from stackcore.quantities import quantity_named
 
 EMPTY: Final = "The cut is computed while this panel is shown."
@@ -94,9 +94,9 @@ class CutView(QWidget):
             return
         self.plot.note_layer.set_text("")
         question, curves = cut.question, cut.curves
-        title, _, factor, offset = axis_of(question)
-        self.scale = FrequencyScale(factor, False, offset)
-        self.plot.bottom_axis.set_title(title)
+        axis = question.axis
+        self.scale = FrequencyScale(axis.factor, False, axis.offset)
+        self.plot.bottom_axis.set_title(axis.title)
         frequencies = np.array(question.frequencies)
         self.plot.left_axis.set_title(quantity_axis(question.quantity, frequencies, power=question.power).title)
         self._colours = drawing.colours_of(curves, self._theme, stale=False)
@@ -109,7 +109,7 @@ class CutView(QWidget):
         self._show_legend()
         self._draw_flag()
         label = quantity_named(question.quantity).label
-        self.plot.setAccessibleName(f"{label} over {title.partition(',')[0].lower()}")
+        self.plot.setAccessibleName(f"{label} over {axis.title.partition(',')[0].lower()}")
         names = ", ".join(curve.label for curve in curves)
         self.plot.setAccessibleDescription(f"{names}, {where_words(question)}. {best_words(cut)}".strip())
 

@@ -1,9 +1,8 @@
 """The panel of maps: the quantity of the curves over frequency and angle, or over a thickness or a constant."""
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from typing import Final
 
-import numpy as np
 from PySide6.QtCore import QPointF, Qt, Signal
 from PySide6.QtGui import QGuiApplication, QHideEvent, QKeyEvent, QMouseEvent, QPainter, QPaintEvent, QShowEvent
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QSizePolicy, QVBoxLayout, QWidget
@@ -13,12 +12,15 @@ from app.document.view import View, ViewChange
 from app.look.pictures import Picture, clipboard_data
 from app.look.theme import LIGHT, Theme
 from app.panels.curves.drawing import fill_palette
-from app.panels.maps.picture import frame_of, paint_map
-from app.panels.maps.question import DrawnMap, MapQuestion, drawn, question_of
+from app.panels.cuts.ends import EndFields
+from app.panels.maps.picture import cell_at, frame_of, paint_map
+from app.panels.maps.question import DrawnMap, MapQuestion, about, data_table, drawn, question_of
 from app.panels.materials.pieces import button, ink
 from app.panels.sweep.field import QuietChoice, QuietField
+from app.panels.sweep.flow import FlowLayout
+from app.series.axis import is_power
 from app.workers.batch import BatchEnd, BatchFailure, BatchLane, BatchStep
-from stackcore.errors import Severity, UnitError
+from stackcore.errors import Fault, Severity, UnitError
 from stackcore.studies import MapLevel, variations_of
 from stackcore.units import Dimension, parse_measure
 
@@ -73,13 +75,7 @@ class MapView(QWidget):
         """Return the cell at a pixel, None outside the map."""
         if self.drawn is None:
             return None
-        frame = frame_of(self.drawn, self.width(), self.height())
-        if not frame.area.contains(at):
-            return None
-        rows, columns = self.drawn.values.shape
-        across = (at.x() - frame.area.left()) / frame.area.width()
-        up = (frame.area.bottom() - at.y()) / frame.area.height()
-        return min(int(up * rows), rows - 1), min(int(across * columns), columns - 1)
+        return cell_at(self.drawn, frame_of(self.drawn, self.width(), self.height()).area, at)
 
     def paintEvent(self, event: QPaintEvent) -> None:
         painter = QPainter(self)
@@ -141,6 +137,9 @@ class MapPanel(QWidget):
         self.over = QuietChoice(theme, "Over", OVER_TIP, self)
         self.low = QuietField(theme, "Colours from", LIMIT_TIP, "0000000", self)
         self.high = QuietField(theme, "to", LIMIT_TIP, "0000000", self)
+        self.ends = EndFields(theme, self._ask, self)
+        self._limits: dict[tuple[str, str], tuple[float | None, float | None]] = {}
+        self._words: list[QLabel] = []
         self.state, self.worst = QLabel(self), QLabel(self)
         self.map = MapView(theme, self)
         self.copy = button(self, "Copy data", "Put the map on the clipboard as a table.", self.copy_data)
@@ -153,6 +152,11 @@ class MapPanel(QWidget):
         """The map of now, as far as it is computed."""
         return self.map.drawn
 
+    @property
+    def asked(self) -> MapQuestion | None:
+        """What is or was computed last; None while the panel is hidden."""
+        return self._asked
+
     def choose_over(self, path: str) -> None:
         """Let another number run upward: the path of a variation, or nothing for the angle."""
         self._over = path
@@ -162,9 +166,10 @@ class MapPanel(QWidget):
         """Take the colours of a theme."""
         self._theme = self.map.theme = theme
         fill_palette(self, theme)
-        for control in (self.over, self.low, self.high):
+        for control in (self.over, self.low, self.high, *self.ends.fields):
             control.set_theme(theme)
-        ink(self.state, theme.muted)
+        for label in (self.state, *self._words):
+            ink(label, theme.muted)
         ink(self.worst, theme.text)
         self.map.update()
 
@@ -187,19 +192,14 @@ class MapPanel(QWidget):
             if shown is not None:
                 paint_map(painter, shown, width, height, LIGHT, limits)
 
-        stack = self._session.record.stacks[self._session.selection.stack].name
-        return Picture(f"{stack}: map", view.size(), view.logicalDpiX(), LIGHT.base, paint)
+        heading = f"Map: {about(shown)}" if shown is not None else "Map"
+        return Picture(heading, view.size(), view.logicalDpiX(), LIGHT.base, paint)
 
     def copy_data(self) -> None:
-        """Put the map on the clipboard as a table: frequencies across, the other axis down, full precision."""
-        shown = self.shown
-        if shown is None:
-            return
-        lines = ["\t".join([f"{shown.titles[1]} \\ {shown.titles[0]}", *map(repr, shown.x.tolist())])]
-        for value, row in zip(shown.y.tolist(), shown.values.tolist(), strict=True):
-            lines.append("\t".join(map(repr, [value, *row])))
-        QGuiApplication.clipboard().setText("\n".join(lines) + "\n")
-        self.pointed.emit("Copied the map as a table.")
+        """Put the map on the clipboard as a table: what it is of, frequencies across, the other axis down."""
+        if self.shown is not None:
+            QGuiApplication.clipboard().setText(data_table(self.shown))
+            self.pointed.emit("Copied the map as a table.")
 
     def copy_picture(self) -> None:
         """Put the map on the clipboard as a picture."""
@@ -218,33 +218,41 @@ class MapPanel(QWidget):
         super().hideEvent(event)
 
     def _arrange(self) -> None:
-        rows: tuple[tuple[QWidget, ...], ...] = (
-            (QLabel("Over frequency and", self), self.over),
-            (QLabel("Colours from", self), self.low, QLabel("to", self), self.high, self.copy),
-        )
-        heads: list[QHBoxLayout] = []
-        for parts in rows:
-            head = QHBoxLayout()
-            head.setContentsMargins(8, 4 if not heads else 0, 8, 0)
-            head.setSpacing(8)
-            for part in parts:
-                head.addWidget(part)
-            head.addStretch(1)
-            heads.append(head)
+        head = QWidget(self)
+        flow = FlowLayout(head, across=8, down=2)
+        low, high = self.ends.fields
+        for parts in (("Over frequency and", self.over), ("from", low, "to", high)):
+            flow.addWidget(self._group(head, parts))
+        flow.addWidget(self._group(head, ("colours from", self.low, "to", self.high)))
+        flow.addWidget(self.copy)
         foot = QHBoxLayout()
         foot.setContentsMargins(8, 0, 8, 4)
         foot.addWidget(self.worst)
         foot.addStretch(1)
         foot.addWidget(self.state)
         whole = QVBoxLayout(self)
-        whole.setContentsMargins(0, 0, 0, 0)
+        whole.setContentsMargins(0, 4, 0, 0)
         whole.setSpacing(4)
-        for head in heads:
-            whole.addLayout(head)
+        whole.addWidget(head)
         whole.addWidget(self.map, 1)
         whole.addLayout(foot)
         self.setAutoFillBackground(True)
         self.setFocusProxy(self.map)
+
+    def _group(self, owner: QWidget, parts: Sequence[QWidget | str]) -> QWidget:
+        """Return parts and words in one widget, so that a line never breaks between them."""
+        group = QWidget(owner)
+        row = QHBoxLayout(group)
+        row.setContentsMargins(8, 0, 0, 0)
+        row.setSpacing(6)
+        for part in parts:
+            if isinstance(part, str):
+                word = QLabel(part, group)
+                self._words.append(word)
+                row.addWidget(word)
+            else:
+                row.addWidget(part)
+        return group
 
     def _connect(self) -> None:
         self.over.activated.connect(lambda _index: self.choose_over(str(self.over.currentData())))
@@ -258,6 +266,8 @@ class MapPanel(QWidget):
         self.destroyed.connect(lambda: [end() for end in leave])
 
     def _edited(self, change: Change) -> None:
+        if change.kind == "open":
+            self.ends.forget()
         if change.after.job is not change.before.job or change.kind in ("open", "select"):
             self._ask()
 
@@ -272,8 +282,11 @@ class MapPanel(QWidget):
         if self._over and self._over not in [one.path for one in offered]:
             self._over = ""
         self._offer([("", ANGLE), *((one.path, one.label) for one in offered)])
-        question = question_of(job, stack, self._view.state, self._over)
+        ends = self.ends.follow(job, stack, self._over)
+        question = question_of(job, stack, self._view.state, self._over, ends)
         if question != self._asked:
+            if self._asked is None or _scale(question) != _scale(self._asked):
+                self._recall_limits(question)
             self._asked = question
             self._lane.ask(question.study())
             self.state.setText("Computing …")
@@ -309,20 +322,43 @@ class MapPanel(QWidget):
         if self.map.cursor_cell is not None:
             self.map.point(self.map.cursor_cell)
 
+    def _recall_limits(self, question: MapQuestion) -> None:
+        """Show the limits typed for this quantity and unit: those of another one mean nothing here."""
+        self.map.limits = self._limits.get(_scale(question), (None, None))
+        for field, end in zip((self.low, self.high), self.map.limits, strict=True):
+            field.show_text("" if end is None else f"{end:g}")
+
     def _take_limits(self) -> None:
-        ends: list[float | None] = []
-        for field in (self.low, self.high):
-            text = field.text().strip()
-            try:
-                ends.append(parse_measure(text, Dimension.NUMBER).value if text else None)
-            except UnitError as error:
-                self._tell(str(error), "warning")
-                return
-        low, high = ends
-        if low is not None and high is not None and not (np.isfinite([low, high]).all() and low < high):
-            self._tell(
-                f"{low:g} to {high:g} is no range of colours; the first must be below the second.", "warning"
-            )
+        """Take the typed limits; a text that is none stays with its reason, and the colours as they are."""
+        if self._asked is None:
             return
-        self.map.limits = (low, high)
+        unit = self.shown.unit if self.shown is not None else ""
+        ends = [_limit(field, unit) for field in (self.low, self.high)]
+        if any(field.fault is not None for field in (self.low, self.high)):
+            return
+        low, high = ends
+        if low is not None and high is not None and not low < high:
+            fault = Fault("", f"{high:g} is not above {low:g}", "a larger value")
+            self.high.show_text(self.high.text(), fault)
+            return
+        self._limits[_scale(self._asked)] = self.map.limits = (low, high)
         self.map.update()
+
+
+def _scale(question: MapQuestion) -> tuple[str, str]:
+    """Return what limits of colours belong to."""
+    return question.quantity, question.power if is_power(question.quantity) else ""
+
+
+def _limit(field: QuietField, unit: str) -> float | None:
+    """Return the limit typed into a field, with or without the unit shown; marks a text that is none."""
+    text = field.text().strip()
+    sign = {"deg": "°"}.get(unit, "")
+    bare = text.removesuffix(unit).removesuffix(sign).strip() if unit else text
+    try:
+        value = parse_measure(bare, Dimension.NUMBER).value if text else None
+    except UnitError as error:
+        field.show_text(text, Fault("", error.message, f"a number in {unit}" if unit else "a number"))
+        return None
+    field.show_text(text)
+    return value

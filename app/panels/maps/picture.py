@@ -1,13 +1,14 @@
 """Draws a map into any painter: the widget, a picture or a page."""
 
 import math
+from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Final
 
 import numpy as np
 import pyqtgraph as pg
 from PySide6.QtCore import QPointF, QRectF, Qt
-from PySide6.QtGui import QColor, QFontMetricsF, QImage, QPainter, QPen
+from PySide6.QtGui import QColor, QFontMetricsF, QImage, QPainter, QPen, QPolygonF
 
 from app.look.theme import Theme
 from app.panels.curves.scale import linear_ticks, logarithmic_ticks
@@ -17,6 +18,10 @@ from stackcore.arrays import FloatArray
 COLOURS: Final = "viridis"
 """Even in lightness, so that it reads in grey, and safe for the colour-blind."""
 LEFT, RIGHT, TOP, BOTTOM = 62, 92, 10, 44
+PROFILE: Final = 52
+"""Height and width of the cuts above the map and beside it."""
+ROOMY: Final = (400, 320)
+"""Least size with cuts."""
 BAR: Final = 14
 
 
@@ -28,6 +33,7 @@ class Frame:
     x: tuple[float, float]
     y: tuple[float, float]
     log: bool
+    cuts: bool = False
 
     def across(self, value: float) -> float:
         """Return the pixel of a number at the horizontal axis."""
@@ -43,12 +49,33 @@ class Frame:
 
 
 def frame_of(drawn: DrawnMap, width: float, height: float) -> Frame:
-    """Return where the map stands in a picture of this size."""
-    area = QRectF(LEFT, TOP, max(width - LEFT - RIGHT, 10), max(height - TOP - BOTTOM, 10))
+    """Return where the map stands in a picture of this size, with room for the cuts when it is roomy."""
+    room = PROFILE if width >= ROOMY[0] and height >= ROOMY[1] else 0
+    wide, high = width - LEFT - RIGHT - room, height - TOP - BOTTOM - room
+    area = QRectF(LEFT, TOP + room, max(wide, 10), max(high, 10))
     y = (float(drawn.y[0]), float(drawn.y[-1]))
     if y[0] == y[1]:
         y = (y[0] - 0.5, y[1] + 0.5)
-    return Frame(area, (float(drawn.x[0]), float(drawn.x[-1])), y, drawn.question.log_frequency)
+    x = (float(drawn.x[0]), float(drawn.x[-1]))
+    return Frame(area, x, y, drawn.question.log_frequency, cuts=bool(room))
+
+
+def cells_of(drawn: DrawnMap, area: QRectF) -> QRectF:
+    """Return where the image lies: each value in the middle of its cell, the first and last at the edges."""
+    rows, columns = drawn.values.shape
+    across = area.width() / max(columns - 1, 1) / 2 if columns > 1 else 0.0
+    down = area.height() / max(rows - 1, 1) / 2 if rows > 1 else 0.0
+    return area.adjusted(-across, -down, across, down)
+
+
+def cell_at(drawn: DrawnMap, area: QRectF, at: QPointF) -> tuple[int, int] | None:
+    """Return row and column of the cell at a pixel, None outside the map."""
+    if not area.contains(at):
+        return None
+    rows, columns = drawn.values.shape
+    across = (at.x() - area.left()) / area.width() * (columns - 1)
+    up = (area.bottom() - at.y()) / area.height() * (rows - 1)
+    return round(up), round(across)
 
 
 def image_of(values: FloatArray, low: float, high: float) -> QImage:
@@ -77,9 +104,15 @@ def paint_map(
     painter.setRenderHint(QPainter.RenderHint.Antialiasing)
     painter.fillRect(QRectF(0, 0, width, height), QColor(theme.base))
     frame = frame_of(drawn, width, height)
-    painter.drawImage(frame.area, image_of(drawn.values, *limits))
+    painter.save()
+    painter.setClipRect(frame.area)
+    painter.drawImage(cells_of(drawn, frame.area), image_of(drawn.values, *limits))
+    painter.restore()
     _axes(painter, drawn, frame, theme)
     _bar(painter, drawn, frame, theme, limits)
+    cell = cursor or worst_cell(drawn)
+    if frame.cuts and cell is not None:
+        _cuts(painter, drawn, frame, theme, limits, cell)
     if drawn.worst is not None:
         at = QPointF(frame.across(drawn.worst[1]), frame.down(drawn.worst[2]))
         painter.setBrush(Qt.BrushStyle.NoBrush)
@@ -92,6 +125,54 @@ def paint_map(
             painter.setPen(QPen(QColor(ink), wide))
             painter.drawLine(QPointF(x, frame.area.top()), QPointF(x, frame.area.bottom()))
             painter.drawLine(QPointF(frame.area.left(), y), QPointF(frame.area.right(), y))
+
+
+def worst_cell(drawn: DrawnMap) -> tuple[int, int] | None:
+    """Return row and column of the worst cell, None where no value is worse than another."""
+    if drawn.worst is None:
+        return None
+    _, x, y = drawn.worst
+    return int(np.argmin(np.abs(drawn.y - y))), int(np.argmin(np.abs(drawn.x - x)))
+
+
+def _cuts(
+    painter: QPainter,
+    drawn: DrawnMap,
+    frame: Frame,
+    theme: Theme,
+    limits: tuple[float, float],
+    cell: tuple[int, int],
+) -> None:
+    """Draw the values along the row and the column of a cell, above the map and beside it, between the limits."""
+    row, column = cell
+    area, (low, high) = frame.area, limits
+    above = QRectF(area.left(), area.top() - PROFILE, area.width(), PROFILE - 6)
+    beside = QRectF(area.right() + 6, area.top(), PROFILE - 6, area.height())
+    painter.setPen(QPen(QColor(theme.line), 1.0))
+    painter.drawLine(above.bottomLeft(), above.bottomRight())
+    painter.drawLine(beside.topLeft(), beside.bottomLeft())
+    painter.setPen(QPen(QColor(theme.text), 1.2))
+    share = np.clip((drawn.values - low) / (high - low if high > low else 1.0), 0.0, 1.0)
+    across = [frame.across(float(x)) for x in drawn.x]
+    _line(painter, across, [above.bottom() - one * above.height() for one in share[row].tolist()])
+    down = [frame.down(float(y)) for y in drawn.y]
+    _line(painter, [beside.left() + one * beside.width() for one in share[:, column].tolist()], down)
+    painter.setPen(QPen(QColor(theme.accent), 1.0, Qt.PenStyle.DotLine))
+    x, y = across[column], down[row]
+    painter.drawLine(QPointF(x, above.top()), QPointF(x, above.bottom()))
+    painter.drawLine(QPointF(beside.left(), y), QPointF(beside.right(), y))
+
+
+def _line(painter: QPainter, xs: Sequence[float], ys: Sequence[float]) -> None:
+    """Draw a line through the points that are numbers."""
+    run: list[QPointF] = []
+    for x, y in zip(xs, ys, strict=True):
+        if math.isfinite(x) and math.isfinite(y):
+            run.append(QPointF(x, y))
+            continue
+        painter.drawPolyline(QPolygonF(run))
+        run = []
+    painter.drawPolyline(QPolygonF(run))
 
 
 def _axes(painter: QPainter, drawn: DrawnMap, frame: Frame, theme: Theme) -> None:
@@ -117,7 +198,8 @@ def _axes(painter: QPainter, drawn: DrawnMap, frame: Frame, theme: Theme) -> Non
 
 def _bar(painter: QPainter, drawn: DrawnMap, frame: Frame, theme: Theme, limits: tuple[float, float]) -> None:
     low, high = limits
-    bar = QRectF(frame.area.right() + 14, frame.area.top(), BAR, frame.area.height())
+    room = PROFILE if frame.cuts else 0
+    bar = QRectF(frame.area.right() + 14 + room, frame.area.top(), BAR, frame.area.height())
     painter.drawImage(bar, image_of(np.linspace(low, high, 256)[:, np.newaxis], low, high))
     line = QFontMetricsF(painter.font()).height()
     painter.setPen(QColor(theme.muted))

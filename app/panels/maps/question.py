@@ -10,16 +10,14 @@ from app.document.view import Power, ViewState
 from app.series.axis import frequency_axis, quantity_axis
 from app.series.shown import shown, shown_unit, shown_values
 from app.series.texts import angle_text, frequency_text, value_text
+from app.series.variation_axis import variation_at, variation_axis, varied_words
 from stackcore.arrays import FloatArray
 from stackcore.job import Job
 from stackcore.polarizations import polarization
 from stackcore.quantities import quantity_named
-from stackcore.studies import MapLevel, Variation, map_over, variations_of, worst
-from stackcore.units import Dimension, format_value
+from stackcore.studies import MapLevel, Variation, map_over, worst
 
 ANGLES: Final = 181
-STEEPEST: Final = 89.5
-"""Degrees; grazing incidence itself is no angle of a plane wave."""
 FREQUENCIES: Final = 601
 VALUES: Final = 121
 
@@ -40,6 +38,8 @@ class MapQuestion:
         Path of what runs upward (see `stackcore.studies.Variation`), empty for the angle.
     angle
         Of incidence, rad, while something else runs upward.
+    low, high
+        Ends of what runs upward, SI.
     """
 
     job: Job
@@ -50,12 +50,13 @@ class MapQuestion:
     log_frequency: bool
     over: str = ""
     angle: float = 0.0
+    low: float = 0.0
+    high: float = 0.0
 
     @property
     def variation(self) -> Variation | None:
         """What runs upward, None for the angle; also when what was chosen is no longer there."""
-        offered = variations_of(self.job, self.stack)
-        return next((one for one in offered if one.path == self.over), None)
+        return variation_at(self.job, self.stack, self.over)
 
     def frequencies(self) -> FloatArray:
         """Return the frequencies of the map in Hz: over the band of the sweep, evenly on its axis."""
@@ -65,26 +66,19 @@ class MapQuestion:
             low, high = low * 0.95, high * 1.05
         return np.geomspace(low, high, FREQUENCIES) if self.log_frequency else np.linspace(low, high, FREQUENCIES)
 
-    def angles(self) -> FloatArray:
-        """Return the angles of the map in rad: those between the sweep's, or nearly all when it has only one."""
-        swept = np.degrees(self.job.sweep.angles())
-        low, high = float(swept.min()), float(swept.max())
-        if low == high:
-            low, high = 0.0, STEEPEST
-        return np.radians(np.linspace(low, high, ANGLES))
-
     def study(self) -> Generator[MapLevel, None, None]:
         """Return the study that answers it."""
         quantity, side, frequency = quantity_named(self.quantity), polarization(self.side), self.frequencies()
         variation = self.variation
         if variation is None:
-            return map_over(self.job, self.stack, quantity, side, frequency, self.angles())
-        values = variation.values(VALUES)
+            angles = np.linspace(self.low, self.high, ANGLES)
+            return map_over(self.job, self.stack, quantity, side, frequency, angles)
+        values = np.linspace(self.low, self.high, VALUES)
         return map_over(self.job, self.stack, quantity, side, frequency, self.angle, variation, values)
 
 
-def question_of(job: Job, stack: int, view: ViewState, over: str) -> MapQuestion:
-    """Return the question of now."""
+def question_of(job: Job, stack: int, view: ViewState, over: str, ends: tuple[float, float]) -> MapQuestion:
+    """Return the question of now, with the ends of what runs upward, SI."""
     return MapQuestion(
         job,
         stack,
@@ -94,6 +88,7 @@ def question_of(job: Job, stack: int, view: ViewState, over: str) -> MapQuestion
         view.log_frequency,
         over,
         view.marker_angle(job.sweep) if over else 0.0,
+        *ends,
     )
 
 
@@ -143,7 +138,8 @@ def drawn(question: MapQuestion, level: MapLevel) -> DrawnMap:
     unit, factor = shown_unit(question.quantity, power=power, frequency=level.x)
     values = shown_values(question.quantity, level.values, power=power, factor=factor)
     across = frequency_axis(level.x, log=question.log_frequency)
-    y, upward = _upward(question, level)
+    upward = variation_axis(question.variation, question.low, question.high)
+    y = upward.numbers(level.y)
     finite = values[np.isfinite(values)]
     low, high = (float(finite.min()), float(finite.max())) if finite.size else (0.0, 1.0)
     end = shown(question.quantity).worst
@@ -160,7 +156,7 @@ def drawn(question: MapQuestion, level: MapLevel) -> DrawnMap:
         level.x * across.factor,
         y,
         values,
-        (across.title, upward, title),
+        (across.title, upward.title, title),
         unit,
         low,
         high,
@@ -169,28 +165,29 @@ def drawn(question: MapQuestion, level: MapLevel) -> DrawnMap:
     )
 
 
-def _upward(question: MapQuestion, level: MapLevel) -> tuple[FloatArray, str]:
-    """Return the numbers at the vertical axis and its title."""
-    variation = question.variation
-    if variation is None:
-        return np.degrees(level.y), "Angle of incidence, deg"
-    unit, factor = _unit(variation)
-    return level.y * factor, f"{variation.label}, {unit}" if unit else variation.label
+def about(shown: DrawnMap) -> str:
+    """Return what a map is of: job, stack, polarization, and the angle where something else runs upward."""
+    question = shown.question
+    record = question.job.record
+    parts = [record.title, record.stacks[question.stack].name, polarization(question.side).label]
+    parts += [angle_text(question.angle)] if question.variation is not None else []
+    return ", ".join(part for part in parts if part)
 
 
-def _unit(variation: Variation) -> tuple[str, float]:
-    """Return the unit that the largest value is readable in, and the factor to it."""
-    if variation.dimension is Dimension.NUMBER:
-        return "", 1.0
-    text = format_value(float(f"{variation.high:.3g}"), variation.dimension)
-    number, _, unit = text.partition(" ")
-    return unit, float(number) / float(f"{variation.high:.3g}") if variation.high else 1.0
+def data_table(shown: DrawnMap) -> str:
+    """Return a map as text with tabs: what it is of, then frequencies across and the other axis down.
+
+    Every number has full precision; a cell that is not computed is ``nan``.
+    """
+    lines = [about(shown), f"{shown.titles[2]}; across: {shown.titles[0]}; down: {shown.titles[1]}"]
+    lines.append("\t".join(["", *map(repr, shown.x.tolist())]))
+    for value, row in zip(shown.y.tolist(), shown.values.tolist(), strict=True):
+        lines.append("\t".join(map(repr, [value, *row])))
+    return "\n".join(lines) + "\n"
 
 
 def _place(question: MapQuestion, level: MapLevel, row: int, column: int) -> str:
     frequency = frequency_text(float(level.x[column]))
     variation = question.variation
-    if variation is None:
-        return f"{frequency}, {angle_text(float(level.y[row]))}"
-    value = format_value(float(f"{level.y[row]:.4g}"), variation.dimension)
-    return f"{frequency}, {variation.label.lower()} {value}"
+    value = varied_words(variation, float(level.y[row]))
+    return f"{frequency}, {value}" if variation is None else f"{frequency}, {variation.label.lower()} {value}"

@@ -14,14 +14,12 @@ from app.series.cuts import (
     Cut,
     CutQuestion,
     Where,
-    axis_of,
     best_words,
     cut_question,
     point_words,
-    unit_of,
-    usual_range,
     where_words,
 )
+from app.series.variation_axis import unit_of, usual_range
 from stackcore.constants import SPEED_OF_LIGHT
 from stackcore.job import Job, job_from_json
 from stackcore.propagation import solve
@@ -138,10 +136,10 @@ def test_a_temperature_runs_in_degrees() -> None:
     """The axis of a temperature is in °C, whatever the solver counts in."""
     path = "materials.sea.temperature"
     question = asked(ViewState(), path, stack=1)
-    title, unit, factor, offset = axis_of(question)
-    assert title.endswith(", °C")
-    assert unit == "°C"
-    assert np.array([question.low, question.high]) * factor + offset == pytest.approx([-10.0, 30.0])
+    axis = question.axis
+    assert axis.title.endswith(", °C")
+    assert axis.unit == "°C"
+    assert axis.numbers(np.array([question.low, question.high])) == pytest.approx([-10.0, 30.0])
     narrow = asked(ViewState(), path, ends=(275.15, 300.15), stack=1)
     cut = whole(narrow)
     assert point_words(cut, cut.curves[0], 0).endswith("at 2 °C")
@@ -157,8 +155,7 @@ def test_every_quantity_has_its_cut(quantity: str, over: str) -> None:
     response = solve(job().stacks[0], 9e9, cut.curves[0].x if not over else job().sweep.angles())
     if not over:
         table = QUANTITIES[quantity].values(response)[0]  # (A, 2)
-        _, _, factor, _ = axis_of(cut.question)
-        assert factor == pytest.approx(180 / math.pi)
+        assert cut.question.axis.factor == pytest.approx(180 / math.pi)
         ratio = [curve.raw[[3, 90, 150]] for curve in cut.curves]
         same = pytest.approx(table[[3, 90, 150]], rel=1e-9, abs=1e-12, nan_ok=True) == np.array(ratio).T
         assert same or cut.curves[0].unit in ("ps", "fs", "ns")

@@ -31,6 +31,7 @@ READABLE = [
     (1e-12, Dimension.CAPACITANCE, "1 pF"),
     (5.8e7, Dimension.CONDUCTIVITY, "58 MS/m"),
     (293.15, Dimension.TEMPERATURE, "20 °C"),
+    (273.15, Dimension.TEMPERATURE, "0 °C"),
     (77.0, Dimension.TEMPERATURE, "77 K"),
     (8e-12, Dimension.TIME, "8 ps"),
     (2.5e-14, Dimension.TIME, "25 fs"),

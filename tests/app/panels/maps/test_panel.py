@@ -18,11 +18,11 @@ from app.document.view import View
 from app.look.pictures import svg_bytes
 from app.look.theme import DARK, LIGHT
 from app.panels.maps.panel import MapPanel
-from app.panels.maps.picture import frame_of, image_of
-from app.panels.maps.question import question_of
+from app.panels.maps.picture import cell_at, cells_of, frame_of, image_of
+from app.panels.sweep.field import QuietField
 from app.window.samples import samples
 from stackcore.errors import Severity
-from stackcore.job import read_job
+from stackcore.job import Job, job_from_json, read_job
 from stackcore.propagation import solve
 
 SVG = "{http://www.w3.org/2000/svg}"
@@ -57,8 +57,7 @@ class Bench:
     def whole(self) -> bool:
         """Whether what is shown is the whole map of the job of now."""
         shown = self.panel.shown
-        wanted = question_of(self.session.job, self.session.selection.stack, self.view.state, self.panel._over)
-        return shown is not None and shown.share == 1 and shown.question == wanted
+        return shown is not None and shown.share == 1 and shown.question == self.panel.asked
 
 
 @pytest.fixture
@@ -160,21 +159,102 @@ def test_cells_are_told_by_mouse_and_keys(bench: Bench) -> None:
     assert view.cell_at(QPointF(0, 0)) is None
 
 
+def _type(bench: Bench, field: QuietField, text: str) -> None:
+    field.setFocus()
+    field.selectAll()
+    QTest.keyClicks(field, text)
+    QTest.keyClick(field, Qt.Key.Key_Return)
+
+
 def test_colours_can_be_typed(bench: Bench) -> None:
-    """Both ends or one; an end that is none, or a range that falls, is told and changes nothing."""
+    """Both ends or one; an end that is none, or a range that falls, stays with its reason and changes nothing."""
     bench.show()
     panel = bench.panel
-    for field, text in ((panel.low, "0.5"), (panel.high, "1")):
-        field.setText(text)
-        field.committed.emit(text)
+    _type(bench, panel.low, "0.5")
+    _type(bench, panel.high, "1")
     assert panel.map.range_shown() == (0.5, 1.0)
-    panel.low.setText("2")
-    panel.low.committed.emit("2")
+    _type(bench, panel.low, "2")
     assert panel.map.range_shown() == (0.5, 1.0)
-    assert "must be below" in bench.told[-1]
-    panel.low.setText("much")
-    panel.low.committed.emit("much")
-    assert "much" in bench.told[-1]
+    assert panel.high.fault is not None
+    assert "is not above" in panel.high.fault.message
+    _type(bench, panel.low, "much")
+    assert panel.low.text() == "much"
+    assert panel.low.fault is not None
+
+
+def test_limits_take_their_unit_and_belong_to_their_quantity(bench: Bench) -> None:
+    """Those of decibels mean nothing to a phase; they come back with the quantity."""
+    bench.view.set(quantity="insertion_loss_dB")
+    bench.show()
+    _type(bench, bench.panel.high, "2.5 dB")
+    assert list(bench.panel.map.limits) == [None, 2.5]
+    bench.view.set(quantity="transmission_phase_deg")
+    bench.settle()
+    assert not any(bench.panel.map.limits)
+    assert bench.panel.high.text() == ""
+    _type(bench, bench.panel.low, "-90°")
+    assert bench.panel.map.limits == (-90.0, None)
+    bench.view.set(quantity="insertion_loss_dB")
+    bench.settle()
+    assert bench.panel.map.limits == (None, 2.5)
+    assert bench.panel.high.text() == "2.5"
+
+
+def test_what_runs_upward_has_typed_ends(bench: Bench) -> None:
+    """With their unit; the map then covers just these."""
+    bench.show()
+    bench.panel.choose_over("stacks[0].elements[0].thickness")
+    bench.settle()
+    low, high = bench.panel.ends.fields
+    _type(bench, low, "8 mm")
+    _type(bench, high, "0.5 in")
+    bench.settle()
+    shown = bench.panel.shown
+    assert shown is not None
+    assert (shown.y[0], shown.y[-1]) == pytest.approx((8.0, 12.7))
+    _type(bench, high, "7 mm")
+    assert high.fault is not None
+    assert bench.panel.shown is shown
+
+
+def test_a_temperature_runs_in_degrees(bench: Bench) -> None:
+    """The axis and the words of a cell are in °C: from 20 K below the present 20 °C to 20 K above.
+
+    Source: the definition of the Celsius scale, t = T − 273.15 K (BIPM, The International System of Units).
+    """
+    text = """{"format": "slabwright-job", "version": 1,
+"materials": {"sea": {"model": "sea-water", "temperature": "20 degC", "salinity": 35}},
+"stacks": [{"name": "Film", "elements": [{"layer": "sea", "thickness": "0.2 mm"}]}],
+"sweep": {"frequency": {"start": "8 GHz", "stop": "12 GHz", "points": 5}, "angle": ["0 deg"]}}"""
+    bench.session.start_from(Job(job_from_json(text)), "open")
+    bench.panel.choose_over("materials.sea.temperature")
+    bench.show()
+    shown = bench.panel.shown
+    assert shown is not None
+    assert shown.titles[1].endswith(", °C")
+    assert (shown.y[0], shown.y[-1]) == pytest.approx((0.0, 40.0), abs=1e-9)
+    assert shown.words_at(0, 0).endswith(" 0 °C")
+    assert shown.words_at(60, 0).endswith(" 20 °C")
+
+
+@pytest.mark.parametrize("size", [(300, 250), (520, 460)])
+def test_cells_marks_and_axes_agree(bench: Bench, size: tuple[int, int]) -> None:
+    """The pixel of each value at the axes lies in the middle of the cell that is told there, also at the edges."""
+    bench.show()
+    shown = bench.panel.shown
+    assert shown is not None
+    frame = frame_of(shown, *size)
+    image = cells_of(shown, frame.area)
+    rows, columns = shown.values.shape
+    for row in (0, 1, rows // 2, rows - 1):
+        for column in (0, 1, columns // 3, columns - 1):
+            at = QPointF(frame.across(float(shown.x[column])), frame.down(float(shown.y[row])))
+            inside = QPointF(min(at.x(), frame.area.right() - 1e-6), min(at.y(), frame.area.bottom() - 1e-6))
+            assert cell_at(shown, frame.area, inside) == (row, column)
+            # The image has its first row at the bottom, each cell as large as the next.
+            middle_x = image.left() + (column + 0.5) * image.width() / columns
+            middle_y = image.bottom() - (row + 0.5) * image.height() / rows
+            assert (middle_x, middle_y) == pytest.approx((at.x(), at.y()), abs=1e-6)
 
 
 def test_data_and_picture_can_be_taken_away(bench: Bench) -> None:
@@ -183,7 +263,10 @@ def test_data_and_picture_can_be_taken_away(bench: Bench) -> None:
     shown = bench.panel.shown
     assert shown is not None
     bench.panel.copy_data()
-    rows = QGuiApplication.clipboard().text().splitlines()
+    whose, what, *rows = QGuiApplication.clipboard().text().splitlines()
+    assert bench.session.record.stacks[0].name in whose
+    assert whose.endswith("TE")
+    assert what == "Transmittance; across: Frequency, GHz; down: Angle of incidence, deg"
     assert len(rows) == shown.values.shape[0] + 1
     assert float(rows[1].split("\t")[5]) == shown.values[0, 4]
     root = ElementTree.fromstring(svg_bytes(bench.panel.picture()))
