@@ -3,7 +3,6 @@
 from collections.abc import Callable, Iterator
 
 import numpy as np
-from scipy.optimize import brentq, minimize_scalar
 
 from app.document.view import Power
 from app.series.curves import Curve
@@ -109,6 +108,8 @@ def _crossing(x: FloatArray, y: FloatArray, level: float, place: int, evaluate: 
     ends = evaluate(low) - level, evaluate(high) - level
     if not np.isfinite(ends).all() or ends[0] * ends[1] > 0:
         return chord
+    from scipy.optimize import brentq  # here, since importing it takes longer than the window
+
     return float(brentq(lambda hertz: evaluate(hertz) - level, low, high, xtol=1e-9 * high))
 
 
@@ -116,6 +117,8 @@ def _finest(x: FloatArray, y: FloatArray, place: int, evaluate: Evaluate | None)
     at = float(x[place])
     if evaluate is None or not 0 < place < len(x) - 1:
         return at
+    from scipy.optimize import minimize_scalar  # here, as above
+
     sign = 1.0 if y[place] <= y[place - 1] else -1.0
     ends = (float(x[place - 1]), float(x[place + 1]))
     answer = minimize_scalar(lambda hertz: sign * evaluate(hertz), bounds=ends, options={"xatol": 1e-7 * ends[1]})

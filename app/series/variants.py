@@ -1,11 +1,12 @@
 """The stacks of a job compared: thickness, mass, cost, and the worst value of what is shown."""
 
 from collections.abc import Generator
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
 from app.document.view import Power, ViewState
+from app.series.cases import Case, conditions_shown
 from app.series.shown import shown, shown_unit, shown_values
 from app.series.texts import angle_text, frequency_text, value_text
 from stackcore.arrays import FloatArray
@@ -67,7 +68,10 @@ class Comparison:
 
 
 def comparing(job: Job, view: ViewState) -> Generator[Comparison, None, None]:
-    """Compare the stacks of `job`, yielding after each all that is known; nothing is done until it is advanced."""
+    """Compare the stacks of `job`, yielding after each all that is known; nothing is done until it is advanced.
+
+    The worst value of each is that of the stack as it is built and under every condition that the view shows.
+    """
     quantity, power = view.quantity, view.power
     if "element_absorptance" in quantity:
         quantity = "absorptance"  # an element of one stack is none of another
@@ -78,16 +82,22 @@ def comparing(job: Job, view: ViewState) -> Generator[Comparison, None, None]:
         for place, stack in enumerate(job.stacks)
     ]
     yield Comparison(quantity, power, tuple(found), unit)
-    for place, stack in enumerate(job.stacks):
-        response = solve(stack, frequency, job.sweep.angles())
-        values = np.stack(
-            [quantity_named(quantity).of(response, polarization(side)) for side in view.polarizations], axis=-1
-        )
-        values = shown_values(quantity, values, power=power, factor=factor)
-        old = found[place]
-        worst = _worst(quantity, unit, values, response.frequency, response.angle, view.polarizations)
-        found[place] = Variant(old.name, old.thickness, old.mass, old.cost, worst)
+    end = shown(quantity).worst
+    for place in range(len(job.stacks)):
+        for condition in ("", *conditions_shown(job.record, view)):
+            response = solve(Case(place, condition).resolved(job), frequency, job.sweep.angles())
+            sides = [quantity_named(quantity).of(response, polarization(side)) for side in view.polarizations]
+            values = shown_values(quantity, np.stack(sides, axis=-1), power=power, factor=factor)
+            worst = _worst(quantity, unit, values, response.frequency, response.angle, view.polarizations)
+            old = found[place]
+            if worst is not None and (old.worst is None or _is_worse(worst, old.worst, end)):
+                where = f"{worst.place}, {condition}" if condition else worst.place
+                found[place] = replace(old, worst=replace(worst, place=where))
         yield Comparison(quantity, power, tuple(found), unit)
+
+
+def _is_worse(one: Worst, other: Worst, end: str | None) -> bool:
+    return one.value > other.value if end == "high" else one.value < other.value
 
 
 def _worst(

@@ -13,11 +13,12 @@ from PySide6.QtCore import QBuffer, QCoreApplication, QEvent, QEventLoop, QIODev
 
 from app.document.session import Session
 from app.document.view import View
+from app.window.beside import BESIDE, Beside
 from app.window.crash_net import CrashNet
 from app.window.main_window import THEME_KEY, MainWindow
 from app.window.open import make_application
 from stackcore.cli.telling import DONE, one_line, tell
-from stackcore.errors import Fault, InputError, SlabwrightError
+from stackcore.errors import Fault, InputError, SlabwrightError, nearest
 from stackcore.job.replacing import replacing
 
 LONGEST_WAIT: Final = 60_000
@@ -26,6 +27,8 @@ SETTLE: Final = 500
 """Milliseconds in which the panels draw in their fine style and movements come to rest."""
 SMALLEST, LARGEST = 320, 8192
 SIZE: Final = "1280x840"
+LISTED: Final = tuple(one for one in BESIDE if one.in_menu)
+"""Panels that can be opened."""
 
 
 class _Parser(argparse.ArgumentParser):
@@ -44,6 +47,13 @@ def parser() -> argparse.ArgumentParser:
     parser.add_argument("--png", metavar="OUT", required=True, help="picture to write")
     parser.add_argument("--size", metavar="WxH", default=SIZE, help=f"size of the window (default {SIZE})")
     parser.add_argument("--scale", metavar="N", default="1", help="pixels a point, 1 to 4 (default 1)")
+    parser.add_argument(
+        "--open",
+        metavar="PANEL",
+        action="append",
+        default=[],
+        help=f"a panel to open beside, more than once if wanted: {', '.join(one.name for one in LISTED)}",
+    )
     parser.add_argument("--dark", action="store_true", help="the dark theme instead of the light one")
     return parser
 
@@ -54,6 +64,7 @@ def main(argv: Sequence[str]) -> int:
         arguments = parser().parse_args(argv)
         width, height = read_size(arguments.size)
         scale = read_scale(arguments.scale)
+        panels = read_panels(arguments.open)
     except SystemExit as end:  # after --help
         return int(end.code or 0)
     except InputError as error:
@@ -63,7 +74,7 @@ def main(argv: Sequence[str]) -> int:
     if scale != 1:
         os.environ["QT_SCALE_FACTOR"] = f"{scale:g}"
     try:
-        content = draw(Path(arguments.job), width, height, dark=arguments.dark)
+        content = draw(Path(arguments.job), width, height, dark=arguments.dark, panels=panels)
         _write(Path(arguments.png), content)
     except SlabwrightError as error:
         return tell(error)
@@ -93,7 +104,20 @@ def read_scale(text: str) -> float:
     return scale
 
 
-def draw(job: Path, width: int, height: int, *, dark: bool = False) -> bytes:
+def read_panels(names: Sequence[str]) -> tuple[Beside, ...]:
+    """Return the panels of some names; raises InputError with every name that is none."""
+    known = {one.name: one for one in LISTED}
+    faults = [
+        Fault("--open", f"{name!r} is no panel{nearest(name, known)}", f"one of {', '.join(known)}")
+        for name in names
+        if name not in known
+    ]
+    if faults:
+        raise InputError(faults)
+    return tuple(known[name] for name in names)
+
+
+def draw(job: Path, width: int, height: int, *, dark: bool = False, panels: Sequence[Beside] = ()) -> bytes:
     """Return the PNG of the main window with the job file `job`.
 
     Parameters
@@ -102,6 +126,8 @@ def draw(job: Path, width: int, height: int, *, dark: bool = False) -> bytes:
         Of the window, in points.
     dark
         Whether to use the dark theme.
+    panels
+        Opened beside the work; what they compute is waited for.
 
     Raises
     ------
@@ -123,6 +149,8 @@ def draw(job: Path, width: int, height: int, *, dark: bool = False) -> bytes:
             window.resize(width, height)
             window.show()
             window.actions_table["view.reset"].trigger()
+            for panel in panels:
+                window.actions_table[f"view.{panel.name}"].trigger()
             _wait(window)
             return _png(window)
         finally:
@@ -167,6 +195,9 @@ def _wait(window: MainWindow) -> None:
     loop.exec()
     if faults:
         raise InputError(faults)
+    while limit.isActive() and any(panel.computing for panel in window.panels.slow):
+        QTimer.singleShot(SETTLE, loop.quit)
+        loop.exec()
     if not limit.isActive():
         seconds = LONGEST_WAIT // 1000
         raise InputError([Fault("sweep", f"no result after {seconds} s", "fewer frequencies or angles")])

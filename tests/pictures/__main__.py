@@ -1,4 +1,4 @@
-"""Draw the window with every sample job, light and dark, small and large; then look at the pictures."""
+"""Draw the window with every sample job and every panel, light and dark, at 1 and 2 pixels a point; then look."""
 
 import argparse
 import subprocess
@@ -6,12 +6,18 @@ import sys
 from collections.abc import Iterator, Sequence
 from pathlib import Path
 
+from app.window.picture import LISTED
+
 HERE = Path(__file__).parent
 SAMPLES = HERE.parents[1] / "app" / "samples"
-SIZES = ("1200x750", "1920x1080", "2560x1440")
+SIZES = (("1200x750", "1"), ("1920x1080", "1"), ("1440x900", "2"))
+PANELS = [one.name for one in LISTED]
 README = {
     "window-light.png": ("weather-radar-cover", "1280x840", "--scale", "2"),
     "window-dark.png": ("coated-window", "1280x840", "--scale", "2", "--dark"),
+    "cuts.png": ("weather-radar-cover", "1280x840", "--scale", "2", "--open", "cuts"),
+    "map.png": ("sandwich-panel", "1280x840", "--scale", "2", "--open", "map", "--dark"),
+    "plane.png": ("flat-absorber", "1280x840", "--scale", "2", "--open", "plane"),
 }
 
 
@@ -24,10 +30,14 @@ def draw(job: Path, out: Path, size: str, *options: str) -> None:
 def every_sample(folder: Path) -> Iterator[Path]:
     """Draw all samples into `folder`, and yield each picture's path."""
     for job in sorted(SAMPLES.glob("*.slabjob")):
-        for size in SIZES:
-            for look, options in (("light", ()), ("dark", ("--dark",))):
-                out = folder / f"{job.stem}-{size}-{look}.png"
-                draw(job, out, size, *options)
+        for look, options in (("light", ()), ("dark", ("--dark",))):
+            for size, scale in SIZES:
+                out = folder / f"{job.stem}-{size}-{scale}x-{look}.png"
+                draw(job, out, size, "--scale", scale, *options)
+                yield out
+            for panel in PANELS:
+                out = folder / f"{job.stem}-{panel}-{look}.png"
+                draw(job, out, "1440x900", "--open", panel, *options)
                 yield out
 
 

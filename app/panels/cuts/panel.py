@@ -123,6 +123,11 @@ class CutsPanel(QWidget):
         ink(self.best, theme.text)
         self.cut_view.set_theme(theme)
 
+    @property
+    def computing(self) -> bool:
+        """Whether something is being computed."""
+        return self._lane.busy
+
     def give_way(self) -> None:
         """Compute nothing for a moment: the curves are asked for."""
         self._lane.give_way()

@@ -173,6 +173,11 @@ class MapPanel(QWidget):
         ink(self.worst, theme.text)
         self.map.update()
 
+    @property
+    def computing(self) -> bool:
+        """Whether something is being computed."""
+        return self._lane.busy
+
     def give_way(self) -> None:
         """Compute nothing for a moment: the curves are asked for."""
         self._lane.give_way()

@@ -19,12 +19,13 @@ _RIGHT: Final = Qt.AlignmentFlag.AlignRight | Qt.AlignmentFlag.AlignVCenter
 _LEFT: Final = Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter
 
 NAME, WORST, DIFFERENCE, THICKNESS, MASS, COST, PLACE = range(7)
+TITLES: Final = ("Stack", "Worst", "Δ", "Thickness", "Mass", "Cost", "At")
 _TIPS: Final = {
     NAME: "Name of the stack; the one in hand is chosen.",
     THICKNESS: "Of all layers, repeats of groups counted.",
     MASS: "By area, from the densities of the materials; at least this much where some give none.",
     COST: "By area, from densities and the prices you gave, in their currency.",
-    WORST: "The worst value of what the curves show, over the sweep and the polarizations shown.",
+    WORST: "The worst value of what the curves show, over the sweep, the polarizations and the conditions shown.",
     PLACE: "Where the worst value is.",
     DIFFERENCE: "The worst value less that of the stack in hand.",
 }
@@ -85,17 +86,21 @@ class VariantsModel(QAbstractTableModel):
         if orientation != Qt.Orientation.Horizontal or section not in _TIPS:
             return None
         match role:
-            case Role.DisplayRole | Role.AccessibleTextRole:
+            case Role.DisplayRole:
+                return TITLES[section]
+            case Role.AccessibleTextRole:
                 return self._title(section)
             case Role.ToolTipRole:
-                return _TIPS[section]
+                return f"{self._title(section)}. {_TIPS[section]}"
             case Role.TextAlignmentRole:
                 return _RIGHT if section in (THICKNESS, MASS, COST, WORST, DIFFERENCE) else _LEFT
         return None
 
     def _title(self, column: int) -> str:
-        worst = f"Worst {quantity_named(self._comparison.quantity).label.lower()}"
-        return ("Stack", worst, "Difference", "Thickness", "Mass", "Cost", "at")[column]
+        """Return the whole title; the header shows a short one."""
+        if column == WORST:
+            return f"Worst {quantity_named(self._comparison.quantity).label.lower()}"
+        return "Place of the worst" if column == PLACE else "Difference" if column == DIFFERENCE else TITLES[column]
 
     def _text(self, row: int, variant: Variant, column: int) -> str:
         worst = variant.worst

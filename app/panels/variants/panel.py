@@ -91,6 +91,11 @@ class VariantsPanel(QWidget):
         fill_palette(self, theme)
         self.table.set_theme(theme)
 
+    @property
+    def computing(self) -> bool:
+        """Whether something is being computed."""
+        return self._lane.busy
+
     def give_way(self) -> None:
         """Compute nothing for a moment: the curves are asked for."""
         self._lane.give_way()
@@ -110,7 +115,8 @@ class VariantsPanel(QWidget):
     def copy_table(self) -> None:
         """Put the table with its header on the clipboard."""
         columns = range(self.model.columnCount())
-        lines = ["\t".join(str(self.model.headerData(column, _ACROSS)) for column in columns)]
+        whole = Qt.ItemDataRole.AccessibleTextRole
+        lines = ["\t".join(str(self.model.headerData(column, _ACROSS, whole)) for column in columns)]
         for row in range(self.model.rowCount()):
             lines.append("\t".join(str(self.model.index(row, column).data()) for column in columns))
         QGuiApplication.clipboard().setText("\n".join(lines) + "\n")
@@ -138,7 +144,7 @@ class VariantsPanel(QWidget):
         if not self.isVisible():
             return
         state, job = self._view.state, self._session.job
-        wanted = (job, state.quantity, state.power, state.polarizations)
+        wanted = (job, state.quantity, state.power, state.polarizations, state.conditions)
         if wanted != self._asked:
             self._asked = wanted
             self._lane.ask(comparing(job, state))

@@ -7,9 +7,11 @@ import sys
 from pathlib import Path
 
 import pytest
+from PySide6.QtGui import QImage
 from pytestqt.qtbot import QtBot
 
 from app.__main__ import main
+from app.window.beside import MAP
 from app.window.picture import LARGEST, draw, read_scale, read_size
 from stackcore.errors import InputError, JobError
 from tests.app.window.scripted import JOB, job_file
@@ -90,6 +92,13 @@ def test_the_picture_is_a_png_of_the_size_asked_for(qtbot: QtBot, tmp_path: Path
     assert light != dark
 
 
+def test_a_panel_beside_is_drawn_whole(qtbot: QtBot, tmp_path: Path) -> None:
+    """The picture waits for the map: its many colours are at the right."""
+    image = QImage.fromData(draw(job_file(tmp_path), 1200, 760, panels=(MAP,)))
+    found = {image.pixel(x, y) for x in range(800, 1190, 3) for y in range(150, 700, 3)}
+    assert len(found) > 100
+
+
 def test_picture_as_a_command_needs_no_display(tmp_path: Path) -> None:
     """The command writes the file and ends with 0; at scale 2 there are twice the pixels each way."""
     png = tmp_path / "picture.png"
@@ -151,6 +160,10 @@ def test_sizes_and_scales_are_read() -> None:
     [
         (["picture"], "the following arguments are required"),
         (["picture", "cover.slabjob", "--png", "a.png", "--size", "big"], "--size: 'big' is not a size"),
+        (
+            ["picture", "cover.slabjob", "--png", "a.png", "--open", "mapp"],
+            "'mapp' is no panel, did you mean 'map'?",
+        ),
         (["picture", "not-there.slabjob", "--png", "a.png"], "not-there.slabjob: No such file or directory"),
         (["not-there.slabjob"], "not-there.slabjob: there is no such file"),
         (["--quick"], "there is no option '--quick'"),

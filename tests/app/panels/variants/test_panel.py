@@ -9,6 +9,7 @@ from PySide6.QtTest import QAbstractItemModelTester
 from pytestqt.qtbot import QtBot
 
 from app.document import edits
+from app.document.condition_edits import PRESETS
 from app.document.document import Cell, Selection
 from app.document.session import Session
 from app.document.view import View
@@ -102,7 +103,8 @@ def test_it_follows_edits_and_the_view(bench: Bench) -> None:
     bench.qtbot.waitUntil(lambda: bench.text(0, WORST) not in ("", before))
     bench.view.set(quantity="insertion_loss_dB")
     bench.qtbot.waitUntil(lambda: bench.text(0, WORST).endswith("dB"))
-    title = bench.panel.model.headerData(WORST, Qt.Orientation.Horizontal)
+    whole = Qt.ItemDataRole.AccessibleTextRole
+    title = bench.panel.model.headerData(WORST, Qt.Orientation.Horizontal, whole)
     assert title == "Worst insertion loss"
 
 
@@ -168,3 +170,34 @@ def test_both_looks_can_be_drawn(bench: Bench) -> None:
         bench.panel.set_theme(theme)
         pictures.append(bench.panel.grab().toImage())
     assert pictures[0] != pictures[1]
+
+
+def test_the_worst_is_over_the_conditions_shown(bench: Bench) -> None:
+    """A film of water makes each stack worse, and its place says so; without the condition it is as before."""
+    bench.show()
+    dry = [one.worst.value for one in bench.panel.model.comparison.variants if one.worst is not None]
+    assert bench.session.apply(edits.add_condition(PRESETS[0])) == ()
+    bench.view.set(conditions=("Wet",))
+
+    def wet() -> bool:
+        found = [one.worst for one in bench.panel.model.comparison.variants]
+        return all(one is not None and one.place.endswith(", Wet") for one in found)
+
+    bench.qtbot.waitUntil(wet, timeout=20_000)
+    for row, before in enumerate(dry):
+        worst = bench.panel.model.comparison.variants[row].worst
+        assert worst is not None
+        job = bench.session.job
+        stack = job.stack_under(row, "Wet")
+        answer = solve(stack, job.sweep.frequencies(), job.sweep.angles()).transmittance.min()
+        assert worst.value == pytest.approx(float(answer), abs=1e-12)
+        assert worst.value < before
+
+
+def test_headers_are_short_and_said_whole(bench: Bench) -> None:
+    """In a narrow panel every column is in sight; a screen reader and a spreadsheet get whole titles."""
+    bench.show()
+    across = Qt.Orientation.Horizontal
+    assert all(len(str(bench.panel.model.headerData(at, across))) <= 9 for at in range(7))
+    bench.panel.copy_table()
+    assert QGuiApplication.clipboard().text().startswith("Stack\tWorst transmittance\tDifference")
