@@ -22,8 +22,8 @@ from stackcore.errors import JobError
 from stackcore.job.codec import job_from_json, job_to_json
 from stackcore.job.resolve import Job
 
-EVERY: Final = 2000
-"""Milliseconds between two writings at least."""
+EVERY: Final = 1500
+"""Milliseconds between two writings at least: with the time a busy machine takes to come round, two seconds."""
 SUFFIX: Final = ".recovery"
 
 
