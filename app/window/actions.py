@@ -123,6 +123,11 @@ class Actions:
             if act.checked is not None:
                 action.setChecked(act.checked())
 
+    def words_and_keys(self, key: str) -> tuple[str, str]:
+        """Return the words of an act and its keys for reading, the latter empty where it has none."""
+        act = next(act for act in self.table if act.key == key)
+        return act.plain_text, keys_text(act.shortcuts)
+
     def chosen(self, menus: Iterable[str], owner: QWidget) -> list[QAction]:
         """Return the actions of some menus in their order, a separator between groups, for a menu beside."""
         found: list[QAction] = []

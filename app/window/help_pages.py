@@ -1,6 +1,7 @@
 """The pages of the help panel, made from the same tables the program works with. No toolkit."""
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Callable, Iterable, Sequence
+from dataclasses import dataclass
 from html import escape
 from typing import Final
 
@@ -13,6 +14,7 @@ PAGES: Final = {
     "conventions": "Conventions and definitions",
     "keyboard": "Keyboard",
     "cautions": "Cautions and limits",
+    "start": "First steps",
     "about": "About",
 }
 """Page name -> heading, in the order of the panel."""
@@ -20,6 +22,78 @@ PAGES: Final = {
 UNIT_WORDS: Final = {"dB": "decibels", "deg": "degrees", "s": "seconds", "ohm": "ohm"}
 
 KeyGroup = tuple[str, Sequence[tuple[str, str]]]
+
+
+@dataclass(frozen=True, slots=True)
+class FirstStep:
+    """What a new user does: a heading, words, and the names of acts whose keys are told."""
+
+    heading: str
+    words: str
+    acts: tuple[str, ...] = ()
+
+
+STEPS: Final = (
+    FirstStep(
+        "Begin with a wall",
+        words=(
+            "Open a sample from the menu File, insert a construction sized for your band and angle, or type the "
+            "stack into the table: one row an element, from the side the wave comes from. Any unit is understood, "
+            "also arithmetic: 2*0.25 mm + 5 mil. A block copied from a spreadsheet is pasted as it is."
+        ),
+        acts=("view.constructions", "edit.add_layer", "edit.paste"),
+    ),
+    FirstStep(
+        "Say what it must be looked at for",
+        words="The line above the curves holds quantity, polarizations, band and angles: click one to change it.",
+    ),
+    FirstStep(
+        "Change it and watch",
+        words="Drag a face in the drawing, or type a thickness: the curves follow. Everything can be undone.",
+        acts=("edit.undo", "edit.redo"),
+    ),
+    FirstStep(
+        "Read it",
+        words=(
+            "Markers give exact values, the ring marks the worst point of all. Keys in the plot: M sets a marker, "
+            "W takes it to the worst point, E to the next extremum, V to a level."
+        ),
+        acts=("markers.add",),
+    ),
+    FirstStep(
+        "Choose",
+        words=(
+            "Cuts and maps show what a thickness or a constant does, and the value at which the worst is best. "
+            "Stacks of one job are compared as variants; conditions show rain, ice, heat or paint as an envelope."
+        ),
+        acts=("view.cuts", "view.map", "view.variants", "view.conditions"),
+    ),
+    FirstStep(
+        "Hand it on",
+        words=(
+            "Tables in full precision, plots and drawings as vectors; the job file gives the same numbers on the "
+            "command line. Read the cautions before anything is built or anybody is exposed."
+        ),
+        acts=("file.export_csv", "file.export_plot", "file.save"),
+    ),
+)
+"""In turn."""
+
+
+def first_steps_page(theme: Theme, keys: Callable[[str], tuple[str, str]]) -> str:
+    """Return the first steps, each with the keys of its acts.
+
+    Parameters
+    ----------
+    keys
+        Gives words and keys of an act by its name.
+    """
+    parts = ["<p>A stack, its drawing and its curves are one thing here: change one and the others follow.</p>"]
+    for number, step in enumerate(STEPS, 1):
+        told = [f"{escape(act)}: {escape(pressed)}" for act, pressed in map(keys, step.acts) if pressed]
+        line = f'<br><span style="color:{theme.muted}">{"; ".join(told)}</span>' if told else ""
+        parts.append(f"<p class='term'>{number}. {escape(step.heading)}</p><p>{escape(step.words)}{line}</p>")
+    return _page("start", parts)
 
 
 def conventions_page(theme: Theme) -> str:

@@ -11,7 +11,13 @@ from app.look.theme import Theme
 
 Page = Callable[[Theme], str]
 
-SHORT: Final = {"conventions": "Definitions", "keyboard": "Keyboard", "cautions": "Cautions", "about": "About"}
+SHORT: Final = {
+    "start": "First steps",
+    "conventions": "Definitions",
+    "keyboard": "Keyboard",
+    "cautions": "Cautions",
+    "about": "About",
+}
 
 
 class HelpPanel(QWidget):

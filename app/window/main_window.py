@@ -207,6 +207,7 @@ class MainWindow(JobWindow):
                 "conventions": help_pages.conventions_page,
                 "keyboard": lambda theme: help_pages.keyboard_page(theme, self._key_groups()),
                 "cautions": lambda theme: help_pages.cautions_page(theme, self._cautions()),
+                "start": lambda theme: help_pages.first_steps_page(theme, self._actions.words_and_keys),
                 "about": lambda theme: help_pages.about_page(theme, version_of("slabwright"), parts()),
             },
             self._theme,

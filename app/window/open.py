@@ -15,6 +15,7 @@ from app.document.view import View
 from app.look.icon import program_icon
 from app.look.settings import open_settings, state_folder
 from app.window.crash_net import CrashNet
+from app.window.first_run import greet
 from app.window.main_window import MainWindow
 from app.window.windows import Windows
 
@@ -53,6 +54,7 @@ def open_window(job: Path | None) -> int:
     windows = Windows(make)
     first = windows.add()
     assert isinstance(first, MainWindow)
+    greet(first, open_settings())
     first.offer_leftovers()
     if job is not None:
         first.open_path(job)

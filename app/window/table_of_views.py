@@ -151,6 +151,7 @@ def help_acts(c: Commands) -> Sequence[Act]:
         return Act(f"help.{name}", menu, text, lambda: c.help.show_page(name), shortcuts, tip, group=group)
 
     return (
+        page("start", "&First steps", (), "From a wall to what is handed on, in six steps."),
         page("conventions", "&Conventions and definitions", ("F1",), "Signs, phases and every quantity defined."),
         page("keyboard", "&Keyboard", ("Ctrl+F1",), "Every key."),
         page("cautions", "C&autions and limits", (), "What the results do not say."),
