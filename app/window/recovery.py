@@ -25,6 +25,7 @@ from stackcore.job.resolve import Job
 EVERY: Final = 1500
 """Milliseconds between two writings at least: with the time a busy machine takes to come round, two seconds."""
 SUFFIX: Final = ".recovery"
+PART: Final = ".part"
 
 
 @dataclass(frozen=True, slots=True)
@@ -51,6 +52,8 @@ class Leftover:
         """Delete what was left."""
         with suppress(OSError):
             self.file.unlink()
+            # A kill between writing and renaming leaves the half of the next one.
+            self.file.with_suffix(PART).unlink(missing_ok=True)
             _lock_file(self.file).unlink(missing_ok=True)
 
 
@@ -96,7 +99,7 @@ class Recovery(QObject):
         }
         try:
             self._lock.tryLock(0)
-            draft = self.file.with_suffix(".part")
+            draft = self.file.with_suffix(PART)
             draft.write_text(json.dumps(content, ensure_ascii=False), encoding="utf-8")
             draft.replace(self.file)
         except OSError as error:

@@ -20,7 +20,7 @@ from app.panels.curves.mark_layers import Spot
 from app.panels.curves.picture import plot_picture
 from app.panels.curves.plot import CurvePlot
 from app.panels.curves.plot_commands import PlotCommands
-from app.panels.curves.scale import FrequencyScale
+from app.panels.curves.scale import WIDE, FrequencyScale
 from app.panels.curves.strips import Strips
 from app.series.axis import frequency_axis, quantity_axis
 from app.series.cases import Case, cases_of
@@ -37,9 +37,6 @@ if TYPE_CHECKING:
     from app.workers.live import Answer
 
 Tell = Callable[[str, Severity], None]
-
-WIDE: Final = 1e5
-"""Ratio of the ends of a logarithmic band from which numbers carry their own unit: 1 kHz ... 1 THz."""
 
 _REACH: Final = 9.0
 DRAWN: Final = (

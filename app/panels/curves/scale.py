@@ -13,6 +13,8 @@ import numpy as np
 
 from stackcore.arrays import FloatArray
 
+WIDE: Final = 1e5
+"""Ratio of the ends of a logarithmic band from which numbers carry their own unit: 1 kHz ... 1 THz."""
 _TINY: Final = 1e-300
 _ROUND: Final = (1.0, 2.0, 5.0, 10.0)
 _TURN_PARTS: Final = (15.0, 30.0, 45.0, 90.0, 180.0, 360.0)

@@ -14,8 +14,10 @@ from app.document.session import Change, Session
 from app.look.theme import Theme
 from app.panels.elements.clipboard import place, read_block, write_block, write_html
 from app.panels.elements.columns import MATERIAL, SHEET_COLUMNS, WHAT
+from app.panels.elements.doubts import Rows, doubts_of
 from app.panels.elements.gestures import add_layer_edit, move_edit, paste_edit
 from app.panels.elements.model import ElementsModel
+from app.panels.elements.paste_preview import PastePreview
 from app.panels.elements.stacks import StackBar
 from app.panels.elements.table import ElementsTable
 from app.panels.tables.words import fault_words
@@ -58,6 +60,7 @@ class ElementsPanel(QWidget):
         self._note.setWordWrap(True)
         self._note.setTextFormat(Qt.TextFormat.PlainText)
         self._note.setContentsMargins(8, 4, 8, 4)
+        self.paste_preview = PastePreview(theme, self)
         self._actions = self._make_actions()
         self._arrange()
         self.setFocusProxy(self._table)
@@ -78,6 +81,7 @@ class ElementsPanel(QWidget):
         """Draw in the colours of `theme` from now on."""
         self._theme = theme
         self._table.set_theme(theme)
+        self.paste_preview.set_theme(theme)
         self._show_note()
 
     def show_answer(self, answer: object) -> None:
@@ -162,7 +166,7 @@ class ElementsPanel(QWidget):
 
         Rows with a header that names the material come in as new elements behind the selected ones. Any other
         block is typed over the cells from the current one on, down and to the right, with new layers where rows
-        are missing.
+        are missing. What it leaves open is asked below the table first.
         """
         block = read_block(QGuiApplication.clipboard().text())
         if not block.rows:
@@ -177,7 +181,19 @@ class ElementsPanel(QWidget):
         pasted = place(block, anchor)
         insert = MATERIAL.name in block.columns or any(texts.get(WHAT.name) for texts in pasted)
         row = index.row() - 1 if on_element and not insert else self._place_behind()
-        self._apply(paste_edit(self._stack, row, pasted, insert=insert))
+        count = len(self._model.stack.elements)
+        typed_over = 0 if insert else max(count - row, 0)
+        stack = self._stack
+
+        def run(rows: Rows) -> None:
+            self._apply(paste_edit(stack, row, rows, insert=insert))
+
+        doubts = doubts_of(pasted, typed_over)
+        if doubts:
+            self.paste_preview.ask(pasted, typed_over, doubts, run, self._table)
+        else:
+            self.paste_preview.close_up()
+            run(pasted)
 
     # Inside
 
@@ -227,6 +243,7 @@ class ElementsPanel(QWidget):
         column.addWidget(self._stacks)
         column.addLayout(bar)
         column.addWidget(self._table, 1)
+        column.addWidget(self.paste_preview)
         column.addWidget(self._note)
 
     def _offer_rare_columns(self) -> None:
@@ -280,6 +297,8 @@ class ElementsPanel(QWidget):
         return 0 if self._table.currentIndex().row() == 0 and self._table.selectionModel().hasSelection() else count
 
     def _follow(self, change: Change) -> None:
+        if change.kind != "select":
+            self.paste_preview.forget()  # the rows it would go to may be others now
         own = change.kind == "select" and change.initiator is self
         if not own:
             self._show_selection(change.selection)

@@ -1,7 +1,7 @@
 """Draws a map into any painter: the widget, a picture or a page."""
 
 import math
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from typing import Final
 
@@ -11,8 +11,9 @@ from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QColor, QFontMetricsF, QImage, QPainter, QPen, QPolygonF
 
 from app.look.theme import Theme
-from app.panels.curves.scale import linear_ticks, logarithmic_ticks
+from app.panels.curves.scale import WIDE, linear_ticks, logarithmic_ticks
 from app.panels.maps.question import DrawnMap
+from app.series.texts import frequency_text
 from stackcore.arrays import FloatArray
 
 COLOURS: Final = "viridis"
@@ -180,7 +181,7 @@ def _axes(painter: QPainter, drawn: DrawnMap, frame: Frame, theme: Theme) -> Non
     line = metrics.height()
     most = max(frame.area.width() / 70, 2)
     painter.setPen(QColor(theme.muted))
-    for value, text in _ticks(frame, most):
+    for value, text in _ticks(drawn, frame, most):
         x = frame.across(value)
         painter.drawLine(QPointF(x, frame.area.bottom()), QPointF(x, frame.area.bottom() + 4))
         box = QRectF(x - 40, frame.area.bottom() + 4, 80, line)
@@ -192,7 +193,9 @@ def _axes(painter: QPainter, drawn: DrawnMap, frame: Frame, theme: Theme) -> Non
         painter.drawText(QRectF(0, y - line / 2, frame.area.left() - 7, line), side, text)
     painter.setPen(QColor(theme.text))
     below = QRectF(frame.area.left(), frame.area.bottom() + 6 + line, frame.area.width(), line)
-    painter.drawText(below, Qt.AlignmentFlag.AlignCenter, drawn.titles[0])
+    spelled = frame.log and frame.x[1] > frame.x[0] * WIDE
+    title = drawn.titles[0].partition(",")[0] if spelled else drawn.titles[0]
+    painter.drawText(below, Qt.AlignmentFlag.AlignCenter, title)
     _upright(painter, 2, frame.area, line, drawn.titles[1])
 
 
@@ -210,13 +213,21 @@ def _bar(painter: QPainter, drawn: DrawnMap, frame: Frame, theme: Theme, limits:
     _upright(painter, bar.right() + 46, frame.area, line, drawn.titles[2])
 
 
-def _ticks(frame: Frame, most: float) -> list[tuple[float, str]]:
-    """Return numbers at the horizontal axis and their texts."""
+def _ticks(drawn: DrawnMap, frame: Frame, most: float) -> list[tuple[float, str]]:
+    """Return numbers at the horizontal axis and their texts; over a very wide band each with its own unit."""
     if not frame.log:
         return _even(*frame.x, most)
     ends = [float(np.log10(end)) for end in frame.x]
-    ticks = logarithmic_ticks(ends[0], ends[1], most)
+    spell = None
+    if frame.x[1] > frame.x[0] * WIDE:
+        factor = float(drawn.x[-1] / drawn.level.x[-1])
+        spell = _speller(factor)
+    ticks = logarithmic_ticks(ends[0], ends[1], most, spell)
     return [(10.0**at, text) for at, text in zip(ticks.major, ticks.texts, strict=True)]
+
+
+def _speller(factor: float) -> Callable[[float], str]:
+    return lambda value: frequency_text(value / factor)
 
 
 def _even(low: float, high: float, most: float) -> list[tuple[float, str]]:

@@ -36,7 +36,9 @@ class Bench:
             self.told.append(text)
 
         self.panel = VariantsPanel(self.session, self.view, LIGHT, tell)
-        self.tester = QAbstractItemModelTester(self.panel.model)
+        self.tester = QAbstractItemModelTester(
+            self.panel.model, QAbstractItemModelTester.FailureReportingMode.Fatal
+        )
         qtbot.addWidget(self.panel)
         self.panel.resize(700, 300)
 
