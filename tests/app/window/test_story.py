@@ -1,14 +1,20 @@
 """The main path of a person who uses no mouse: open, edit, see, take back, export, save."""
 
 import csv
+from functools import partial
 from pathlib import Path
 
 import numpy as np
 import pytest
 from PySide6.QtCore import Qt
-from PySide6.QtWidgets import QApplication
+from PySide6.QtGui import QKeySequence
+from PySide6.QtTest import QTest
+from PySide6.QtWidgets import QApplication, QWidget
 
+from app.window.beside import BESIDE
+from app.window.panels import has_focus
 from stackcore import read_job, solve
+from stackcore.job.records import LayerRecord
 from tests.app.window.conftest import Bench
 from tests.app.window.scripted import job_file
 
@@ -105,3 +111,77 @@ def go_to_the_table(bench: Bench) -> None:
             return
         bench.press(Key.Key_F6)
     raise AssertionError("F6 does not reach the table")
+
+
+@pytest.mark.qt_log_ignore("This plugin does not support", extend=True)
+def test_a_wall_is_built_looked_at_and_kept_by_keys_alone(bench: Bench, tmp_path: Path) -> None:
+    """A layer added, its material and its thickness typed, a marker, every panel beside, and the file saved."""
+    go_to_the_table(bench)
+    count = len(bench.session.record.stacks[0].elements)
+    bench.press(Key.Key_End, CTRL)
+    bench.press(Key.Key_L, CTRL)
+    bench.type("core")
+    bench.press(Key.Key_Return)
+    go_to_the_table(bench)
+    bench.press(Key.Key_Home, CTRL)
+    for _ in range(count + 1):
+        bench.press(Key.Key_Down)
+    column = [shown.name for shown in bench.window.panels.elements.table.elements_model().columns]
+    bench.press(Key.Key_Home)
+    for _ in range(column.index("thickness")):
+        bench.press(Key.Key_Right)
+    bench.type("2*0.25 mm + 5 mil")
+    bench.press(Key.Key_Return)
+    elements = bench.session.record.stacks[0].elements
+    assert len(elements) == count + 1
+    made = elements[count]
+    assert isinstance(made, LayerRecord)
+    assert made.material == "core"
+    assert made.thickness.text == "2*0.25 mm + 5 mil"
+    # 0.5 mm and five thousandths of an inch of 25.4 mm.
+    assert made.thickness.value == pytest.approx(0.5e-3 + 5 * 25.4e-6)
+
+    bench.press(Key.Key_K, CTRL)
+    frequency = active_marker(bench)
+    focus_on(bench, bench.window.panels.curves)
+    bench.press(Key.Key_Right)
+    assert active_marker(bench) > frequency
+
+    for beside in (one for one in BESIDE if one.in_menu):
+        panel = getattr(bench.window.panels, beside.name)
+        press_keys(beside.shortcut)
+        bench.qtbot.waitUntil(panel.isVisible)
+        focus_on(bench, panel)
+        press_keys(beside.shortcut)
+        bench.qtbot.waitUntil(partial(_is_gone, panel))
+
+    saved = tmp_path / "built.slabjob"
+    bench.dialogs.save_paths = [saved]
+    bench.press(Key.Key_S, CTRL)
+    assert read_job(saved).record == bench.session.record
+    assert not bench.session.modified
+
+
+def _is_gone(panel: QWidget) -> bool:
+    return not panel.isVisible()
+
+
+def active_marker(bench: Bench) -> float:
+    """Return the frequency of the marker that keys move, in Hz."""
+    return bench.view.state.markers[bench.view.state.active_marker]
+
+
+def press_keys(keys: str) -> None:
+    """Press a shortcut where the focus is."""
+    focus = QApplication.focusWidget()
+    assert focus is not None
+    QTest.keySequence(focus, QKeySequence(keys))
+
+
+def focus_on(bench: Bench, panel: QWidget) -> None:
+    """Press F6 until the focus is in a panel."""
+    for _ in range(16):
+        if has_focus(panel):
+            return
+        bench.press(Key.Key_F6)
+    raise AssertionError(f"F6 does not reach {type(panel).__name__}")
