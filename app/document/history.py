@@ -11,6 +11,10 @@ MERGE_SECONDS: Final = 1.0
 """Steps with the same `Brief` key no further apart than this become one."""
 
 
+NEAR: Final = 50
+"""Steps to either side of which the documents are kept ready; those further away are records, resolved when met."""
+
+
 @dataclass(frozen=True, slots=True)
 class Brief:
     """A merge key that joins only steps following each other within `MERGE_SECONDS`.
@@ -102,6 +106,7 @@ class History:
         self._position = len(self._steps)
         self._last_push = now
         self._mergeable = True
+        self._thin_out()
 
     def select(self, selection: Selection) -> None:
         """Change what is selected here; that is no step of its own."""
@@ -115,6 +120,7 @@ class History:
         self._position -= 1
         step = self._steps[self._position]
         self._state = step.before
+        self._thin_out()
         return step
 
     def redo(self) -> Step:
@@ -125,7 +131,16 @@ class History:
         step = self._steps[self._position]
         self._position += 1
         self._state = step.after
+        self._thin_out()
         return step
+
+    def _thin_out(self) -> None:
+        """Let far documents be no more than their records: thousands of steps then take little memory."""
+        behind, ahead = self._position - NEAR, self._position + NEAR
+        if behind >= 0:
+            self._steps[behind].before.document.job.forget()
+        if ahead < len(self._steps):
+            self._steps[ahead].after.document.job.forget()
 
     def mark_saved(self) -> None:
         """Remember the job of now as the one that was saved; later steps do not merge over this moment."""

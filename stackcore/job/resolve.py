@@ -60,23 +60,40 @@ class Job:
     """
 
     record: JobRecord
-    stacks: tuple[Stack, ...] = field(init=False, compare=False, repr=False)
-    """In SI units, each ready for `stackcore.propagation.solve`."""
-    media: Mapping[str, AbstractMedium] = field(init=False, compare=False, repr=False)
-    """Name of the material -> medium, ``air`` and ``vacuum`` included."""
-    rows: tuple[tuple[int, ...], ...] = field(init=False, compare=False, repr=False)
-    """For each stack the row of the record that each of its elements came from: groups stand there repeated,
-    disabled elements not at all."""
-    _under: dict[str, "Job"] = field(init=False, compare=False, repr=False)
+    _derived: "_Derived | None" = field(init=False, compare=False, repr=False)
 
     def __post_init__(self) -> None:
-        resolution = resolve(self.record)
-        if resolution.faults:
-            raise JobError(resolution.faults)
-        object.__setattr__(self, "stacks", resolution.stacks)
-        object.__setattr__(self, "media", MappingProxyType(dict(resolution.media)))
-        object.__setattr__(self, "rows", tuple(expanded_rows(stack) for stack in self.record.stacks))
-        object.__setattr__(self, "_under", {})
+        object.__setattr__(self, "_derived", _derive(self.record))
+
+    @property
+    def stacks(self) -> tuple[Stack, ...]:
+        """In SI units, each ready for `stackcore.propagation.solve`."""
+        return self._resolved().stacks
+
+    @property
+    def media(self) -> Mapping[str, AbstractMedium]:
+        """Name of the material -> medium, ``air`` and ``vacuum`` included."""
+        return self._resolved().media
+
+    @property
+    def rows(self) -> tuple[tuple[int, ...], ...]:
+        """For each stack the row of the record that each of its elements came from.
+
+        Groups stand there repeated, disabled elements not at all.
+        """
+        return self._resolved().rows
+
+    def forget(self) -> None:
+        """Let go of what the record resolves to, until somebody asks: for a job that is only kept, as by undo."""
+        object.__setattr__(self, "_derived", None)
+
+    def _resolved(self) -> "_Derived":
+        derived = self._derived
+        if derived is None:
+            # Two threads may both work it out: they find the same.
+            derived = _derive(self.record)
+            object.__setattr__(self, "_derived", derived)
+        return derived
 
     def __reduce__(self) -> tuple[type["Job"], tuple[JobRecord]]:
         # What is derived is derived again in the other process.
@@ -110,7 +127,8 @@ class Job:
             When there is no condition of this name, with the nearest match, or when a stack cannot be computed
             under it.
         """
-        if condition not in self._under:
+        known = self._resolved().under
+        if condition not in known:
             found = self.record.condition(condition)
             if found is None:
                 names = [one.name for one in self.record.conditions]
@@ -119,8 +137,8 @@ class Job:
                     [Fault("conditions", f"there is no condition {condition!r}{near(condition, names)}", allowed)]
                 )
             # Two threads may both work it out: they find the same.
-            self._under[condition] = Job(record_under(self.record, found))
-        return self._under[condition]
+            known[condition] = Job(record_under(self.record, found))
+        return known[condition]
 
     def stack_under(self, stack: int, condition: str) -> Stack:
         """Return a stack as it is under a condition; raises as `under` does."""
@@ -151,6 +169,24 @@ class Job:
             allowed = one_of(known) if known else "it has no states"
             raise JobError([Fault(join("materials", material), f"there is no {what}{near(given, known)}", allowed)])
         return medium_of(in_state(record, state), self.media)
+
+
+@dataclass(frozen=True, slots=True)
+class _Derived:
+    """What a record resolves to, and the jobs under its conditions as far as they were asked for."""
+
+    stacks: tuple[Stack, ...]
+    media: Mapping[str, AbstractMedium]
+    rows: tuple[tuple[int, ...], ...]
+    under: dict[str, Job]
+
+
+def _derive(record: JobRecord) -> _Derived:
+    resolution = resolve(record)
+    if resolution.faults:
+        raise JobError(resolution.faults)
+    rows = tuple(expanded_rows(stack) for stack in record.stacks)
+    return _Derived(resolution.stacks, MappingProxyType(dict(resolution.media)), rows, {})
 
 
 @dataclass(frozen=True, slots=True)
