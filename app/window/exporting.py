@@ -10,12 +10,15 @@ from typing import Final, NamedTuple
 from PySide6.QtCore import QObject, Qt, QTimer, Signal, Slot
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QProgressBar, QPushButton, QWidget
 
+from app.document.session import Session
+from app.document.view import View
 from app.window.crash_net import LOGGER
 from app.window.dialogs import TABLES, Dialogs
 from stackcore.errors import Severity, SlabwrightError
-from stackcore.export import write_csv
+from stackcore.export import write_csv, write_wide_csv
 from stackcore.job.replacing import replacing
 from stackcore.job.resolve import Job
+from stackcore.quantities import element_absorptance
 
 Tell = Callable[[str, Severity], None]
 Steps = Callable[[Job, Path], Generator[float, None, None]]
@@ -29,6 +32,19 @@ def csv_steps(job: Job, path: Path) -> Generator[float, None, None]:
         yield from write_csv(job, stream)
         stream.flush()
         stream.detach()
+
+
+def wide_steps(quantity: str) -> Steps:
+    """Return what writes one quantity of every stack, a column for each stack, angle and polarization."""
+
+    def steps(job: Job, path: Path) -> Generator[float, None, None]:
+        with replacing(path) as file:
+            stream = TextIOWrapper(file, encoding="utf-8", newline="")
+            yield from write_wide_csv(job, stream, quantity)
+            stream.flush()
+            stream.detach()
+
+    return steps
 
 
 PATIENCE: Final = 1000
@@ -68,9 +84,10 @@ class Exporter(QObject):
         tell: Tell,
         steps: Steps,
         parent: QObject | None = None,
+        quantity: Callable[[], str] = lambda: "transmittance",
     ) -> None:
         super().__init__(parent)
-        self._job, self._suggestion, self._steps = job, suggestion, steps
+        self._job, self._suggestion, self._steps, self._quantity = job, suggestion, steps, quantity
         self._dialogs, self._tell = dialogs, tell
         self._thread: threading.Thread | None = None
         self._stop = threading.Event()
@@ -84,13 +101,20 @@ class Exporter(QObject):
         """Ask for a file and begin."""
         self._dialogs.pick_target("Export CSV", self._suggestion(".csv"), (TABLES,), self.start)
 
-    def start(self, path: Path) -> None:
+    def export_wide(self) -> None:
+        """Ask for a file and begin with the table for a spreadsheet: the quantity shown, a column a curve."""
+        steps = wide_steps(self._quantity())
+        suggestion = self._suggestion(".wide.csv")
+        self._dialogs.pick_target("Export wide CSV", suggestion, (TABLES,), lambda path: self.start(path, steps))
+
+    def start(self, path: Path, steps: Steps | None = None) -> None:
         """Begin to write the job as it is now; later edits do not touch it."""
         if self._thread is not None:
             self._tell("An export is still running; cancel it first.", "warning")
             return
         self._stop.clear()
-        self._thread = threading.Thread(target=self._work, args=(self._job(), path), name="CSV export", daemon=True)
+        work = (self._job(), path, self._steps if steps is None else steps)
+        self._thread = threading.Thread(target=self._work, args=work, name="CSV export", daemon=True)
         self._thread.start()
         self.running.emit(True)
 
@@ -105,10 +129,10 @@ class Exporter(QObject):
             self._thread.join()
             self._thread = None
 
-    def _work(self, job: Job, path: Path) -> None:
+    def _work(self, job: Job, path: Path, make: Steps) -> None:
         fault, cancelled = "", False
         try:
-            with contextlib.closing(self._steps(job, path)) as steps:
+            with contextlib.closing(make(job, path)) as steps:
                 for share in steps:
                     if self._stop.is_set():
                         cancelled = True
@@ -137,6 +161,24 @@ class Exporter(QObject):
             self._tell(f"Export of {name} given up; no file was left.", "note")
         else:
             self._tell(f"Exported {name}.", "note")
+
+
+def make_exporter(
+    session: Session,
+    view: View,
+    suggestion: Callable[[str], Path],
+    dialogs: Dialogs,
+    tell: Tell,
+    parent: QObject,
+) -> Exporter:
+    """Return the exporter of a window: of the job of its session, wide tables of the quantity it shows."""
+
+    def quantity() -> str:
+        # An element of one stack is none of another: of all of them there is what they absorb as a whole.
+        name = view.state.quantity
+        return "absorptance" if element_absorptance(name) is not None else name
+
+    return Exporter(lambda: session.job, suggestion, dialogs, tell, csv_steps, parent, quantity)
 
 
 class ProgressLine(QWidget):

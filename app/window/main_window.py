@@ -23,7 +23,7 @@ from app.window.diagnostics import diagnostics, parts, version_of
 from app.window.dialogs import Dialogs, QtDialogs
 from app.window.dropping import dropped_files, open_dropped
 from app.window.editing import ElementQuestions, StackCommands, StructureCommands
-from app.window.exporting import Exporter, ProgressLine, csv_steps
+from app.window.exporting import ProgressLine, make_exporter
 from app.window.files import Files
 from app.window.first_view import first_view
 from app.window.help_pages import KeyGroup
@@ -102,8 +102,8 @@ class MainWindow(JobWindow):
         self._recent = RecentFiles(settings)
         self._dialogs: Dialogs = dialogs if dialogs is not None else QtDialogs(self)
         self._files = Files(session, self._dialogs, self.messages, self._recent, self._others.bring_forward)
-        self._exporter = Exporter(
-            lambda: session.job, self._files.suggestion, self._dialogs, self.messages.tell, csv_steps, self
+        self._exporter = make_exporter(
+            session, view, self._files.suggestion, self._dialogs, self.messages.tell, self
         )
         self._pictures = PictureFiles(self._files.suggestion, self._dialogs, self.messages.tell)
         self._material_files = MaterialFiles(

@@ -87,6 +87,15 @@ def _save(c: Commands) -> Sequence[Act]:
             group=2,
         ),
         Act(
+            "file.export_wide",
+            menu,
+            "Export wide CS&V…",
+            c.exporter.export_wide,
+            tip="Write the quantity shown for a spreadsheet: a row a frequency, a column for each stack and curve.",
+            enabled=c.exporter.idle,
+            group=2,
+        ),
+        Act(
             "file.export_plot",
             menu,
             "Export &plot…",

@@ -172,6 +172,23 @@ def test_10_data_with_units_full_precision_and_all_curves(bench: Bench) -> None:
         assert [float(row[column]) for row in rows[1:]] == curve.raw.tolist()
 
 
+def test_10_a_wide_table_for_a_spreadsheet(bench: Bench, tmp_path: Path) -> None:
+    """A row a frequency, a column a curve, of the quantity that is shown; the numbers are those of the curves."""
+    bench.view.set(quantity="insertion_loss_dB")
+    bench.settle()
+    target = tmp_path / "wide.csv"
+    bench.dialogs.csv_paths = [target]
+    bench.trigger("file.export_wide")
+    bench.qtbot.waitUntil(target.exists, timeout=20_000)
+    with target.open(encoding="utf-8", newline="") as file:
+        head, *rows = csv.reader(file)
+    curve = bench.window.panels.curves.curves[0]
+    assert head[0] == "frequency_Hz"
+    assert head[1].startswith("A TE ")
+    assert head[1].endswith("insertion_loss_dB")
+    assert [float(row[1]) for row in rows] == curve.raw.tolist()
+
+
 def test_11_earlier_runs_are_kept_overlaid_named_and_deleted(bench: Bench) -> None:
     """A variant lies beside the stack in hand under its own name, and goes with it."""
     bench.trigger("stack.duplicate")
