@@ -180,7 +180,8 @@ def _paint_selection(painter: QPainter, layout: WallLayout, theme: Theme, touch:
 
 def _paint_label_grounds(painter: QPainter, layout: WallLayout, theme: Theme) -> None:
     """Take the hatch away where a label will stand; what the wave does is drawn over that."""
-    tints = {slab.row: colour(kind_style(theme, slab.part.kind).tint, 0.9) for slab in layout.slabs}
+    # Opaque: a fill that mixes with what lies below costs several times as much.
+    tints = {slab.row: QColor(kind_style(theme, slab.part.kind).tint) for slab in layout.slabs}
     for label in layout.labels:
         if label.leader is None:
             # Square corners: rounded ones cost as much as all hatches together.

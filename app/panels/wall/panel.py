@@ -43,7 +43,9 @@ if TYPE_CHECKING:
 Tell = Callable[[str, Severity], None]
 
 ANSWER_MS = 24
-"""How long the drawing waits for the answer to an edit before it shows the edit alone."""
+"""How long the drawing waits for the answer to a movement of the hand before it shows the movement alone."""
+TYPED_MS = 60
+"""The same for any other edit: nobody watches the drawing so closely then, and painting twice delays the curves."""
 
 
 class WallPanel(QWidget):
@@ -86,7 +88,7 @@ class WallPanel(QWidget):
         self.setAttribute(Qt.WidgetAttribute.WA_OpaquePaintEvent)
         # An edit is mostly followed by its answer within a frame; painting once for both halves the work.
         self._patience = QTimer(self, singleShot=True, interval=ANSWER_MS)
-        self._patience.timeout.connect(self.update)
+        self._patience.timeout.connect(self._show_now)
         leave_session, leave_view = session.subscribe(self._heard), view.subscribe(self._looked)
         self.destroyed.connect(lambda: (leave_session(), leave_view()))
         self._describe()
@@ -218,8 +220,11 @@ class WallPanel(QWidget):
             self._describe()
             self.update()
         elif not self._patience.isActive():
-            self._describe()
-            self._patience.start()
+            self._patience.start(ANSWER_MS if self._drag is not None else TYPED_MS)
+
+    def _show_now(self) -> None:
+        self._describe()
+        self.update()
 
     def _looked(self, change: ViewChange) -> None:
         self._describe()

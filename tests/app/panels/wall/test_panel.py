@@ -30,6 +30,7 @@ class Desk:
     """A panel with its session and view, and what it said."""
 
     def __init__(self, qtbot: QtBot) -> None:
+        self.qtbot = qtbot
         self.session = Session(sandwich())
         self.view = View()
         self.said: list[tuple[str, Severity]] = []
@@ -394,7 +395,8 @@ def test_the_wall_is_told_in_words(desk: Desk) -> None:
     desk.panel.show_answer(answer_to(desk.session, desk.view))
     assert "reflected" in desk.panel.accessibleDescription()
     desk.session.apply(edits.set_thickness(0, 1, 7e-3))
-    assert "2: Foam core, 7 mm" in desk.panel.accessibleDescription()
+    # With the drawing, a moment later: what is said belongs to what is shown.
+    desk.qtbot.waitUntil(lambda: "2: Foam core, 7 mm" in desk.panel.accessibleDescription())
     desk.key(Qt.Key.Key_Home)
     assert desk.panel.accessibleName() == "Wall drawing, selected 1: Glass-fibre skin, 1 mm"
 
