@@ -5,11 +5,10 @@ from dataclasses import dataclass
 import numpy as np
 
 from app.document.variation_edits import taken
-from app.series.texts import angle_text
 from stackcore.arrays import FloatArray
 from stackcore.job import Job
 from stackcore.studies import Variation, variations_of
-from stackcore.units import Dimension, format_value, parse_measure
+from stackcore.units import Dimension, degrees_of, format_value, parse_measure
 
 STEEPEST: float = float(np.radians(89.5))
 """Largest angle of a study in rad; grazing incidence itself is no angle of a plane wave."""
@@ -74,7 +73,7 @@ def unit_of(dimension: Dimension, size: float) -> str:
 def varied_words(variation: Variation | None, value: float) -> str:
     """Return a value (SI) of what is varied in words: ``9.86 mm``, ``30°``."""
     if variation is None:
-        return angle_text(float(f"{value:.5g}"))
+        return f"{degrees_of(value):.4g}°"
     return format_value(taken(variation, value), variation.dimension)
 
 

@@ -27,27 +27,28 @@ from tests.bench.solver import LAYERS, layers
 from tests.bench.timing import floor_seconds, in_turns
 
 POINTS = 2001
+DRAG_POINTS = 401
 LIMIT_MS = 5000
 
 
-def job() -> Job:
-    """Return the bench's wall as a job: 20 layers, 2001 frequencies, 3 angles."""
+def job(points: int = POINTS) -> Job:
+    """Return the bench's wall as a job: 20 layers, 3 angles, 2001 frequencies or as many as wanted."""
     parts = [(f"m{index}", epsilon, thickness) for index, (epsilon, thickness) in enumerate(layers())]
     materials = tuple(
         MaterialRecord(name, model="constant", constants={"permittivity": epsilon}) for name, epsilon, _ in parts
     )
     elements = tuple(LayerRecord(name, measure(thickness, Dimension.LENGTH)) for name, _, thickness in parts)
-    grid = FrequencyGrid(measure(8e9, Dimension.FREQUENCY), measure(12e9, Dimension.FREQUENCY), POINTS)
+    grid = FrequencyGrid(measure(8e9, Dimension.FREQUENCY), measure(12e9, Dimension.FREQUENCY), points)
     angles = tuple(measure(value, Dimension.ANGLE) for value in (0.0, 0.5, 1.0))
     return Job(JobRecord("Bench", (StackRecord("A", elements),), SweepRecord(grid, angles), materials))
 
 
-def painted_window() -> tuple[MainWindow, Session, Callable[[], None]]:
+def painted_window(points: int = POINTS) -> tuple[MainWindow, Session, Callable[[], None]]:
     """Return the window with the bench's job, its curves painted, its session, and what closes it."""
     folder = tempfile.TemporaryDirectory(prefix="slabwright-bench-")
     make_application()
     session = Session()
-    session.start_from(job(), "bench")
+    session.start_from(job(points), "bench")
     settings = QSettings(str(Path(folder.name) / "settings.ini"), QSettings.Format.IniFormat)
     window = MainWindow(session, View(), settings, Path(folder.name))
     window.resize(1280, 840)
@@ -117,5 +118,27 @@ def report() -> Iterator[str]:
     yield (
         f"edit to painted curves, {LAYERS} layers, {POINTS} points, 3 angles: "
         f"{turns.middle('edit') * 1e3:.1f} ms ({turns.ratio('edit', 'floor'):.1f} floors)"
+    )
+    close()
+    yield from _drag()
+
+
+def _drag() -> Iterator[str]:
+    """Yield how often a second the curves follow a face that is dragged, and that as a ratio to the floor."""
+    window, session, close = painted_window(DRAG_POINTS)
+    state = {"thickness": 1e-3}
+
+    def move() -> float:
+        state["thickness"] += 1e-5
+        begin = perf_counter()
+        session.apply(edits.set_thickness(0, 3, state["thickness"], merge_key="drag"))
+        wait_for_curves(window)
+        return perf_counter() - begin
+
+    move()
+    turns = in_turns(25, floor=lambda: floor_seconds(LAYERS * DRAG_POINTS * 3), move=move)
+    yield (
+        f"dragging a face, {LAYERS} layers, {DRAG_POINTS} points, 3 angles: "
+        f"{1 / turns.middle('move'):.0f} updates a second ({turns.ratio('move', 'floor'):.1f} floors each)"
     )
     close()

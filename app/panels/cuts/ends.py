@@ -8,12 +8,11 @@ from PySide6.QtWidgets import QWidget
 
 from app.look.theme import Theme
 from app.panels.sweep.field import QuietField
-from app.series.texts import angle_text
 from app.series.variation_axis import STEEPEST, usual_range, variation_at
 from stackcore.errors import Fault, JobError, UnitError
 from stackcore.job import Job
 from stackcore.studies import Variation, check_values
-from stackcore.units import Dimension, format_value, parse_measure
+from stackcore.units import Dimension, degrees_of, format_value, parse_measure
 
 TIP: Final = "End of what is varied, with a unit; empty for the usual one."
 
@@ -81,7 +80,7 @@ class EndFields:
 
     def _words(self, value: float) -> str:
         if self._variation is None:
-            return angle_text(float(f"{value:.6g}")).replace("°", " deg")
+            return f"{degrees_of(value):.6g} deg"
         return format_value(value, self._variation.dimension, digits=6)
 
     def _take(self, place: int, text: str) -> None:

@@ -183,8 +183,11 @@ class CutsPanel(QWidget):
             self._session.end_merge()
 
     def showEvent(self, event: QShowEvent) -> None:
-        """Begin to compute."""
+        """Begin to compute; over the thickness of the selected element, until something else was chosen."""
         super().showEvent(event)
+        selection = self._session.selection
+        if not self._over and self.shown is None and selection.rows:
+            self._over = f"stacks[{selection.stack}].elements[{selection.rows[0]}].thickness"
         self._ask()
 
     def hideEvent(self, event: QHideEvent) -> None:

@@ -11,7 +11,7 @@ from PySide6.QtWidgets import QApplication
 from pytestqt.qtbot import QtBot
 
 from app.document import edits
-from app.document.document import Cell
+from app.document.document import Cell, Selection
 from app.document.session import Session
 from app.document.view import View
 from app.look.pictures import svg_bytes
@@ -108,6 +108,8 @@ def test_the_angle_comes_first_and_the_flag_chooses_one(bench: Bench) -> None:
     assert shown is not None
     assert np.degrees([shown.question.low, shown.question.high]) == pytest.approx([0, 55])
     assert bench.panel.plot.bottom_axis.labelText == "Angle of incidence, deg"
+    # Of 55 degrees in radians nothing is left over when it is written in degrees again.
+    assert bench.panel.ends.high.placeholderText() == "55 deg"
     bench.key(Qt.Key.Key_Right)
     assert bench.view.state.active_angle == 1
     (marker,) = bench.panel.plot.marker_layer.markers
@@ -115,6 +117,23 @@ def test_the_angle_comes_first_and_the_flag_chooses_one(bench: Bench) -> None:
     bench.key(Qt.Key.Key_Right, Qt.KeyboardModifier.ControlModifier)
     assert bench.view.state.active_angle == 3
     assert not bench.panel.take_best.isVisible()
+
+
+def test_it_begins_with_the_element_in_hand(bench: Bench) -> None:
+    """With an element selected its thickness runs along the axis at first; afterwards what was chosen stays."""
+    bench.session.select(Selection(0, (0,)))
+    bench.show()
+    shown = bench.panel.shown
+    assert shown is not None
+    assert shown.question.over == THICKNESS
+    bench.panel.choose_over("")
+    bench.settle()
+    bench.panel.hide()
+    bench.panel.show()
+    bench.settle()
+    shown = bench.panel.shown
+    assert shown is not None
+    assert not shown.question.over
 
 
 def test_dragging_the_flag_changes_the_stack_in_one_step(bench: Bench) -> None:
