@@ -10,6 +10,7 @@ from app.series.cases import Case, conditions_shown
 from app.series.shown import shown, shown_unit, shown_values
 from app.series.texts import angle_text, frequency_text, value_text
 from stackcore.arrays import FloatArray
+from stackcore.errors import JobError
 from stackcore.job import Job
 from stackcore.job.mass import Sum, cost_per_area, mass_per_area
 from stackcore.polarizations import polarization
@@ -83,9 +84,16 @@ def comparing(job: Job, view: ViewState) -> Generator[Comparison, None, None]:
     ]
     yield Comparison(quantity, power, tuple(found), unit)
     end = shown(quantity).worst
+    failed: list[list[str]] = [[] for _ in job.stacks]
     for place in range(len(job.stacks)):
         for condition in ("", *conditions_shown(job.record, view)):
-            response = solve(Case(place, condition).resolved(job), frequency, job.sweep.angles())
+            try:
+                stack = Case(place, condition).resolved(job)
+            except JobError:
+                if condition not in failed[place]:
+                    failed[place].append(condition)
+                continue
+            response = solve(stack, frequency, job.sweep.angles())
             sides = [quantity_named(quantity).of(response, polarization(side)) for side in view.polarizations]
             values = shown_values(quantity, np.stack(sides, axis=-1), power=power, factor=factor)
             worst = _worst(quantity, unit, values, response.frequency, response.angle, view.polarizations)
@@ -93,6 +101,10 @@ def comparing(job: Job, view: ViewState) -> Generator[Comparison, None, None]:
             if worst is not None and (old.worst is None or _is_worse(worst, old.worst, end)):
                 where = f"{worst.place}, {condition}" if condition else worst.place
                 found[place] = replace(old, worst=replace(worst, place=where))
+        worst_of = found[place].worst
+        if failed[place] and worst_of is not None:
+            told = f"{worst_of.place}; not computed: {', '.join(failed[place])}"
+            found[place] = replace(found[place], worst=replace(worst_of, place=told))
         yield Comparison(quantity, power, tuple(found), unit)
 
 

@@ -19,7 +19,7 @@ from app.panels.curves.picture import plot_picture
 from app.panels.cuts.copying import data_table
 from app.panels.cuts.ends import EndFields
 from app.panels.cuts.view import CutView
-from app.panels.materials.pieces import button, ink
+from app.panels.materials.pieces import Line, button, ink
 from app.panels.sweep.field import QuietChoice
 from app.panels.sweep.flow import FlowLayout
 from app.series.cuts import (
@@ -81,7 +81,7 @@ class CutsPanel(QWidget):
         self.copy = button(self, "Copy data", "Put the curves on the clipboard as a table.", self.copy_data)
         self.cut_view = CutView(theme, self)
         self.plot = self.cut_view.plot
-        self.state, self.best = QLabel(self), QLabel(self)
+        self.state, self.best = QLabel(self), Line(self)
         self.take_best = button(self, "Take it", BEST_TIP, self.to_best)
         self.commands = self._commands()
         self._words: list[QLabel] = []
@@ -209,9 +209,8 @@ class CutsPanel(QWidget):
             flow.addWidget(_side_by_side(head, parts))
         foot = QHBoxLayout()
         foot.setContentsMargins(0, 0, 0, 0)
-        foot.addWidget(self.best)
+        foot.addWidget(self.best, 1)
         foot.addWidget(self.take_best)
-        foot.addStretch(1)
         foot.addWidget(self.state)
         whole = QVBoxLayout(self)
         whole.setContentsMargins(8, 4, 4, 4)

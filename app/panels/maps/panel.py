@@ -15,7 +15,7 @@ from app.panels.curves.drawing import fill_palette
 from app.panels.cuts.ends import EndFields
 from app.panels.maps.picture import cell_at, frame_of, paint_map
 from app.panels.maps.question import DrawnMap, MapQuestion, about, data_table, drawn, question_of
-from app.panels.materials.pieces import button, ink
+from app.panels.materials.pieces import Line, button, ink
 from app.panels.sweep.field import QuietChoice, QuietField
 from app.panels.sweep.flow import FlowLayout
 from app.series.axis import is_power
@@ -140,7 +140,7 @@ class MapPanel(QWidget):
         self.ends = EndFields(theme, self._ask, self)
         self._limits: dict[tuple[str, str], tuple[float | None, float | None]] = {}
         self._words: list[QLabel] = []
-        self.state, self.worst = QLabel(self), QLabel(self)
+        self.state, self.worst = QLabel(self), Line(self)
         self.map = MapView(theme, self)
         self.copy = button(self, "Copy data", "Put the map on the clipboard as a table.", self.copy_data)
         self._arrange()
@@ -226,14 +226,13 @@ class MapPanel(QWidget):
         head = QWidget(self)
         flow = FlowLayout(head, across=8, down=2)
         low, high = self.ends.fields
-        for parts in (("Over frequency and", self.over), ("from", low, "to", high)):
+        for parts in (("Frequency and", self.over), ("from", low, "to", high)):
             flow.addWidget(self._group(head, parts))
         flow.addWidget(self._group(head, ("colours from", self.low, "to", self.high)))
         flow.addWidget(self.copy)
         foot = QHBoxLayout()
         foot.setContentsMargins(8, 0, 8, 4)
-        foot.addWidget(self.worst)
-        foot.addStretch(1)
+        foot.addWidget(self.worst, 1)
         foot.addWidget(self.state)
         whole = QVBoxLayout(self)
         whole.setContentsMargins(0, 4, 0, 0)

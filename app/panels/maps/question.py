@@ -19,6 +19,8 @@ from stackcore.studies import MapLevel, Variation, map_over, worst
 
 ANGLES: Final = 181
 FREQUENCIES: Final = 601
+GRAIN: Final = 1e-9
+"""Of the values; what differs by less is the same."""
 VALUES: Final = 121
 
 
@@ -142,6 +144,10 @@ def drawn(question: MapQuestion, level: MapLevel) -> DrawnMap:
     y = upward.numbers(level.y)
     finite = values[np.isfinite(values)]
     low, high = (float(finite.min()), float(finite.max())) if finite.size else (0.0, 1.0)
+    if high - low <= GRAIN * max(abs(low), abs(high)):
+        # Rounding errors are no pattern: a map of one value has one colour.
+        pad = max(abs(high) * 1e-3, 1e-12)
+        low, high = low - pad, high + pad
     end = shown(question.quantity).worst
     place = worst(level, "high" if end == "low" else "low") if end is not None else None
     told = None

@@ -3,8 +3,8 @@
 from collections.abc import Callable
 
 from PySide6.QtCore import Qt
-from PySide6.QtGui import QColor, QPalette
-from PySide6.QtWidgets import QHBoxLayout, QLabel, QToolButton, QVBoxLayout, QWidget
+from PySide6.QtGui import QColor, QPainter, QPaintEvent, QPalette
+from PySide6.QtWidgets import QHBoxLayout, QLabel, QSizePolicy, QToolButton, QVBoxLayout, QWidget
 
 from app.look.palette import heading_font
 
@@ -59,3 +59,25 @@ def button(owner: QWidget, text: str, tip: str, run: Callable[[], None]) -> QToo
     plain.setAutoRaise(True)
     plain.clicked.connect(lambda _checked=False: run())
     return plain
+
+
+class Line(QLabel):
+    """A line of words that never makes its panel wider: what has no room is cut, and whole in the tooltip."""
+
+    def __init__(self, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self.setTextFormat(Qt.TextFormat.PlainText)
+        self.setSizePolicy(QSizePolicy.Policy.Ignored, QSizePolicy.Policy.Fixed)
+
+    def setText(self, text: str) -> None:
+        """Show a text."""
+        super().setText(text)
+        self.setToolTip(text)
+        self.setVisible(bool(text))
+
+    def paintEvent(self, event: QPaintEvent) -> None:
+        """Draw as much of it as there is room for."""
+        painter = QPainter(self)
+        painter.setPen(self.palette().color(self.foregroundRole()))
+        words = painter.fontMetrics().elidedText(self.text(), Qt.TextElideMode.ElideRight, self.width())
+        painter.drawText(self.rect(), Qt.AlignmentFlag.AlignVCenter | Qt.AlignmentFlag.AlignLeft, words)

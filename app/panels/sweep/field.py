@@ -148,6 +148,10 @@ class QuietField(QLineEdit):
         self.update()
 
 
+LONGEST_CHOICE: Final = 216
+"""Pixels of the words of a choice; longer ones are cut, and whole in the list and the tooltip."""
+
+
 class QuietChoice(QComboBox):
     """A choice that reads as a word with a small arrow; the mouse wheel never changes it."""
 
@@ -177,10 +181,11 @@ class QuietChoice(QComboBox):
     def sizeHint(self) -> QSize:
         """Return the room of the present choice."""
         metrics = QFontMetrics(self.font())
-        return QSize(metrics.horizontalAdvance(self.currentText()) + 2 * _SIDE + 15, metrics.height() + 8)
+        words = min(metrics.horizontalAdvance(self.currentText()), LONGEST_CHOICE)
+        return QSize(words + 2 * _SIDE + 15, metrics.height() + 8)
 
     def minimumSizeHint(self) -> QSize:
-        """Return the same: a choice is not cut."""
+        """Return the same: a choice is not cut, but for one that would push everything else aside."""
         return self.sizeHint()
 
     def wheelEvent(self, event: QWheelEvent) -> None:
@@ -194,7 +199,9 @@ class QuietChoice(QComboBox):
         ink = self._theme.text if self.isEnabled() else self._theme.edge
         painter.setPen(QColor(ink))
         room = QRectF(self.rect()).adjusted(_SIDE, 0, -15, 0)
-        painter.drawText(room, Qt.AlignmentFlag.AlignVCenter | Qt.AlignmentFlag.AlignLeft, self.currentText())
+        wide = round(room.width()) + 1
+        words = painter.fontMetrics().elidedText(self.currentText(), Qt.TextElideMode.ElideRight, wide)
+        painter.drawText(room, Qt.AlignmentFlag.AlignVCenter | Qt.AlignmentFlag.AlignLeft, words)
         draw_arrow(painter, self.rect(), self._theme)
         draw_underline(painter, self.rect(), self._theme, lit(self), False)
 

@@ -5,7 +5,7 @@ from typing import Final
 from PySide6.QtCore import QAbstractTableModel, QModelIndex, QObject, QPersistentModelIndex, Qt
 
 from app.panels.tables.delegate import Ask
-from app.series.texts import exact_text
+from app.series.texts import MINUS, exact_text
 from app.series.variants import Comparison, Variant
 from stackcore.job.mass import Sum
 from stackcore.quantities import quantity_named
@@ -108,7 +108,7 @@ class VariantsModel(QAbstractTableModel):
             gap = self._comparison.difference(row, self._in_hand)
             if gap is None:
                 return "in hand" if row == self._in_hand else ""
-            return exact_text(float(f"{gap:.4g}"), self._comparison.unit)
+            return exact_text(float(f"{gap:.4g}"), self._comparison.unit).replace("-", MINUS)
         return {
             NAME: variant.name,
             WORST: worst.text if worst is not None else "",
@@ -128,6 +128,8 @@ def _sum_text(found: Sum, unit: str) -> str:
 
 
 def _tip(variant: Variant, column: int) -> str:
+    if column == NAME:
+        return variant.name
     unknown = {MASS: variant.mass.unknown, COST: variant.cost.unknown}.get(column, ())
     if unknown:
         what = "density" if column == MASS else "density or price"

@@ -17,7 +17,7 @@ from app.panels.curves.drawing import fill_palette
 from app.panels.materials.pieces import button
 from app.panels.tables.delegate import Index, QuietDelegate
 from app.panels.tables.table import QuietTable
-from app.panels.variants.model import VariantsModel
+from app.panels.variants.model import NAME, VariantsModel
 from app.series.variants import Comparison, comparing
 from app.workers.batch import BatchFailure, BatchLane, BatchStep
 from stackcore.errors import Severity
@@ -25,6 +25,8 @@ from stackcore.errors import Severity
 Tell = Callable[[str, Severity], None]
 
 AIR: Final = 20
+LONGEST_NAME: Final = 150
+"""Pixels of the name of a stack; a longer one is cut, and whole in its tip."""
 _ACROSS: Final = Qt.Orientation.Horizontal
 
 
@@ -161,7 +163,8 @@ class VariantsPanel(QWidget):
         """Give each column the room of its widest text, and a little air."""
         self.table.resizeColumnsToContents()
         for column in range(self.model.columnCount()):
-            self.table.setColumnWidth(column, self.table.columnWidth(column) + AIR)
+            widest = LONGEST_NAME if column == NAME else 10_000
+            self.table.setColumnWidth(column, min(self.table.columnWidth(column) + AIR, widest))
 
     def _fail(self, failure: BatchFailure) -> None:
         for fault in failure.faults[:1]:

@@ -311,3 +311,30 @@ def test_a_logarithmic_axis_spaces_by_ratio(bench: Bench) -> None:
     assert shown.x[300] == pytest.approx(np.sqrt(8 * 11), rel=1e-9)
     frame = frame_of(shown, 500, 400)
     assert frame.across(float(np.sqrt(8 * 11))) == pytest.approx(frame.area.center().x())
+
+
+def test_rounding_errors_are_no_pattern(bench: Bench) -> None:
+    """A wall of nothing passes everything everywhere: its map has one colour."""
+    bench.session.apply(edits.delete(0, (0,)))
+    bench.show()
+    shown = bench.panel.shown
+    assert shown is not None
+    assert shown.high - shown.low > 1e-6
+    image = image_of(shown.values, shown.low, shown.high)
+    colours = {image.pixel(x, y) for x in range(0, image.width(), 7) for y in range(0, image.height(), 7)}
+    assert len(colours) <= 2
+
+
+def test_long_names_leave_the_panel_its_width(bench: Bench) -> None:
+    """The name of a material makes neither the choice nor the panel too wide; tip and list have it whole."""
+    text = """{"format": "slabwright-job", "version": 1,
+"materials": {"a": {"model": "constant", "permittivity": 4.0, "loss_tangent": 0.01,
+                    "label": "A laminate of very many words, each of them needed to tell it from the others"}},
+"stacks": [{"name": "Wall", "elements": [{"layer": "a", "thickness": "2 mm"}]}],
+"sweep": {"frequency": {"start": "8 GHz", "stop": "12 GHz", "points": 5}, "angle": ["0 deg"]}}"""
+    bench.session.start_from(Job(job_from_json(text)), "open")
+    bench.panel.choose_over("materials.a.loss_tangent")
+    bench.show()
+    assert "each of them needed" in bench.panel.over.currentText()
+    assert bench.panel.minimumSizeHint().width() <= 360
+    assert "each of them needed" in bench.panel.worst.toolTip()

@@ -12,14 +12,14 @@ from app.document import edits
 from app.document.condition_edits import PRESETS
 from app.document.document import Cell, Selection
 from app.document.session import Session
-from app.document.view import View
+from app.document.view import View, ViewState
 from app.look.theme import DARK, LIGHT
 from app.panels.variants.model import DIFFERENCE, MASS, NAME, PLACE, THICKNESS, WORST
 from app.panels.variants.panel import VariantsPanel
 from app.series.variants import comparing
 from app.window.samples import samples
 from stackcore.errors import Severity
-from stackcore.job import read_job
+from stackcore.job import Job, job_from_json, read_job
 from stackcore.propagation import solve
 
 
@@ -203,3 +203,17 @@ def test_headers_are_short_and_said_whole(bench: Bench) -> None:
     assert all(len(str(bench.panel.model.headerData(at, across))) <= 9 for at in range(7))
     bench.panel.copy_table()
     assert QGuiApplication.clipboard().text().startswith("Stack\tWorst transmittance\tDifference")
+
+
+def test_a_condition_that_cannot_be_computed_is_named(bench: Bench) -> None:
+    """Where a front half-space would absorb, the other figures stand and the condition is told."""
+    text = """{"format": "slabwright-job", "version": 1,
+"materials": {"ice": {"model": "constant", "permittivity": 3.2, "states": {"thawing": {"loss_tangent": 0.3}}}},
+"stacks": [{"name": "Under ice", "front": "ice", "elements": [{"layer": "ice", "thickness": "2 mm"}]}],
+"conditions": [{"name": "Thaw", "states": ["thawing"]}],
+"sweep": {"frequency": ["10 GHz"], "angle": ["0 deg"]}}"""
+    job = Job(job_from_json(text))
+    *_, last = comparing(job, ViewState(conditions=("Thaw",)))
+    worst = last.variants[0].worst
+    assert worst is not None
+    assert worst.place.endswith("not computed: Thaw")
