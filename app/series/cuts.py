@@ -1,29 +1,35 @@
 """Cuts: a quantity over the angle, or over one number of the stack, at the marker or at the worst of the band."""
 
+import contextlib
 from collections.abc import Generator, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Final, Literal
 
 import numpy as np
 
 from app.document.view import Power, ViewState
+from app.series.cases import conditions_shown
 from app.series.curves import Curve, curve_label, worst_point
 from app.series.shown import shown, shown_unit, shown_values
 from app.series.texts import frequency_text, value_text
 from app.series.validity import doubts_of, held_by_all
 from app.series.variation_axis import VariationAxis, variation_at, variation_axis, varied_words
 from stackcore.arrays import FloatArray
+from stackcore.errors import JobError
 from stackcore.job import Job
 from stackcore.polarizations import polarization
 from stackcore.propagation import Response, solve
-from stackcore.quantities import quantity_named
-from stackcore.studies import Variation, check_values, curve_over
+from stackcore.quantities import element_absorptance, quantity_named
+from stackcore.stack import Stack
+from stackcore.studies import Variation, check_values, varied, varied_stack
+from stackcore.studies.pacing import Pace
 
 Where = Literal["marker", "band"]
 """At the frequency of a marker, or at the frequency of the band where each value is worst."""
 
 POINTS: Final = 201
-BAND_POINTS: Final = 101
+_WORST: Final = 1e300
+BAND_POINTS: Final = 601
 """Frequencies at which the worst of the band is looked for, unless the sweep has fewer."""
 
 
@@ -47,6 +53,8 @@ class CutQuestion:
         Of the curves in Hz: the markers', or those of the band.
     angles
         Of the curves in rad, while something else than the angle is varied.
+    conditions
+        Over which each curve has an envelope; the best value is best for all of them.
     """
 
     job: Job
@@ -60,6 +68,7 @@ class CutQuestion:
     where: Where
     frequencies: tuple[float, ...]
     angles: tuple[float, ...]
+    conditions: tuple[str, ...] = ()
 
     @property
     def variation(self) -> Variation | None:
@@ -108,36 +117,62 @@ class Cut:
         Each over the values computed so far: `Curve.x` is SI, in the order of the axis.
     share
         Of the values that are computed.
+    refined
+        The best value (SI) between the points and the worst there; None before it is looked for.
     """
 
     question: CutQuestion
     curves: tuple[Curve, ...]
     share: float
+    refined: tuple[float, float] | None = None
 
     def best(self) -> tuple[float, float] | None:
         """Return the value (SI) at which the worst of all curves is best, and that worst; None where none is.
 
-        Of equal ones the first; infinitely good values count.
+        Where the worst reads the same everywhere there is nothing to choose. Infinitely good values count.
 
         Source: the minimax choice of any design for limits; no formula.
         """
+        worst = self.worst()
+        if worst is None:
+            return None
+        ends = (float(np.nanmin(worst)), float(np.nanmax(worst)))
+        unit = self.curves[0].unit
+        if len({value_text(self.question.quantity, end, unit) for end in ends}) < len(ends):
+            return None
+        if self.refined is not None:
+            return self.refined
+        place = self.best_place(worst)
+        return float(self.curves[0].x[place]), float(worst[place])
+
+    def worst(self) -> FloatArray | None:
+        """Return at each point the worst value of all curves and conditions; None where no value is worse."""
         end = shown(self.question.quantity).worst
         if end is None or not self.curves or not self.curves[0].x.size:
             return None
-        raw = np.stack([curve.raw for curve in self.curves])
-        known = ~np.isnan(raw).any(axis=0)
+        lines = [line for curve in self.curves for line in (curve.raw, curve.low, curve.high) if line is not None]
+        values = np.stack(lines)
+        known = ~np.isnan(values).any(axis=0)
         if not known.any():
             return None
-        worst = raw.min(axis=0) if end == "low" else -raw.max(axis=0)
-        place = int(np.argmax(np.where(known, worst, -np.inf)))
-        return float(self.curves[0].x[place]), float(worst[place] if end == "low" else -worst[place])
+        return np.where(known, values.min(axis=0) if end == "low" else values.max(axis=0), np.nan)
+
+    def best_place(self, worst: FloatArray) -> int:
+        """Return the point at which `worst` is best, the first of equal ones."""
+        return int(np.nanargmax(worst) if shown(self.question.quantity).worst == "low" else np.nanargmin(worst))
 
 
 def cut_question(
     job: Job, stack: int, view: ViewState, over: str, ends: tuple[float, float], where: Where
 ) -> CutQuestion:
-    """Return the question of now."""
+    """Return the question of now.
+
+    Its job has what is varied at the lower end, so that the question stays the same while that is dragged.
+    """
     variation = variation_at(job, stack, over)
+    if variation is not None:
+        with contextlib.suppress(JobError):
+            job = varied(job, variation, ends[0])
     band = where == "band" and shown(view.quantity).worst is not None
     if band:
         frequencies: Sequence[float] = _band(job).tolist()
@@ -156,6 +191,7 @@ def cut_question(
         "band" if band else "marker",
         tuple(frequencies),
         () if variation is None else tuple(job.sweep.angles().tolist()),
+        conditions_shown(job.record, view) if element_absorptance(view.quantity) is None else (),
     )
 
 
@@ -173,8 +209,11 @@ def best_words(cut: Cut) -> str:
     value, worst = found
     unit = cut.curves[0].unit
     told = value_text(cut.question.quantity, worst, unit)
-    what = "worst of the curves" if len(cut.curves) > 1 else "value"
-    return f"Best {cut.question.words(value)}: {what} {told}"
+    what = "worst of the curves" if len(cut.curves) > 1 or cut.question.conditions else "value"
+    question = cut.question
+    step = (question.high - question.low) / (POINTS - 1)
+    near = min(value - question.low, question.high - value) < step / 2
+    return f"Best {question.words(value)}: {what} {told}{', at the end of the range' if near else ''}"
 
 
 def where_words(question: CutQuestion) -> str:
@@ -195,51 +234,104 @@ def _band(job: Job) -> FloatArray:
 
 def _over_angle(question: CutQuestion) -> Generator[Cut, None, None]:
     angles = question.values()
-    response = solve(question.job.stacks[question.stack], np.array(question.frequencies), angles)
+    frequency = np.array(question.frequencies)
+    stacks = _stacks(question, question.job)
+    responses = [solve(stack, frequency, angles) for stack in stacks]
+    known = held_by_all(doubts_of(stacks[0], frequency), frequency)
     curves = []
     for key in question.polarizations:
-        table = _values(question, response, key)  # (F, A)
-        known = held_by_all(doubts_of(response.stack, response.frequency), response.frequency)
+        tables = np.stack([_values(question, response, key) for response in responses])  # (C, F, A)
         if question.where == "band":
             label, held = polarization(key).label, bool(known.all())
-            curves.append(_curve(question, key, label, (0, 1), angles, _worst_of(question, table), held))
+            cases = np.stack([_worst_of(question, table) for table in tables])
+            curves.append(_curve(question, key, label, (0, 1), angles, cases, held))
             continue
         count = len(question.frequencies)
         for rank, hertz in enumerate(question.frequencies):
             label = f"{polarization(key).label} {frequency_text(hertz)}"
-            curves.append(_curve(question, key, label, (rank, count), angles, table[rank], bool(known[rank])))
+            curves.append(_curve(question, key, label, (rank, count), angles, tables[:, rank], bool(known[rank])))
     yield Cut(question, tuple(curves), 1.0)
 
 
 def _over_variation(question: CutQuestion, variation: Variation) -> Generator[Cut, None, None]:
     values = question.values()
     check_values(variation, values)
-    angles, frequency = np.array(question.angles), np.array(question.frequencies)
-    order = np.argsort(np.argsort(angles, kind="stable"), kind="stable")
-    rows: list[FloatArray] = []  # each (P, A)
+    rows: list[FloatArray] = []  # each (C, P, A)
     held = True
-    for step in curve_over(question.job, variation, values, frequency, angles):
-        for response in step.responses[len(rows) :]:
-            by_side = [_values(question, response, key) for key in question.polarizations]
-            rows.append(np.stack([_worst_of(question, table) for table in by_side]))
-            held = held and bool(held_by_all(doubts_of(response.stack, frequency), frequency).all())
-        table = np.stack(rows)  # (V, P, A)
-        done = values[: len(rows)]
-        curves = [
-            _curve(
-                question,
-                key,
-                curve_label(key, float(angle)),
-                (int(order[column]), angles.size),
-                done,
-                table[:, side, column],
-                held,
-                float(angle),
+    pace = Pace()
+    for value in values.tolist():
+        row, known = _row(question, variation, value)
+        rows.append(row)
+        held = held and known
+        if pace.due() or len(rows) == values.size:
+            cut = Cut(
+                question, _curves(question, values[: len(rows)], np.stack(rows), held), len(rows) / values.size
             )
-            for column, angle in enumerate(angles)
-            for side, key in enumerate(question.polarizations)
-        ]
-        yield Cut(question, tuple(curves), step.share)
+            yield cut if cut.share < 1 else replace(cut, refined=_refined(cut, variation))
+
+
+def _stacks(question: CutQuestion, job: Job) -> list[Stack]:
+    """Return the stack as it is built and under each condition."""
+    under = [job.stack_under(question.stack, name) for name in question.conditions]
+    return [job.stacks[question.stack], *under]
+
+
+def _row(question: CutQuestion, variation: Variation, value: float) -> tuple[FloatArray, bool]:
+    """Return the values of all cases, polarizations and angles, (C, P, A), and whether they stand on known data."""
+    angles, frequency = np.array(question.angles), np.array(question.frequencies)
+    if question.conditions:
+        stacks = _stacks(question, varied(question.job, variation, value))
+    else:
+        stacks = [varied_stack(question.job, variation, value)]
+    cases = []
+    for stack in stacks:
+        response = solve(stack, frequency, angles)
+        cases.append([_worst_of(question, _values(question, response, key)) for key in question.polarizations])
+    return np.array(cases), bool(held_by_all(doubts_of(stacks[0], frequency), frequency).all())
+
+
+def _curves(question: CutQuestion, x: FloatArray, table: FloatArray, held: bool) -> tuple[Curve, ...]:
+    """Return the curves of a table (V, C, P, A), angle by angle."""
+    angles = np.array(question.angles)
+    order = np.argsort(np.argsort(angles, kind="stable"), kind="stable")
+    return tuple(
+        _curve(
+            question,
+            key,
+            curve_label(key, float(angle)),
+            (int(order[column]), angles.size),
+            x,
+            table[:, :, side, column].T,
+            held,
+            float(angle),
+        )
+        for column, angle in enumerate(angles)
+        for side, key in enumerate(question.polarizations)
+    )
+
+
+def _refined(cut: Cut, variation: Variation) -> tuple[float, float] | None:
+    """Return the best value between the points beside the best one, to a thousandth of their distance."""
+    worst = cut.worst()
+    if worst is None or np.isnan(worst).all():
+        return None
+    from scipy.optimize import minimize_scalar  # here, since importing it takes longer than the window
+
+    x, place = cut.curves[0].x, cut.best_place(worst)
+    sign = -1.0 if shown(cut.question.quantity).worst == "low" else 1.0
+
+    def badness(value: float) -> float:
+        row, _ = _row(cut.question, variation, value)
+        return float(np.nan_to_num(sign * row, nan=_WORST, posinf=_WORST, neginf=-_WORST).max())
+
+    ends = (float(x[max(place - 1, 0)]), float(x[min(place + 1, x.size - 1)]))
+    known = (float(x[place]), float(worst[place]))
+    if not np.isfinite(known[1]) or not ends[0] < ends[1]:
+        return known
+    answer = minimize_scalar(badness, bounds=ends, options={"xatol": (ends[1] - ends[0]) * 1e-3})
+    # Never worse than the point that was known.
+    found = float(answer.x), sign * float(answer.fun)
+    return found if sign * found[1] < sign * known[1] else known
 
 
 def _values(question: CutQuestion, response: Response, key: str) -> FloatArray:
@@ -268,11 +360,14 @@ def _curve(
     label: str,
     rank: tuple[int, int],
     x: FloatArray,
-    raw: FloatArray,
+    cases: FloatArray,
     held: bool,
     angle: float = np.nan,
 ) -> Curve:
+    """Return a curve of values (C, V): as built, with the envelope over all cases when there are several."""
+    raw = cases[0]
     finite = np.isfinite(raw)
+    several = len(cases) > 1
     worst, infinite = worst_point(question.quantity, x, raw)
     unit, _ = shown_unit(question.quantity, power=question.power, frequency=np.array(question.frequencies))
     return Curve(
@@ -289,4 +384,6 @@ def _curve(
         infinite,
         int(np.count_nonzero(~finite)),
         np.full(x.shape, held),
+        low=cases.min(axis=0) if several else None,
+        high=cases.max(axis=0) if several else None,
     )

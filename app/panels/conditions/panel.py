@@ -137,7 +137,8 @@ class ConditionsPanel(QWidget):
 
     def _add_usual(self, place: int) -> None:
         before = {one.name for one in self._session.record.conditions}
-        self._apply(edits.add_condition(PRESETS[place]))
+        for fault in self._session.apply(edits.add_condition(PRESETS[place]), self):
+            self._tell(f"{fault.message}: {fault.allowed}.", "note")  # nothing is wrong with the job
         for one in self._session.record.conditions:
             if one.name not in before:
                 self._switch(one.name, on=True)

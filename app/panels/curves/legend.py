@@ -90,7 +90,9 @@ class Legend(QWidget):
         words = [polarization(key).label for key in self._facts.polarizations]
         width = sum(_SAMPLE + _GAP + metrics.horizontalAdvance(word) + _APART for word in words)
         angles = self._facts.angles
-        if angles:
+        if len(angles) == 1:
+            width += metrics.horizontalAdvance(angles[0]) + _APART
+        elif angles:
             width += _GAP * 2 + 72 + metrics.horizontalAdvance(angles[0]) + metrics.horizontalAdvance(angles[-1])
         for name in (*self._facts.stacks, *filter(None, [self._facts.envelope])):
             width += _SAMPLE + _GAP + metrics.horizontalAdvance(self._short(metrics, name)) + _APART
@@ -111,7 +113,9 @@ class Legend(QWidget):
             painter.drawLine(QPointF(left, middle), QPointF(left + _SAMPLE, middle))
             word = polarization(key).label
             left = self._write(painter, metrics, text, left + _SAMPLE + _GAP, word) + _APART
-        if self._facts.angles:
+        if len(self._facts.angles) == 1:
+            left = self._write(painter, metrics, text, left, self._facts.angles[0]) + _APART
+        elif self._facts.angles:
             left = self._write(painter, metrics, text, left, self._facts.angles[0]) + _GAP
             painter.fillRect(QRectF(left, middle - 3, 72, 6), self._ramp(left, left + 72))
             left = self._write(painter, metrics, text, left + 72 + _GAP, self._facts.angles[-1]) + _APART

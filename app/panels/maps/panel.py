@@ -14,11 +14,12 @@ from app.look.theme import LIGHT, Theme
 from app.panels.curves.drawing import fill_palette
 from app.panels.cuts.ends import EndFields
 from app.panels.maps.picture import cell_at, frame_of, paint_map
-from app.panels.maps.question import DrawnMap, MapQuestion, about, data_table, drawn, question_of
+from app.panels.maps.question import DrawnMap, MapQuestion, about, data_table, drawn, note, question_of
 from app.panels.materials.pieces import Line, button, ink
 from app.panels.sweep.field import QuietChoice, QuietField
 from app.panels.sweep.flow import FlowLayout
 from app.series.axis import is_power
+from app.series.cases import conditions_shown
 from app.workers.batch import BatchEnd, BatchFailure, BatchLane, BatchStep
 from stackcore.errors import Fault, Severity, UnitError
 from stackcore.studies import MapLevel, variations_of
@@ -319,7 +320,9 @@ class MapPanel(QWidget):
 
     def _show(self, shown: DrawnMap) -> None:
         self.map.show_map(shown)
-        self.worst.setText(f"Worst: {shown.worst[0]}" if shown.worst is not None else "")
+        told = note(shown, conditions=bool(conditions_shown(self._session.record, self._view.state)))
+        worst = f"Worst: {shown.worst[0]}" if shown.worst is not None else ""
+        self.worst.setText("; ".join(part for part in (worst, told) if part))
         self.low.setPlaceholderText(f"{shown.low:.3g}")
         self.high.setPlaceholderText(f"{shown.high:.3g}")
         self.map.setAccessibleDescription(f"{shown.titles[2]}. {self.worst.text()}")

@@ -149,7 +149,8 @@ def drawn(question: MapQuestion, level: MapLevel) -> DrawnMap:
         pad = max(abs(high) * 1e-3, 1e-12)
         low, high = low - pad, high + pad
     end = shown(question.quantity).worst
-    place = worst(level, "high" if end == "low" else "low") if end is not None else None
+    some = bool(finite.size)
+    place = worst(level, "high" if end == "low" else "low") if end is not None and some else None
     told = None
     if place is not None:
         cell = value_text(question.quantity, float(values[place.row, place.column]), unit)
@@ -171,12 +172,30 @@ def drawn(question: MapQuestion, level: MapLevel) -> DrawnMap:
     )
 
 
+def note(shown: DrawnMap, *, conditions: bool) -> str:
+    """Return what a map does not say by itself: what it leaves out, and what it shows beyond the job.
+
+    Parameters
+    ----------
+    conditions
+        Whether the curves show conditions, which the map does not.
+    """
+    swept = np.unique(shown.question.job.sweep.frequencies())
+    told = ["as built, without the conditions"] if conditions else []
+    told += [f"the job has {frequency_text(float(swept[0]))} only"] if swept.size == 1 else []
+    infinite = np.isinf(shown.level.values)
+    if infinite.all():
+        told.append("infinite everywhere: nothing to compare")
+    return "; ".join(told)
+
+
 def about(shown: DrawnMap) -> str:
     """Return what a map is of: job, stack, polarization, and the angle where something else runs upward."""
     question = shown.question
     record = question.job.record
     parts = [record.title, record.stacks[question.stack].name, polarization(question.side).label]
     parts += [angle_text(question.angle)] if question.variation is not None else []
+    parts += ["as built"] if question.job.record.conditions else []
     return ", ".join(part for part in parts if part)
 
 

@@ -24,7 +24,7 @@ from stackcore.constants import SPEED_OF_LIGHT
 from stackcore.job import Job, job_from_json
 from stackcore.propagation import solve
 from stackcore.quantities import QUANTITIES
-from stackcore.studies import variations_of
+from stackcore.studies import variations_of, varied_stack
 from stackcore.units import Dimension, parse_measure
 
 JOB = """{"format": "slabwright-job", "version": 1,
@@ -94,6 +94,61 @@ def test_the_best_thickness_of_one_curve_is_half_a_wave() -> None:
     assert best_words(cut).startswith("Best 8.7")
 
 
+def test_the_best_is_found_between_the_points() -> None:
+    """The peak of the worst of a band is sharp: a scan forty times as fine finds no better value."""
+    one = job()
+    cut = whole(asked(ViewState(), THICKNESS, "band", ends=(3e-3, 1.2e-2)))
+    best = cut.best()
+    assert best is not None
+    assert best[0] not in cut.curves[0].x
+    frequency, angle = one.sweep.frequencies(), one.sweep.angles()
+    variation = variations_of(one, 0)[0]
+    near = np.linspace(best[0] - 4.5e-5, best[0] + 4.5e-5, 81)
+    scanned = [
+        float(solve(varied_stack(one, variation, value), frequency, angle).transmittance.min()) for value in near
+    ]
+    assert best[1] >= max(scanned) - 1e-5
+    assert best[1] == pytest.approx(max(scanned), abs=1e-4)
+
+
+def test_the_best_is_best_for_all_conditions_shown() -> None:
+    """With a film of water in front another thickness is best; each curve has its envelope."""
+    text = JOB.replace(
+        '"sweep"', '"conditions": [{"name": "Film", "front": [{"layer": "resin", "thickness": "1 mm"}]}], "sweep"'
+    )
+    one = Job(job_from_json(text))
+    view = ViewState(conditions=("Film",), markers=(10 * GHZ,), polarizations=("TE",))
+    cut = whole(asked(view, THICKNESS, ends=(4e-3, 9e-3), of=one))
+    assert cut.question.conditions == ("Film",)
+    curve = cut.curves[0]
+    assert curve.low is not None
+    place = 50
+    stack = Job(job_from_json(text.replace('"5 mm"', f'"{float(curve.x[place])!r} m"'))).stack_under(0, "Film")
+    filmed = float(solve(stack, 10 * GHZ, 0.0).transmittance[0, 0, 0])
+    assert curve.low[place] == pytest.approx(min(filmed, curve.raw[place]), abs=1e-12)
+    dry = whole(asked(replace(view, conditions=()), THICKNESS, ends=(4e-3, 9e-3), of=one)).best()
+    best = cut.best()
+    assert best is not None
+    assert dry is not None
+    # A millimetre of the same material in front: half of it is made up for by a thinner slab.
+    assert best[0] == pytest.approx(dry[0] - 0.5e-3, abs=0.3e-3)
+
+
+def test_there_is_nothing_to_choose_where_all_reads_the_same() -> None:
+    """Behind metal nothing passes at any thickness; at an end of the range the words say so."""
+    metal = Job(job_from_json(JOB.replace('"name": "Slab"', '"name": "Slab", "back": "metal"')))
+    assert best_words(whole(asked(ViewState(), THICKNESS, of=metal))) == ""
+    rising = whole(asked(ViewState(markers=(10 * GHZ,)), THICKNESS, ends=(4e-4, 2e-3)))
+    assert best_words(rising).endswith("at the end of the range")
+
+
+def test_dragging_what_is_varied_asks_nothing_new() -> None:
+    """The cut over a thickness does not depend on the thickness of now."""
+    thicker = Job(job_from_json(JOB.replace('"5 mm"', '"6 mm"')))
+    ends = (4e-3, 9e-3)
+    assert asked(ViewState(), THICKNESS, ends=ends) == asked(ViewState(), THICKNESS, ends=ends, of=thicker)
+
+
 def test_a_cut_over_the_angle_has_its_brewster_angle() -> None:
     """TM reflects nothing at arctan n, at every frequency and thickness; TE rises throughout towards grazing.
 
@@ -108,10 +163,10 @@ def test_a_cut_over_the_angle_has_its_brewster_angle() -> None:
 
 
 def test_the_worst_of_the_band_is_the_worst_of_a_sweep() -> None:
-    """Each point is the lowest transmittance over the sweep with that thickness, among every third frequency."""
+    """Each point is the lowest transmittance over the sweep with that thickness."""
     one = job()
     cut = whole(asked(ViewState(), THICKNESS, "band", ends=(4e-3, 8e-3)))
-    frequency = one.sweep.frequencies()[::3]
+    frequency = one.sweep.frequencies()
     assert cut.question.frequencies == pytest.approx(frequency.tolist())
     variation = variations_of(one, 0)[0]
     assert variation.path == THICKNESS

@@ -170,7 +170,7 @@ def test_the_best_value_is_taken_with_one_press(bench: Bench) -> None:
     assert shown is not None
     best = shown.best()
     assert best is not None
-    assert "Best 9.44" in bench.panel.best.text()
+    assert "Best 9.43" in bench.panel.best.text()
     bench.panel.take_best.click()
     assert bench.thickness() == pytest.approx(best[0], rel=1e-3)
     bench.settle()

@@ -12,6 +12,7 @@ from PySide6.QtTest import QTest
 from pytestqt.qtbot import QtBot
 
 from app.document import edits
+from app.document.condition_edits import PRESETS
 from app.document.document import Cell
 from app.document.session import Session
 from app.document.view import View
@@ -338,3 +339,18 @@ def test_long_names_leave_the_panel_its_width(bench: Bench) -> None:
     assert "each of them needed" in bench.panel.over.currentText()
     assert bench.panel.minimumSizeHint().width() <= 360
     assert "each of them needed" in bench.panel.worst.toolTip()
+
+
+def test_a_map_says_what_it_leaves_out(bench: Bench) -> None:
+    """Conditions of the curves, a band around a single frequency, and values that are all infinite."""
+    bench.session.apply(edits.add_condition(PRESETS[0]))
+    bench.view.set(conditions=("Wet",))
+    bench.session.apply(edits.set_frequency_list(["9.4 GHz"]))
+    bench.show()
+    assert "as built, without the conditions" in bench.panel.worst.text()
+    assert "the job has 9.4 GHz only" in bench.panel.worst.text()
+    bench.session.apply(edits.set_back(0, "metal"))
+    bench.view.set(quantity="insertion_loss_dB")
+    bench.settle()
+    assert "infinite everywhere" in bench.panel.worst.text()
+    assert "Worst" not in bench.panel.worst.text()
