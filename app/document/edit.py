@@ -110,7 +110,7 @@ def follow_rows(drafts: Iterable[Draft], stack: int, origins: Sequence[int | Non
     """
     others, moving = _split(drafts, lambda cell: cell.stack == stack and cell.row >= 0)
     moved = (
-        draft.at(replace(draft.cell, row=row))
+        draft if draft.cell.row == row else draft.at(replace(draft.cell, row=row))
         for row, origin in enumerate(origins)
         for draft in moving
         if draft.cell.row == origin
@@ -122,7 +122,7 @@ def follow_stacks(drafts: Iterable[Draft], origins: Sequence[int | None]) -> tup
     """Return `drafts` after the stacks were rearranged; `origins` as in `follow_rows`."""
     others, moving = _split(drafts, lambda cell: not cell.of_job)
     moved = (
-        draft.at(replace(draft.cell, stack=stack))
+        draft if draft.cell.stack == stack else draft.at(replace(draft.cell, stack=stack))
         for stack, origin in enumerate(origins)
         for draft in moving
         if draft.cell.stack == origin
