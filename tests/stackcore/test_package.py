@@ -30,17 +30,26 @@ def test_the_core_loads_no_toolkit_and_no_heavy_science(statement: str) -> None:
 
 
 @pytest.mark.parametrize(
-    ("statement", "limit"), [("import stackcore", 0.05), ("from stackcore import read_job, solve", 0.25)]
+    ("statement", "limit"), [("import stackcore", 0.5), ("from stackcore import read_job, solve", 3.0)]
 )
 def test_the_package_loads_quickly(statement: str, limit: float) -> None:
-    """The package alone, and the solver with jobs, add little to numpy's own import: the best of five."""
-    script = f"import numpy, time\nbegin = time.perf_counter()\n{statement}\nprint(time.perf_counter() - begin)"
-    times = [
+    """The package alone, and the solver with jobs, add little to the import of numpy: the best of five.
+
+    In times of that import: others may be at work on the machine, so that seconds say nothing.
+    """
+    script = f"""import time
+begin = time.process_time()
+import numpy
+floor = time.process_time() - begin
+begin = time.process_time()
+{statement}
+print((time.process_time() - begin) / floor)"""
+    ratios = [
         float(subprocess.run([sys.executable, "-c", script], capture_output=True, text=True, check=True).stdout)
         for _ in range(5)
     ]
 
-    assert min(times) < limit
+    assert min(ratios) < limit
 
 
 def test_every_public_name_is_where_it_is_said_to_be() -> None:

@@ -19,7 +19,7 @@ from tests.stackcore.formats.files import HAND_WRITTEN, SAVED
 
 FILES: Final = 2000
 BATCH: Final = 100
-LONGEST: Final = 1.0
+LONGEST: Final = 3.0
 """Seconds that a file may take."""
 
 FEW: Final = 5000
